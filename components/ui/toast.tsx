@@ -1,0 +1,26 @@
+"use client";
+
+import { Toaster as Sonner } from "sonner";
+
+export { toast } from "sonner";
+
+/** Where messages appear; one per app, placed by the providers. Say with `toast.success(…)`, `toast.error(…)`. */
+export function Toaster() {
+  return (
+    <Sonner
+      position="bottom-right"
+      toastOptions={{
+        unstyled: true,
+        classNames: {
+          toast:
+            "flex w-full items-start gap-3 rounded border border-field-line bg-sheet px-4 py-3 text-sm text-ink",
+          description: "text-ink-soft",
+          error: "border-fail",
+          success: "border-pass",
+          actionButton: "ml-auto shrink-0 font-medium text-violet underline underline-offset-2",
+          closeButton: "text-ink-soft",
+        },
+      }}
+    />
+  );
+}
