@@ -1,0 +1,59 @@
+import type { ReleaseBlocker } from "@/lib/schemas/release";
+
+/** What is known of a draft and the run that a release would rest on. */
+export interface ReleaseReadiness {
+  run: { number: number; state: string; inputHash: string } | null;
+  draftInputHash: string;
+  /** problems of verdict fail that no waiver covers */
+  failuresNotWaived: number;
+  /** missing inputs that nobody accepted, each with the paths it holds back */
+  missingNotAccepted: { missing: string; paths: number }[];
+  openFlags: number;
+  signedOff: boolean;
+  /** whether the person who would sign made an edit of this draft */
+  signerEdited: boolean;
+}
+
+/** Everything that stands in the way of a release, each with its way out; empty when nothing does. */
+export function releaseBlockers(facts: ReleaseReadiness): ReleaseBlocker[] {
+  const { run } = facts;
+  if (!run) return [{ kind: "no run", text: "The draft has not been checked. Start a run.", count: null }];
+  if (run.state !== "done")
+    return [{ kind: "unfinished run", text: `Run ${run.number} is ${run.state}. Let it finish or start another.`, count: null }];
+  const blockers: ReleaseBlocker[] = [];
+  if (run.inputHash !== facts.draftInputHash)
+    blockers.push({ kind: "stale run", text: `The draft was edited after run ${run.number}. Run the check again.`, count: null });
+  if (facts.failuresNotWaived > 0)
+    blockers.push({
+      kind: "failures",
+      text: `${facts.failuresNotWaived} ${plural(facts.failuresNotWaived, "failing problem is", "failing problems are")} not waived. Cure or waive each.`,
+      count: facts.failuresNotWaived,
+    });
+  if (facts.missingNotAccepted.length > 0) {
+    const paths = facts.missingNotAccepted.reduce((sum, entry) => sum + entry.paths, 0);
+    blockers.push({
+      kind: "no data",
+      text: `${paths} ${plural(paths, "path has", "paths have")} no data for ${facts.missingNotAccepted.length} ${plural(facts.missingNotAccepted.length, "reason", "reasons")} that nobody accepted. Fill the input or accept it with a reason.`,
+      count: paths,
+    });
+  }
+  if (facts.openFlags > 0)
+    blockers.push({
+      kind: "flags",
+      text: `${facts.openFlags} ${plural(facts.openFlags, "flag is", "flags are")} open. Resolve each.`,
+      count: facts.openFlags,
+    });
+  if (!facts.signedOff)
+    blockers.push({
+      kind: "editor signs",
+      text: facts.signerEdited
+        ? "Nobody has signed off this run. You edited this draft, so another reviewer signs."
+        : "Nobody has signed off this run. A reviewer who made no edit of the draft signs.",
+      count: null,
+    });
+  return blockers;
+}
+
+function plural(count: number, one: string, many: string): string {
+  return count === 1 ? one : many;
+}

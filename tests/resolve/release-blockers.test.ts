@@ -1,0 +1,31 @@
+import { describe, expect, it } from "vitest";
+import { releaseBlockers, type ReleaseReadiness } from "@/lib/resolve/release-blockers";
+
+const ready: ReleaseReadiness = {
+  run: { number: 4, state: "done", inputHash: "h" },
+  draftInputHash: "h",
+  failuresNotWaived: 0,
+  missingNotAccepted: [],
+  openFlags: 0,
+  signedOff: true,
+  signerEdited: false,
+};
+
+describe("releaseBlockers", () => {
+  it("is empty when nothing stands in the way", () => {
+    expect(releaseBlockers(ready)).toEqual([]);
+  });
+  it.each([
+    ["no run", { run: null }],
+    ["unfinished run", { run: { number: 4, state: "running", inputHash: "h" } }],
+    ["stale run", { draftInputHash: "other" }],
+    ["failures", { failuresNotWaived: 1 }],
+    ["no data", { missingNotAccepted: [{ missing: "driver model of U5", paths: 3 }] }],
+    ["flags", { openFlags: 2 }],
+    ["editor signs", { signedOff: false }],
+  ] as const)("blocks and says so: %s", (kind, change) => {
+    const blockers = releaseBlockers({ ...ready, ...change } as ReleaseReadiness);
+    expect(blockers.map((blocker) => blocker.kind)).toEqual([kind]);
+    expect(blockers[0]?.text).toMatch(/\.$/);
+  });
+});
