@@ -1,0 +1,113 @@
+"use client";
+
+import { type KeyboardEvent, type RefObject, useEffect, useRef } from "react";
+
+interface Options {
+  ids: readonly string[];
+  activeId: string | null;
+  setActive: (id: string | null) => void;
+  scroller: RefObject<HTMLDivElement | null>;
+  scrollTo: (index: number) => void;
+  open: (id: string) => void;
+  /** Space ticks the row where rows can be ticked. */
+  tick?: (id: string) => void;
+  /** Listens on the whole page, except while someone types or a dialog is open. */
+  everywhere: boolean;
+}
+
+type Key = Pick<
+  globalThis.KeyboardEvent,
+  "key" | "ctrlKey" | "metaKey" | "altKey" | "target" | "defaultPrevented" | "preventDefault"
+>;
+
+const PAGE = 15;
+
+/** Moves through rows: j or down, k or up, Home, End, page keys; Enter opens, Space ticks. */
+export function useRowKeys(options: Options): (event: KeyboardEvent) => void {
+  const latest = useRef(options);
+  useEffect(() => {
+    latest.current = options;
+  });
+
+  function handle(event: Key): void {
+    const { ids, activeId, setActive, scroller, scrollTo, open, tick } = latest.current;
+    if (event.defaultPrevented || event.ctrlKey || event.metaKey || event.altKey) return;
+    if (ids.length === 0 || isTyping(event.target)) return;
+    const at = activeId === null ? -1 : ids.indexOf(activeId);
+    const next = destination(event.key, at, ids.length);
+    if (next !== null) {
+      event.preventDefault();
+      const id = ids[next];
+      if (id === undefined) return;
+      setActive(id);
+      scrollTo(next);
+      // The row may only be drawn after the scroll.
+      requestAnimationFrame(() => focusRow(scroller.current, id));
+    } else if (at >= 0 && activeId !== null && !isControl(event.target)) {
+      if (event.key === "Enter") {
+        event.preventDefault();
+        open(activeId);
+      } else if (event.key === " " && tick) {
+        event.preventDefault();
+        tick(activeId);
+      }
+    }
+  }
+
+  const { everywhere } = options;
+  const handler = useRef(handle);
+  useEffect(() => {
+    handler.current = handle;
+  });
+  useEffect(() => {
+    if (!everywhere) return;
+    const listen = (event: globalThis.KeyboardEvent) => {
+      if (document.querySelector("[role=dialog], [role=menu]")) return;
+      handler.current(event);
+    };
+    document.addEventListener("keydown", listen);
+    return () => document.removeEventListener("keydown", listen);
+  }, [everywhere]);
+
+  return (event) => {
+    if (!everywhere) handle(event);
+  };
+}
+
+function destination(key: string, at: number, count: number): number | null {
+  const within = (index: number) => Math.min(count - 1, Math.max(0, index));
+  switch (key) {
+    case "j":
+    case "ArrowDown":
+      return within(at + 1);
+    case "k":
+    case "ArrowUp":
+      return within(at - 1);
+    case "PageDown":
+      return within(at + PAGE);
+    case "PageUp":
+      return within(at - PAGE);
+    case "Home":
+      return 0;
+    case "End":
+      return count - 1;
+    default:
+      return null;
+  }
+}
+
+function focusRow(scroller: HTMLElement | null, id: string): void {
+  const row = scroller?.querySelector<HTMLElement>(`[data-row-id="${CSS.escape(id)}"]`);
+  row?.focus({ preventScroll: true });
+  row?.scrollIntoView({ block: "nearest" });
+}
+
+function isTyping(target: EventTarget | null): boolean {
+  return (
+    target instanceof Element && target.closest("input, select, textarea, [contenteditable=true]") !== null
+  );
+}
+
+function isControl(target: EventTarget | null): boolean {
+  return target instanceof Element && target.closest("a, button, [role=tab], [role=slider]") !== null;
+}

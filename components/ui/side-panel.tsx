@@ -1,0 +1,66 @@
+"use client";
+
+import { X } from "lucide-react";
+import { type ReactNode, useEffect, useId, useRef } from "react";
+import { Button } from "./button";
+
+interface LayoutProps {
+  /** The sheet that stays in view. */
+  children: ReactNode;
+  /** A `<SidePanel>`, or null when closed. */
+  panel: ReactNode | null;
+}
+
+/** A sheet and, when open, its panel: side by side where there is room, the panel alone where there is not. */
+export function WithSidePanel({ children, panel }: LayoutProps) {
+  return (
+    <div className="flex min-h-0 min-w-0 flex-1">
+      <div className={`min-w-0 flex-1 ${panel ? "hidden lg:block" : ""}`}>{children}</div>
+      {panel}
+    </div>
+  );
+}
+
+interface Props {
+  title: ReactNode;
+  onClose: () => void;
+  children: ReactNode;
+  footer?: ReactNode;
+  /** Moves the focus into the panel when it opens. Leave off where j/k in the list must keep working. */
+  takeFocus?: boolean;
+}
+
+/** Opens beside the table, never over what is being compared; fills the page on a narrow screen. Esc closes. */
+export function SidePanel({ title, onClose, children, footer, takeFocus = false }: Props) {
+  const id = useId();
+  const ref = useRef<HTMLElement>(null);
+  useEffect(() => {
+    if (takeFocus) ref.current?.focus();
+  }, [takeFocus]);
+  return (
+    <aside
+      ref={ref}
+      tabIndex={-1}
+      aria-labelledby={id}
+      onKeyDown={(event) => {
+        if (event.key === "Escape" && !event.defaultPrevented) onClose();
+      }}
+      className="border-rule-line bg-sheet flex w-full min-w-0 shrink-0 flex-col outline-none lg:sticky lg:top-12 lg:ml-4 lg:max-h-[calc(100dvh-3rem)] lg:w-[400px] lg:border-l print:hidden"
+    >
+      <header className="border-rule-line flex items-center justify-between gap-2 border-b px-4 py-2">
+        <h2 id={id} className="min-w-0 truncate text-base font-semibold">
+          {title}
+        </h2>
+        <Button variant="quiet" size="icon" aria-label="Close the panel" onClick={onClose}>
+          <X size={16} aria-hidden="true" />
+        </Button>
+      </header>
+      <div className="min-h-0 flex-1 overflow-y-auto p-4">{children}</div>
+      {footer ? (
+        <footer className="border-rule-line flex flex-wrap justify-end gap-2 border-t px-4 py-2">
+          {footer}
+        </footer>
+      ) : null}
+    </aside>
+  );
+}
