@@ -1,0 +1,273 @@
+import { horizontalDimension, verticalDimension } from "./dimension";
+import {
+  type Drawing,
+  emptyDrawing,
+  line,
+  type Mark,
+  type Point,
+  polygon,
+  polyline,
+  rect,
+  text,
+} from "./marks";
+import { lengthText, type LengthUnit } from "./number-text";
+import { scaleBar } from "./scale-bar";
+import { maskOutline } from "./trace-mask-outline";
+import { describeTrace } from "./trace-words";
+
+/** The same shape as the engine's CrossSection [m]: y = 0 at the lower plane's face, y upward. */
+export interface TraceSectionShape {
+  layers: readonly { thickness: number; er: number; tanD?: number; name?: string }[];
+  upperPlane: boolean;
+  traces: readonly { x: number; y: number; thickness: number; widthBottom: number; widthTop: number }[];
+  coplanar?: { gap: number };
+  mask?: { overLaminate: number; overTrace: number; side: number; er: number };
+}
+
+/** A line of equal potential, solved elsewhere [m]. */
+export interface Equipotential {
+  /** share of the trace's voltage, 0 to 1 */
+  level: number;
+  points: readonly (readonly [x: number, y: number])[];
+}
+
+export interface TraceSectionOptions {
+  width: number;
+  height?: number;
+  unit: LengthUnit;
+  title?: string;
+  equipotentials?: readonly Equipotential[];
+}
+
+const SIDE = 128;
+const ABOVE = 58;
+const BELOW = 66;
+const PLANE = 9;
+
+/** Places metres on the drawing. */
+export interface Placement {
+  x: (metres: number) => number;
+  y: (metres: number) => number;
+  /** [px/m] */
+  scale: number;
+}
+
+/** One trace or pair over or between its planes, to scale, with its dimensions. */
+export function traceSection(
+  shape: TraceSectionShape,
+  options: TraceSectionOptions,
+): Drawing & { scale: number } {
+  const { width, height = 340, unit } = options;
+  const title = options.title ?? "Trace cross-section";
+  const first = shape.traces[0];
+  const laminate = shape.layers.reduce((sum, l) => sum + l.thickness, 0);
+  const sizes = [
+    laminate,
+    ...shape.traces.flatMap((t) => [t.x, t.y, t.thickness, t.widthBottom, t.widthTop]),
+  ];
+  if (!first || !(laminate > 0) || sizes.some((v) => !Number.isFinite(v)))
+    return { ...emptyDrawing(title, "The cross-section is not complete.", width, height), scale: 0 };
+
+  const crest = Math.max(
+    laminate,
+    ...shape.traces.map((t) => t.y + t.thickness + (shape.mask?.overTrace ?? 0)),
+  );
+  const half = Math.max(...shape.traces.map((t) => Math.abs(t.x) + Math.max(t.widthBottom, t.widthTop) / 2));
+  const reach = half + Math.max(1.2 * first.widthBottom, 0.9 * laminate, (shape.coplanar?.gap ?? 0) * 2);
+  const scale = Math.min((width - 2 * SIDE) / (2 * reach), (height - ABOVE - BELOW) / crest);
+  const centre = width / 2;
+  const base = height - BELOW;
+  const at: Placement = { x: (m) => centre + m * scale, y: (m) => base - m * scale, scale };
+  // The body runs on to the sides, whatever the height left of the scale.
+  const [left, right] = [SIDE, width - SIDE];
+
+  const marks: Mark[] = [
+    ...dielectrics(shape, at, left, right),
+    ...(shape.mask
+      ? [
+          polygon(
+            maskOutline(shape, (left - centre) / scale, (right - centre) / scale).map(([x, y]): Point => [
+              at.x(x),
+              at.y(y),
+            ]),
+            { fill: "pass", fillOpacity: 0.24, stroke: "pass", weight: 0.75 },
+          ),
+        ]
+      : []),
+    ...(options.equipotentials ?? []).map((line) =>
+      polyline(
+        line.points.map(([x, y]): Point => [at.x(x), at.y(y)]),
+        { stroke: "violet", weight: 0.8, opacity: 0.25 + 0.55 * line.level },
+      ),
+    ),
+    plane(left, right, at.y(0), at.y(0) + PLANE),
+    ...(shape.upperPlane ? [plane(left, right, at.y(laminate) - PLANE, at.y(laminate))] : []),
+    ...coplanarGround(shape, at, left, right),
+    ...shape.traces.map((t) =>
+      polygon(
+        [
+          [at.x(t.x - t.widthBottom / 2), at.y(t.y)],
+          [at.x(t.x + t.widthBottom / 2), at.y(t.y)],
+          [at.x(t.x + t.widthTop / 2), Math.min(at.y(t.y + t.thickness), at.y(t.y) - 1.5)],
+          [at.x(t.x - t.widthTop / 2), Math.min(at.y(t.y + t.thickness), at.y(t.y) - 1.5)],
+        ],
+        { fill: "copper", hit: "trace" },
+      ),
+    ),
+    ...dimensions(shape, at, laminate, left, right, unit, base),
+    ...scaleBar(left, height - 8, scale, 100, unit),
+  ];
+  return { width, height, title, description: describeTrace(shape, unit), marks, scale };
+}
+
+function plane(left: number, right: number, top: number, bottom: number): Mark {
+  return rect(left, top, right - left, bottom - top, { fill: "copper", fillOpacity: 0.9 });
+}
+
+function dielectrics(shape: TraceSectionShape, at: Placement, left: number, right: number): Mark[] {
+  const marks: Mark[] = [];
+  let y = 0;
+  shape.layers.forEach((layer, i) => {
+    const [bottom, top] = [at.y(y), at.y(y + layer.thickness)];
+    marks.push(
+      rect(left, top, right - left, bottom - top, {
+        fill: "rule-line",
+        fillOpacity: i % 2 === 0 ? 0.65 : 0.4,
+      }),
+    );
+    if (i > 0)
+      marks.push(line(left, bottom, right, bottom, { stroke: "ink-soft", weight: 0.5, opacity: 0.5 }));
+    if (bottom - top >= 13)
+      marks.push(
+        text(
+          left + 8,
+          (top + bottom) / 2 + 4,
+          `Dk ${layer.er.toFixed(2)}${layer.name ? `, ${layer.name}` : ""}`,
+          { ink: "ink-soft" },
+        ),
+      );
+    y += layer.thickness;
+  });
+  return marks;
+}
+
+function coplanarGround(shape: TraceSectionShape, at: Placement, left: number, right: number): Mark[] {
+  const { coplanar, traces } = shape;
+  const [first, last] = [traces[0], traces.at(-1)];
+  if (!coplanar || !first || !last) return [];
+  const lean = (first.widthBottom - first.widthTop) / 2;
+  const [bottom, top] = [at.y(first.y), at.y(first.y + first.thickness)];
+  const edgeLeft = first.x - first.widthBottom / 2 - coplanar.gap;
+  const edgeRight = last.x + last.widthBottom / 2 + coplanar.gap;
+  return [
+    polygon(
+      [
+        [left, bottom],
+        [at.x(edgeLeft), bottom],
+        [at.x(edgeLeft - lean), top],
+        [left, top],
+      ],
+      { fill: "copper", fillOpacity: 0.9 },
+    ),
+    polygon(
+      [
+        [right, bottom],
+        [at.x(edgeRight), bottom],
+        [at.x(edgeRight + lean), top],
+        [right, top],
+      ],
+      { fill: "copper", fillOpacity: 0.9 },
+    ),
+  ];
+}
+
+function dimensions(
+  shape: TraceSectionShape,
+  at: Placement,
+  laminate: number,
+  left: number,
+  right: number,
+  unit: LengthUnit,
+  base: number,
+): Mark[] {
+  const [first, second] = shape.traces;
+  if (!first) return [];
+  const words = (name: string, m: number): string => `${name} ${lengthText(m, unit)}`;
+  const top = first.y + first.thickness;
+  const ceiling = shape.upperPlane
+    ? at.y(laminate) - PLANE
+    : at.y(Math.max(laminate, top + (shape.mask?.overTrace ?? 0)));
+  const edge = (t: typeof first, side: -1 | 1, w: number): number => at.x(t.x + (side * w) / 2);
+
+  const marks: Mark[] = [
+    ...horizontalDimension({
+      x1: edge(first, -1, first.widthBottom),
+      x2: edge(first, 1, first.widthBottom),
+      y: base + PLANE + 14,
+      from1: at.y(first.y),
+      from2: at.y(first.y),
+      label: words("foot width", first.widthBottom),
+      below: true,
+    }),
+    ...horizontalDimension({
+      x1: edge(first, -1, first.widthTop),
+      x2: edge(first, 1, first.widthTop),
+      y: ceiling - 12,
+      from1: at.y(top),
+      from2: at.y(top),
+      label: words("crown width", first.widthTop),
+    }),
+    ...verticalDimension({
+      y1: at.y(0),
+      y2: at.y(first.y),
+      x: right + 14,
+      from1: right,
+      from2: right,
+      label: words("below", first.y).replace("below", "height below"),
+    }),
+    ...verticalDimension({
+      y1: at.y(first.y),
+      y2: at.y(top),
+      x: left - 14,
+      from1: left,
+      from2: left,
+      label: lengthText(first.thickness, unit),
+      left: true,
+    }),
+  ];
+  if (shape.upperPlane)
+    marks.push(
+      ...verticalDimension({
+        y1: at.y(top),
+        y2: at.y(laminate),
+        x: right + 14,
+        from1: right,
+        from2: right,
+        label: words("height above", laminate - top),
+      }),
+    );
+  if (second && Math.abs(second.y - first.y) < 1e-12) {
+    marks.push(
+      ...horizontalDimension({
+        x1: edge(first, 1, first.widthBottom),
+        x2: edge(second, -1, second.widthBottom),
+        y: ceiling - 34,
+        from1: at.y(first.y),
+        from2: at.y(second.y),
+        label: words("gap", second.x - first.x - (first.widthBottom + second.widthBottom) / 2),
+      }),
+    );
+  } else if (!second && shape.coplanar) {
+    marks.push(
+      ...horizontalDimension({
+        x1: edge(first, 1, first.widthBottom),
+        x2: edge(first, 1, first.widthBottom) + shape.coplanar.gap * at.scale,
+        y: ceiling - 34,
+        from1: at.y(first.y),
+        from2: at.y(first.y),
+        label: words("gap", shape.coplanar.gap),
+      }),
+    );
+  }
+  return marks;
+}
