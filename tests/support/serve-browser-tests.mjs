@@ -1,0 +1,13 @@
+/** Serves what the browser tests drive: a new data folder with the demo team, without limits on the rate. */
+import { rmSync } from "node:fs";
+import path from "node:path";
+
+const root = path.resolve(import.meta.dirname, "../..");
+const dataDir = path.join(root, ".cache/browser-tests");
+rmSync(dataDir, { recursive: true, force: true });
+
+delete process.env.DATABASE_URL;
+delete process.env.SMTP_URL;
+Object.assign(process.env, { DATA_DIR: dataDir, DEMO: "1", RATE_LIMITS: "off" });
+
+await import("../../scripts/start.mjs");
