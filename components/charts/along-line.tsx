@@ -58,5 +58,10 @@ function AtWidth({
   const said = drawing.empty
     ? drawing
     : { ...drawing, description: `${drawing.description} ${describeAlong(row, waves, cursorTime)}` };
-  return <DrawingSvg drawing={said} overlay={alongLineWaves(drawing, row, waves, cursorTime)} />;
+  return (
+    <DrawingSvg
+      drawing={said}
+      overlay={[...alongLineWaves(drawing, row, waves, cursorTime), ...drawing.front]}
+    />
+  );
 }

@@ -36,6 +36,8 @@ export interface AlongLineDrawing extends Drawing {
   row: RowScale | null;
   y: (volts: number) => number;
   volts: Domain;
+  /** limit names, drawn over the waves */
+  front: Mark[];
 }
 
 /** One place at one instant. */
@@ -97,12 +99,13 @@ export function alongLine(row: LineRow, options: AlongLineOptions): AlongLineDra
       row: null,
       y: () => 0,
       volts,
+      front: [],
     };
   const y = linear(volts, [box.bottom, box.top]);
   const scale = rowScale(row, box.left, box.right, options.by);
   const sound = limits.filter((l) => Number.isFinite(l.volts));
   const names = spreadLabels(
-    sound.map((l) => y(l.volts) + (l.side === "max" ? -8 : 8)),
+    sound.map((l) => y(l.volts) + (l.side === "max" ? -10 : 10)),
     15,
     box.top,
     box.bottom,
@@ -112,21 +115,22 @@ export function alongLine(row: LineRow, options: AlongLineOptions): AlongLineDra
     ...rowUprights(scale, box.top, box.bottom),
     ...rowHeader(row, scale, 14, options.unit),
     ...placeAxis(row, scale, box, options.unit),
-    ...sound.flatMap((l, i) => [
+    ...sound.map((l) =>
       line(box.left, y(l.volts), box.right, y(l.volts), {
         stroke: l.reference ? "ink-soft" : "fail",
-        weight: 1,
         dash: l.reference ? "2 3" : "7 3",
       }),
-      text(box.left + 8, (names[i] ?? 0) + 4, `${l.label} ${voltsText(l.volts)}`, {
-        ink: l.reference ? "ink-soft" : "fail",
-        halo: true,
-      }),
-    ]),
+    ),
   ];
+  const front = sound.map((l, i) =>
+    text(box.left + 8, (names[i] ?? 0) + 4, `${l.label} ${voltsText(l.volts)}`, {
+      ink: l.reference ? "ink-soft" : "fail",
+      halo: true,
+    }),
+  );
   const size = scale.by === "length" ? "length" : "delay";
   const description = `Voltage over place, by ${size}, at the cursor's time: incident, reflected and total, across ${row.nodes.join(", ")}.`;
-  return { width, height, title, description, marks, box, row: scale, y: (v) => y(v), volts };
+  return { width, height, title, description, marks, box, row: scale, y: (v) => y(v), volts, front };
 }
 
 /** Incident (copper), reflected (violet, dashed) and total (ink) at an instant, named at their ends. */

@@ -6,7 +6,6 @@ import { type LineRow, type RowScale, rowHeader, rowScale, rowUprights, usableRo
 import { arrowAlong } from "./ray-arrow";
 import { circle, type Drawing, emptyDrawing, group, line, type Mark, text } from "./marks";
 import { type LengthUnit, voltsText } from "./number-text";
-import { spreadLabels } from "./spread-labels";
 
 export interface BounceOptions {
   width: number;
@@ -128,9 +127,10 @@ export function bounceCursor(drawing: BounceDrawing, row: LineRow, time: number 
   const { box, row: scale, span } = drawing;
   if (time === null || !scale || time < span[0] || time > span[1]) return [];
   const at = drawing.y(time);
+  const strongest = Math.max(...drawing.drawn.map((r) => Math.abs(r.amplitude)));
   const fronts = drawing.drawn.flatMap((r) => {
     const share = (time - r.start) / (row.sections[r.section]?.delay ?? 1);
-    if (share < 0 || share > 1) return [];
+    if (share < 0 || share > 1 || Math.abs(r.amplitude) < 0.05 * strongest) return [];
     const x = scale.at(r.section, r.outward ? share : 1 - share);
     return [circle(x, at, 3.5, { fill: "sheet", stroke: r.outward ? "copper" : "violet", weight: 1.75 })];
   });
@@ -193,7 +193,10 @@ function timeAxis(span: Domain, y: Scale, box: PlotBox): Mark[] {
   ]);
 }
 
-/** The voltages one end of the row takes, beside it at their times; those without room are left to the cursor. */
+/**
+ * The voltages one end of the row takes, beside it at their times. Steps that follow each other closer than a line
+ * of text are shown by the last of them.
+ */
 function nodeVoltages(
   voltages: readonly NodeVoltage[],
   node: number,
@@ -201,31 +204,29 @@ function nodeVoltages(
   y: Scale,
   box: PlotBox,
 ): Mark[] {
-  const atEnd = node > 0;
-  const most = Math.floor((box.bottom - box.top) / ROW / 1.5);
-  let before: number | null = null;
+  const out = node > 0 ? 1 : -1;
+  const x = node > 0 ? box.right : box.left;
   const steps = voltages
     .filter((v) => v.node === node && v.time >= span[0] && v.time <= span[1] && Number.isFinite(v.volts))
-    .filter((v) => {
-      const news = before === null || Math.abs(v.volts - before) >= 5e-4;
-      if (news) before = v.volts;
-      return news;
-    })
-    .slice(0, most);
-  const rows = spreadLabels(
-    steps.map((s) => y(s.time)),
-    ROW,
-    box.top - 4,
-    box.bottom + 6,
-  );
-  const x = atEnd ? box.right : box.left;
-  const out = atEnd ? 1 : -1;
-  return steps.flatMap((s, i) => {
-    const row = rows[i] ?? 0;
+    .sort((a, b) => a.time - b.time);
+  const runs: NodeVoltage[][] = [];
+  for (const step of steps) {
+    const run = runs.at(-1);
+    if (run?.[0] && y(step.time) - y(run[0].time) < ROW) run.push(step);
+    else runs.push([step]);
+  }
+  let shown = "";
+  return runs.flatMap((run) => {
+    const step = run.at(-1);
+    const first = run[0];
+    if (!step || !first) return [];
+    const words = voltsText(step.volts);
+    if (words === shown) return [];
+    shown = words;
+    const at = y(first.time);
     return [
-      line(x, y(s.time), x + 5 * out, y(s.time), { stroke: "ink" }),
-      line(x + 5 * out, y(s.time), x + 12 * out, row, { stroke: "ink-soft", weight: 0.6 }),
-      text(x + 15 * out, row + 4, voltsText(s.volts), { anchor: atEnd ? "start" : "end" }),
+      ...run.map((s) => line(x, y(s.time), x + 5 * out, y(s.time), { stroke: "ink" })),
+      text(x + 10 * out, at + 4, words, { anchor: node > 0 ? "start" : "end" }),
     ];
   });
 }

@@ -33,7 +33,7 @@ export function rayLabel(l: RayLine, emphasized: boolean, room: RayRoom, box: Pl
   const length = Math.sqrt(dx * dx + dy * dy);
   const words = voltsText(l.ray.amplitude, true);
   const width = textWidth(words, SIZE, emphasized);
-  if (!emphasized && (length < width + 24 || l.strength < 0.004)) return [];
+  if (!emphasized && (length < width + 24 || l.strength < 0.04)) return [];
   // Level enough to be read from left to right, whichever way the wave goes.
   const slope = Math.atan2(dy, dx);
   const angle = Math.abs(slope) > Math.PI / 2 ? slope - Math.sign(slope) * Math.PI : slope;
@@ -44,7 +44,7 @@ export function rayLabel(l: RayLine, emphasized: boolean, room: RayRoom, box: Pl
     const spots = [-0.5, -0.25, 0, 0.25, 0.5].map((k) => ({
       x: x + Math.cos(angle) * width * k,
       y: y + Math.sin(angle) * width * k - 4,
-      half: Math.max(SIZE * 0.55, width / 8),
+      half: Math.max(SIZE * 0.72, width / 8),
     }));
     if (spots.some((s) => s.x < box.left || s.x > box.right || s.y > box.bottom)) continue;
     if (!room.take(spots) && !emphasized) continue;

@@ -76,8 +76,11 @@ export function lengthText(metres: number | null | undefined, unit: LengthUnit):
   return withUnit(lengthNumber(metres, unit), unit);
 }
 
+/** Millimetres to the micrometre, or to its tenth where it has one (half-ounce copper is 17.5 \u00b5m); mils to 0.01. */
 export function lengthNumber(metres: number, unit: LengthUnit): string {
-  return unit === "mm" ? numberText(metres * 1e3, 3) : numberText(metres / 25.4e-6, 2);
+  if (unit === "mil") return numberText(metres / 25.4e-6, 2);
+  const tenths = Math.round(metres * 1e7);
+  return numberText(metres * 1e3, tenths % 10 === 0 ? 3 : 4);
 }
 
 function decimalsFor(n: number): number {

@@ -1,7 +1,8 @@
 import { arrow } from "./dimension";
 import { circle, line, type Mark, text } from "./marks";
-import { lengthNumber, type LengthUnit, numberText, THIN_SPACE } from "./number-text";
-import type { PlacedLayer } from "./stackup-section.geometry";
+import { decimalText } from "./decimal-text";
+import { lengthNumber, type LengthUnit, numberText } from "./number-text";
+import { DECIMAL, type PlacedLayer } from "./stackup-section.geometry";
 
 /** Where the chain of dimensions runs, to the right of the board. */
 const CHAIN = 20;
@@ -45,22 +46,10 @@ export function dimensionColumn(
 
 function numbers(p: PlacedLayer, row: number, right: number, unit: LengthUnit): Mark[] {
   const { layer } = p;
-  const soft = "ink-soft" as const;
-  if (layer.thickness_m === null)
-    return [text(right + 122, row + 4, "no data", { anchor: "end", ink: "fail" })];
-  const marks: Mark[] = [
-    text(
-      right + 122,
-      row + 4,
-      [
-        ...(p.exaggerated ? [{ text: "\u2248 ", ink: soft }] : []),
-        { text: lengthNumber(layer.thickness_m, unit) },
-        { text: `${THIN_SPACE}${unit}`, ink: soft },
-      ],
-      { anchor: "end" },
-    ),
-  ];
+  if (layer.thickness_m === null) return [text(right + 66, row + 4, "no data", { ink: "fail" })];
+  const marks = decimalText(right + DECIMAL, row + 4, lengthNumber(layer.thickness_m, unit), unit);
+  if (p.exaggerated) marks.unshift(text(right + 63, row + 4, "\u2248", { ink: "ink-soft" }));
   if (layer.dk !== null && layer.dk !== undefined)
-    marks.push(text(right + 178, row + 4, numberText(layer.dk, 2), { anchor: "end" }));
+    marks.push(text(right + 186, row + 4, numberText(layer.dk, 2), { anchor: "end" }));
   return marks;
 }

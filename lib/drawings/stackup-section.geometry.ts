@@ -1,6 +1,7 @@
 import { layerHeights } from "./layer-scale";
 import { type Drawing, emptyDrawing, line, type Mark, rect, text } from "./marks";
-import { lengthText, type LengthUnit } from "./number-text";
+import { decimalText } from "./decimal-text";
+import { lengthNumber, type LengthUnit } from "./number-text";
 import { scaleBar } from "./scale-bar";
 import { spreadLabels } from "./spread-labels";
 import { layerBody } from "./stackup-layer-body";
@@ -50,6 +51,8 @@ const ROW = 18;
 const HEAD = 26;
 const NAMES = 176;
 const NUMBERS = 216;
+/** Where the decimal points of the thicknesses stand, from the board's right edge. */
+export const DECIMAL = 84;
 
 /** Cross-section of the whole board: names at the left, the body to scale, dimensions at the right. */
 export function stackupSection(
@@ -74,6 +77,7 @@ export function stackupSection(
   const top = HEAD + 10;
   const bottom = y;
   const board = { left: NAMES, right: Math.max(width - NUMBERS, NAMES + 80), top, bottom };
+  const whole = Math.max(width, board.right + NUMBERS);
   const rows = spreadLabels(
     placed.map((p) => p.y + p.height / 2),
     ROW,
@@ -81,10 +85,14 @@ export function stackupSection(
     Math.max(bottom + 6, top + layers.length * ROW),
   );
 
-  const marks: Mark[] = [...headings(board, width)];
+  const marks: Mark[] = [...headings(board, whole)];
   const lit = placed.findIndex((p) => p.layer.id === options.highlight);
-  if (lit >= 0) marks.push(...highlightBand(placed[lit], rows[lit] ?? 0, board, width));
-  placed.forEach((p, i) => marks.push(...layerBody(placed, i, board, scale)));
+  if (lit >= 0) marks.push(...highlightBand(placed[lit], rows[lit] ?? 0, board, whole));
+  // Masks first: they run beneath the copper they cover.
+  const masksFirst = [...placed.keys()].sort(
+    (a, b) => Number(placed[b]?.layer.kind === "mask") - Number(placed[a]?.layer.kind === "mask"),
+  );
+  for (const i of masksFirst) marks.push(...layerBody(placed, i, board, scale));
   marks.push(
     rect(board.left, top, board.right - board.left, bottom - top, { stroke: "ink-soft", weight: 0.75 }),
   );
@@ -93,9 +101,9 @@ export function stackupSection(
   marks.push(...dimensionColumn(placed, rows, board.right, unit));
 
   const foot = Math.max(bottom, ...rows.map((r) => r + ROW / 2)) + 16;
-  marks.push(...footNotes(layers, exaggerated, board, foot, scale, unit));
+  marks.push(...footNotes(layers, exaggerated, board, foot, whole, scale, unit));
   return {
-    width: Math.max(width, board.right + NUMBERS),
+    width: whole,
     height: foot + 30,
     title,
     description: describeStackup(layers, exaggerated, unit),
@@ -122,9 +130,9 @@ function headings(board: Board, width: number): Mark[] {
   const y = HEAD - 10;
   return [
     text(0, y, "Layer", style),
-    text(board.right + 122, y, "Thickness", { ...style, anchor: "end" }),
-    text(board.right + 178, y, "Dk", { ...style, anchor: "end" }),
-    line(0, HEAD - 3, Math.max(width, board.right + NUMBERS), HEAD - 3, { stroke: "rule-line" }),
+    text(board.right + 66, y, "Thickness", style),
+    text(board.right + 186, y, "Dk", { ...style, anchor: "end" }),
+    line(0, HEAD - 3, width, HEAD - 3, { stroke: "rule-line" }),
   ];
 }
 
@@ -164,31 +172,37 @@ function nameRow(p: PlacedLayer, row: number, left: number, lit: boolean): Mark[
   ];
 }
 
+/** The sum under its column, the scale bar and what is not to scale under the body. */
 function footNotes(
   layers: readonly SectionLayer[],
   exaggerated: readonly boolean[],
   board: Board,
   y: number,
+  width: number,
   scale: number,
   unit: LengthUnit,
 ): Mark[] {
   const total = totalThickness(layers);
-  const marks: Mark[] = [...scaleBar(board.left, y + 4, scale, 90, unit)];
-  const thin = exaggerated.filter(Boolean).length;
-  if (thin > 0)
-    marks.push(
-      text(4, y + 8, thin === 1 ? "\u2248 1 layer drawn thicker" : `\u2248 ${thin} layers drawn thicker`, {
-        ink: "ink-soft",
-      }),
-    );
-  const words = total.complete ? lengthText(total.overCopper, unit) : "not complete";
-  marks.push(
-    line(board.right + 50, y - 6, board.right + NUMBERS, y - 6, { stroke: "ink-soft", weight: 0.75 }),
-    text(board.right + 150, y + 10, words, { anchor: "end", weight: 650 }),
-    text(board.right + 50, y + 10, "Total", { weight: 650 }),
-    text(board.right + 158, y + 10, "over copper", { ink: "ink-soft", size: 11 }),
-  );
-  return marks;
+  const thin = exaggerated.filter((is, i) => is && layers[i]?.thickness_m !== null).length;
+  const soft = { ink: "ink-soft" } as const;
+  return [
+    ...scaleBar(board.left, y + 4, scale, 90, unit),
+    ...(thin > 0
+      ? [
+          text(board.right, y + 8, `\u2248 ${thin === 1 ? "1 layer" : `${thin} layers`} drawn thicker`, {
+            ...soft,
+            anchor: "end",
+          }),
+        ]
+      : []),
+    line(4, y - 8, board.left - 22, y - 8, { stroke: "ink-soft", weight: 0.75 }),
+    line(board.right + 62, y - 8, width, y - 8, { stroke: "ink-soft", weight: 0.75 }),
+    text(4, y + 8, "Total", { weight: 650 }),
+    text(board.left - 26, y + 8, "over copper", { ...soft, anchor: "end" }),
+    ...(total.complete
+      ? decimalText(board.right + DECIMAL, y + 8, lengthNumber(total.overCopper, unit), unit, { weight: 650 })
+      : [text(board.right + DECIMAL - 12, y + 8, "not complete", soft)]),
+  ];
 }
 
 function shortened(words: string, letters: number): string {

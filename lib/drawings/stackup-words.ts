@@ -35,9 +35,9 @@ export function describeStackup(
   const sum = total.complete
     ? `Total ${lengthText(total.overCopper, unit)} over copper, ${lengthText(total.overMask, unit)} over mask.`
     : "The total is not known: a layer has no thickness.";
-  const scaleNote = exaggerated.some(Boolean)
+  const scaleNote = exaggerated.some((is, i) => is && layers[i]?.thickness_m !== null)
     ? ` Drawn thicker than to scale: ${layers
-        .filter((_, i) => exaggerated[i])
+        .filter((l, i) => exaggerated[i] && l.thickness_m !== null)
         .map((l) => l.name)
         .join(", ")}.`
     : " Drawn to scale.";

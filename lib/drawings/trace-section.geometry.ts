@@ -39,7 +39,8 @@ export interface TraceSectionOptions {
   equipotentials?: readonly Equipotential[];
 }
 
-const SIDE = 128;
+const LEFT = 92;
+const RIGHT = 172;
 const ABOVE = 58;
 const BELOW = 66;
 const PLANE = 9;
@@ -73,13 +74,13 @@ export function traceSection(
     ...shape.traces.map((t) => t.y + t.thickness + (shape.mask?.overTrace ?? 0)),
   );
   const half = Math.max(...shape.traces.map((t) => Math.abs(t.x) + Math.max(t.widthBottom, t.widthTop) / 2));
-  const reach = half + Math.max(1.2 * first.widthBottom, 0.9 * laminate, (shape.coplanar?.gap ?? 0) * 2);
-  const scale = Math.min((width - 2 * SIDE) / (2 * reach), (height - ABOVE - BELOW) / crest);
-  const centre = width / 2;
-  const base = height - BELOW;
+  const reach = half + Math.max(0.7 * first.widthBottom, 0.5 * laminate, (shape.coplanar?.gap ?? 0) * 1.6);
+  const scale = Math.min((width - LEFT - RIGHT) / (2 * reach), (height - ABOVE - BELOW) / crest);
+  const centre = (LEFT + width - RIGHT) / 2;
+  const base = height - BELOW - (height - ABOVE - BELOW - crest * scale) / 2;
   const at: Placement = { x: (m) => centre + m * scale, y: (m) => base - m * scale, scale };
   // The body runs on to the sides, whatever the height left of the scale.
-  const [left, right] = [SIDE, width - SIDE];
+  const [left, right] = [LEFT, width - RIGHT];
 
   const marks: Mark[] = [
     ...dielectrics(shape, at, left, right),
@@ -114,10 +115,15 @@ export function traceSection(
         { fill: "copper", hit: "trace" },
       ),
     ),
-    ...dimensions(shape, at, laminate, left, right, unit, base),
+    ...textLast(dimensions(shape, at, laminate, left, right, unit, base)),
     ...scaleBar(left, height - 8, scale, 100, unit),
   ];
   return { width, height, title, description: describeTrace(shape, unit), marks, scale };
+}
+
+/** Labels over all lines, so that their paper covers what crosses them. */
+function textLast(marks: Mark[]): Mark[] {
+  return [...marks.filter((m) => m.kind !== "text"), ...marks.filter((m) => m.kind === "text")];
 }
 
 function plane(left: number, right: number, top: number, bottom: number): Mark {
@@ -223,7 +229,7 @@ function dimensions(
       x: right + 14,
       from1: right,
       from2: right,
-      label: words("below", first.y).replace("below", "height below"),
+      label: words("height below", first.y),
     }),
     ...verticalDimension({
       y1: at.y(first.y),

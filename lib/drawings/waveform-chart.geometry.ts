@@ -115,7 +115,8 @@ export function waveformChart(
     ...bottomAxis(x, ticksFor(span, (box.right - box.left) / 90, "s").ticks, box),
     group(
       [
-        ...violations.flatMap((v) => shade(v, x, y, box)),
+        ...bands(violations, x, box),
+        ...violations.flatMap((v) => shade(v, v.probe === focus, x, y)),
         ...sound.map((l) => limitLine(l, x, y, box)),
         ...[...probes]
           .sort((a, b) => Number(a.id === focus) - Number(b.id === focus))
@@ -218,15 +219,28 @@ function findViolations(
 
 type Scale = ReturnType<typeof linear>;
 
-function shade(v: Violation, x: Scale, y: Scale, box: PlotBox): Mark[] {
+/** Spans in which any limit is passed, as bands; overlapping ones are one. */
+function bands(violations: readonly Violation[], x: Scale, box: PlotBox): Mark[] {
+  const spans: [number, number][] = [];
+  for (const v of [...violations].sort((a, b) => a.from - b.from)) {
+    const last = spans.at(-1);
+    if (last && v.from <= last[1]) last[1] = Math.max(last[1], v.to);
+    else spans.push([v.from, v.to]);
+  }
+  return spans.map(([from, to]) =>
+    rect(x(from), box.top, Math.max(x(to) - x(from), 1), box.bottom - box.top, {
+      fill: "fail",
+      fillOpacity: 0.07,
+    }),
+  );
+}
+
+/** What is past the limit: hatched for the wave in focus, tinted for the others. */
+function shade(v: Violation, focused: boolean, x: Scale, y: Scale): Mark[] {
   const outline = v.outline.map(([t, u]): Point => [x(t), y(u)]);
   return [
-    rect(x(v.from), box.top, Math.max(x(v.to) - x(v.from), 1), box.bottom - box.top, {
-      fill: "fail",
-      fillOpacity: 0.06,
-    }),
-    polygon(outline, { fill: "fail", fillOpacity: 0.16 }),
-    polygon(outline, { fill: "hatch-fail" }),
+    polygon(outline, { fill: "fail", fillOpacity: focused ? 0.16 : 0.08 }),
+    ...(focused ? [polygon(outline, { fill: "hatch-fail" })] : []),
   ];
 }
 
@@ -255,7 +269,7 @@ function limitNames(
   y: Scale,
   box: PlotBox,
 ): Mark[] {
-  const wanted = limits.map((l) => y(l.volts) + (l.side === "max" ? -ROW / 2 : ROW / 2));
+  const wanted = limits.map((l) => y(l.volts) + (l.side === "max" ? -10 : 10));
   const rows = spreadLabels(wanted, ROW, box.top, box.bottom);
   return limits.map((l, i) => {
     const broken = violations.some((v) => v.limit === l.id);
