@@ -1,0 +1,57 @@
+import {
+  Activity,
+  ClipboardCheck,
+  Factory,
+  FolderKanban,
+  Gauge,
+  Layers,
+  LayoutDashboard,
+  ListChecks,
+  type LucideIcon,
+  PackageCheck,
+  Ruler,
+  ScrollText,
+  Shapes,
+  Spline,
+  Users,
+} from "lucide-react";
+
+export interface Place {
+  label: string;
+  href: string;
+  icon: LucideIcon;
+}
+
+/** The places of a team. */
+export const PROJECTS: Place = { label: "Projects", href: "/projects", icon: FolderKanban };
+
+export const TEAM_PLACES: readonly Place[] = [
+  { label: "Team", href: "/team", icon: Users },
+  { label: "Audit", href: "/audit", icon: ScrollText },
+  { label: "Validation", href: "/validation", icon: Gauge },
+];
+
+/** The places of a manufacturer. */
+export const FABRICATION: Place = { label: "Fabrication", href: "/fabrication", icon: Factory };
+
+/** The places of a project, in the order in which the job is done. */
+export function projectPlaces(projectId: string): readonly Place[] {
+  const at = (name: string) => `/projects/${projectId}/${name}`;
+  return [
+    { label: "Overview", href: at("overview"), icon: LayoutDashboard },
+    { label: "Stackup", href: at("stackup"), icon: Layers },
+    { label: "Impedance", href: at("impedance"), icon: Ruler },
+    { label: "Classes", href: at("classes"), icon: Shapes },
+    { label: "Nets", href: at("nets"), icon: Spline },
+    { label: "Rules", href: at("rules"), icon: ListChecks },
+    { label: "Runs", href: at("runs"), icon: Activity },
+    { label: "Review", href: at("review"), icon: ClipboardCheck },
+    { label: "Releases", href: at("releases"), icon: PackageCheck },
+  ];
+}
+
+/** The project that an address is of; the page that makes a new one is of none. */
+export function projectOf(pathname: string): string | null {
+  const id = /^\/projects\/([^/]+)\//.exec(`${pathname}/`)?.[1];
+  return id === undefined || id === "new" ? null : id;
+}
