@@ -1,0 +1,7 @@
+export * from "./auth";
+export * from "./project";
+export * from "./net";
+export * from "./run";
+export * from "./review";
+export * from "./release";
+export * from "./ops";
