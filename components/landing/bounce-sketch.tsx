@@ -11,7 +11,7 @@ const LEFT = 48;
 const RIGHT = 300;
 /** Where the far end's voltage is drawn: 0 at its left, 1.6 of the swing at its right. */
 const PLOT_LEFT = 356;
-const PLOT_RIGHT = 596;
+const PLOT_RIGHT = 590;
 const FULL_SCALE = 1.6;
 /** Above this part of the swing the receiver's limit is broken. */
 const LIMIT = 1.2;
@@ -30,8 +30,7 @@ export function BounceSketch() {
       viewBox={`0 0 ${WIDTH} ${HEIGHT}`}
       role="img"
       aria-labelledby="sketch-title sketch-text"
-      className="h-auto w-full"
-      fontSize={12}
+      className="h-auto w-full text-[12px] max-sm:text-[17px]"
     >
       <title id="sketch-title">Bounce diagram of a 17 Ω driver on an open 50 Ω line</title>
       <desc id="sketch-text">
@@ -57,7 +56,7 @@ export function BounceSketch() {
           open
         </text>
         <text x={(PLOT_LEFT + PLOT_RIGHT) / 2} y={22}>
-          voltage at the receiver, in parts of the swing
+          voltage at the receiver<tspan className="max-sm:hidden">, in parts of the swing</tspan>
         </text>
       </g>
 
@@ -134,9 +133,9 @@ export function BounceSketch() {
       {farEnd.slice(1, 4).map((step) => (
         <text
           key={step.at}
-          x={volts(step.voltage) + (step.voltage > 1 ? 8 : -8)}
+          x={volts(step.voltage) + (step.voltage > LIMIT ? 8 : -8)}
           y={time(step.at + 1) + 4}
-          textAnchor={step.voltage > 1 ? "start" : "end"}
+          textAnchor={step.voltage > LIMIT ? "start" : "end"}
           className="fill-ink"
         >
           {step.voltage.toFixed(2)}

@@ -25,12 +25,16 @@ const PAGE = 15;
 /** Moves through rows: j or down, k or up, Home, End, page keys; Enter opens, Space ticks. */
 export function useRowKeys(options: Options): (event: KeyboardEvent) => void {
   const latest = useRef(options);
+  /** The row that the focus is on its way to: it may only be drawn after a scroll. */
+  const pending = useRef<string | null>(null);
   useEffect(() => {
     latest.current = options;
+    if (pending.current !== null && focusRow(options.scroller.current, pending.current))
+      pending.current = null;
   });
 
   function handle(event: Key): void {
-    const { ids, activeId, setActive, scroller, scrollTo, open, tick } = latest.current;
+    const { ids, activeId, setActive, scrollTo, open, tick } = latest.current;
     if (event.defaultPrevented || event.ctrlKey || event.metaKey || event.altKey) return;
     if (ids.length === 0 || isTyping(event.target)) return;
     const at = activeId === null ? -1 : ids.indexOf(activeId);
@@ -41,8 +45,7 @@ export function useRowKeys(options: Options): (event: KeyboardEvent) => void {
       if (id === undefined) return;
       setActive(id);
       scrollTo(next);
-      // The row may only be drawn after the scroll.
-      requestAnimationFrame(() => focusRow(scroller.current, id));
+      pending.current = id;
     } else if (at >= 0 && activeId !== null && !isControl(event.target)) {
       if (event.key === "Enter") {
         event.preventDefault();
@@ -96,10 +99,12 @@ function destination(key: string, at: number, count: number): number | null {
   }
 }
 
-function focusRow(scroller: HTMLElement | null, id: string): void {
-  const row = scroller?.querySelector<HTMLElement>(`[data-row-id="${CSS.escape(id)}"]`);
+function focusRow(scroller: HTMLElement | null, id: string): boolean {
+  const rows = scroller?.querySelectorAll<HTMLElement>("[data-row-id]") ?? [];
+  const row = [...rows].find((candidate) => candidate.dataset.rowId === id);
   row?.focus({ preventScroll: true });
   row?.scrollIntoView({ block: "nearest" });
+  return row !== undefined;
 }
 
 function isTyping(target: EventTarget | null): boolean {
