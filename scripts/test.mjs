@@ -36,8 +36,8 @@ console.log(`${counts.passed} passed, ${counts.failed} failed`);
 async function runAll() {
   const steps = [
     ["format", () => tool("prettier/bin/prettier.cjs", ["--check", "--log-level", "warn", "."])],
-    ["lint", () => tool("eslint/bin/eslint.js", [".", "--max-warnings", "0"])],
     ["route types", () => tool("next/dist/bin/next", ["typegen"], { quiet: true })],
+    ["lint", () => tool("eslint/bin/eslint.js", [".", "--max-warnings", "0"])],
     ["types", () => tool("typescript/bin/tsc", ["--noEmit"])],
     ["types of the engine", () => tool("typescript/bin/tsc", ["--noEmit", "-p", "lib/si/tsconfig.json"])],
     ["imports", () => runNpmScript("imports")],

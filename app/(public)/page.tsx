@@ -36,7 +36,7 @@ export default function LandingPage() {
           <Link className="prose-link" href={"/validation" as Route}>
             Validation
           </Link>
-          <LinkButton variant="primary" href={"/sign-in" as Route}>
+          <LinkButton variant="primary" href={"/sign-in"}>
             Sign in
           </LinkButton>
         </nav>
@@ -50,10 +50,10 @@ export default function LandingPage() {
             the fabricator builds by.
           </p>
           <div className="flex flex-wrap gap-3">
-            <LinkButton size="md" variant="primary" href={"/sign-in" as Route}>
+            <LinkButton size="md" variant="primary" href={"/sign-in"}>
               Sign in
             </LinkButton>
-            <LinkButton size="md" href={"/sign-up" as Route}>
+            <LinkButton size="md" href={"/sign-up"}>
               Make an account
             </LinkButton>
           </div>

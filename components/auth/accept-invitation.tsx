@@ -5,6 +5,7 @@ import { Button } from "@/components/ui/button";
 import { Skeleton } from "@/components/ui/skeleton";
 import { authClient } from "@/lib/client/auth";
 import { authMessage } from "@/lib/client/auth-messages";
+import { startAnew } from "@/lib/client/start-anew";
 import { FormError } from "./form-error";
 
 /** An invitation as its recipient sees it: the team, the role, yes or no. */
@@ -24,7 +25,7 @@ export function AcceptInvitation({ invitationId }: { invitationId: string }) {
       if (error) throw new Error(authMessage(error));
       await authClient.organization.setActive({ organizationId });
     },
-    onSuccess: () => window.location.assign("/projects"),
+    onSuccess: () => startAnew("/projects"),
   });
   const decline = useMutation({
     mutationFn: async () => {

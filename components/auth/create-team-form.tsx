@@ -7,6 +7,7 @@ import { Button } from "@/components/ui/button";
 import { Input } from "@/components/ui/input";
 import { authClient } from "@/lib/client/auth";
 import { authMessage } from "@/lib/client/auth-messages";
+import { startAnew } from "@/lib/client/start-anew";
 import { teamForm, type TeamForm as Values } from "@/lib/schemas/account";
 import { FormError } from "./form-error";
 
@@ -20,7 +21,7 @@ export function CreateTeamForm() {
     const { data, error } = await authClient.organization.create({ name, slug: slugOf(name) });
     if (error) return setRefusal(authMessage(error));
     await authClient.organization.setActive({ organizationId: data.id });
-    window.location.assign("/projects");
+    startAnew("/projects");
   });
 
   return (

@@ -1,7 +1,6 @@
 "use client";
 
 import { zodResolver } from "@hookform/resolvers/zod";
-import type { Route } from "next";
 import Link from "next/link";
 import { useState } from "react";
 import { useForm } from "react-hook-form";
@@ -29,7 +28,7 @@ export function ResetForm({ token }: { token: string }) {
     return (
       <p role="status">
         The password is changed.{" "}
-        <Link className="prose-link" href={"/sign-in" as Route}>
+        <Link className="prose-link" href={"/sign-in"}>
           Sign in with it
         </Link>
       </p>

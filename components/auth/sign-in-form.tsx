@@ -9,6 +9,7 @@ import { Button } from "@/components/ui/button";
 import { Input } from "@/components/ui/input";
 import { authClient } from "@/lib/client/auth";
 import { authMessage } from "@/lib/client/auth-messages";
+import { startAnew } from "@/lib/client/start-anew";
 import { signInForm, type SignInForm as Values } from "@/lib/schemas/account";
 import { DemoAccounts, type DemoAccount } from "./demo-accounts";
 import { FormError } from "./form-error";
@@ -36,8 +37,7 @@ export function SignInForm({ next, demoAccounts }: Props) {
       form.setError("root", { message: error.code });
       return;
     }
-    // A whole page load: every layout must be drawn anew for the person who is now signed in.
-    window.location.assign(next);
+    startAnew(next);
   });
 
   return (

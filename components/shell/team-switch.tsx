@@ -8,6 +8,7 @@ import { Menu, MenuChoice, MenuItem, MenuSeparator } from "@/components/ui/menu"
 import { toast } from "@/components/ui/toast";
 import { authClient } from "@/lib/client/auth";
 import { authMessage } from "@/lib/client/auth-messages";
+import { startAnew } from "@/lib/client/start-anew";
 import type { ShellTeam } from "./types";
 
 /** The team one works in, and the others one belongs to. */
@@ -16,7 +17,7 @@ export function TeamSwitch({ teams, active }: { teams: readonly ShellTeam[]; act
     const { error } = await authClient.organization.setActive({ organizationId });
     if (error) return void toast.error(authMessage(error));
     // Whatever is on screen belongs to the other team: begin anew.
-    window.location.assign("/projects");
+    startAnew("/projects");
   }
 
   return (

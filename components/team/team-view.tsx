@@ -7,6 +7,7 @@ import { TableSkeleton } from "@/components/ui/skeleton";
 import { toast } from "@/components/ui/toast";
 import { authClient } from "@/lib/client/auth";
 import { authMessage } from "@/lib/client/auth-messages";
+import { startAnew } from "@/lib/client/start-anew";
 import { roles } from "@/lib/schemas/role";
 import { InvitationsTable } from "./invitations-table";
 import { InviteForm } from "./invite-form";
@@ -58,7 +59,7 @@ function Leave({ organizationId, name }: { organizationId: string; name: string 
     setBusy(false);
     setAsking(false);
     if (error) toast.error(authMessage(error));
-    else window.location.assign("/projects");
+    else startAnew("/projects");
   }
 
   return (

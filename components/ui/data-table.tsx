@@ -213,7 +213,7 @@ export function DataTable<Row extends RowData>(props: Props<Row>) {
                 props.onOpen?.(row.original);
               }}
               className={cn(
-                "hover:bg-rule-line/30 h-8 -outline-offset-2",
+                "hover:bg-rule-line/30 h-8 scroll-mt-8 -outline-offset-2",
                 row.id === activeId && "bg-copper/10",
                 props.onOpen && "cursor-pointer",
                 props.rowClassName?.(row.original),

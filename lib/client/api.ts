@@ -61,9 +61,18 @@ export async function api<T>(method: Method, path: string, options: RequestOptio
     });
   } catch (cause) {
     if (cause instanceof DOMException && cause.name === "AbortError") throw cause;
-    throw new ApiError("The server could not be reached. Check the connection, then try again.", 0, "offline", {}, null, [], null, {
-      cause,
-    });
+    throw new ApiError(
+      "The server could not be reached. Check the connection, then try again.",
+      0,
+      "offline",
+      {},
+      null,
+      [],
+      null,
+      {
+        cause,
+      },
+    );
   }
   if (!response.ok) throw await readError(response);
   return (response.status === 204 ? undefined : await response.json()) as T;

@@ -29,7 +29,8 @@ const COLUMNS: DataColumn<Net>[] = [
 ];
 
 beforeAll(() => {
-  Element.prototype.scrollIntoView ??= () => undefined;
+  // jsdom lays nothing out and so has nowhere to scroll.
+  Object.defineProperty(Element.prototype, "scrollIntoView", { value: () => undefined });
   globalThis.ResizeObserver ??= class {
     observe() {}
     unobserve() {}

@@ -3,7 +3,7 @@ import { test as base, expect, type Page } from "@playwright/test";
 
 /** A page on which nothing may break the content policy, fail in the console, or throw. */
 export const test = base.extend<{ quietPage: Page }>({
-  quietPage: async ({ page }, use) => {
+  quietPage: async ({ page }, hand) => {
     const complaints: string[] = [];
     page.on("pageerror", (error) => complaints.push(`threw: ${error.message}`));
     page.on("console", (message) => {
@@ -13,13 +13,13 @@ export const test = base.extend<{ quietPage: Page }>({
     await page.exposeFunction("reportPolicyViolation", (what: string) => complaints.push(`policy: ${what}`));
     await page.addInitScript(() => {
       document.addEventListener("securitypolicyviolation", (event) => {
-        const report: unknown = Reflect.get(window, "reportPolicyViolation");
-        if (typeof report === "function") {
-          report(`${event.effectiveDirective} ${event.blockedURI} ${event.sample}`);
-        }
+        const { reportPolicyViolation } = window as unknown as {
+          reportPolicyViolation: (what: string) => void;
+        };
+        reportPolicyViolation(`${event.effectiveDirective} ${event.blockedURI} ${event.sample}`);
       });
     });
-    await use(page);
+    await hand(page);
     expect(complaints).toEqual([]);
   },
 });

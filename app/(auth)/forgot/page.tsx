@@ -1,4 +1,4 @@
-import type { Metadata, Route } from "next";
+import type { Metadata } from "next";
 import Link from "next/link";
 import { ForgotForm } from "@/components/auth/forgot-form";
 
@@ -10,7 +10,7 @@ export default function ForgotPage() {
       <h1 className="text-xl">Reset the password</h1>
       <p className="text-ink-soft">We send a link with which you choose a new one.</p>
       <ForgotForm />
-      <Link className="prose-link self-start text-sm" href={"/sign-in" as Route}>
+      <Link className="prose-link self-start text-sm" href={"/sign-in"}>
         Back to sign-in
       </Link>
     </>

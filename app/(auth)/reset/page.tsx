@@ -1,4 +1,4 @@
-import type { Metadata, Route } from "next";
+import type { Metadata } from "next";
 import Link from "next/link";
 import { ResetForm } from "@/components/auth/reset-form";
 
@@ -18,7 +18,7 @@ export default async function ResetPage({ searchParams }: Props) {
       ) : (
         <p className="text-ink-soft">
           This link was used already, has expired, or is incomplete.{" "}
-          <Link className="prose-link" href={"/forgot" as Route}>
+          <Link className="prose-link" href={"/forgot"}>
             Ask for a new one
           </Link>
         </p>

@@ -23,7 +23,7 @@ export default async function SignInPage({ searchParams }: Props) {
         <Link className="prose-link" href={`/sign-up${onward}` as Route}>
           Make an account
         </Link>
-        <Link className="prose-link" href={"/forgot" as Route}>
+        <Link className="prose-link" href={"/forgot"}>
           Reset the password
         </Link>
       </p>
