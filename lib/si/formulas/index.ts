@@ -1,4 +1,4 @@
-export * from "./formula";
+export type { CoupledLineResult, FormulaNote, SingleLineResult } from "./formula";
 export * from "./elliptic";
 export * from "./hammerstad-jensen";
 export * from "./wheeler-microstrip";
