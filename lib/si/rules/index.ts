@@ -1,0 +1,5 @@
+export * from "./types";
+export { mechanismTitles, ruleCatalogue } from "./catalogue";
+export { checkPath } from "./check-path";
+export { allCorners, cornerName, driverSpeeds, impedanceSides } from "./corners";
+export { defaultRuleSet, type DefaultRuleSetting } from "./defaults";
