@@ -19,8 +19,15 @@ const shared = globalThis as typeof globalThis & { __ringfenceDatabase?: Promise
 
 /** The process's one database, opened at first use. */
 export async function getDb(): Promise<Database> {
-  shared.__ringfenceDatabase ??= openDatabase(databaseUrl());
-  return (await shared.__ringfenceDatabase).db;
+  return (await openedDatabase()).db;
+}
+
+/** The same with its client and address; a failed opening is tried again at the next use. */
+export function openedDatabase(): Promise<OpenDatabase> {
+  return (shared.__ringfenceDatabase ??= openDatabase(databaseUrl()).catch((error: unknown) => {
+    shared.__ringfenceDatabase = undefined;
+    throw error;
+  }));
 }
 
 /** Makes tests and scripts work on a database of their own; null goes back to the configured one. */

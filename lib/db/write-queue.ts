@@ -1,4 +1,6 @@
+import "server-only";
 import type { Client } from "@libsql/client";
+import { isBusy, isCutOff } from "./busy";
 
 const MAX_ATTEMPTS = 60;
 const FIRST_WAIT_MS = 2;
@@ -13,19 +15,34 @@ const READS = /^\s*(select|explain|pragma\s+\w+\s*;?\s*$)/i;
  * On a file database the bare client loses an acknowledged write after one SQLITE_BUSY and blocks the event
  * loop while it waits. Here one unit (a statement, or a batch in one immediate transaction) runs at a time;
  * when the file is locked by another process the connection is dropped, the unit waits without blocking and
- * runs again from its beginning. Interactive transactions are refused: units of work are batches.
+ * runs again from its beginning. What cannot be run again whole is refused: interactive transactions, and
+ * scripts of several statements outside a transaction. Units of work are batches.
  */
 export function withWriteQueue(client: Client, onRetry: (attempt: number) => void = () => undefined): Client {
   let tail: Promise<unknown> = Promise.resolve();
+  let closed = false;
+
+  const whole = async <T>(unit: () => Promise<T>): Promise<T> => {
+    for (let attempt = 1; ; attempt++) {
+      try {
+        return await unit();
+      } catch (error) {
+        // A read whose connection a reconnect took away has done nothing yet; after close() nothing runs again.
+        if (closed || attempt >= MAX_ATTEMPTS || !(isBusy(error) || isCutOff(error))) throw error;
+        if (isBusy(error)) {
+          onRetry(attempt);
+          await reconnect(client);
+        }
+        await pause(attempt);
+      }
+    }
+  };
 
   const enqueue = <T>(unit: () => Promise<T>): Promise<T> => {
-    const result = tail.then(() => retryWhole(client, unit, onRetry));
+    const result = tail.then(() => whole(unit));
     tail = result.catch(() => undefined);
     return result;
   };
-
-  const sqlOf = (statement: unknown): string =>
-    typeof statement === "string" ? statement : String((statement as { sql?: unknown } | null)?.sql ?? "");
 
   return new Proxy(client, {
     get(target, property) {
@@ -33,20 +50,24 @@ export function withWriteQueue(client: Client, onRetry: (attempt: number) => voi
         case "execute":
           return (statement: never, args?: never) => {
             const unit = () => target.execute(statement, args as never);
-            return READS.test(sqlOf(statement)) ? retryWhole(target, unit, onRetry) : enqueue(unit);
+            return READS.test(sqlOf(statement)) ? whole(unit) : enqueue(unit);
           };
         case "batch":
           return (statements: never, mode?: "write" | "read" | "deferred") =>
             mode === "read"
-              ? retryWhole(target, () => target.batch(statements, "read"), onRetry)
+              ? whole(() => target.batch(statements, "read"))
               : enqueue(() => target.batch(statements, "write"));
         case "migrate":
           return (statements: never) => enqueue(() => target.migrate(statements));
         case "executeMultiple":
-          return (sql: string) => enqueue(() => target.executeMultiple(sql));
+          return () => refuse("Scripts of several statements are not used here. Send them as one batch.");
         case "transaction":
-          return () =>
-            Promise.reject(new Error("Interactive transactions are not used here. Send the unit as one batch."));
+          return () => refuse("Interactive transactions are not used here. Send the unit as one batch.");
+        case "close":
+          return () => {
+            closed = true;
+            target.close();
+          };
         default: {
           const value: unknown = Reflect.get(target, property, target);
           return typeof value === "function" ? (value as (...a: unknown[]) => unknown).bind(target) : value;
@@ -56,27 +77,12 @@ export function withWriteQueue(client: Client, onRetry: (attempt: number) => voi
   });
 }
 
-async function retryWhole<T>(client: Client, unit: () => Promise<T>, onRetry: (attempt: number) => void): Promise<T> {
-  for (let attempt = 1; ; attempt++) {
-    try {
-      return await unit();
-    } catch (error) {
-      if (!isBusy(error) || attempt >= MAX_ATTEMPTS) throw error;
-      onRetry(attempt);
-      await reconnect(client);
-      await pause(attempt);
-    }
-  }
+function sqlOf(statement: unknown): string {
+  return typeof statement === "string" ? statement : String((statement as { sql?: unknown } | null)?.sql ?? "");
 }
 
-/** SQLITE_BUSY, SQLITE_LOCKED and the client's own "statements in progress" that follows them. */
-export function isBusy(error: unknown): boolean {
-  for (let cause: unknown = error; cause instanceof Error; cause = cause.cause) {
-    const code = (cause as { code?: unknown }).code;
-    if (typeof code === "string" && /^SQLITE_(BUSY|LOCKED)/.test(code)) return true;
-    if (/database (table )?is locked|statements in progress/i.test(cause.message)) return true;
-  }
-  return false;
+function refuse(message: string): Promise<never> {
+  return Promise.reject(new Error(message));
 }
 
 async function reconnect(client: Client): Promise<void> {
