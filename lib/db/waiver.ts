@@ -1,0 +1,312 @@
+import "server-only";
+import { and, desc, eq, isNull, sql } from "drizzle-orm";
+import { judgeWaiver, type JudgedWaiver } from "@/lib/resolve/waiver-state";
+import { can, type Actor } from "@/lib/schemas/actor";
+import { NotFoundError, RefusedError } from "@/lib/schemas/errors";
+import { maxWaiverMs } from "@/lib/schemas/review";
+import { commitAudited } from "./audit";
+import { getDb } from "./client";
+import { now } from "./clock";
+import { hasEdited } from "./edit";
+import { newId } from "./ids";
+import { getRun, getRunPath, type RunRow } from "./run";
+import { finding, noDataAcceptance, pathResult, problem, run, signOff, user, waiver } from "./schema";
+
+export type WaiverRow = typeof waiver.$inferSelect;
+
+export interface WaiverView extends WaiverRow {
+  authorName: string | null;
+  judged: JudgedWaiver;
+}
+
+/**
+ * Excuses one problem of a finished run, bound to the values it had there. Not by somebody who edited the
+ * draft, and never a problem without data.
+ */
+export async function grantWaiver(
+  actor: Actor,
+  projectId: string,
+  input: { runId: string; pathId: string; mechanism: string; reason: string; expiresAt: number },
+): Promise<string> {
+  if (!can(actor, "review:waive")) throw new NotFoundError("The problem");
+  const row = await getRun(actor, projectId, input.runId);
+  await requireNotEditor(actor, row, "waive a problem of it");
+  const at = now();
+  if (input.expiresAt <= at) throw new RefusedError("The waiver would already have expired. Choose a later day.", "expiry", { expiresAt: "Choose a later day." });
+  if (input.expiresAt > at + maxWaiverMs)
+    throw new RefusedError("A waiver lasts two years at most. Choose an earlier day.", "expiry", { expiresAt: "Two years at most." });
+  const { findings, problems } = await getRunPath(actor, projectId, input.runId, input.pathId);
+  const found = problems.find((entry) => entry.mechanism === input.mechanism);
+  if (!found) throw new NotFoundError("The problem");
+  if (found.verdict === "no data")
+    throw new RefusedError("There is no value to waive: the problem has no data. Accept the missing input with a reason instead.", "no-data");
+  const waived = findings
+    .filter((entry) => entry.mechanism === input.mechanism && entry.verdict === "fail")
+    .flatMap((entry) =>
+      entry.value === null || entry.limit === null || entry.margin === null
+        ? []
+        : [{ rule: entry.rule, value: entry.value, limit: entry.limit, unit: entry.unit, margin: entry.margin, corner: entry.corner }],
+    );
+  if (waived.length === 0) throw new RefusedError("Nothing of this problem fails, so there is nothing to waive.", "nothing-fails");
+  const db = await getDb();
+  const id = newId();
+  await commitAudited(
+    actor,
+    [
+      db.insert(waiver).values({
+        id,
+        teamId: actor.teamId,
+        projectId,
+        pathLineageId: input.pathId,
+        pathName: found.pathName,
+        mechanism: input.mechanism,
+        runId: input.runId,
+        waived,
+        worstMargin: found.worstMargin,
+        reason: input.reason,
+        expiresAt: input.expiresAt,
+        createdBy: actor.userId,
+        createdAt: at,
+      }),
+    ],
+    {
+      action: "waiver.grant",
+      subjectKind: "waiver",
+      subjectId: id,
+      projectId,
+      detail: { path: found.pathName, problem: found.title, reason: input.reason, expiresAt: input.expiresAt },
+    },
+  );
+  return id;
+}
+
+export async function revokeWaiver(actor: Actor, projectId: string, waiverId: string): Promise<void> {
+  if (!can(actor, "review:waive")) throw new NotFoundError("The waiver");
+  const db = await getDb();
+  const [current] = await db
+    .select()
+    .from(waiver)
+    .where(and(eq(waiver.id, waiverId), eq(waiver.projectId, projectId), eq(waiver.teamId, actor.teamId)));
+  if (!current) throw new NotFoundError("The waiver");
+  if (current.revokedAt !== null) throw new RefusedError("This waiver was revoked already.", "revoked");
+  await commitAudited(
+    actor,
+    [
+      db
+        .update(waiver)
+        .set({ revokedAt: now(), revokedBy: actor.userId })
+        .where(and(eq(waiver.id, waiverId), eq(waiver.teamId, actor.teamId), isNull(waiver.revokedAt))),
+    ],
+    { action: "waiver.revoke", subjectKind: "waiver", subjectId: waiverId, projectId, detail: { path: current.pathName } },
+  );
+}
+
+/** Every waiver of the project, newest first, held against a run; without a run against itself. */
+export async function listWaivers(actor: Actor, projectId: string, row: RunRow | null): Promise<WaiverView[]> {
+  if (!can(actor, "project:read")) throw new NotFoundError("The project");
+  const db = await getDb();
+  const rows = await db
+    .select({ waiver, authorName: sql<string | null>`(SELECT name FROM ${user} WHERE id = ${waiver.createdBy})` })
+    .from(waiver)
+    .where(and(eq(waiver.projectId, projectId), eq(waiver.teamId, actor.teamId)))
+    .orderBy(desc(waiver.createdAt));
+  const at = now();
+  const views: WaiverView[] = [];
+  for (const { waiver: granted, authorName } of rows) {
+    const current = row ? await currentValues(actor, row.id, granted) : { findings: [], sameInputs: true };
+    views.push({ ...granted, authorName, judged: judgeWaiver(granted, current.findings, current.sameInputs, at) });
+  }
+  return views;
+}
+
+async function currentValues(actor: Actor, runId: string, granted: WaiverRow) {
+  const db = await getDb();
+  const [findings, hashes] = await db.batch([
+    db
+      .select({ rule: finding.rule, verdict: finding.verdict, margin: finding.margin })
+      .from(finding)
+      .where(
+        and(
+          eq(finding.runId, runId),
+          eq(finding.pathId, granted.pathLineageId),
+          eq(finding.mechanism, granted.mechanism),
+          eq(finding.counts, true),
+          eq(finding.teamId, actor.teamId),
+        ),
+      ),
+    db
+      .select({ runId: pathResult.runId, inputHash: pathResult.inputHash })
+      .from(pathResult)
+      .where(and(eq(pathResult.pathId, granted.pathLineageId), sql`${pathResult.runId} IN (${runId}, ${granted.runId})`)),
+  ]);
+  return { findings, sameInputs: new Set(hashes.map((entry) => entry.inputHash)).size <= 1 };
+}
+
+/** Keys of problems whose failures a waiver covers in this run: path lineage and mechanism. */
+export async function coveredProblems(actor: Actor, projectId: string, row: RunRow): Promise<Map<string, WaiverView>> {
+  const covered = new Map<string, WaiverView>();
+  for (const view of await listWaivers(actor, projectId, row))
+    if (view.judged.covers) covered.set(`${view.pathLineageId} ${view.mechanism}`, view);
+  return covered;
+}
+
+/** Takes a missing input as it is, with a reason, for the revision of the run. */
+export async function acceptNoData(
+  actor: Actor,
+  projectId: string,
+  input: { runId: string; missing: string; reason: string },
+): Promise<string> {
+  if (!can(actor, "review:waive")) throw new NotFoundError("The run");
+  const row = await getRun(actor, projectId, input.runId);
+  await requireNotEditor(actor, row, "accept what is missing in it");
+  const groups = await missingInputs(actor, row);
+  if (!groups.some((group) => group.missing === input.missing)) throw new NotFoundError("The missing input");
+  const db = await getDb();
+  if ((await listAcceptances(actor, row.revisionId)).some((entry) => entry.missing === input.missing))
+    throw new RefusedError("This missing input is accepted already.", "accepted");
+  const id = newId();
+  await commitAudited(
+    actor,
+    [
+      db.insert(noDataAcceptance).values({
+        id,
+        teamId: actor.teamId,
+        projectId,
+        revisionId: row.revisionId,
+        missing: input.missing,
+        reason: input.reason,
+        createdBy: actor.userId,
+        createdAt: now(),
+      }),
+    ],
+    { action: "no-data.accept", subjectKind: "run", subjectId: row.id, projectId, detail: { missing: input.missing, reason: input.reason } },
+  );
+  return id;
+}
+
+export async function withdrawAcceptance(actor: Actor, projectId: string, acceptanceId: string): Promise<void> {
+  if (!can(actor, "review:waive")) throw new NotFoundError("The acceptance");
+  const db = await getDb();
+  const [current] = await db
+    .select()
+    .from(noDataAcceptance)
+    .where(
+      and(
+        eq(noDataAcceptance.id, acceptanceId),
+        eq(noDataAcceptance.projectId, projectId),
+        eq(noDataAcceptance.teamId, actor.teamId),
+        isNull(noDataAcceptance.revokedAt),
+      ),
+    );
+  if (!current) throw new NotFoundError("The acceptance");
+  await commitAudited(
+    actor,
+    [
+      db
+        .update(noDataAcceptance)
+        .set({ revokedAt: now() })
+        .where(and(eq(noDataAcceptance.id, acceptanceId), eq(noDataAcceptance.teamId, actor.teamId))),
+    ],
+    { action: "no-data.withdraw", subjectKind: "revision", subjectId: current.revisionId, projectId, detail: { missing: current.missing } },
+  );
+}
+
+export async function listAcceptances(actor: Actor, revisionId: string) {
+  if (!can(actor, "project:read")) throw new NotFoundError("The revision");
+  const db = await getDb();
+  return db
+    .select({
+      id: noDataAcceptance.id,
+      missing: noDataAcceptance.missing,
+      reason: noDataAcceptance.reason,
+      createdAt: noDataAcceptance.createdAt,
+      authorName: sql<string | null>`(SELECT name FROM ${user} WHERE id = ${noDataAcceptance.createdBy})`,
+    })
+    .from(noDataAcceptance)
+    .where(
+      and(eq(noDataAcceptance.revisionId, revisionId), eq(noDataAcceptance.teamId, actor.teamId), isNull(noDataAcceptance.revokedAt)),
+    );
+}
+
+/** What is missing in a run, by the input that would fill it, with the paths that filling it would free. */
+export async function missingInputs(actor: Actor, row: RunRow): Promise<{ missing: string; paths: number }[]> {
+  if (!can(actor, "project:read")) throw new NotFoundError("The run");
+  const db = await getDb();
+  return db
+    .select({ missing: sql<string>`${problem.missing}`, paths: sql<number>`count(DISTINCT ${problem.pathId})` })
+    .from(problem)
+    .where(and(eq(problem.runId, row.id), eq(problem.teamId, actor.teamId), eq(problem.verdict, "no data"), sql`${problem.missing} IS NOT NULL`))
+    .groupBy(problem.missing)
+    .orderBy(sql`2 DESC`, problem.missing);
+}
+
+/** A reviewer's signature on a finished run of the draft; not by somebody who edited it. */
+export async function signRun(actor: Actor, projectId: string, runId: string, remark: string): Promise<string> {
+  if (!can(actor, "review:sign")) throw new NotFoundError("The run");
+  const row = await getRun(actor, projectId, runId);
+  if (row.state !== "done") throw new RefusedError(`Run ${row.number} is ${row.state}. Only a finished run can be signed.`, "unfinished");
+  await requireNotEditor(actor, row, "sign it off");
+  const db = await getDb();
+  const id = newId();
+  await commitAudited(
+    actor,
+    [
+      db.insert(signOff).values({
+        id,
+        teamId: actor.teamId,
+        projectId,
+        revisionId: row.revisionId,
+        runId,
+        inputHash: row.inputHash,
+        signedBy: actor.userId,
+        signedAt: now(),
+        remark,
+      }),
+    ],
+    { action: "run.sign", subjectKind: "run", subjectId: runId, projectId, detail: { number: row.number, remark } },
+  );
+  return id;
+}
+
+export async function withdrawSignature(actor: Actor, projectId: string, signOffId: string): Promise<void> {
+  if (!can(actor, "review:sign")) throw new NotFoundError("The signature");
+  const db = await getDb();
+  const [current] = await db
+    .select()
+    .from(signOff)
+    .where(
+      and(eq(signOff.id, signOffId), eq(signOff.projectId, projectId), eq(signOff.teamId, actor.teamId), eq(signOff.signedBy, actor.userId), isNull(signOff.withdrawnAt)),
+    );
+  if (!current) throw new NotFoundError("The signature");
+  await commitAudited(
+    actor,
+    [db.update(signOff).set({ withdrawnAt: now() }).where(and(eq(signOff.id, signOffId), eq(signOff.teamId, actor.teamId)))],
+    { action: "run.unsign", subjectKind: "run", subjectId: current.runId, projectId },
+  );
+}
+
+export async function listSignatures(actor: Actor, revisionId: string) {
+  if (!can(actor, "project:read")) throw new NotFoundError("The revision");
+  const db = await getDb();
+  return db
+    .select({
+      id: signOff.id,
+      runId: signOff.runId,
+      runNumber: run.number,
+      inputHash: signOff.inputHash,
+      signedBy: signOff.signedBy,
+      signerName: sql<string | null>`(SELECT name FROM ${user} WHERE id = ${signOff.signedBy})`,
+      signedAt: signOff.signedAt,
+      remark: signOff.remark,
+    })
+    .from(signOff)
+    .innerJoin(run, eq(run.id, signOff.runId))
+    .where(and(eq(signOff.revisionId, revisionId), eq(signOff.teamId, actor.teamId), isNull(signOff.withdrawnAt)))
+    .orderBy(desc(signOff.signedAt));
+}
+
+async function requireNotEditor(actor: Actor, row: RunRow, act: string): Promise<void> {
+  if (await hasEdited(actor, row.revisionId))
+
+    throw new RefusedError(`You edited this draft, so another reviewer must ${act}.`, "editor");
+}
