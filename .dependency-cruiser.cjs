@@ -55,7 +55,7 @@ module.exports = {
       to: { pathNot: "^(lib/si/|node_modules/decimal\\.js/)" },
     },
     ...mayOnlyImport("lib/schemas", ["lib/si"], { packages: "^node_modules/zod/" }),
-    ...mayOnlyImport("lib/resolve", pure),
+    ...mayOnlyImport("lib/resolve", [...pure, "lib/formats"]),
     ...mayOnlyImport("lib/formats", pure),
     ...mayOnlyImport("lib/drawings", pure),
     ...mayOnlyImport("lib/client", [...pure, "lib/formats"]),

@@ -2,7 +2,7 @@
  * Starts Ringfence from a bare checkout: installs, makes secrets, migrates, seeds the demo, builds, serves.
  * Each step is skipped when there is nothing to do. Uses nothing but Node, for at first there is nothing else.
  *
- *     npm start            serve what is built         PORT, HOST, APP_URL, DATA_DIR, DATABASE_URL, DEMO=0
+ *     npm start            serve what is built         PORT, HOST, BASE_URL, DATA_DIR, DATABASE_URL, DEMO=0
  *     npm run dev          serve while editing
  */
 import { existsSync, rmSync, writeFileSync } from "node:fs";
@@ -77,7 +77,7 @@ function announce(settings, accounts) {
     "",
     process.env.SMTP_URL
       ? "Mail goes out over SMTP."
-      : `Mail goes nowhere: it is kept in the local outbox, ${settings.url}/outbox`,
+      : `Mail goes nowhere: it is kept in the local outbox, ${settings.url}/dev/outbox`,
     "",
   );
   console.log(lines.join("\n"));

@@ -1,7 +1,6 @@
 import {
   Activity,
   ClipboardCheck,
-  Factory,
   FolderKanban,
   Gauge,
   Layers,
@@ -22,17 +21,17 @@ export interface Place {
   icon: LucideIcon;
 }
 
-/** The places of a team. */
+/** Where one chooses what to work on. */
 export const PROJECTS: Place = { label: "Projects", href: "/projects", icon: FolderKanban };
 
-export const TEAM_PLACES: readonly Place[] = [
-  { label: "Team", href: "/team", icon: Users },
-  { label: "Audit", href: "/audit", icon: ScrollText },
-  { label: "Validation", href: "/validation", icon: Gauge },
-];
-
-/** The places of a manufacturer. */
-export const FABRICATION: Place = { label: "Fabrication", href: "/fabrication", icon: Factory };
+/** What else there is for a team; a place that would only answer "not found" is left out. */
+export function teamPlaces(mayReadAudit: boolean): readonly Place[] {
+  return [
+    { label: "Team", href: "/team", icon: Users },
+    ...(mayReadAudit ? [{ label: "Audit", href: "/audit", icon: ScrollText }] : []),
+    { label: "Validation", href: "/validation", icon: Gauge },
+  ];
+}
 
 /** The places of a project, in the order in which the job is done. */
 export function projectPlaces(projectId: string): readonly Place[] {

@@ -14,12 +14,15 @@ interface Props {
 /** The bar of a project: its name, the revision looked at, and what keeps it from release. */
 export function ProjectBar({ projectId, name, revisions, blockers }: Props) {
   return (
-    <div className="border-rule-line flex min-h-10 flex-wrap items-center gap-x-4 gap-y-1 border-b px-4 py-1 text-sm lg:px-6 print:hidden">
+    <section
+      aria-label="Project"
+      className="border-rule-line flex min-h-10 flex-wrap items-center gap-x-4 gap-y-1 border-b px-4 py-1 text-sm lg:px-6 print:hidden"
+    >
       <Link href={`/projects/${projectId}/overview` as Route} className="font-medium hover:underline">
         {name}
       </Link>
       <RevisionSwitch revisions={revisions} />
       {blockers ? <div className="ml-auto">{blockers}</div> : null}
-    </div>
+    </section>
   );
 }

@@ -5,10 +5,10 @@ import Link from "next/link";
 import { usePathname, useSearchParams } from "next/navigation";
 import { cn } from "@/components/ui/class-names";
 import { REVISION_PARAM } from "@/lib/client/revision-param";
-import { type Place, projectOf, projectPlaces, PROJECTS, TEAM_PLACES } from "./places";
+import { type Place, projectOf, projectPlaces, PROJECTS, teamPlaces } from "./places";
 
 /** Where one can go: a rail at the left where there is room, a strip under the header where there is not. */
-export function Rail() {
+export function Rail({ mayReadAudit }: { mayReadAudit: boolean }) {
   const pathname = usePathname();
   const projectId = projectOf(pathname);
   const revision = useSearchParams().get(REVISION_PARAM);
@@ -30,7 +30,7 @@ export function Rail() {
           ))}
         </div>
       ) : null}
-      {TEAM_PLACES.map((place) => (
+      {teamPlaces(mayReadAudit).map((place) => (
         <RailLink key={place.href} place={place} current={isWithin(pathname, place.href)} />
       ))}
     </nav>

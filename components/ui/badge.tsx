@@ -14,7 +14,7 @@ const TONES = {
 export function Badge({ tone = "plain", children }: { tone?: keyof typeof TONES; children: ReactNode }) {
   return (
     <span
-      className={`inline-flex h-5 items-center gap-1 rounded border px-1.5 text-xs whitespace-nowrap ${TONES[tone]}`}
+      className={`inline-flex h-5 w-fit items-center gap-1 rounded border px-1.5 text-xs whitespace-nowrap ${TONES[tone]}`}
     >
       {children}
     </span>

@@ -4,7 +4,7 @@ import { cn } from "./class-names";
 /** The classes shared by everything one types or picks in. */
 export const controlClasses = cn(
   "h-8 w-full min-w-0 rounded border border-field-line bg-sheet px-2 text-sm text-ink",
-  "placeholder:text-ink-soft read-only:border-rule-line disabled:opacity-60",
+  "placeholder:text-ink-soft disabled:opacity-60 [&[readonly]]:border-rule-line",
   "aria-invalid:border-fail",
 );
 

@@ -15,10 +15,10 @@ export function readSettings() {
     throw new SetupError(`PORT is '${process.env.PORT}', which is no port. Write a number from 1 to 65535.`);
   }
   const host = process.env.HOST ?? "127.0.0.1";
-  const url = (process.env.APP_URL ?? `http://localhost:${port}`).replace(/\/+$/, "");
+  const url = (process.env.BASE_URL ?? `http://localhost:${port}`).replace(/\/+$/, "");
   if (!URL.canParse(url)) {
     throw new SetupError(
-      `APP_URL is '${url}', which is no address. Write one such as https://board.example.org.`,
+      `BASE_URL is '${url}', which is no address. Write one such as https://board.example.org.`,
     );
   }
   const dataDir = path.resolve(process.env.DATA_DIR ?? "data");
@@ -56,8 +56,7 @@ export function childEnvironment(settings, { demo }) {
     ...process.env,
     PORT: String(settings.port),
     DATA_DIR: settings.dataDir,
-    APP_URL: settings.url,
-    BETTER_AUTH_URL: settings.url,
+    BASE_URL: settings.url,
     BETTER_AUTH_SECRET: settings.secret,
     RINGFENCE_DEMO: demo ? "1" : "0",
     NEXT_TELEMETRY_DISABLED: "1",
