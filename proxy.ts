@@ -12,6 +12,8 @@ export function proxy(request: NextRequest): NextResponse {
   const headers = new Headers(request.headers);
   headers.set("x-nonce", nonce);
   headers.set("content-security-policy", policy);
+  // Where to return to after signing in.
+  headers.set("x-address", request.nextUrl.pathname + request.nextUrl.search);
 
   const response = NextResponse.next({ request: { headers } });
   response.headers.set("content-security-policy", policy);

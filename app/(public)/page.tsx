@@ -1,9 +1,11 @@
 import type { Route } from "next";
+import { headers } from "next/headers";
 import Link from "next/link";
 import { BounceSketch } from "@/components/landing/bounce-sketch";
 import { Cautions } from "@/components/landing/cautions";
 import { Mark } from "@/components/shell/mark";
 import { LinkButton } from "@/components/ui/link-button";
+import { signedInFrom } from "@/lib/auth/require-actor";
 
 const WORK = [
   {
@@ -24,7 +26,8 @@ const WORK = [
   },
 ];
 
-export default function LandingPage() {
+export default async function LandingPage() {
+  const signedIn = await signedInFrom(await headers());
   return (
     <div className="mx-auto flex min-h-dvh max-w-6xl flex-col px-6 py-6">
       <header className="flex items-center justify-between gap-4">
@@ -36,9 +39,11 @@ export default function LandingPage() {
           <Link className="prose-link" href={"/validation" as Route}>
             Validation
           </Link>
-          <LinkButton variant="primary" href={"/sign-in"}>
-            Sign in
-          </LinkButton>
+          {signedIn ? null : (
+            <LinkButton variant="primary" href="/sign-in">
+              Sign in
+            </LinkButton>
+          )}
         </nav>
       </header>
 
@@ -50,12 +55,20 @@ export default function LandingPage() {
             the fabricator builds by.
           </p>
           <div className="flex flex-wrap gap-3">
-            <LinkButton size="md" variant="primary" href={"/sign-in"}>
-              Sign in
-            </LinkButton>
-            <LinkButton size="md" href={"/sign-up"}>
-              Make an account
-            </LinkButton>
+            {signedIn ? (
+              <LinkButton size="md" variant="primary" href="/projects">
+                Open your projects
+              </LinkButton>
+            ) : (
+              <>
+                <LinkButton size="md" variant="primary" href="/sign-in">
+                  Sign in
+                </LinkButton>
+                <LinkButton size="md" href="/sign-up">
+                  Make an account
+                </LinkButton>
+              </>
+            )}
           </div>
           <dl className="border-rule-line mt-4 flex flex-col gap-4 border-t pt-6">
             {WORK.map((entry) => (

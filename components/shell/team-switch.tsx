@@ -39,7 +39,7 @@ export function TeamSwitch({ teams, active }: { teams: readonly ShellTeam[]; act
       ) : null}
       <MenuSeparator />
       <MenuItem asChild>
-        <Link href={"/team/new" as Route}>Make a team</Link>
+        <Link href={"/create-team" as Route}>Make a team</Link>
       </MenuItem>
     </Menu>
   );
