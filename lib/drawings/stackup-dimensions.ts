@@ -2,10 +2,12 @@ import { arrow } from "./dimension";
 import { circle, line, type Mark, text } from "./marks";
 import { decimalText } from "./decimal-text";
 import { lengthNumber, type LengthUnit, numberText } from "./number-text";
-import { DECIMAL, type PlacedLayer } from "./stackup-section.geometry";
+import type { PlacedLayer } from "./stackup-section.geometry";
 
 /** Where the chain of dimensions runs, to the right of the board. */
 const CHAIN = 20;
+/** Where the decimal points of the thicknesses stand, from the board's right edge. */
+export const DECIMAL = 84;
 const ROOM_FOR_ARROWS = 18;
 
 /**

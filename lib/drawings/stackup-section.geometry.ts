@@ -5,7 +5,7 @@ import { lengthNumber, type LengthUnit } from "./number-text";
 import { scaleBar } from "./scale-bar";
 import { spreadLabels } from "./spread-labels";
 import { layerBody } from "./stackup-layer-body";
-import { dimensionColumn } from "./stackup-dimensions";
+import { DECIMAL, dimensionColumn } from "./stackup-dimensions";
 import { describeStackup, isCopper, totalThickness } from "./stackup-words";
 
 /** One layer as it is drawn, top to bottom. */
@@ -51,8 +51,6 @@ const ROW = 18;
 const HEAD = 26;
 const NAMES = 176;
 const NUMBERS = 216;
-/** Where the decimal points of the thicknesses stand, from the board's right edge. */
-export const DECIMAL = 84;
 
 /** Cross-section of the whole board: names at the left, the body to scale, dimensions at the right. */
 export function stackupSection(
