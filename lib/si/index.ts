@@ -5,3 +5,5 @@ export * from "./formulas";
 export * from "./cross-section";
 export * from "./physical-constants";
 export * from "./line";
+export * from "./stackup";
+export * from "./materials";

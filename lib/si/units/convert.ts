@@ -59,6 +59,34 @@ export function addExact(quantities: readonly Quantity[], unit: string): Quantit
   return { value: decimalToText(sum.div(to.factor)), unit: to.unit };
 }
 
+export interface WeightedQuantity {
+  quantity: Quantity;
+  /** exact factors, such as a count of plies or 1 − coverage; decimal text or whole numbers */
+  factors?: readonly (string | number)[];
+  /** per cent of it that is left out: (1 − percent/100), exact */
+  lessPercent?: string;
+  subtract?: boolean;
+}
+
+/**
+ * Exact weighted sum, in `unit`: Σ ± quantity × factors × (1 − lessPercent/100).
+ * @throws DomainError for unknown units, units of different kinds and factors that are no decimal numbers
+ */
+export function addWeightedExact(terms: readonly WeightedQuantity[], unit: string): Quantity {
+  const to = namedUnit(unit);
+  let sum = new Decimal(0);
+  for (const term of terms) {
+    let value = toSiExact(term.quantity, to.dimension);
+    for (const factor of term.factors ?? [])
+      value = value.times(decimalOf({ value: String(factor), unit: "1" }));
+    if (term.lessPercent !== undefined) {
+      value = value.times(new Decimal(1).minus(decimalOf({ value: term.lessPercent, unit: "%" }).div(100)));
+    }
+    sum = term.subtract ? sum.minus(value) : sum.plus(value);
+  }
+  return { value: decimalToText(sum.div(to.factor)), unit: to.unit };
+}
+
 function decimalOf(quantity: Quantity): Decimal {
   let value: Decimal | null = null;
   try {

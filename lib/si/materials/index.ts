@@ -1,0 +1,3 @@
+export { dielectricFamilies, type DielectricFamily } from "./dielectrics";
+export { findGlassStyle, glassStyles, type GlassStyle } from "./glass-styles";
+export { copperFoils, foilTreatments, type CopperFoil } from "./copper-foils";
