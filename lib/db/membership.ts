@@ -2,7 +2,7 @@ import "server-only";
 import { and, asc, eq } from "drizzle-orm";
 import { role, type Role } from "@/lib/schemas/role";
 import { getDb } from "./client";
-import { member, organization } from "./schema";
+import { member, organization, session } from "./schema";
 
 /** These functions make actors, so they take the signed-in person's id instead of one. */
 
@@ -35,6 +35,12 @@ export async function readRole(userId: string, teamId: string): Promise<Role | n
     .from(member)
     .where(and(eq(member.userId, userId), eq(member.organizationId, teamId)));
   return role.safeParse(row?.role).data ?? null;
+}
+
+/** The team that a session works in from now on. */
+export async function rememberTeam(sessionId: string, teamId: string): Promise<void> {
+  const db = await getDb();
+  await db.update(session).set({ activeOrganizationId: teamId }).where(eq(session.id, sessionId));
 }
 
 export async function findTeamIdBySlug(slug: string): Promise<string | null> {

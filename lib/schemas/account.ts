@@ -10,10 +10,11 @@ const email = z
 
 /** Long rather than odd: length is what guessing costs. */
 export const PASSWORD_MIN = 10;
+export const PASSWORD_MAX = 128;
 const newPassword = z
   .string()
   .min(PASSWORD_MIN, `Use at least ${PASSWORD_MIN} characters; a few unrelated words do well.`)
-  .max(128, "At most 128 characters.");
+  .max(PASSWORD_MAX, `At most ${PASSWORD_MAX} characters.`);
 
 export const signInForm = z.object({ email, password: z.string().min(1, "Write your password.") });
 export const signUpForm = z.object({ name: nameText(80), email, password: newPassword });
