@@ -1,5 +1,5 @@
 import { DomainError } from "../errors";
-import { NodeMap } from "./node-map";
+import type { NodeMap } from "./node-map";
 
 export interface DcResistor {
   a: string;
@@ -17,7 +17,12 @@ export interface DcResistor {
  * @returns [V] in the order of `wanted`
  * @throws DomainError where a wanted node has no DC path to any fixed voltage
  */
-export function dcLevels(resistors: readonly DcResistor[], fixed: ReadonlyMap<string, number>, nodes: NodeMap, wanted: readonly string[]): number[] {
+export function dcLevels(
+  resistors: readonly DcResistor[],
+  fixed: ReadonlyMap<string, number>,
+  nodes: NodeMap,
+  wanted: readonly string[],
+): number[] {
   const volts = new Map<string, number>([[nodes.find("0"), 0]]);
   for (const [node, value] of fixed) volts.set(nodes.find(node), value);
   const index = new Map<string, number>();
@@ -42,7 +47,8 @@ export function dcLevels(resistors: readonly DcResistor[], fixed: ReadonlyMap<st
   return wanted.map((node) => {
     const key = nodes.find(node);
     const known = volts.get(key) ?? solved[index.get(key) ?? -1];
-    if (known === undefined || !Number.isFinite(known)) throw new DomainError(`${node} has no DC path to a driver or a rail.`, "parts");
+    if (known === undefined || !Number.isFinite(known))
+      throw new DomainError(`${node} has no DC path to a driver or a rail.`, "parts");
     return known;
   });
 }
@@ -61,7 +67,8 @@ function solve(rows: Float64Array[]): number[] {
   const result = new Array<number>(size).fill(NaN);
   for (let k = 0; k < size; k++) {
     let best = k;
-    for (let i = k + 1; i < size; i++) if (Math.abs(rows[i]?.[k] ?? 0) > Math.abs(rows[best]?.[k] ?? 0)) best = i;
+    for (let i = k + 1; i < size; i++)
+      if (Math.abs(rows[i]?.[k] ?? 0) > Math.abs(rows[best]?.[k] ?? 0)) best = i;
     const pivotRow = rows[best];
     const swapped = rows[k];
     if (!pivotRow || !swapped) continue;

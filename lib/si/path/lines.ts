@@ -19,13 +19,23 @@ export interface PathLine {
  * @param sections  all with impedance and delay; those of no length are already joined in `nodes`
  * @param kept      nodes that must stay: pins, part ends
  */
-export function chainLines(sections: readonly PathSection[], nodes: NodeMap, kept: ReadonlySet<string>): PathLine[] {
+export function chainLines(
+  sections: readonly PathSection[],
+  nodes: NodeMap,
+  kept: ReadonlySet<string>,
+): PathLine[] {
   const lines: PathLine[] = [];
   for (const section of sections) {
     const a = nodes.find(section.a);
     const b = nodes.find(section.b);
     if (!section.impedance || section.delayPerMeter === null || section.length <= 0 || a === b) continue;
-    lines.push({ a, b, impedance: section.impedance, delay: section.length * section.delayPerMeter, sections: [section.id] });
+    lines.push({
+      a,
+      b,
+      impedance: section.impedance,
+      delay: section.length * section.delayPerMeter,
+      sections: [section.id],
+    });
   }
   const at = new Map<string, Set<PathLine>>();
   const touch = (node: string, line: PathLine) => {

@@ -1,5 +1,6 @@
 import type { LinearPart, LineSection, Network } from "../network/types";
 import type { Corner, DriverSpeed } from "../rules/types";
+import { coupledBias, couplingTime, joinNodes } from "./coupling";
 import { dcLevels, type DcResistor } from "./levels";
 import { chainLines, type PathLine } from "./lines";
 import { NodeMap } from "./node-map";
@@ -9,8 +10,6 @@ import { watchWindow } from "./window";
 
 /** A linear ramp's 10–90 % time is 0.8 of its whole. */
 export const RAMP_SHARE = 0.8;
-/** A series capacitor this many times slower than the window passes the edge whole: a coupling capacitor. */
-const COUPLING = 20;
 
 export interface PathProbe {
   pin: PathPin;
@@ -32,13 +31,6 @@ export interface CornerNetwork {
   /** 0–100 % time of the source ramp, which starts at t = 0 [s] */
   ramp: number;
 }
-
-export interface Unsimulated {
-  input: string;
-  detail: string;
-}
-
-const speeds: readonly DriverSpeed[] = ["slow", "typical", "fast"];
 
 /**
  * A path with one of its pins driving, as a network whose corner values are filled in place: the topology is worked
@@ -72,7 +64,7 @@ export class PathNetwork {
     const listening = path.receivers.filter((pin) => pin.node !== driverPin.node && pin.receiver !== null);
     const delays = listening.map((pin) => trace.to(pin.node).delay ?? 0);
     this.delay = Math.max(0, ...delays);
-    const coupling = COUPLING * (path.bitTime ?? 20 * this.delay + driver.riseTime.slow);
+    const coupling = couplingTime(path, driver);
     this.nodes = joinNodes(path, coupling);
     const rails = new Map(path.rails.map((rail) => [this.nodes.find(rail.node), rail.volts]));
     const kept = new Set([...path.drivers, ...path.receivers].map((pin) => this.nodes.find(pin.node)));
@@ -82,7 +74,15 @@ export class PathNetwork {
     this.ramp = { time: [0, 1e-12], value: [0, driver.vdd] };
     this.network = {
       rails: [...rails].map(([node, volts]) => ({ name: node, node, volts })),
-      drivers: [{ name: driverPin.pin, kind: "thevenin", node: this.driverNode, resistance: 0, wave: { kind: "pwl", ...this.ramp } }],
+      drivers: [
+        {
+          name: driverPin.pin,
+          kind: "thevenin",
+          node: this.driverNode,
+          resistance: 0,
+          wave: { kind: "pwl", ...this.ramp },
+        },
+      ],
       sections: this.sections,
       parts: [],
       probes: [],
@@ -118,7 +118,10 @@ export class PathNetwork {
 
   /** Source resistance as the line sees it: the driver with its series resistors [Ω]. */
   seriesResistance(): number {
-    return this.path.parts.reduce((sum, part) => (part.role === "series" && part.kind === "R" ? sum + (part.value ?? 0) : sum), 0);
+    return this.path.parts.reduce(
+      (sum, part) => (part.role === "series" && part.kind === "R" ? sum + (part.value ?? 0) : sum),
+      0,
+    );
   }
 
   private roundTripGain({ driver, impedance }: Corner): number {
@@ -134,7 +137,8 @@ export class PathNetwork {
   private timeConstants({ driver, impedance }: Corner, line: number): number {
     let farads = 0;
     for (const load of this.loads) farads += load.farads[driver];
-    for (const part of this.network.parts) if (part.kind === "C" && part.name !== "load") farads += part.value;
+    for (const part of this.network.parts)
+      if (part.kind === "C" && part.name !== "load") farads += part.value;
     const source = this.driver.resistance[driver] + this.seriesResistance();
     const henries = this.network.parts.reduce((sum, part) => (part.kind === "L" ? sum + part.value : sum), 0);
     const z = this.lines[0]?.impedance[impedance] ?? line;
@@ -143,7 +147,14 @@ export class PathNetwork {
 
   private addLines() {
     this.lines.forEach((line, i) => {
-      this.sections.push({ name: line.sections[0] ?? `line ${i}`, kind: "line", a: line.a, b: line.b, impedance: line.impedance.nominal, delay: line.delay });
+      this.sections.push({
+        name: line.sections[0] ?? `line ${i}`,
+        kind: "line",
+        a: line.a,
+        b: line.b,
+        impedance: line.impedance.nominal,
+        delay: line.delay,
+      });
     });
   }
 
@@ -151,7 +162,8 @@ export class PathNetwork {
     for (const part of this.path.parts) {
       const a = this.nodes.find(part.a);
       const b = this.nodes.find(part.b);
-      if (a !== b && part.value !== null && part.value > 0) this.network.parts.push({ name: part.reference, kind: part.kind, a, b, value: part.value });
+      if (a !== b && part.value !== null && part.value > 0)
+        this.network.parts.push({ name: part.reference, kind: part.kind, a, b, value: part.value });
     }
   }
 
@@ -163,27 +175,44 @@ export class PathNetwork {
     for (const pin of this.path.drivers) {
       // A driver that is off loads the line by its capacitance; one that can also receive is counted above.
       const c = pin.driver?.capacitance ?? 0;
-      if (c > 0 && (pin.node === this.driverPin.node || !pin.receiver)) this.addLoad(pin.node, { slow: c, typical: c, fast: c });
+      if (c > 0 && (pin.node === this.driverPin.node || !pin.receiver))
+        this.addLoad(pin.node, { slow: c, typical: c, fast: c });
     }
   }
 
   private addLoad(pinNode: string, farads: Record<DriverSpeed, number>) {
     if (Math.max(farads.slow, farads.typical, farads.fast) <= 0) return;
-    const part: LinearPart = { name: "load", kind: "C", a: this.nodes.find(pinNode), b: "0", value: farads.typical };
+    const part: LinearPart = {
+      name: "load",
+      kind: "C",
+      a: this.nodes.find(pinNode),
+      b: "0",
+      value: farads.typical,
+    };
     this.network.parts.push(part);
     this.loads.push({ part, farads });
   }
 
   private addProbes(listening: readonly PathPin[], delays: readonly number[], coupling: number) {
     const wanted = listening.map((pin) => pin.node);
-    const levels = { slow: this.dc("slow", wanted), typical: this.dc("typical", wanted), fast: this.dc("fast", wanted) };
+    const levels = {
+      slow: this.dc("slow", wanted),
+      typical: this.dc("typical", wanted),
+      fast: this.dc("fast", wanted),
+    };
     listening.forEach((pin, i) => {
       if (!pin.receiver) return;
       const bias = coupledBias(this.path, this.driverPin.node, pin.node, coupling);
-      const at = (speed: DriverSpeed) => ({ low: levels[speed].low[i] ?? 0, high: levels[speed].high[i] ?? 0 });
+      const at = (speed: DriverSpeed) => ({
+        low: levels[speed].low[i] ?? 0,
+        high: levels[speed].high[i] ?? 0,
+      });
       const middle = (at("typical").low + at("typical").high) / 2;
       const offset = bias === null ? 0 : bias - middle;
-      const shifted = (speed: DriverSpeed) => ({ low: at(speed).low + offset, high: at(speed).high + offset });
+      const shifted = (speed: DriverSpeed) => ({
+        low: at(speed).low + offset,
+        high: at(speed).high + offset,
+      });
       const node = this.nodes.find(pin.node);
       this.network.probes.push({ name: pin.pin, node });
       this.probes.push({
@@ -216,62 +245,4 @@ export class PathNetwork {
     const high = dcLevels(resistors, new Map([...fixed, ["source", this.driver.vdd]]), joined, nodes);
     return { low, high };
   }
-}
-
-/** What keeps a resolved path from being simulated with this driver, or null. */
-export function cannotSimulate(path: ResolvedPath): Unsimulated | null {
-  const first = path.missing[0];
-  if (first) return first;
-  const delay = path.sections.reduce((sum, section) => sum + section.length * (section.delayPerMeter ?? 0), 0);
-  for (const pin of path.drivers) {
-    const coupling = COUPLING * (path.bitTime ?? 20 * delay + (pin.driver?.riseTime.slow ?? 0));
-    for (const part of path.parts)
-      if (part.kind === "C" && part.role === "series" && !isCoupling(path, part.value, coupling) && isOnARoute(path, pin, part.reference))
-        return { input: `simulation of ${part.reference}`, detail: `${part.reference} is in series but too small to pass whole bits; such a filter is not simulated yet.` };
-    for (const receiver of path.receivers)
-      if (receiver.node !== pin.node && coupledBias(path, pin.node, receiver.node, coupling) !== null && Number.isNaN(coupledBias(path, pin.node, receiver.node, coupling)))
-        return { input: `bias of ${receiver.net}`, detail: `A capacitor blocks the DC level of ${receiver.pin}, and no resistor to a rail sets it.` };
-  }
-  return null;
-}
-
-function isOnARoute(path: ResolvedPath, pin: PathPin, reference: string): boolean {
-  const trace = new Trace(path, pin.node);
-  return path.receivers.some((receiver) => trace.to(receiver.node).steps.some((step) => step.kind === "part" && step.part.reference === reference));
-}
-
-function isCoupling(path: ResolvedPath, farads: number | null, slowest: number): boolean {
-  const line = path.sections.find((section) => section.impedance)?.impedance?.nominal ?? 50;
-  return farads !== null && farads * line >= slowest;
-}
-
-function joinNodes(path: ResolvedPath, coupling: number): NodeMap {
-  const nodes = new NodeMap();
-  for (const section of path.sections) if (section.length <= 0) nodes.join(section.a, section.b);
-  for (const part of path.parts) {
-    const link = part.kind === "R" && part.value === 0;
-    const coupled = part.kind === "C" && part.role === "series" && isCoupling(path, part.value, coupling);
-    if (link || coupled) nodes.join(part.a, part.b);
-  }
-  return nodes;
-}
-
-/**
- * The DC level of a pin behind a coupling capacitor: what resistors from its side to rails set. Null where no
- * capacitor is between, NaN where nothing sets it.
- */
-function coupledBias(path: ResolvedPath, driver: string, receiver: string, coupling: number): number | null {
-  const route = new Trace(path, driver).to(receiver);
-  const isBlock = (part: { kind: string; role: string; value: number | null }) => part.kind === "C" && part.role === "series" && isCoupling(path, part.value, coupling);
-  if (!route.steps.some((step) => step.kind === "part" && isBlock(step.part))) return null;
-  const side = new Trace({ ...path, parts: path.parts.filter((part) => !isBlock(part)) }, receiver);
-  let siemens = 0;
-  let amperes = 0;
-  for (const part of path.parts) {
-    if (part.kind !== "R" || part.role !== "termination" || !part.value || !(side.reaches(part.a) || part.a === receiver)) continue;
-    const rail = path.rails.find((entry) => entry.node === part.b);
-    siemens += 1 / part.value;
-    amperes += (rail?.volts ?? 0) / part.value;
-  }
-  return siemens > 0 ? amperes / siemens : NaN;
 }

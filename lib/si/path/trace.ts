@@ -71,6 +71,7 @@ function totalDelay(steps: TraceStep[]): number | null {
 export function mainSection(route: Route, after = 0): PathSection | null {
   let main: PathSection | null = null;
   for (const step of route.steps.slice(after))
-    if (step.kind === "section" && step.section.impedance && (!main || step.section.length > main.length)) main = step.section;
+    if (step.kind === "section" && step.section.impedance && (!main || step.section.length > main.length))
+      main = step.section;
   return main;
 }

@@ -96,9 +96,21 @@ export interface ResolvedPath {
   drivers: PathPin[];
   receivers: PathPin[];
   viaCount: number;
-  neighbours: { neighbour: string; layer: string; gap: number; parallelLength: number; heightOverPlane: number | null }[];
+  neighbours: {
+    neighbour: string;
+    layer: string;
+    gap: number;
+    parallelLength: number;
+    heightOverPlane: number | null;
+  }[];
   geometryKnown: boolean;
-  termination: { scheme: string; resistance: number | null; resistanceLow: number | null; capacitance: number | null; voltage: number | null };
+  termination: {
+    scheme: string;
+    resistance: number | null;
+    resistanceLow: number | null;
+    capacitance: number | null;
+    voltage: number | null;
+  };
   flightTimeMax: number | null;
   /** least edge-to-edge spacing the class asks for [m] */
   spacing: number | null;

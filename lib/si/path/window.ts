@@ -21,7 +21,14 @@ export interface WindowRequest {
  * How long an edge is watched [s]: to the next edge, but no longer than ringing can matter. 20 path delays, longer where
  * the mismatch keeps ringing alive (until 2 % of it is left, at most 60 round trips), plus the edge and its RC tails.
  */
-export function watchWindow({ ramp, delay, allDelays, roundTripGain, timeConstants, bitTime }: WindowRequest): { until: number; isBit: boolean } {
+export function watchWindow({
+  ramp,
+  delay,
+  allDelays,
+  roundTripGain,
+  timeConstants,
+  bitTime,
+}: WindowRequest): { until: number; isBit: boolean } {
   const gain = Math.min(0.999, Math.max(1e-6, roundTripGain));
   const trips = Math.min(MOST_ROUND_TRIPS, Math.log(OVER) / Math.log(gain));
   const ringing = Math.max(20 * delay, 2 * trips * delay, 4 * allDelays);

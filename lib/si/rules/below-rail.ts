@@ -12,7 +12,8 @@ const definition: RuleDefinition = {
   severity: "error",
   selector: false,
   enabledByDefault: true,
-  source: "Common limit of CMOS data sheets, from memory; the part's absolute maximum where its model states one.",
+  source:
+    "Common limit of CMOS data sheets, from memory; the part's absolute maximum where its model states one.",
 };
 
 /**

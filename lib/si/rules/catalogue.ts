@@ -13,7 +13,15 @@ import { terminationValue } from "./termination-value";
 import type { RuleDefinition } from "./types";
 
 /** Judged on simulated edges. A new rule is a file and a line here. */
-export const edgeRules: readonly EdgeRule[] = [aboveRail, belowRail, overshoot, ringback, settling, levelMargin, flightTime];
+export const edgeRules: readonly EdgeRule[] = [
+  aboveRail,
+  belowRail,
+  overshoot,
+  ringback,
+  settling,
+  levelMargin,
+  flightTime,
+];
 
 /** Judged without simulation. */
 export const staticRules: readonly StaticRule[] = [terminationValue, criticalLength, spacing];

@@ -1,6 +1,7 @@
 import { EngineError } from "../errors";
 import { simulate } from "../lattice/simulate";
-import { cannotSimulate, PathNetwork } from "../path/network";
+import { PathNetwork } from "../path/network";
+import { cannotSimulate } from "../path/simulable";
 import type { PathPin, ResolvedPath } from "../path/types";
 import { edgeRules, staticRules } from "./catalogue";
 import { edgeFinding, missingFinding, staticFinding } from "./findings";
@@ -21,7 +22,9 @@ import type { CheckContext, Corner, CornerValue, Finding, PathResult, RuleDefini
  */
 export function checkPath(path: ResolvedPath, context: Pick<CheckContext, "corners">): PathResult {
   const { corners } = context;
-  const tallies = edgeRules.filter((rule) => isEnabled(path, rule.definition) && speaksOf(rule, path)).map((rule) => new Tally(rule));
+  const tallies = edgeRules
+    .filter((rule) => isEnabled(path, rule.definition) && speaksOf(rule, path))
+    .map((rule) => new Tally(rule));
   let blocked: Missing | null = cannotSimulate(path);
   let simulations = 0;
   if (!blocked)
@@ -36,7 +39,9 @@ export function checkPath(path: ResolvedPath, context: Pick<CheckContext, "corne
   const findings: Finding[] = [];
   const values: CornerValue[] = [];
   for (const tally of tallies) {
-    const finding = blocked ? missingFinding(path, tally.rule.definition, blocked) : edgeFinding(path, tally, corners.length);
+    const finding = blocked
+      ? missingFinding(path, tally.rule.definition, blocked)
+      : edgeFinding(path, tally, corners.length);
     if (!finding) continue;
     findings.push(finding);
     if (!blocked) values.push(...tally.values(corners));
@@ -61,7 +66,12 @@ function speaksOf(rule: EdgeRule, path: ResolvedPath): boolean {
   return receivers.some((receiver) => rule.edges.some((edge) => rule.applies(path, receiver, edge)));
 }
 
-function simulateDriver(path: ResolvedPath, pin: PathPin, corners: readonly Corner[], tallies: readonly Tally[]): number {
+function simulateDriver(
+  path: ResolvedPath,
+  pin: PathPin,
+  corners: readonly Corner[],
+  tallies: readonly Tally[],
+): number {
   if (!pin.driver) return 0;
   const prepared = new PathNetwork(path, pin, pin.driver);
   for (const probe of prepared.probes)
@@ -80,7 +90,12 @@ function simulateDriver(path: ResolvedPath, pin: PathPin, corners: readonly Corn
         observe(seen, probe, edge, { time, voltage: wave, until, ramp });
         for (const tally of tallies) {
           const { rule } = tally;
-          if (!rule.edges.includes(edge) || !rule.applies(path, probe.receiver, edge) || rule.lacks(path, probe.receiver)) continue;
+          if (
+            !rule.edges.includes(edge) ||
+            !rule.applies(path, probe.receiver, edge) ||
+            rule.lacks(path, probe.receiver)
+          )
+            continue;
           tally.add(seen, rule.read(seen), rule.limit(path, probe.receiver, edge));
         }
       }
@@ -89,7 +104,13 @@ function simulateDriver(path: ResolvedPath, pin: PathPin, corners: readonly Corn
   return corners.length;
 }
 
-function blankObservation(path: ResolvedPath, driverPin: PathPin, corner: Corner, window: number, windowIsBit: boolean): Observation | null {
+function blankObservation(
+  path: ResolvedPath,
+  driverPin: PathPin,
+  corner: Corner,
+  window: number,
+  windowIsBit: boolean,
+): Observation | null {
   const { driver } = driverPin;
   const receiver = path.receivers.find((pin) => pin.receiver)?.receiver;
   if (!driver || !receiver) return null;

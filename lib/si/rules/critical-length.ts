@@ -32,7 +32,8 @@ export const criticalLength: StaticRule = {
   definition,
   read(path) {
     if (isTerminated(path)) return null;
-    let longest: { pin: string; delay: number; riseTime: Record<string, number>; assumed: boolean } | null = null;
+    let longest: { pin: string; delay: number; riseTime: Record<string, number>; assumed: boolean } | null =
+      null;
     for (const pin of path.drivers) {
       if (!pin.driver) continue;
       const delay = farthestDelay(path, pin.node);
@@ -44,7 +45,10 @@ export const criticalLength: StaticRule = {
     if (!longest) return first ? { input: first.input, detail: first.detail } : null;
     const { delay, riseTime, assumed, pin } = longest;
     return {
-      corners: driverSpeeds.map((driver) => ({ corner: { driver, impedance: "nominal" }, value: delay / (riseTime[driver] ?? delay) })),
+      corners: driverSpeeds.map((driver) => ({
+        corner: { driver, impedance: "nominal" },
+        value: delay / (riseTime[driver] ?? delay),
+      })),
       limit: pathLimit(path, definition),
       pin,
       mechanism: "long line",
@@ -57,7 +61,13 @@ export const criticalLength: StaticRule = {
 
 export function isTerminated(path: ResolvedPath): boolean {
   const line = path.sections.find((section) => section.impedance)?.impedance?.nominal ?? 50;
-  return path.parts.some((part) => part.kind === "R" && part.value !== null && part.value > 0 && (part.role === "series" || part.value < PULL * line));
+  return path.parts.some(
+    (part) =>
+      part.kind === "R" &&
+      part.value !== null &&
+      part.value > 0 &&
+      (part.role === "series" || part.value < PULL * line),
+  );
 }
 
 function farthestDelay(path: ResolvedPath, start: string): number | null {

@@ -5,12 +5,14 @@ import type { Missing, StaticReading } from "./rule";
 import { judge, restsOnAssumed, type Tally } from "./tally";
 import type { CornerValue, Finding, RuleDefinition } from "./types";
 
-function severityOf(path: ResolvedPath, definition: RuleDefinition): Finding["severity"] {
+type HasLimits = Pick<ResolvedPath, "limits">;
+
+function severityOf(path: HasLimits, definition: RuleDefinition): Finding["severity"] {
   return path.limits[definition.id]?.severity ?? definition.severity;
 }
 
 /** No data: the rule with the input that would let it be judged. */
-export function missingFinding(path: ResolvedPath, definition: RuleDefinition, missing: Missing): Finding {
+export function missingFinding(path: HasLimits, definition: RuleDefinition, missing: Missing): Finding {
   const entry = path.limits[definition.id];
   return {
     rule: definition.id,
@@ -72,9 +74,19 @@ export function edgeFinding(path: ResolvedPath, tally: Tally, ofCorners: number)
   };
 }
 
-export function staticFinding(path: ResolvedPath, definition: RuleDefinition, reading: StaticReading): { finding: Finding; corners: CornerValue[] } {
-  const judged = reading.corners.map(({ corner, value }) => ({ corner: cornerName(corner), value, ...judge(definition, value, reading.limit.limit) }));
-  const worst = judged.reduce((most, entry) => ((entry.margin ?? Infinity) < (most.margin ?? Infinity) ? entry : most));
+export function staticFinding(
+  path: HasLimits,
+  definition: RuleDefinition,
+  reading: StaticReading,
+): { finding: Finding; corners: CornerValue[] } {
+  const judged = reading.corners.map(({ corner, value }) => ({
+    corner: cornerName(corner),
+    value,
+    ...judge(definition, value, reading.limit.limit),
+  }));
+  const worst = judged.reduce((most, entry) =>
+    (entry.margin ?? Infinity) < (most.margin ?? Infinity) ? entry : most,
+  );
   const finding: Finding = {
     rule: definition.id,
     verdict: worst.verdict,

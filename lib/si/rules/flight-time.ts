@@ -4,7 +4,8 @@ import type { RuleDefinition } from "./types";
 const definition: RuleDefinition = {
   id: "flight-time",
   title: "Flight time",
-  measures: "From the driver's crossing of the measuring level without load to the receiver's first crossing of it.",
+  measures:
+    "From the driver's crossing of the measuring level without load to the receiver's first crossing of it.",
   unit: "ps",
   direction: "max",
   defaultLimit: null,

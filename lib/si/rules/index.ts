@@ -1,5 +1,6 @@
 export * from "./types";
 export { mechanismTitles, ruleCatalogue } from "./catalogue";
+export { checkImpedance, type ControlledLine } from "./check-impedance";
 export { checkPath } from "./check-path";
 export { allCorners, cornerName, driverSpeeds, impedanceSides } from "./corners";
 export { defaultRuleSet, type DefaultRuleSetting } from "./defaults";

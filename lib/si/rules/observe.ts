@@ -22,7 +22,10 @@ export function observe(seen: Observation, probe: PathProbe, edge: Edge, wave: W
   const { receiver } = probe;
   const { low, high } = probe.levels[seen.corner.driver];
   if (!(high - low > 0))
-    throw new DomainError(`${probe.pin.pin} has no swing: its level is ${high.toFixed(2)} V whether the driver is high or low.`, "parts");
+    throw new DomainError(
+      `${probe.pin.pin} has no swing: its level is ${high.toFixed(2)} V whether the driver is high or low.`,
+      "parts",
+    );
   // Levels of the simulated wave: without the bias behind a coupling capacitor.
   const shift = probe.offset;
   const mirror = low + high;

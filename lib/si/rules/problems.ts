@@ -8,7 +8,10 @@ export function pathVerdict(findings: readonly Finding[]): Verdict {
   const counted = findings.filter((finding) => finding.counts);
   // A path of which nothing could be judged never passes.
   if (counted.length === 0) return "no data";
-  return counted.reduce<Verdict>((worst, { verdict }) => (rank[verdict] < rank[worst] ? verdict : worst), "pass");
+  return counted.reduce<Verdict>(
+    (worst, { verdict }) => (rank[verdict] < rank[worst] ? verdict : worst),
+    "pass",
+  );
 }
 
 /**
@@ -28,7 +31,10 @@ export function groupProblems(findings: readonly Finding[]): Problem[] {
     indexes.sort((a, b) => compare(findings[a], findings[b]) || a - b);
     const worst = findings[indexes[0] ?? -1];
     if (!worst || worst.verdict === "pass") continue;
-    const title = mechanism === "missing input" && worst.missing ? `Missing: ${worst.missing}` : (mechanismTitles[mechanism] ?? mechanism);
+    const title =
+      mechanism === "missing input" && worst.missing
+        ? `Missing: ${worst.missing}`
+        : (mechanismTitles[mechanism] ?? mechanism);
     problems.push({ mechanism, title, verdict: worst.verdict, findings: indexes, cause: worst.cause });
   }
   return problems.sort((a, b) => rank[a.verdict] - rank[b.verdict]);
@@ -38,7 +44,12 @@ const severities = { error: 0, warning: 1, info: 2 };
 
 function compare(a: Finding | undefined, b: Finding | undefined): number {
   if (!a || !b) return 0;
-  return rank[a.verdict] - rank[b.verdict] || severities[a.severity] - severities[b.severity] || b.failsAt - a.failsAt || relative(a) - relative(b);
+  return (
+    rank[a.verdict] - rank[b.verdict] ||
+    severities[a.severity] - severities[b.severity] ||
+    b.failsAt - a.failsAt ||
+    relative(a) - relative(b)
+  );
 }
 
 /** Margin as a share of the limit, so that volts and percent compare. */

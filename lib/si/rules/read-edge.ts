@@ -27,7 +27,16 @@ const EPSILON = 0.005;
 const SETTLE_BAND = 0.1;
 
 export function newReading(): EdgeReading {
-  return { max: 0, maxTime: 0, min: 0, minTime: 0, nearCrossing: NaN, measCrossing: NaN, settled: NaN, dipLevel: NaN };
+  return {
+    max: 0,
+    maxTime: 0,
+    min: 0,
+    minTime: 0,
+    nearCrossing: NaN,
+    measCrossing: NaN,
+    settled: NaN,
+    dipLevel: NaN,
+  };
 }
 
 /**
@@ -37,7 +46,13 @@ export function newReading(): EdgeReading {
  * @param time   [s], ascending from 0; a repeated time is a jump
  * @param until  end of the window [s]
  */
-export function readEdge(time: Float64Array, voltage: Float64Array, until: number, levels: EdgeLevels, into: EdgeReading): void {
+export function readEdge(
+  time: Float64Array,
+  voltage: Float64Array,
+  until: number,
+  levels: EdgeLevels,
+  into: EdgeReading,
+): void {
   const { high, near, meas, far } = levels;
   const swing = high - levels.low;
   const epsilon = EPSILON * swing;

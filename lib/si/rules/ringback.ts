@@ -41,5 +41,8 @@ export const ringback: EdgeRule = {
 /** The thresholds that a receiver is read at, or what is missing. */
 export function lacksThresholds(receiver: ReceiverModel): Missing | null {
   if (receiver.vil !== null && receiver.vih !== null) return null;
-  return { input: `thresholds of ${receiver.name}`, detail: `The model ${receiver.name} states no VIL and VIH.` };
+  return {
+    input: `thresholds of ${receiver.name}`,
+    detail: `The model ${receiver.name} states no VIL and VIH.`,
+  };
 }

@@ -91,7 +91,9 @@ export type Rule = EdgeRule | StaticRule;
 /** The limit as resolved for this path; the rule's default where the path carries none. */
 export function pathLimit(path: ResolvedPath, definition: RuleDefinition): Limit {
   const entry = path.limits[definition.id];
-  return entry ? { limit: entry.limit, origin: entry.origin } : { limit: definition.defaultLimit, origin: "default" };
+  return entry
+    ? { limit: entry.limit, origin: entry.origin }
+    : { limit: definition.defaultLimit, origin: "default" };
 }
 
 /**
@@ -101,6 +103,7 @@ export function pathLimit(path: ResolvedPath, definition: RuleDefinition): Limit
 export function partLimit(path: ResolvedPath, definition: RuleDefinition, ofPart: number | null): Limit {
   const set = pathLimit(path, definition);
   if (ofPart === null) return set;
-  const stricter = (set.origin === "net" || set.origin === "class") && set.limit !== null && set.limit < ofPart;
+  const stricter =
+    (set.origin === "net" || set.origin === "class") && set.limit !== null && set.limit < ofPart;
   return stricter ? set : { limit: ofPart, origin: "model" };
 }

@@ -36,7 +36,11 @@ export const settling: EdgeRule = {
   limit: (path) => pathLimit(path, definition),
   read(seen) {
     if (seen.path.bitTime === null) return { value: null, time: null };
-    if (seen.settled === null || seen.firstThreshold === null) return { value: null, time: null, fails: true };
-    return { value: (100 * Math.max(0, seen.settled - seen.firstThreshold)) / seen.path.bitTime, time: seen.settled };
+    if (seen.settled === null || seen.firstThreshold === null)
+      return { value: null, time: null, fails: true };
+    return {
+      value: (100 * Math.max(0, seen.settled - seen.firstThreshold)) / seen.path.bitTime,
+      time: seen.settled,
+    };
   },
 };

@@ -25,13 +25,18 @@ export const spacing: StaticRule = {
   kind: "static",
   definition,
   read(path) {
-    if (!path.geometryKnown) return { input: "neighbour list", detail: "Which traces run beside this one is not known." };
+    if (!path.geometryKnown)
+      return { input: "neighbour list", detail: "Which traces run beside this one is not known." };
     let worst: { ratio: number; height: number; index: number } | null = null;
     for (const [index, { gap, heightOverPlane: height }] of path.neighbours.entries())
       if (height && (!worst || gap / height < worst.ratio)) worst = { ratio: gap / height, height, index };
     const neighbour = path.neighbours[worst?.index ?? 0];
     if (!neighbour) return null;
-    if (!worst) return { input: `reference plane of layer ${neighbour.layer}`, detail: `The height of ${neighbour.layer} over a plane is not known.` };
+    if (!worst)
+      return {
+        input: `reference plane of layer ${neighbour.layer}`,
+        detail: `The height of ${neighbour.layer} over a plane is not known.`,
+      };
     const { ratio, height } = worst;
     const set = pathLimit(path, definition);
     const ofClass = path.spacing !== null && set.origin !== "net" && set.origin !== "class";

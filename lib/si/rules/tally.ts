@@ -33,22 +33,34 @@ interface Worst extends Judged {
 export class Tally {
   worst: Worst | null = null;
   missing: Missing | null = null;
-  private readonly byCorner = new Map<CornerName, { badness: number; value: number | null; verdict: Verdict }>();
+  private readonly byCorner = new Map<
+    CornerName,
+    { badness: number; value: number | null; verdict: Verdict }
+  >();
 
   constructor(readonly rule: EdgeRule) {}
 
   add(seen: Observation, reading: Reading, limit: Limit): void {
     const { definition } = this.rule;
-    const judged: Judged = reading.fails ? { verdict: "fail", margin: failMargin(definition, reading.value, limit.limit) } : judge(definition, reading.value, limit.limit);
+    const judged: Judged = reading.fails
+      ? { verdict: "fail", margin: failMargin(definition, reading.value, limit.limit) }
+      : judge(definition, reading.value, limit.limit);
     if (judged.verdict === "no data") return;
     const badness = reading.fails ? Infinity : -(judged.margin ?? Infinity);
     const corner = cornerName(seen.corner);
     const held = this.byCorner.get(corner);
     if (!held) this.byCorner.set(corner, { badness, value: reading.value, verdict: judged.verdict });
-    else if (badness > held.badness) Object.assign(held, { badness, value: reading.value, verdict: judged.verdict });
+    else if (badness > held.badness)
+      Object.assign(held, { badness, value: reading.value, verdict: judged.verdict });
     if (this.worst && badness <= this.worstBadness) return;
     this.worstBadness = badness;
-    this.worst = { ...judged, value: reading.value, time: reading.time, limit, seen: { ...seen, corner: { ...seen.corner } } };
+    this.worst = {
+      ...judged,
+      value: reading.value,
+      time: reading.time,
+      limit,
+      seen: { ...seen, corner: { ...seen.corner } },
+    };
   }
 
   lack(missing: Missing): void {
@@ -67,7 +79,12 @@ export class Tally {
     return corners.map((corner) => {
       const name = cornerName(corner);
       const entry = this.byCorner.get(name);
-      return { rule: this.rule.definition.id, corner: name, value: entry?.value ?? null, verdict: entry?.verdict ?? "no data" };
+      return {
+        rule: this.rule.definition.id,
+        corner: name,
+        value: entry?.value ?? null,
+        verdict: entry?.verdict ?? "no data",
+      };
     });
   }
 

@@ -38,7 +38,8 @@ export const terminationValue: StaticRule = {
     for (const pin of path.drivers) {
       const reading = readDriver(path, pin);
       if (reading && "input" in reading) missing ??= reading;
-      else if (reading && (reading.corners[0]?.value ?? 0) > (worst?.corners[0]?.value ?? -1)) worst = reading;
+      else if (reading && (reading.corners[0]?.value ?? 0) > (worst?.corners[0]?.value ?? -1))
+        worst = reading;
     }
     return worst ?? missing;
   },
@@ -51,12 +52,16 @@ function readDriver(path: ResolvedPath, pin: PathPin): StaticReading | Missing |
   const series = route.steps.findIndex((step) => step.kind === "part" && step.part.kind === "R");
   const end = endResistance(path, route);
   const { scheme } = path.termination;
-  if (end && (scheme === "none" || scheme === "parallel" || scheme === "thevenin" || scheme === "rc")) return judgeEnd(path, route, end);
+  if (end && (scheme === "none" || scheme === "parallel" || scheme === "thevenin" || scheme === "rc"))
+    return judgeEnd(path, route, end);
   if (series >= 0 && isNearDriver(route, series)) return judgeSeries(path, pin, route, series);
   if (route.delay === null || route.delay < SHORT * pin.driver.riseTime.fast) return null;
   if (scheme === "series" && series < 0) return judgeSeries(path, pin, route, -1);
   if (scheme === "parallel" || scheme === "thevenin" || scheme === "rc")
-    return { input: `end resistor of ${path.name}`, detail: `Class ${path.className ?? ""} asks for a ${scheme} termination; no part ends this path.` };
+    return {
+      input: `end resistor of ${path.name}`,
+      detail: `Class ${path.className ?? ""} asks for a ${scheme} termination; no part ends this path.`,
+    };
   return null;
 }
 
@@ -90,7 +95,9 @@ function judgeSeries(path: ResolvedPath, pin: PathPin, route: Route, index: numb
   const wanted = line - pin.driver.resistance.typical;
   const name = part?.kind === "part" ? `${part.part.reference} of ${ohms(value)}` : "No series resistor";
   return {
-    corners: [{ corner: { driver: "typical", impedance: "nominal" }, value: (100 * Math.abs(value - wanted)) / line }],
+    corners: [
+      { corner: { driver: "typical", impedance: "nominal" }, value: (100 * Math.abs(value - wanted)) / line },
+    ],
     limit: pathLimit(path, definition),
     pin: pin.pin,
     mechanism: "driver mismatch",
@@ -109,8 +116,11 @@ interface EndResistance {
 
 /** Resistors to rails (directly, or through a capacitor) on the last half of the route, in parallel. */
 function endResistance(path: ResolvedPath, route: Route): EndResistance | null {
-  const nodes = new Set(route.steps.slice(Math.floor(route.steps.length / 2)).flatMap((step) => [step.from, step.to]));
-  const isPull = (part: PathPart, line: number) => part.value === null || part.value <= 0 || part.value > PULL * line;
+  const nodes = new Set(
+    route.steps.slice(Math.floor(route.steps.length / 2)).flatMap((step) => [step.from, step.to]),
+  );
+  const isPull = (part: PathPart, line: number) =>
+    part.value === null || part.value <= 0 || part.value > PULL * line;
   const line = mainSection(route)?.impedance?.nominal;
   if (!line) return null;
   const parts = path.parts.filter((part) => {
@@ -118,7 +128,11 @@ function endResistance(path: ResolvedPath, route: Route): EndResistance | null {
     if (part.role === "termination") return nodes.has(part.a);
     const far = nodes.has(part.a) ? part.b : nodes.has(part.b) ? part.a : null;
     const onRoute = route.steps.some((step) => step.kind === "part" && step.part === part);
-    return far !== null && !onRoute && path.parts.some((other) => other.kind === "C" && other.role === "termination" && other.a === far);
+    return (
+      far !== null &&
+      !onRoute &&
+      path.parts.some((other) => other.kind === "C" && other.role === "termination" && other.a === far)
+    );
   });
   if (parts.length === 0) return null;
   return { parts, value: 1 / parts.reduce((sum, part) => sum + 1 / (part.value ?? Infinity), 0) };
@@ -129,11 +143,17 @@ function judgeEnd(path: ResolvedPath, route: Route, end: EndResistance): StaticR
   if (!line) return null;
   const names = end.parts.map((part) => part.reference).join(" and ");
   return {
-    corners: [{ corner: { driver: "typical", impedance: "nominal" }, value: (100 * Math.abs(end.value - line)) / line }],
+    corners: [
+      {
+        corner: { driver: "typical", impedance: "nominal" },
+        value: (100 * Math.abs(end.value - line)) / line,
+      },
+    ],
     limit: pathLimit(path, definition),
     pin: null,
     mechanism: "end mismatch",
     restsOnAssumed: false,
-    cause: () => `${names} ends a ${ohms(line)} line with ${ohms(end.value)}${route.delay === null ? "" : ` after ${picoseconds(route.delay)}`}.`,
+    cause: () =>
+      `${names} ends a ${ohms(line)} line with ${ohms(end.value)}${route.delay === null ? "" : ` after ${picoseconds(route.delay)}`}.`,
   };
 }

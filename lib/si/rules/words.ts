@@ -11,9 +11,11 @@ export function reflection(value: number): string {
 }
 
 export const ohms = (value: number) => `${number(value, value < 10 ? 2 : 3)} Ω`;
-export const volts = (value: number) => (Math.abs(value) < 0.0995 ? `${signed((1e3 * value).toFixed(0))} mV` : `${signed(value.toFixed(2))} V`);
+export const volts = (value: number) =>
+  Math.abs(value) < 0.0995 ? `${signed((1e3 * value).toFixed(0))} mV` : `${signed(value.toFixed(2))} V`;
 export const nanoseconds = (value: number) => `${number(1e9 * value, 2)} ns`;
-export const picoseconds = (value: number) => (value >= 0.9995e-9 ? nanoseconds(value) : `${signed((1e12 * value).toFixed(0))} ps`);
+export const picoseconds = (value: number) =>
+  value >= 0.9995e-9 ? nanoseconds(value) : `${signed((1e12 * value).toFixed(0))} ps`;
 export const picofarads = (value: number) => `${number(1e12 * value, 2)} pF`;
 export const millimetres = (value: number) => `${number(1e3 * value, 3)} mm`;
 export const percent = (value: number) => `${number(value, 3)} %`;

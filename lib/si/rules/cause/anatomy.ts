@@ -26,7 +26,13 @@ export interface Anatomy {
   delay: number;
 }
 
-export function anatomy(path: ResolvedPath, driverPin: PathPin, driver: DriverModel, receiver: PathPin, corner: Corner): Anatomy | null {
+export function anatomy(
+  path: ResolvedPath,
+  driverPin: PathPin,
+  driver: DriverModel,
+  receiver: PathPin,
+  corner: Corner,
+): Anatomy | null {
   const route = new Trace(path, driverPin.node).to(receiver.node);
   const main = mainSection(route);
   const line = main?.impedance?.[corner.impedance];
@@ -34,11 +40,16 @@ export function anatomy(path: ResolvedPath, driverPin: PathPin, driver: DriverMo
   const riseTime = driver.riseTime[corner.driver];
   const driverOhms = driver.resistance[corner.driver];
   const seriesParts = route.steps.flatMap((step) =>
-    step.kind === "part" && step.part.kind === "R" && step.part.value ? [{ reference: step.part.reference, ohms: step.part.value }] : [],
+    step.kind === "part" && step.part.kind === "R" && step.part.value
+      ? [{ reference: step.part.reference, ohms: step.part.value }]
+      : [],
   );
   const source = seriesParts.reduce((sum, part) => sum + part.ohms, driverOhms);
   const end = endOf(path, route, line);
-  const farads = path.receivers.reduce((sum, pin) => sum + (pin.node === driverPin.node ? 0 : loadOf(pin, corner)), 0);
+  const farads = path.receivers.reduce(
+    (sum, pin) => sum + (pin.node === driverPin.node ? 0 : loadOf(pin, corner)),
+    0,
+  );
   return {
     driverOhms,
     seriesParts,
@@ -62,9 +73,19 @@ function loadOf(pin: PathPin, corner: Corner): number {
 
 function endOf(path: ResolvedPath, route: Route, line: number): Anatomy["end"] {
   const nodes = new Set(route.steps.flatMap((step) => [step.from, step.to]));
-  const parts = path.parts.filter((part) => part.kind === "R" && part.role === "termination" && part.value && part.value < PULL * line && nodes.has(part.a));
+  const parts = path.parts.filter(
+    (part) =>
+      part.kind === "R" &&
+      part.role === "termination" &&
+      part.value &&
+      part.value < PULL * line &&
+      nodes.has(part.a),
+  );
   if (parts.length === 0) return null;
-  return { ohms: 1 / parts.reduce((sum, part) => sum + 1 / (part.value ?? Infinity), 0), references: parts.map((part) => part.reference) };
+  return {
+    ohms: 1 / parts.reduce((sum, part) => sum + 1 / (part.value ?? Infinity), 0),
+    references: parts.map((part) => part.reference),
+  };
 }
 
 function delayOf(section: PathSection): number {
@@ -84,7 +105,8 @@ function largestStep(route: Route, corner: Corner, short: number): Anatomy["step
     if (!ohms || delayOf(step.section) < short) continue;
     if (before !== null) {
       const rho = (ohms - before) / (ohms + before);
-      if (Math.abs(rho) > Math.abs(largest?.rho ?? 0)) largest = { rho, from: before, to: step.section, toOhms: ohms };
+      if (Math.abs(rho) > Math.abs(largest?.rho ?? 0))
+        largest = { rho, from: before, to: step.section, toOhms: ohms };
     }
     before = ohms;
   }
@@ -103,12 +125,15 @@ function largestBranch(path: ResolvedPath, route: Route, corner: Corner, short: 
   let largest: Anatomy["branch"] = null;
   for (const step of route.steps) {
     if (step.kind !== "section") continue;
-    const arms = (at.get(step.to) ?? []).filter((section) => section !== step.section && delayOf(section) >= short && section.impedance);
+    const arms = (at.get(step.to) ?? []).filter(
+      (section) => section !== step.section && delayOf(section) >= short && section.impedance,
+    );
     const line = step.section.impedance?.[corner.impedance];
     if (arms.length < 2 || !line) continue;
     const ohms = 1 / arms.reduce((sum, arm) => sum + 1 / (arm.impedance?.[corner.impedance] ?? Infinity), 0);
     const rho = (ohms - line) / (ohms + line);
-    if (Math.abs(rho) > Math.abs(largest?.rho ?? 0)) largest = { rho, node: step.to, arms: arms.length, ohms, line };
+    if (Math.abs(rho) > Math.abs(largest?.rho ?? 0))
+      largest = { rho, node: step.to, arms: arms.length, ohms, line };
   }
   return largest;
 }

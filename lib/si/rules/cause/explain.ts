@@ -1,5 +1,14 @@
 import type { EdgeRule, Observation } from "../rule";
-import { millimetres, nanoseconds, ohms, percent, picofarads, picoseconds, reflection, volts } from "../words";
+import {
+  millimetres,
+  nanoseconds,
+  ohms,
+  percent,
+  picofarads,
+  picoseconds,
+  reflection,
+  volts,
+} from "../words";
 import { anatomy, type Anatomy } from "./anatomy";
 import { bounceMechanism, isStaticLevel } from "./mechanism";
 
@@ -14,7 +23,8 @@ export function explain(rule: EdgeRule, seen: Observation): Explanation {
   if (rule.family === "timing") return { mechanism: "late arrival", cause: lateArrival(seen) };
   const beyondRail = id === "above-rail" || id === "below-rail";
   if (beyondRail && isStaticLevel(seen)) return { mechanism: "static level", cause: staticLevel(seen) };
-  if (rule.family === "level" || (id === "ringback" && isLevelShort(seen))) return { mechanism: "level", cause: level(seen) };
+  if (rule.family === "level" || (id === "ringback" && isLevelShort(seen)))
+    return { mechanism: "level", cause: level(seen) };
   const found = anatomy(seen.path, seen.driverPin, seen.driver, seen.receiverPin, seen.corner);
   const seenThere = consequence(id, seen);
   if (!found) return { mechanism: "driver mismatch", cause: capital(`${seenThere}.`) };
@@ -36,7 +46,9 @@ function reflector(mechanism: string, found: Anatomy, seen: Observation): string
   if (mechanism === "end mismatch" && found.end)
     return `${found.end.references.join(" and ")} ends a ${ohms(found.line)} line with ${ohms(found.end.ohms)} and reflects ${reflection(found.rhoEnd)}`;
   const parts = found.seriesParts.map((part) => `${part.reference}'s ${ohms(part.ohms)}`).join(" and ");
-  const source = parts ? `The driver's ${ohms(found.driverOhms)} and ${parts} make ${ohms(found.source)}` : `The driver is ${ohms(found.driverOhms)}`;
+  const source = parts
+    ? `The driver's ${ohms(found.driverOhms)} and ${parts} make ${ohms(found.source)}`
+    : `The driver is ${ohms(found.driverOhms)}`;
   const end = found.end
     ? `the ${ohms(found.end.ohms)} end at ${seen.receiverPin.pin} returns ${reflection(found.rhoEnd)} of it`
     : `the open end at ${seen.receiverPin.pin} returns all of it`;
@@ -47,19 +59,27 @@ function consequence(rule: string, seen: Observation): string {
   const rising = seen.edge === "rise";
   const at = nanoseconds(rising ? seen.maxTime : seen.minTime);
   const pin = seen.receiverPin.pin;
-  if (rule === "above-rail") return `the peak at ${at} is ${volts(seen.max)}, ${volts(seen.max - seen.receiver.vdd)} from the ${volts(seen.receiver.vdd)} rail`;
-  if (rule === "below-rail") return `the lowest point at ${at} is ${volts(seen.min)}, ${volts(-seen.min)} below the rail`;
+  if (rule === "above-rail")
+    return `the peak at ${at} is ${volts(seen.max)}, ${volts(seen.max - seen.receiver.vdd)} from the ${volts(seen.receiver.vdd)} rail`;
+  if (rule === "below-rail")
+    return `the lowest point at ${at} is ${volts(seen.min)}, ${volts(-seen.min)} below the rail`;
   if (rule === "overshoot") {
     const beyond = rising ? seen.max - seen.high : seen.low - seen.min;
     return `${volts(beyond)} beyond the ${volts(rising ? seen.high : seen.low)} level at ${at} is ${percent((100 * beyond) / (seen.high - seen.low))} of the swing`;
   }
   if (rule === "ringback") {
-    const threshold = rising ? `VIH of ${volts(seen.receiver.vih ?? 0)}` : `VIL of ${volts(seen.receiver.vil ?? 0)}`;
-    if (seen.ringbackMargin === null) return `${pin} never gets across ${threshold} inside ${nanoseconds(seen.window)}`;
+    const threshold = rising
+      ? `VIH of ${volts(seen.receiver.vih ?? 0)}`
+      : `VIL of ${volts(seen.receiver.vil ?? 0)}`;
+    if (seen.ringbackMargin === null)
+      return `${pin} never gets across ${threshold} inside ${nanoseconds(seen.window)}`;
     const clear = Math.abs(seen.ringbackMargin);
-    return seen.ringbackMargin < 0 ? `the dip back goes ${volts(clear)} through ${threshold}` : `the dip back stays ${volts(clear)} clear of ${threshold}`;
+    return seen.ringbackMargin < 0
+      ? `the dip back goes ${volts(clear)} through ${threshold}`
+      : `the dip back stays ${volts(clear)} clear of ${threshold}`;
   }
-  if (seen.settled === null) return `${pin} is still ringing when ${seen.windowIsBit ? "the next edge comes" : "it is no longer watched"}, ${nanoseconds(seen.window)} after the edge`;
+  if (seen.settled === null)
+    return `${pin} is still ringing when ${seen.windowIsBit ? "the next edge comes" : "it is no longer watched"}, ${nanoseconds(seen.window)} after the edge`;
   const bit = seen.path.bitTime === null ? "" : ` of a ${nanoseconds(seen.path.bitTime)} bit`;
   return `${pin} stays within 10 % of its level only after ${nanoseconds(seen.settled)}${bit}`;
 }
@@ -71,7 +91,9 @@ function staticLevel({ edge, high, low, receiver, receiverPin, driver }: Observa
 }
 
 function isLevelShort({ edge, high, low, receiver }: Observation): boolean {
-  return edge === "rise" ? receiver.vih !== null && high <= receiver.vih : receiver.vil !== null && low >= receiver.vil;
+  return edge === "rise"
+    ? receiver.vih !== null && high <= receiver.vih
+    : receiver.vil !== null && low >= receiver.vil;
 }
 
 function level(seen: Observation): string {
@@ -79,7 +101,9 @@ function level(seen: Observation): string {
   const steady = edge === "rise" ? high : low;
   const threshold = edge === "rise" ? (receiver.vih ?? 0) : (receiver.vil ?? 0);
   const clear = edge === "rise" ? steady - threshold : threshold - steady;
-  const dividers = path.parts.filter((part) => part.role === "termination" && part.kind === "R" && part.value);
+  const dividers = path.parts.filter(
+    (part) => part.role === "termination" && part.kind === "R" && part.value,
+  );
   const why = dividers.length
     ? `${dividers.map((part) => `${part.reference} (${ohms(part.value ?? 0)})`).join(" and ")} against the ${ohms(driver.resistance[corner.driver])} driver of ${volts(driver.vdd)}`
     : `The ${volts(driver.vdd)} driver`;
@@ -90,9 +114,13 @@ function level(seen: Observation): string {
 function lateArrival(seen: Observation): string {
   const found = anatomy(seen.path, seen.driverPin, seen.driver, seen.receiverPin, seen.corner);
   const level = volts(seen.receiver.vmeas ?? seen.receiver.vdd / 2);
-  if (seen.measCrossing === null) return `${seen.receiverPin.pin} does not reach ${level} within ${nanoseconds(seen.window)}.`;
+  if (seen.measCrossing === null)
+    return `${seen.receiverPin.pin} does not reach ${level} within ${nanoseconds(seen.window)}.`;
   const line = found ? `, of which the line takes ${picoseconds(found.delay)}` : "";
-  const load = found && found.load.farads > 0 ? ` and ${picofarads(found.load.farads)} behind ${ohms(Math.max(found.source, found.line))} slows the edge` : "";
+  const load =
+    found && found.load.farads > 0
+      ? ` and ${picofarads(found.load.farads)} behind ${ohms(Math.max(found.source, found.line))} slows the edge`
+      : "";
   const driver = `The ${seen.corner.driver} driver's ${picoseconds(seen.driver.riseTime[seen.corner.driver])} edge`;
   return `${driver} crosses ${level} at ${seen.receiverPin.pin} after ${picoseconds(seen.measCrossing - seen.sourceCrossing)} of flight${line}${load}.`;
 }

@@ -1,7 +1,8 @@
 import type { Observation } from "../rule";
 import type { Anatomy } from "./anatomy";
 
-export type BounceMechanism = "driver mismatch" | "end mismatch" | "impedance step" | "branch" | "capacitive load";
+export type BounceMechanism =
+  "driver mismatch" | "end mismatch" | "impedance step" | "branch" | "capacitive load";
 
 /** Reflections weaker than this explain nothing. */
 const FAINT = 0.03;
@@ -18,7 +19,9 @@ export function bounceMechanism(found: Anatomy): BounceMechanism {
     ["capacitive load", found.load.strength],
   ];
   if (found.end) candidates.push(["end mismatch", Math.abs(found.rhoEnd)]);
-  const [mechanism, strength] = candidates.reduce((most, entry) => (entry[1] > most[1] + 1e-9 ? entry : most));
+  const [mechanism, strength] = candidates.reduce((most, entry) =>
+    entry[1] > most[1] + 1e-9 ? entry : most,
+  );
   return strength < FAINT ? "driver mismatch" : mechanism;
 }
 
