@@ -68,7 +68,7 @@ export async function raiseFlag(
 ): Promise<string> {
   if (!can(actor, "review:flag")) throw new NotFoundError("The project");
   await requireProject(actor, projectId);
-  await requireAssignee(actor, input.assigneeUserId);
+  await requireAssignee(actor, projectId, input.assigneeUserId);
   const db = await getDb();
   const id = newId();
   const at = now();
@@ -115,7 +115,7 @@ export async function updateFlag(
 ): Promise<void> {
   if (!can(actor, "review:flag")) throw new NotFoundError("The flag");
   const { flag: current } = await getFlag(actor, projectId, flagId);
-  if (change.assigneeUserId) await requireAssignee(actor, change.assigneeUserId);
+  if (change.assigneeUserId) await requireAssignee(actor, projectId, change.assigneeUserId);
   const db = await getDb();
   const resolved = change.state === "resolved";
   const [changed] = await db
@@ -173,8 +173,12 @@ export async function subjectTitle(actor: Actor, projectId: string, subject: Sub
 }
 
 /** People of the team who may be given a flag: everybody but manufacturers. */
-export async function listAssignees(actor: Actor): Promise<{ userId: string; name: string; role: string }[]> {
-  if (!can(actor, "project:read")) throw new NotFoundError("The team");
+export async function listAssignees(
+  actor: Actor,
+  projectId: string,
+): Promise<{ userId: string; name: string; role: string }[]> {
+  if (!can(actor, "project:read")) throw new NotFoundError("The project");
+  await requireProject(actor, projectId);
   const db = await getDb();
   return db
     .select({ userId: user.id, name: user.name, role: member.role })
@@ -184,13 +188,24 @@ export async function listAssignees(actor: Actor): Promise<{ userId: string; nam
     .orderBy(asc(user.name));
 }
 
-async function requireAssignee(actor: Actor, userId: string | null): Promise<void> {
+async function requireAssignee(actor: Actor, projectId: string, userId: string | null): Promise<void> {
   if (userId === null) return;
-  const people = await listAssignees(actor);
+  const people = await listAssignees(actor, projectId);
   if (!people.some((person) => person.userId === userId))
     throw new RefusedError("That person is not in this team, or cannot see the board. Choose another.", "assignee", {
       assigneeUserId: "Choose somebody of the team.",
     });
+}
+
+/** Name and address of somebody of the team, for a message. */
+export async function findColleague(actor: Actor, userId: string): Promise<{ name: string; email: string } | null> {
+  const db = await getDb();
+  const [row] = await db
+    .select({ name: user.name, email: user.email })
+    .from(member)
+    .innerJoin(user, eq(user.id, member.userId))
+    .where(and(eq(member.organizationId, actor.teamId), eq(member.userId, userId)));
+  return row ?? null;
 }
 
 async function requireProject(actor: Actor, projectId: string): Promise<void> {

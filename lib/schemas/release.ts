@@ -61,3 +61,8 @@ export interface ReleaseBlocker {
   text: string;
   count: number | null;
 }
+
+/** A recipient's answer to a note: they have it, with a word if they like. */
+export const acknowledgement = z.object({ words: z.string().trim().max(2000).default("") });
+/** 32 random bytes, base64url: what a recipient's link holds. */
+export const linkToken = z.string().regex(/^[\w-]{43}$/);

@@ -1,0 +1,14 @@
+import { z } from "zod";
+import { route } from "@/lib/auth/route";
+import { getSentNote, markSeen } from "@/lib/db/release";
+import { id } from "@/lib/schemas/common";
+
+export const GET = route({
+  access: "session",
+  params: z.object({ releaseId: id }),
+  handler: async ({ signedIn, params }) => {
+    const sent = await getSentNote(signedIn.email, params.releaseId);
+    await markSeen(sent.recipientId, "viewedAt");
+    return { note: sent.note, noteHash: sent.noteHash, acknowledgedAt: sent.acknowledgedAt, acknowledgedBy: sent.acknowledgedBy };
+  },
+});
