@@ -1,11 +1,10 @@
 import type { Route } from "next";
-import { headers } from "next/headers";
 import Link from "next/link";
 import { BounceSketch } from "@/components/landing/bounce-sketch";
 import { Cautions } from "@/components/landing/cautions";
 import { Mark } from "@/components/shell/mark";
 import { LinkButton } from "@/components/ui/link-button";
-import { signedInFrom } from "@/lib/auth/require-actor";
+import { currentSigned } from "@/lib/auth/require-actor";
 
 const WORK = [
   {
@@ -27,7 +26,7 @@ const WORK = [
 ];
 
 export default async function LandingPage() {
-  const signedIn = await signedInFrom(await headers());
+  const signedIn = await currentSigned();
   return (
     <div className="mx-auto flex min-h-dvh max-w-6xl flex-col px-6 py-6">
       <header className="flex items-center justify-between gap-4">
@@ -56,7 +55,7 @@ export default async function LandingPage() {
           </p>
           <div className="flex flex-wrap gap-3">
             {signedIn ? (
-              <LinkButton size="md" variant="primary" href="/projects">
+              <LinkButton size="md" variant="primary" href={"/projects" as Route}>
                 Open your projects
               </LinkButton>
             ) : (

@@ -9,6 +9,6 @@ rmSync(dataDir, { recursive: true, force: true });
 delete process.env.DATABASE_URL;
 delete process.env.SMTP_URL;
 delete process.env.BASE_URL;
-Object.assign(process.env, { DATA_DIR: dataDir, DEMO: "1", RATE_LIMITS: "0" });
+Object.assign(process.env, { DATA_DIR: dataDir, DEMO: "1", RATE_LIMITS: "off" });
 
 await import("../../scripts/start.mjs");

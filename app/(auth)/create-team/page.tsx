@@ -1,11 +1,11 @@
 import type { Metadata } from "next";
 import { CreateTeamForm } from "@/components/auth/create-team-form";
-import { requireSignedIn } from "@/lib/auth/require-actor";
+import { requireSigned } from "@/lib/auth/require-actor";
 
 export const metadata: Metadata = { title: "Make a team" };
 
 export default async function NewTeamPage() {
-  const { email } = await requireSignedIn();
+  const { email } = (await requireSigned()).person;
   return (
     <>
       <h1 className="text-xl">Make a team</h1>

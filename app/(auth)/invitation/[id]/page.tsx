@@ -1,8 +1,7 @@
 import type { Metadata } from "next";
-import { headers } from "next/headers";
 import { AcceptInvitation } from "@/components/auth/accept-invitation";
 import { LinkButton } from "@/components/ui/link-button";
-import { signedInFrom } from "@/lib/auth/require-actor";
+import { currentSigned } from "@/lib/auth/require-actor";
 
 export const metadata: Metadata = { title: "Invitation", referrer: "no-referrer" };
 
@@ -12,7 +11,7 @@ interface Props {
 
 export default async function InvitationPage({ params }: Props) {
   const { id } = await params;
-  const signedIn = await signedInFrom(await headers());
+  const signedIn = await currentSigned();
   const back = encodeURIComponent(`/invitation/${id}`);
   return (
     <>
@@ -21,7 +20,7 @@ export default async function InvitationPage({ params }: Props) {
         <>
           <AcceptInvitation invitationId={id} />
           <p className="text-ink-soft text-sm">
-            You are signed in as <span className="break-all">{signedIn.email}</span>.
+            You are signed in as <span className="break-all">{signedIn.person.email}</span>.
           </p>
         </>
       ) : (
