@@ -1,14 +1,8 @@
 "use client";
 
 import { useMemo } from "react";
-import {
-  alongLine,
-  alongLineDomain,
-  type AlongLineOptions,
-  alongLineWaves,
-  describeAlong,
-  type SectionWaves,
-} from "@/lib/drawings/along-line.geometry";
+import { alongLine, type AlongLineOptions, alongLineWaves } from "@/lib/drawings/along-line.geometry";
+import { alongLineDomain, describeAlong, type SectionWaves } from "@/lib/drawings/line-voltages";
 import type { Domain } from "@/lib/drawings/axis";
 import type { LineRow } from "@/lib/drawings/line-row";
 import { DrawingSvg } from "./drawing-svg";

@@ -4,7 +4,7 @@ import { strandsOf } from "./topology-graph";
 
 /** A section shorter than this could not be seen; it is drawn this long and counted. */
 export const LEAST_SECTION = 12;
-const UNKNOWN_SECTION = 52;
+const UNKNOWN_SECTION = 76;
 const PART = 54;
 const VIA = 18;
 /** The lead of what hangs under its node. */

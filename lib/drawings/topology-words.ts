@@ -41,7 +41,12 @@ export function describeTopology(topology: Topology): string {
     for (const b of strand.branches) walk(b, `At ${b.from}`);
   };
   walk(main, `From driver ${topology.driver}${driver?.detail ? ` (${driver.detail})` : ""}`);
-  if (apart > 0) branches.push(`${apart} sections or pins are not reached from the driver.`);
+  if (apart > 0)
+    branches.push(
+      apart === 1
+        ? "1 section or pin is not reached from the driver."
+        : `${apart} sections or pins are not reached from the driver.`,
+    );
   return branches.join(" ");
 }
 

@@ -1,7 +1,8 @@
 import type { Domain } from "./axis";
 import { quantityText, voltsText } from "./number-text";
 import { extent } from "./wave-samples";
-import type { LimitLine, Violation, WaveProbe } from "./waveform-chart.geometry";
+import type { LimitLine, WaveProbe } from "./waveform-chart.geometry";
+import type { Violation } from "./waveform-violations";
 
 /** The chart in sentences: what each wave reaches, each limit, and what passes it where. */
 export function describeWaveforms(

@@ -1,0 +1,90 @@
+import type { Domain, PlotBox, Scale } from "./axis";
+import { circle, type Mark, polyline, text } from "./marks";
+import { voltsText } from "./number-text";
+import { spreadLabels } from "./spread-labels";
+import { textWidth } from "./text-width";
+import { voltsAt } from "./wave-samples";
+import { waveStyle } from "./wave-style";
+import type { LimitLine, WaveProbe } from "./waveform-chart.geometry";
+import type { Violation } from "./waveform-violations";
+
+export const LABEL = 12;
+const ROW = 15;
+
+/** Each limit's name on its outer side, at the left, where waves have not yet started to ring. */
+export function limitNames(
+  limits: readonly LimitLine[],
+  violations: readonly Violation[],
+  y: Scale,
+  box: PlotBox,
+): Mark[] {
+  const wanted = limits.map((l) => y(l.volts) + (l.side === "max" ? -10 : 10));
+  const rows = spreadLabels(wanted, ROW, box.top, box.bottom);
+  return limits.map((l, i) => {
+    const broken = violations.some((v) => v.limit === l.id);
+    return text(box.left + 8, (rows[i] ?? 0) + 4, `${l.label} ${voltsText(l.volts)}`, {
+      ink: l.reference ? "ink-soft" : "fail",
+      weight: broken ? 650 : 400,
+      halo: true,
+    });
+  });
+}
+
+/** How far past the limit, at the worst point of each limit. */
+export function worstNotes(violations: readonly Violation[], x: Scale, y: Scale, box: PlotBox): Mark[] {
+  const worst = new Map<string, Violation>();
+  for (const v of violations) {
+    const known = worst.get(v.limit);
+    if (!known || v.worst.past > known.worst.past) worst.set(v.limit, v);
+  }
+  return [...worst.values()].flatMap((v) => {
+    const [cx, cy] = [x(v.worst.time), y(v.worst.volts)];
+    const words = `${voltsText(v.worst.past)} past`;
+    const room = textWidth(words, LABEL, true) + 12;
+    const leftward = cx + room > box.right;
+    return [
+      circle(cx, cy, 3, { fill: "fail" }),
+      text(leftward ? cx - 8 : cx + 8, Math.min(Math.max(cy + 4, box.top + 10), box.bottom - 4), words, {
+        ink: "fail",
+        weight: 650,
+        anchor: leftward ? "end" : "start",
+        halo: true,
+      }),
+    ];
+  });
+}
+
+/** The name of each wave at its end, moved apart where ends meet. */
+export function endNames(
+  probes: readonly WaveProbe[],
+  focus: string,
+  span: Domain,
+  y: Scale,
+  box: PlotBox,
+): Mark[] {
+  const ends = probes.flatMap((p) => {
+    const v = voltsAt(p, span[1]);
+    return v === null ? [] : [{ p, y: Math.min(Math.max(y(v), box.top), box.bottom) }];
+  });
+  const rows = spreadLabels(
+    ends.map((e) => e.y),
+    ROW,
+    box.top,
+    box.bottom,
+  );
+  return ends.flatMap(({ p, y: at }, i) => {
+    const row = rows[i] ?? at;
+    const style = waveStyle(p.role, p.id === focus);
+    return [
+      polyline(
+        [
+          [box.right + 1, at],
+          [box.right + 6, at],
+          [box.right + 12, row],
+        ],
+        { ...style, weight: 1 },
+      ),
+      text(box.right + 15, row + 4, p.label, { ink: style.stroke, weight: p.id === focus ? 650 : 400 }),
+    ];
+  });
+}
