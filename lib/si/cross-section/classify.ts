@@ -51,10 +51,10 @@ export function classifyCrossSection(section: CrossSection): Structure {
       : place === "covered"
         ? sideBetween(section, first.y, height)
         : null;
-  const sideways = second && second.y === first.y;
+  const sideways = second && Math.abs(second.y - first.y) <= slack;
   return {
     place,
-    arrangement: arrangementOf(first, second),
+    arrangement: arrangementOf(first, second, slack),
     masked: section.mask !== undefined,
     coplanarSlot: section.coplanar?.gap ?? null,
     width: (first.widthBottom + first.widthTop) / 2,
@@ -73,9 +73,9 @@ export function classifyCrossSection(section: CrossSection): Structure {
   };
 }
 
-function arrangementOf(first: Trace, second: Trace | undefined): Structure["arrangement"] {
+function arrangementOf(first: Trace, second: Trace | undefined, slack: number): Structure["arrangement"] {
   if (!second) return "single";
-  if (second.y !== first.y) return "broadside pair";
+  if (Math.abs(second.y - first.y) > slack) return "broadside pair";
   const equal =
     same(first.widthBottom, second.widthBottom) &&
     same(first.widthTop, second.widthTop) &&

@@ -23,6 +23,9 @@ export interface ClosedFormResult {
   ignores: string[];
 }
 
+/** A formula bound to a structure; evaluating it may throw DomainError. */
+export type Candidate = () => ClosedFormResult | ClosedFormResult[];
+
 export function singleResult(
   note: FormulaNote,
   structure: Structure,

@@ -36,7 +36,10 @@ export function bracketEnds(evaluate: Evaluate, min: number, max: number): Brack
       : typeof valueAtMin === "number"
         ? min
         : firstInside(attempt, min, max);
-  if (anchor === null) throw valueAtMin;
+  if (anchor === null)
+    throw valueAtMin instanceof DomainError
+      ? valueAtMin
+      : new DomainError("Nothing can be computed here.", "min");
   const end = (x: number, value: number | DomainError): { x: number; value: number } => {
     if (typeof value === "number") return { x, value };
     let bad = x;

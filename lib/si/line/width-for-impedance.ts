@@ -101,7 +101,7 @@ function gapOf(left: Trace, right: Trace): number {
 function centred(traces: Trace[], centre: number, gap: number): Trace[] {
   const [left, right] = traces;
   if (!left || !right) return traces;
-  if (left.y !== right.y) return traces; // broadside: the traces stay one above the other
+  if (Math.abs(left.x - right.x) < Math.abs(left.y - right.y)) return traces; // broadside: one stays above the other
   const span = left.widthBottom + gap + right.widthBottom;
   return [
     { ...left, x: centre - span / 2 + left.widthBottom / 2 },

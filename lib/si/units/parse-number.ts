@@ -3,6 +3,8 @@ import { Decimal, decimalToText } from "./decimal";
 /** Outside 1e-30 … 1e30 nothing on a board is meant. */
 const MAX_EXPONENT = 30;
 const MAX_DIGITS = 30;
+/** What plainDigits gives for numbers such as this one. */
+const AMBIGUOUS = "1,000";
 
 export type NumberReading =
   | { ok: true; value: string }
@@ -26,7 +28,7 @@ export function readDecimal(text: string): NumberReading {
   if (!match) return { ok: false, reason: "shape" };
   const [, sign = "", body = "", exponent = "0"] = match;
   const digits = plainDigits(body);
-  if (digits === "ambiguous") return { ok: false, reason: "ambiguous" };
+  if (digits === AMBIGUOUS) return { ok: false, reason: "ambiguous" };
   if (digits === null) return { ok: false, reason: "shape" };
   if (digits.replace(".", "").length > MAX_DIGITS) return { ok: false, reason: "range" };
   return checked(new Decimal(`${sign}${digits}e${exponent}`));
@@ -45,13 +47,13 @@ function checked(value: Decimal): NumberReading {
   return { ok: true, value: decimalToText(value) };
 }
 
-/** Digits with at most one point; "ambiguous" for 1,000; null for what is no number. */
-function plainDigits(body: string): string | "ambiguous" | null {
+/** Digits with at most one point; AMBIGUOUS; null for what is no number. */
+function plainDigits(body: string): string | null {
   if (/^\d+(\.\d*)?$|^\.\d+$/.test(body)) return body.startsWith(".") ? `0${body}` : body.replace(/\.$/, "");
   if (/^\d{1,3}(?:[ ']\d{3})+(?:[.,]\d+)?$/.test(body)) return body.replace(/[ ']/g, "").replace(",", ".");
   if (/^\d{1,3}(?:,\d{3})+\.\d+$/.test(body)) return body.replace(/,/g, "");
   if (/^\d{1,3}(?:\.\d{3})+,\d+$/.test(body)) return body.replace(/\./g, "").replace(",", ".");
-  if (/^[1-9]\d{0,2}(?:,\d{3})+$/.test(body)) return "ambiguous";
+  if (/^[1-9]\d{0,2}(?:,\d{3})+$/.test(body)) return AMBIGUOUS;
   if (/^\d*,\d+$/.test(body)) return body.startsWith(",") ? `0.${body.slice(1)}` : body.replace(",", ".");
   return null;
 }

@@ -23,6 +23,7 @@ const words: Record<Dimension, { article: string; example: string }> = {
 };
 
 const LONGEST_TEXT = 64;
+const vulgarFractions: Record<string, string> = { "¼": " 1/4", "½": " 1/2", "¾": " 3/4" };
 
 /**
  * Reads a typed quantity: "5 mil", "0,127mm", "1/2 oz", "120ps", "4k7"; a bare number is in `defaultUnit`.
@@ -34,7 +35,7 @@ const LONGEST_TEXT = 64;
  * @throws DomainError with a whole sentence that says what is wrong and what to write instead
  */
 export function parseQuantity(text: string, dimension: Dimension, defaultUnit: string): Quantity {
-  const typed = text.trim();
+  const typed = text.replace(/[¼½¾]/g, (sign) => vulgarFractions[sign] ?? sign).trim();
   if (typed === "")
     throw refuse(`Nothing is written where ${words[dimension].article} is needed.`, dimension);
   const said = `'${typed.length > 40 ? `${typed.slice(0, 40)}…` : typed}'`;

@@ -2,6 +2,8 @@ import fc from "fast-check";
 import { describe, expect, it } from "vitest";
 import { DomainError } from "@/lib/si/errors";
 import * as f from "@/lib/si/formulas";
+import { ETA0, LIGHT_SPEED } from "@/lib/si/physical-constants";
+import { fromSi } from "@/lib/si/units";
 
 describe("centred strip without thickness (Cohn 1954, exact)", () => {
   it.each([
@@ -91,6 +93,11 @@ describe("microstrip without thickness (Hammerstad, Jensen 1980)", () => {
     const wide = f.wheeler1965(2 + 1e-9, 1, 4.2).impedance;
     expect(Math.abs(wide / narrow - 1)).toBeLessThan(0.03);
   });
+});
+
+it("light takes 84.725 ps an inch in vacuum (computed)", () => {
+  expect(Number(fromSi(1 / LIGHT_SPEED, "ps/in").value)).toBeCloseTo(84.725, 3);
+  expect(ETA0).toBeCloseTo(376.7303136668535, 9);
 });
 
 describe("complete elliptic integral by the arithmetic-geometric mean", () => {

@@ -70,7 +70,7 @@ describe("stackupWarnings", () => {
     });
     fc.assert(
       fc.property(fc.array(any, { maxLength: 9 }), (rows) => {
-        const layers = rows.map((row) => ({ ...layer("core", row.name), ...row }) as StackLayer);
+        const layers = rows.map((row) => ({ ...layer("core", row.name), ...row }));
         for (const warning of stackupWarnings({ layers })) expect(warning.message).toMatch(/^[A-Z0-9].*\.$/);
       }),
     );
