@@ -7,3 +7,4 @@ export * from "./physical-constants";
 export * from "./line";
 export * from "./stackup";
 export * from "./materials";
+export * from "./lattice";

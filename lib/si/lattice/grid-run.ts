@@ -1,0 +1,225 @@
+import type { GridPlan, PlannedCluster } from "./grid-plan";
+import type { Channel } from "./channels";
+import type { ClusterPort } from "./clusters";
+
+/** A deviation from rest of one fixed node, on the grid from its own start. */
+export interface GridInput {
+  fixed: number;
+  /** one value a step, steps + 1 of them */
+  value: Float64Array;
+  /** its rate [1/s], where a capacitor or coil may feel it */
+  rate: Float64Array;
+}
+
+/** Deviations from rest; index 0 is the start of the input. */
+export interface GridRun {
+  /** by circuit node, where recorded */
+  nodes: (Float64Array | null)[];
+  /** by line end, history of `pad` zeros first */
+  outgoing: Float64Array[];
+  incident: (Float64Array | null)[];
+}
+
+/** A wave as a cluster reads it: sample n at `samples[n + offset]`. */
+interface Arriving {
+  samples: Float64Array;
+  offset: number;
+}
+
+/**
+ * Steps the lattice through time from rest, one source moving. Waves leave an end, arrive at the other a delay later;
+ * each cluster turns arrivals into node voltages, and each port sends what it has less what came: out = v − a.
+ */
+export function runGrid(plan: GridPlan, input: GridInput, nodeCount: number, recorded: Iterable<number>): GridRun {
+  const { steps, pad, delays, block } = plan;
+  const ends = 2 * delays.length;
+  const outgoing = Array.from({ length: ends }, () => new Float64Array(steps + 1 + pad));
+  const incident: (Float64Array | null)[] = Array.from({ length: ends }, (_, end) => (delays[end >> 1]?.taps ? new Float64Array(steps + 1 + pad) : null));
+  const nodes: (Float64Array | null)[] = new Array<Float64Array | null>(nodeCount).fill(null);
+  for (const node of recorded) nodes[node] = new Float64Array(steps + 1);
+  const arriving: Arriving[] = outgoing.map((_, end) => {
+    const delayed = incident[end];
+    const far = outgoing[end ^ 1]!;
+    return delayed ? { samples: delayed, offset: pad } : { samples: far, offset: pad - delays[end >> 1]!.whole };
+  });
+  const workers = plan.clusters.map((planned) => clusterWorker(planned, input, arriving, outgoing, pad, nodes));
+  for (let from = 0; from <= steps; from += block) {
+    const to = Math.min(steps + 1, from + block);
+    for (let end = 0; end < ends; end++) {
+      const into = incident[end];
+      const { taps, whole } = delays[end >> 1]!;
+      if (into && taps) interpolate(outgoing[end ^ 1]!, into, taps, pad - whole, pad, from, to);
+    }
+    for (const work of workers) work(from, to);
+  }
+  return { nodes, outgoing, incident };
+}
+
+/** The run's series for each channel, sample 0 at the start of the input; null where nothing moves. */
+export function channelSeries(channels: readonly Channel[], plan: GridPlan, run: GridRun, input: { fixed: number; value: Float64Array }): (Float64Array | null)[] {
+  return channels.map((channel) => {
+    if (channel.kind === "node") return run.nodes[channel.node] ?? null;
+    if (channel.kind === "fixed") return channel.fixed === input.fixed ? input.value : null;
+    if (channel.kind === "outgoing") return run.outgoing[channel.end]!.subarray(plan.pad);
+    const delayed = run.incident[channel.end];
+    if (delayed) return delayed.subarray(plan.pad);
+    const from = plan.pad - plan.delays[channel.end >> 1]!.whole;
+    return run.outgoing[channel.end ^ 1]!.subarray(from, from + plan.steps + 1);
+  });
+}
+
+function interpolate(source: Float64Array, into: Float64Array, taps: readonly [number, number, number, number], shift: number, pad: number, from: number, to: number) {
+  const [c0, c1, c2, c3] = taps;
+  for (let n = from; n < to; n++) {
+    const i = n + shift;
+    into[n + pad] = c0 * source[i - 2]! + c1 * source[i - 1]! + c2 * source[i]! + c3 * source[i + 1]!;
+  }
+}
+
+type Worker = (from: number, to: number) => void;
+
+function clusterWorker(planned: PlannedCluster, input: GridInput, arriving: readonly Arriving[], outgoing: readonly Float64Array[], pad: number, nodes: readonly (Float64Array | null)[]): Worker {
+  const { cluster, single, propagator } = planned;
+  const feeds = cluster.feeds.filter((feed) => feed.fixed === input.fixed);
+  if (single) {
+    let siemens = 0;
+    let farads = 0;
+    for (const feed of feeds) {
+      siemens += feed.siemens;
+      farads += feed.farads;
+    }
+    const drive = siemens === 0 && farads === 0 ? null : driveOf(input, siemens, farads);
+    return nodeWorker(single, cluster.ports, drive, arriving, outgoing, pad, nodes[cluster.nodes[0]!] ?? null);
+  }
+  if (propagator) return matrixWorker(planned, feeds, input, arriving, outgoing, pad, nodes);
+  return heldWorker(cluster.ports, input, arriving, outgoing, pad);
+}
+
+function driveOf(input: GridInput, siemens: number, farads: number): Float64Array {
+  const drive = new Float64Array(input.value.length);
+  for (let n = 0; n < drive.length; n++) drive[n] = siemens * input.value[n]! + farads * input.rate[n]!;
+  return drive;
+}
+
+/** Ends at fixed nodes. */
+function heldWorker(ports: readonly ClusterPort[], input: GridInput, arriving: readonly Arriving[], outgoing: readonly Float64Array[], pad: number): Worker {
+  return (from, to) => {
+    for (const port of ports) {
+      const { samples, offset } = arriving[port.end]!;
+      const out = outgoing[port.end]!;
+      let factor = 0;
+      for (const held of port.held) if (held.fixed === input.fixed) factor += held.factor;
+      for (let n = from; n < to; n++) out[n + pad] = factor * input.value[n]! - samples[n + offset]!;
+    }
+  };
+}
+
+function nodeWorker(
+  { p, q0, q1 }: { p: number; q0: number; q1: number },
+  ports: readonly ClusterPort[],
+  drive: Float64Array | null,
+  arriving: readonly Arriving[],
+  outgoing: readonly Float64Array[],
+  pad: number,
+  record: Float64Array | null,
+): Worker {
+  const count = ports.length;
+  const current = new Float64Array(256);
+  let v = 0;
+  let before = 0;
+  let started = false;
+  const first = ports[0];
+  return (from, to) => {
+    const length = to - from;
+    if (first) {
+      const { samples, offset } = arriving[first.end]!;
+      const weight = 2 * first.admittance;
+      if (drive) for (let i = 0; i < length; i++) current[i] = drive[from + i]! + weight * samples[from + i + offset]!;
+      else for (let i = 0; i < length; i++) current[i] = weight * samples[from + i + offset]!;
+    } else for (let i = 0; i < length; i++) current[i] = drive ? drive[from + i]! : 0;
+    for (let k = 1; k < count; k++) {
+      const port = ports[k]!;
+      const { samples, offset } = arriving[port.end]!;
+      const weight = 2 * port.admittance;
+      for (let i = 0; i < length; i++) current[i] = current[i]! + weight * samples[from + i + offset]!;
+    }
+    let i = 0;
+    if (!started) {
+      // From rest: a node with capacitance starts at nothing, one without follows at once.
+      started = true;
+      before = current[0]!;
+      v = q0 === 0 ? q1 * before : 0;
+      current[0] = v;
+      i = 1;
+    }
+    for (; i < length; i++) {
+      const now = current[i]!;
+      v = p * v + q0 * before + q1 * now;
+      before = now;
+      current[i] = v;
+    }
+    for (let k = 0; k < count; k++) {
+      const end = ports[k]!.end;
+      const { samples, offset } = arriving[end]!;
+      const out = outgoing[end]!;
+      for (let j = 0; j < length; j++) out[from + j + pad] = current[j]! - samples[from + j + offset]!;
+    }
+    if (record) for (let j = 0; j < length; j++) record[from + j] = current[j]!;
+  };
+}
+
+function matrixWorker(
+  { cluster, propagator, atOnce }: PlannedCluster,
+  feeds: readonly { row: number; siemens: number; farads: number }[],
+  input: GridInput,
+  arriving: readonly Arriving[],
+  outgoing: readonly Float64Array[],
+  pad: number,
+  nodes: readonly (Float64Array | null)[],
+): Worker {
+  const { size, ports } = cluster;
+  const { p, q0, q1 } = propagator!;
+  const z = new Float64Array(size);
+  const carry = new Float64Array(size);
+  const current = new Float64Array(size);
+  const records = cluster.nodes.map((node) => nodes[node] ?? null);
+  const held = ports.map((port) => port.held.reduce((sum, { fixed, factor }) => (fixed === input.fixed ? sum + factor : sum), 0));
+  const isStatic = cluster.isStatic;
+  return (from, to) => {
+    for (let n = from; n < to; n++) {
+      current.fill(0);
+      for (const feed of feeds) current[feed.row] = current[feed.row]! + feed.siemens * input.value[n]! + feed.farads * input.rate[n]!;
+      for (const port of ports) {
+        const { samples, offset } = arriving[port.end]!;
+        const inflow = 2 * port.admittance * samples[n + offset]!;
+        if (port.node >= 0) current[port.node] = current[port.node]! + inflow;
+        if (port.second >= 0) current[port.second] = current[port.second]! + port.sign * inflow;
+      }
+      const answer = n === 0 && atOnce ? atOnce : q1;
+      for (let i = 0; i < size; i++) {
+        let sum = carry[i]!;
+        for (let j = 0; j < size; j++) sum += answer[i * size + j]! * current[j]!;
+        z[i] = sum;
+      }
+      if (!isStatic)
+        for (let i = 0; i < size; i++) {
+          let sum = 0;
+          for (let j = 0; j < size; j++) sum += p[i * size + j]! * z[j]! + q0[i * size + j]! * current[j]!;
+          carry[i] = sum;
+        }
+      for (let k = 0; k < ports.length; k++) {
+        const port = ports[k]!;
+        let v = held[k]! * input.value[n]!;
+        if (port.node >= 0) v += port.share * z[port.node]!;
+        if (port.second >= 0) v += port.secondShare * z[port.second]!;
+        const { samples, offset } = arriving[port.end]!;
+        const out = outgoing[port.end]!;
+        out[n + pad] = v - samples[n + offset]!;
+      }
+      for (let i = 0; i < records.length; i++) {
+        const record = records[i];
+        if (record) record[n] = z[i]!;
+      }
+    }
+  };
+}

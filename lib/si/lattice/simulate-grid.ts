@@ -1,0 +1,56 @@
+import { UnsupportedError } from "../errors";
+import type { Sine } from "../network/types";
+import { recordedNodes } from "./channels";
+import type { Waveforms } from "./comb-output";
+import { drawGrid, type GridTerm } from "./grid-output";
+import { planGrid } from "./grid-plan";
+import { channelSeries, runGrid, type GridInput } from "./grid-run";
+import { movingSources, type Prepared } from "./prepared";
+import { chooseStep, type Accuracy } from "./step-size";
+
+/** A corner that a straight line between samples would miss by more than this share of the swing gets its sample. */
+const WORTHY: Record<Accuracy, number> = { live: 1e-3, standard: 2e-4, reference: 5e-5 };
+
+/** Waveforms of a linear network on a grid, by superposition of the responses to one corner of each source. */
+export function simulateGrid({ circuit, clusters, channels, rest, until, accuracy, step: asked }: Prepared): { waveforms: Waveforms; steps: number } {
+  const { step, delays } = chooseStep(circuit, clusters, until, accuracy, asked);
+  const plan = planGrid(circuit, clusters, step, until, delays);
+  const terms: GridTerm[] = [];
+  const nodes = recordedNodes(channels);
+  let swing = 0;
+  let steps = 0;
+  for (const { fixed, corners } of movingSources(circuit)) {
+    const { name, wave } = circuit.fixed[fixed]!;
+    if (!wave) continue;
+    swing += wave.kind === "sine" ? 2 * Math.abs(wave.amplitude) : Math.max(...wave.value) - Math.min(...wave.value);
+    if (corners?.some((corner) => corner.jump !== 0)) throw new UnsupportedError(`${name} jumps; give its edge a rise time where capacitors or coils are in the network.`, "drivers");
+    const input = wave.kind === "sine" ? sineInput(fixed, plan.steps, step, wave) : rampInput(fixed, plan.steps, step);
+    const run = runGrid(plan, input, circuit.nodeCount, nodes);
+    const response = channelSeries(channels, plan, run, input);
+    steps += plan.steps;
+    if (corners) for (const { time, slope } of corners) if (time <= until) terms.push({ response, shift: time, weight: slope });
+    if (wave.kind === "sine" && wave.start <= until) terms.push({ response, shift: wave.start, weight: 1 });
+  }
+  return { waveforms: drawGrid(terms, rest, step, until, WORTHY[accuracy] * swing), steps };
+}
+
+/** A ramp of 1 V/s from t = 0. */
+function rampInput(fixed: number, steps: number, step: number): GridInput {
+  const value = new Float64Array(steps + 1);
+  for (let n = 0; n <= steps; n++) value[n] = n * step;
+  return { fixed, value, rate: new Float64Array(steps + 1).fill(1) };
+}
+
+/** The sine from its own start, as a deviation from its value there. */
+function sineInput(fixed: number, steps: number, step: number, wave: Sine): GridInput {
+  const value = new Float64Array(steps + 1);
+  const rate = new Float64Array(steps + 1);
+  const { amplitude, frequency, phase } = wave;
+  const turn = 2 * Math.PI * frequency;
+  for (let n = 0; n <= steps; n++) {
+    const angle = turn * n * step + phase;
+    value[n] = amplitude * (Math.sin(angle) - Math.sin(phase));
+    rate[n] = amplitude * turn * Math.cos(angle);
+  }
+  return { fixed, value, rate };
+}

@@ -1,0 +1,175 @@
+import { DomainError } from "../errors";
+import { corners } from "../network/wave";
+import type { Circuit } from "./circuit";
+import type { Cluster } from "./clusters";
+
+export type Accuracy = "live" | "standard" | "reference";
+
+export interface StepChoice {
+  step: number;
+  /** each line's delay in steps; a whole number where the search found one */
+  delays: number[];
+}
+
+/** How finely things are resolved: curvature of charging, ramps between whole steps, a sine's period. */
+const FINENESS: Record<Accuracy, { curve: number; ramp: number; sine: number }> = {
+  live: { curve: 0.1, ramp: 1 / 30, sine: 1 / 64 },
+  standard: { curve: 0.06, ramp: 1 / 60, sine: 1 / 160 },
+  reference: { curve: 0.03, ramp: 1 / 160, sine: 1 / 400 },
+};
+const MOST_STEPS = 1_000_000;
+/** A step may be this much finer than needed before an exact common step is given up. */
+const FINER = 6;
+
+/** The largest common measure of delays [s], or null where they have none above `least`. */
+export function commonDelay(delays: readonly number[], least: number): number | null {
+  let measure = 0;
+  for (const delay of delays) {
+    let a = Math.max(measure, delay);
+    let b = Math.min(measure, delay);
+    while (b > least / 2) {
+      const rest = a - b * Math.round(a / b);
+      a = b;
+      b = Math.abs(rest);
+    }
+    if (b > 1e-9 * a) return null;
+    measure = a;
+  }
+  if (!(measure >= least)) return null;
+  // Rounding in the remainders is repaired from the longest delay.
+  const longest = Math.max(...delays);
+  measure = longest / Math.round(longest / measure);
+  for (const delay of delays) {
+    const steps = delay / measure;
+    if (Math.abs(steps - Math.round(steps)) > 1e-8 * Math.max(1, steps * 1e-3)) return null;
+  }
+  return measure;
+}
+
+/** Shortest moving piece of all sources, in straight ramps [s]; a sine counts with its share of a period. */
+export function shortestRamp(circuit: Circuit): number {
+  let ramp = Infinity;
+  for (const { wave } of circuit.fixed) {
+    if (!wave) continue;
+    if (wave.kind === "sine") ramp = Math.min(ramp, 0.25 / wave.frequency);
+    else
+      for (let i = 1; i < wave.time.length; i++) {
+        const length = wave.time[i]! - wave.time[i - 1]!;
+        if (length > 0 && wave.value[i] !== wave.value[i - 1]) ramp = Math.min(ramp, length);
+      }
+  }
+  return ramp;
+}
+
+/**
+ * The step for a lattice on a grid: fine enough for the charging curves, and such that delays are whole steps if any
+ * such step can be found; else each line interpolates, which asks for finer steps and at least two of them a line.
+ *
+ * @throws DomainError where the window would take more than a million steps
+ */
+export function chooseStep(circuit: Circuit, clusters: readonly Cluster[], until: number, accuracy: Accuracy, asked?: number): StepChoice {
+  const fineness = FINENESS[accuracy];
+  const ramp = shortestRamp(circuit);
+  const delays = circuit.lines.map((line) => line.delay);
+  const shortest = Math.min(Infinity, ...delays);
+  const wanted = asked ?? Math.min(curveStep(circuit, clusters, ramp, until, fineness), sineStep(circuit, fineness.sine));
+  const choice = delays.length === 0 ? { step: wanted, delays } : (wholeSteps(circuit, delays, wanted, ramp) ?? betweenSteps(delays, Math.min(asked ?? ramp * fineness.ramp, wanted, shortest / 2)));
+  if (until / choice.step > MOST_STEPS) throw new DomainError(`The window of ${until} s takes more than a million steps at a delay of ${shortest} s; end it earlier or join the short sections.`, "until");
+  return choice;
+}
+
+function sineStep(circuit: Circuit, share: number): number {
+  let step = Infinity;
+  for (const { wave } of circuit.fixed) if (wave?.kind === "sine") step = Math.min(step, share / wave.frequency);
+  return step;
+}
+
+/** A straight chord over one step of exp(−t/τ) started by a ramp misses by step²/(8 τ ramp) of the swing. */
+function curveStep(circuit: Circuit, clusters: readonly Cluster[], ramp: number, until: number, { curve }: { curve: number }): number {
+  let step = Number.isFinite(ramp) ? ramp / 4 : until / 1000;
+  for (const cluster of clusters) {
+    const { size, e, g, nodes } = cluster;
+    for (let i = 0; i < size; i++) {
+      const mass = e[i * size + i]!;
+      if (mass === 0) continue;
+      let tau = mass / (g[i * size + i]! || 1e-30);
+      if (i >= nodes.length) {
+        // A coil: against the conductances and capacitances at its ends.
+        tau = 0;
+        for (let j = 0; j < nodes.length; j++) {
+          if (g[j * size + i] === 0) continue;
+          const siemens = g[j * size + j]!;
+          const farads = e[j * size + j]!;
+          tau = Math.max(tau, farads > 0 ? Math.sqrt(mass * farads) : mass * siemens);
+        }
+      } else for (let j = nodes.length; j < size; j++) if (g[i * size + j] !== 0) tau = Math.min(tau, Math.sqrt(mass * e[j * size + j]!));
+      const scale = Number.isFinite(ramp) ? ramp : tau;
+      if (tau > 1e-4 * scale) step = Math.min(step, Math.max(curve * Math.sqrt(tau * scale), scale / 400));
+    }
+  }
+  return step;
+}
+
+/** A step that divides every delay, as near below `wanted` as can be and in tune with the sources' corners. */
+function wholeSteps(circuit: Circuit, delays: readonly number[], wanted: number, ramp: number): StepChoice | null {
+  const common = commonDelay(delays, wanted / FINER);
+  if (common !== null) {
+    const parts = bestParts(circuit, common, Math.max(1, Math.ceil(common / wanted - 1e-9)));
+    const step = common / parts;
+    return { step, delays: delays.map((delay) => Math.round(delay / step)) };
+  }
+  const longest = Math.max(...delays);
+  const least = Math.ceil(longest / wanted);
+  const slip = Number.isFinite(ramp) ? 1e-5 * ramp : 1e-6 * Math.min(...delays);
+  for (let n = least; n <= FINER * least; n++) {
+    const step = longest / n;
+    if (delays.every((delay) => Math.round(delay / step) > 0 && Math.abs(delay - step * Math.round(delay / step)) <= slip)) return { step, delays: delays.map((delay) => Math.round(delay / step)) };
+  }
+  return null;
+}
+
+/** Of the next few divisions, the one whose step comes nearest to dividing the spans between corners. */
+function bestParts(circuit: Circuit, common: number, least: number): number {
+  const spans: number[] = [];
+  for (const { wave } of circuit.fixed) {
+    if (wave?.kind !== "pwl") continue;
+    const found = corners(wave);
+    for (const corner of found.slice(1, 5)) spans.push(corner.time - found[0]!.time);
+  }
+  let best = least;
+  let bestMiss = Infinity;
+  for (let parts = least; parts <= least * 1.4 + 1; parts++) {
+    let miss = 0;
+    for (const span of spans) {
+      const steps = (span * parts) / common;
+      miss += Math.abs(steps - Math.round(steps));
+    }
+    if (miss < bestMiss - 1e-6) {
+      best = parts;
+      bestMiss = miss;
+    }
+  }
+  return best;
+}
+
+/** Delays between steps: of the next divisions of the longest, the one with the least to interpolate. */
+function betweenSteps(delays: readonly number[], wanted: number): StepChoice {
+  const longest = Math.max(...delays);
+  const least = Math.ceil(longest / wanted);
+  let best = least;
+  let bestMiss = Infinity;
+  const most = least + Math.min(60, Math.ceil(least * 0.3));
+  for (let n = least; n <= most; n++) {
+    let miss = 0;
+    for (const delay of delays) {
+      const steps = (delay / longest) * n;
+      const part = Math.abs(steps - Math.round(steps));
+      miss += part * part;
+    }
+    if (miss < bestMiss) {
+      best = n;
+      bestMiss = miss;
+    }
+  }
+  return { step: longest / best, delays: delays.map((delay) => (delay / longest) * best) };
+}
