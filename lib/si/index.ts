@@ -8,3 +8,4 @@ export * from "./line";
 export * from "./stackup";
 export * from "./materials";
 export * from "./lattice";
+export * from "./waveform";
