@@ -5,7 +5,8 @@ import { wheeler1978 } from "./wheeler-stripline";
 export const parallelWheelerNote: FormulaNote = {
   id: "offset-stripline-approximations",
   title: "Two centred halves in parallel (Wheeler 1978)",
-  range: "width below 10 (spacing − copper) of the nearer plane; 1 to 4 % of a field solution",
+  range:
+    "width below 10 (spacing − copper) of the nearer plane; within 4 % where one height is up to 3 times the other, 8 % at 9 times",
   source: "Common practice on H. A. Wheeler 1978: each plane sees half of a centred strip of its own height",
 };
 export const parallelCohnNote: FormulaNote = {
