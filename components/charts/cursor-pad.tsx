@@ -59,7 +59,7 @@ export function CursorPad({ box, span, time, timeAt, onCursor, reading, upright 
       aria-valuemin={span[0] * 1e12}
       aria-valuemax={span[1] * 1e12}
       aria-valuenow={Math.round(now * 1e15) / 1e3}
-      aria-valuetext={time === null ? "not set" : `${quantityText(now, "s")}. ${reading}`}
+      aria-valuetext={time === null ? "not set" : `${quantityText(now, "s", { like: span[1] })}. ${reading}`}
       className="absolute cursor-crosshair touch-none print:hidden"
       style={{ left: box.left, top: box.top, width: box.right - box.left, height: box.bottom - box.top }}
       onKeyDown={byKey}

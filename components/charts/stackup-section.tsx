@@ -1,11 +1,8 @@
 "use client";
 
 import { useMemo } from "react";
-import {
-  type SectionLayer,
-  stackupSection,
-  type StackupSectionOptions,
-} from "@/lib/drawings/stackup-section.geometry";
+import type { SectionLayer } from "@/lib/drawings/stackup-layer";
+import { stackupSection, type StackupSectionOptions } from "@/lib/drawings/stackup-section.geometry";
 import { DrawingSvg } from "./drawing-svg";
 import { Sized } from "./sized";
 

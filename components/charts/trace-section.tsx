@@ -1,11 +1,8 @@
 "use client";
 
 import { useMemo } from "react";
-import {
-  traceSection,
-  type TraceSectionOptions,
-  type TraceSectionShape,
-} from "@/lib/drawings/trace-section.geometry";
+import { traceSection, type TraceSectionOptions } from "@/lib/drawings/trace-section.geometry";
+import type { TraceSectionShape } from "@/lib/drawings/trace-shape";
 import { DrawingSvg } from "./drawing-svg";
 import { Sized } from "./sized";
 

@@ -85,7 +85,7 @@ function AtWidth({
       <dl className="flex min-h-5 flex-wrap gap-x-5 pl-[62px] text-xs" aria-hidden>
         {cursorTime === null || drawing.empty ? null : (
           <>
-            <Reading label="Cursor" value={quantityText(cursorTime, "s")} strong />
+            <Reading label="Cursor" value={quantityText(cursorTime, "s", { like: drawing.span[1] })} strong />
             {readings.map((r) => (
               <Reading key={r.id} label={r.label} value={r.volts === null ? "no data" : voltsText(r.volts)} />
             ))}

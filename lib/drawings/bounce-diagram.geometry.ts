@@ -1,8 +1,9 @@
-import { type Domain, linear, type PlotBox, ticksFor } from "./axis";
+import { type Domain, linear, type PlotBox, type Scale, ticksFor } from "./axis";
 import type { BounceRay, NodeVoltage } from "./bounce-rays";
 import { rayLabel, RayRoom } from "./bounce-ray-labels";
 import { describeBounces } from "./bounce-words";
 import { type LineRow, type RowScale, rowHeader, rowScale, rowUprights, usableRow } from "./line-row";
+import { nodeVoltages } from "./node-voltages";
 import { arrowAlong } from "./ray-arrow";
 import { circle, type Drawing, emptyDrawing, group, line, type Mark, text } from "./marks";
 import { type LengthUnit, voltsText } from "./number-text";
@@ -31,7 +32,6 @@ export interface BounceDrawing extends Drawing {
 
 /** More rays than this make a grey field, not a drawing. */
 const MOST_RAYS = 400;
-const ROW = 15;
 const MARGIN = 132;
 
 /** The lattice of a line: place across, time down; each wave a ray from junction to junction. */
@@ -147,8 +147,6 @@ export interface RayLine {
   strength: number;
 }
 
-type Scale = ReturnType<typeof linear>;
-
 function rayLine(r: BounceRay, row: LineRow, scale: RowScale, y: Scale): Omit<RayLine, "ray" | "strength"> {
   const delay = row.sections[r.section]?.delay ?? 0;
   const [from, to] = r.outward ? [0, 1] : [1, 0];
@@ -191,42 +189,4 @@ function timeAxis(span: Domain, y: Scale, box: PlotBox): Mark[] {
     line(box.left, y(value), box.right, y(value), { stroke: "rule-line" }),
     text(52, y(value) + 4, label, { anchor: "end", ink: "ink-soft" }),
   ]);
-}
-
-/**
- * The voltages one end of the row takes, beside it at their times. Steps that follow each other closer than a line
- * of text are shown by the last of them.
- */
-function nodeVoltages(
-  voltages: readonly NodeVoltage[],
-  node: number,
-  span: Domain,
-  y: Scale,
-  box: PlotBox,
-): Mark[] {
-  const out = node > 0 ? 1 : -1;
-  const x = node > 0 ? box.right : box.left;
-  const steps = voltages
-    .filter((v) => v.node === node && v.time >= span[0] && v.time <= span[1] && Number.isFinite(v.volts))
-    .sort((a, b) => a.time - b.time);
-  const runs: NodeVoltage[][] = [];
-  for (const step of steps) {
-    const run = runs.at(-1);
-    if (run?.[0] && y(step.time) - y(run[0].time) < ROW) run.push(step);
-    else runs.push([step]);
-  }
-  let shown = "";
-  return runs.flatMap((run) => {
-    const step = run.at(-1);
-    const first = run[0];
-    if (!step || !first) return [];
-    const words = voltsText(step.volts);
-    if (words === shown) return [];
-    shown = words;
-    const at = y(first.time);
-    return [
-      ...run.map((s) => line(x, y(s.time), x + 5 * out, y(s.time), { stroke: "ink" })),
-      text(x + 10 * out, at + 4, words, { anchor: node > 0 ? "start" : "end" }),
-    ];
-  });
 }

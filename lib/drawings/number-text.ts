@@ -46,7 +46,10 @@ export function withUnit(number: string, unit: string): string {
   return `${number}${THIN_SPACE}${unit}`;
 }
 
-/** A value in its best prefix with about three significant digits: "1.24 ns", "\u2212320 mV". */
+/**
+ * A value in its best prefix with about three significant digits: "1.24 ns", "\u2212320 mV". With `like`, the largest
+ * of its kind, all of them have that one's prefix and as many decimals, so that a running value does not jump.
+ */
 export function quantityText(
   value: number,
   base: BaseUnit,
@@ -54,7 +57,8 @@ export function quantityText(
 ): string {
   const scaled = scaledUnit(options.like ?? value, base);
   const n = value / scaled.factor;
-  return withUnit(numberText(n, decimalsFor(n), options.signed), scaled.unit);
+  const decimals = options.like === undefined ? decimalsFor(n) : Math.abs(options.like / scaled.factor) < 99.95 ? 2 : 1;
+  return withUnit(numberText(n, decimals, options.signed), scaled.unit);
 }
 
 /** Volts: millivolts below one volt. */

@@ -2,7 +2,7 @@ import { arrow } from "./dimension";
 import { circle, line, type Mark, text } from "./marks";
 import { decimalText } from "./decimal-text";
 import { lengthNumber, type LengthUnit, numberText } from "./number-text";
-import type { PlacedLayer } from "./stackup-section.geometry";
+import type { PlacedLayer } from "./stackup-layer";
 
 /** Where the chain of dimensions runs, to the right of the board. */
 const CHAIN = 20;

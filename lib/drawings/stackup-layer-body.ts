@@ -1,6 +1,6 @@
 import { type Mark, type Point, polygon, rect } from "./marks";
 import { px } from "./marks";
-import type { PlacedLayer, SectionLayer } from "./stackup-section.geometry";
+import type { PlacedLayer, SectionLayer } from "./stackup-layer";
 import { isCopper } from "./stackup-words";
 
 interface Board {

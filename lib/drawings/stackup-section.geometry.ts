@@ -4,28 +4,10 @@ import { decimalText } from "./decimal-text";
 import { lengthNumber, type LengthUnit } from "./number-text";
 import { scaleBar } from "./scale-bar";
 import { spreadLabels } from "./spread-labels";
+import type { PlacedLayer, SectionLayer } from "./stackup-layer";
 import { layerBody } from "./stackup-layer-body";
 import { DECIMAL, dimensionColumn } from "./stackup-dimensions";
 import { describeStackup, isCopper, totalThickness } from "./stackup-words";
-
-/** One layer as it is drawn, top to bottom. */
-export interface SectionLayer {
-  id: string;
-  kind: "mask" | "foil" | "signal" | "plane" | "core" | "prepreg";
-  name: string;
-  material?: string;
-  /** finished [m]; mask: over the laminate; null when it is not known yet */
-  thickness_m: number | null;
-  /** mask: over a trace [m] */
-  maskOverTrace_m?: number | null;
-  dk?: number | null;
-  df?: number | null;
-  /** foot minus crown, both sides together [m] */
-  etch_m?: number | null;
-  /** foot width of the traces drawn on a signal layer [m]; left out: three times the layer's thickness */
-  traceWidth_m?: number | null;
-  planeNet?: string;
-}
 
 export interface StackupSectionOptions {
   /** [px] */
@@ -37,14 +19,6 @@ export interface StackupSectionOptions {
   leastHeight?: number;
   highlight?: string | null;
   title?: string;
-}
-
-/** A layer with its place on the drawing. */
-export interface PlacedLayer {
-  layer: SectionLayer;
-  y: number;
-  height: number;
-  exaggerated: boolean;
 }
 
 const ROW = 18;

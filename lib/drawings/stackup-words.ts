@@ -1,5 +1,5 @@
 import { lengthText, type LengthUnit } from "./number-text";
-import type { SectionLayer } from "./stackup-section.geometry";
+import type { SectionLayer } from "./stackup-layer";
 
 export function isCopper(layer: SectionLayer): boolean {
   return layer.kind === "signal" || layer.kind === "plane" || layer.kind === "foil";

@@ -1,4 +1,4 @@
-import type { TraceSectionShape } from "./trace-section.geometry";
+import type { TraceSectionShape } from "./trace-shape";
 
 type Corner = readonly [x: number, y: number];
 

@@ -1,4 +1,3 @@
-import { horizontalDimension, verticalDimension } from "./dimension";
 import {
   type Drawing,
   emptyDrawing,
@@ -10,19 +9,12 @@ import {
   rect,
   text,
 } from "./marks";
-import { lengthText, type LengthUnit } from "./number-text";
+import type { LengthUnit } from "./number-text";
 import { scaleBar } from "./scale-bar";
 import { maskOutline } from "./trace-mask-outline";
+import { PLANE, traceDimensions } from "./trace-dimensions";
+import type { Placement, TraceSectionShape } from "./trace-shape";
 import { describeTrace } from "./trace-words";
-
-/** The same shape as the engine's CrossSection [m]: y = 0 at the lower plane's face, y upward. */
-export interface TraceSectionShape {
-  layers: readonly { thickness: number; er: number; tanD?: number; name?: string }[];
-  upperPlane: boolean;
-  traces: readonly { x: number; y: number; thickness: number; widthBottom: number; widthTop: number }[];
-  coplanar?: { gap: number };
-  mask?: { overLaminate: number; overTrace: number; side: number; er: number };
-}
 
 /** A line of equal potential, solved elsewhere [m]. */
 export interface Equipotential {
@@ -43,15 +35,6 @@ const LEFT = 92;
 const RIGHT = 172;
 const ABOVE = 58;
 const BELOW = 66;
-const PLANE = 9;
-
-/** Places metres on the drawing. */
-export interface Placement {
-  x: (metres: number) => number;
-  y: (metres: number) => number;
-  /** [px/m] */
-  scale: number;
-}
 
 /** One trace or pair over or between its planes, to scale, with its dimensions. */
 export function traceSection(
@@ -115,15 +98,10 @@ export function traceSection(
         { fill: "copper", hit: "trace" },
       ),
     ),
-    ...textLast(dimensions(shape, at, laminate, left, right, unit, base)),
+    ...traceDimensions(shape, at, laminate, left, right, unit, base),
     ...scaleBar(left, height - 8, scale, 100, unit),
   ];
   return { width, height, title, description: describeTrace(shape, unit), marks, scale };
-}
-
-/** Labels over all lines, so that their paper covers what crosses them. */
-function textLast(marks: Mark[]): Mark[] {
-  return [...marks.filter((m) => m.kind !== "text"), ...marks.filter((m) => m.kind === "text")];
 }
 
 function plane(left: number, right: number, top: number, bottom: number): Mark {
@@ -185,95 +163,4 @@ function coplanarGround(shape: TraceSectionShape, at: Placement, left: number, r
       { fill: "copper", fillOpacity: 0.9 },
     ),
   ];
-}
-
-function dimensions(
-  shape: TraceSectionShape,
-  at: Placement,
-  laminate: number,
-  left: number,
-  right: number,
-  unit: LengthUnit,
-  base: number,
-): Mark[] {
-  const [first, second] = shape.traces;
-  if (!first) return [];
-  const words = (name: string, m: number): string => `${name} ${lengthText(m, unit)}`;
-  const top = first.y + first.thickness;
-  const ceiling = shape.upperPlane
-    ? at.y(laminate) - PLANE
-    : at.y(Math.max(laminate, top + (shape.mask?.overTrace ?? 0)));
-  const edge = (t: typeof first, side: -1 | 1, w: number): number => at.x(t.x + (side * w) / 2);
-
-  const marks: Mark[] = [
-    ...horizontalDimension({
-      x1: edge(first, -1, first.widthBottom),
-      x2: edge(first, 1, first.widthBottom),
-      y: base + PLANE + 14,
-      from1: at.y(first.y),
-      from2: at.y(first.y),
-      label: words("foot width", first.widthBottom),
-      below: true,
-    }),
-    ...horizontalDimension({
-      x1: edge(first, -1, first.widthTop),
-      x2: edge(first, 1, first.widthTop),
-      y: ceiling - 12,
-      from1: at.y(top),
-      from2: at.y(top),
-      label: words("crown width", first.widthTop),
-    }),
-    ...verticalDimension({
-      y1: at.y(0),
-      y2: at.y(first.y),
-      x: right + 14,
-      from1: right,
-      from2: right,
-      label: words("height below", first.y),
-    }),
-    ...verticalDimension({
-      y1: at.y(first.y),
-      y2: at.y(top),
-      x: left - 14,
-      from1: left,
-      from2: left,
-      label: lengthText(first.thickness, unit),
-      left: true,
-    }),
-  ];
-  if (shape.upperPlane)
-    marks.push(
-      ...verticalDimension({
-        y1: at.y(top),
-        y2: at.y(laminate),
-        x: right + 14,
-        from1: right,
-        from2: right,
-        label: words("height above", laminate - top),
-      }),
-    );
-  if (second && Math.abs(second.y - first.y) < 1e-12) {
-    marks.push(
-      ...horizontalDimension({
-        x1: edge(first, 1, first.widthBottom),
-        x2: edge(second, -1, second.widthBottom),
-        y: ceiling - 34,
-        from1: at.y(first.y),
-        from2: at.y(second.y),
-        label: words("gap", second.x - first.x - (first.widthBottom + second.widthBottom) / 2),
-      }),
-    );
-  } else if (!second && shape.coplanar) {
-    marks.push(
-      ...horizontalDimension({
-        x1: edge(first, 1, first.widthBottom),
-        x2: edge(first, 1, first.widthBottom) + shape.coplanar.gap * at.scale,
-        y: ceiling - 34,
-        from1: at.y(first.y),
-        from2: at.y(first.y),
-        label: words("gap", shape.coplanar.gap),
-      }),
-    );
-  }
-  return marks;
 }

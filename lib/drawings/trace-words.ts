@@ -1,5 +1,5 @@
 import { lengthText, type LengthUnit } from "./number-text";
-import type { TraceSectionShape } from "./trace-section.geometry";
+import type { TraceSectionShape } from "./trace-shape";
 
 /** The cross-section in sentences. */
 export function describeTrace(shape: TraceSectionShape, unit: LengthUnit): string {

@@ -1,6 +1,7 @@
 import { describe, expect, it } from "vitest";
 import { layerHeights } from "@/lib/drawings/layer-scale";
-import { type SectionLayer, stackupSection } from "@/lib/drawings/stackup-section.geometry";
+import type { SectionLayer } from "@/lib/drawings/stackup-layer";
+import { stackupSection } from "@/lib/drawings/stackup-section.geometry";
 import { svgString } from "@/lib/drawings/svg-string";
 import { texts } from "./texts";
 

@@ -2,7 +2,8 @@ import { describe, expect, it } from "vitest";
 import type { Mark, PathMark } from "@/lib/drawings/marks";
 import { svgString } from "@/lib/drawings/svg-string";
 import { maskOutline } from "@/lib/drawings/trace-mask-outline";
-import { traceSection, type TraceSectionShape } from "@/lib/drawings/trace-section.geometry";
+import { traceSection } from "@/lib/drawings/trace-section.geometry";
+import type { TraceSectionShape } from "@/lib/drawings/trace-shape";
 import type { CrossSection } from "@/lib/si/cross-section/types";
 import { texts } from "./texts";
 
