@@ -77,7 +77,9 @@ function announce(settings, accounts) {
     "",
     process.env.SMTP_URL
       ? "Mail goes out over SMTP."
-      : `Mail goes nowhere: it is kept in the local outbox, ${settings.url}/dev/outbox`,
+      : settings.local
+        ? `No mail leaves this computer (SMTP_URL is not set): read it at ${settings.url}/dev/outbox`
+        : "SMTP_URL is not set, so no mail is sent. Nobody can confirm an address until it is.",
     "",
   );
   console.log(lines.join("\n"));

@@ -5,11 +5,7 @@ import { setNonce } from "get-nonce";
 import { NuqsAdapter } from "nuqs/adapters/next/app";
 import { Tooltip } from "radix-ui";
 import { type ReactNode, useState } from "react";
-import { z } from "zod";
 import { Toaster } from "@/components/ui/toast";
-
-// Without eval under our content policy, zod would probe for it and report a violation on each page.
-z.config({ jitless: true });
 
 /** What every page stands in: server state, URL state, tooltips, messages, the nonce for injected styles. */
 export function Providers({ nonce, children }: { nonce: string; children: ReactNode }) {

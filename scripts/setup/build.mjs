@@ -13,6 +13,7 @@ const INPUTS = [
   "public",
   "scripts/build-workers.mjs",
   "instrumentation.ts",
+  "instrumentation-client.ts",
   "proxy.ts",
   "next.config.mjs",
   "postcss.config.mjs",

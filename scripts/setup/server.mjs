@@ -34,7 +34,7 @@ export async function serve({ mode, port, host, env, onReady }) {
   let ready = false;
   child.stdout.on("data", (chunk) => {
     const text = String(chunk);
-    if (ready) process.stdout.write(text);
+    if (ready) process.stdout.write(text.replace(/^.*Running next\.config.*\n?/gm, ""));
     else if (/Ready in/.test(text)) {
       ready = true;
       onReady();

@@ -39,7 +39,18 @@ export function readSettings() {
     );
   }
   const demoWanted = process.env.DEMO !== "0" && local && embedded;
-  return { port, host, url, dataDir, fresh, demoFile, demoWanted, seedingMark, secret: readSecret(dataDir) };
+  return {
+    port,
+    host,
+    url,
+    dataDir,
+    fresh,
+    demoFile,
+    demoWanted,
+    local,
+    seedingMark,
+    secret: readSecret(dataDir),
+  };
 }
 
 /** Removes a demo database whose making was cut short; nobody has used it yet. */
@@ -59,6 +70,7 @@ export function childEnvironment(settings, { demo }) {
     BASE_URL: settings.url,
     BETTER_AUTH_SECRET: settings.secret,
     RINGFENCE_DEMO: demo ? "1" : "0",
+    RINGFENCE_LOCAL: settings.local ? "1" : "0",
     NEXT_TELEMETRY_DISABLED: "1",
   };
 }
