@@ -1,7 +1,10 @@
 import { z } from "zod";
 import { id, nameText } from "./common";
 import { pinRole } from "./model";
-import { length, positiveLength } from "./quantity";
+import { length, positiveLength, quantity } from "./quantity";
+
+/** A place on the board; the origin may lie anywhere. */
+const coordinate = quantity("length", { min: -10, max: 10 });
 
 /** In scope; out of scope with a reason; or a route that does not join its pins. */
 export const netScopes = ["in", "out", "incomplete"] as const;
@@ -18,7 +21,7 @@ export const netSection = z.object({
   width: positiveLength,
   length: length,
   /** Start and end, when known. */
-  at: z.object({ x1: length, y1: length, x2: length, y2: length }).partial().nullable().default(null),
+  at: z.object({ x1: coordinate, y1: coordinate, x2: coordinate, y2: coordinate }).partial().nullable().default(null),
 });
 export type NetSectionDoc = z.infer<typeof netSection>;
 
@@ -32,8 +35,8 @@ export const netPin = z.object({
 export type NetPinDoc = z.infer<typeof netPin>;
 
 export const netTopology = z.object({
-  sections: z.array(netSection).max(5000),
-  pins: z.array(netPin).max(2000),
+  sections: z.array(netSection).max(100_000),
+  pins: z.array(netPin).max(20_000),
   viaCount: z.number().int().min(0).max(10000),
   /** false: lengths are known but not how the receivers hang on the line (a net-list row with several). */
   shapeKnown: z.boolean().default(true),

@@ -1,0 +1,134 @@
+import { partKinds, type PartDoc } from "@/lib/schemas/net";
+import { DomainError } from "@/lib/si/errors";
+import { parseQuantity, type Dimension } from "@/lib/si/units";
+import type { ListFormat } from "./list-field";
+
+type PartKind = (typeof partKinds)[number];
+
+const MAX_PINS = 3000;
+const DIMENSIONS: Partial<Record<PartKind, [Dimension, string]>> = {
+  resistor: ["resistance", "Ω"],
+  capacitor: ["capacitance", "F"],
+  inductor: ["inductance", "H"],
+};
+
+/** One row a part. */
+export const partsList: ListFormat<PartDoc> = {
+  kind: "parts list",
+  fields: [
+    {
+      id: "reference",
+      label: "Reference",
+      required: true,
+      kind: "text",
+      headers: [
+        "reference",
+        "ref",
+        "refdes",
+        "ref des",
+        "designator",
+        "reference designator",
+        "part",
+        "component",
+      ],
+    },
+    {
+      id: "partNumber",
+      label: "Part number",
+      required: false,
+      kind: "text",
+      headers: [
+        "part number",
+        "partnumber",
+        "part no",
+        "pn",
+        "p n",
+        "mpn",
+        "device",
+        "manufacturer part number",
+        "part name",
+        "type",
+      ],
+    },
+    {
+      id: "value",
+      label: "Value",
+      required: false,
+      kind: "text",
+      headers: ["value", "val", "comment", "rating"],
+    },
+    {
+      id: "pins",
+      label: "Pins",
+      required: false,
+      kind: "pins",
+      headers: ["pins", "pin count", "pincount", "number of pins", "pin names", "pin"],
+    },
+  ],
+  read(cells) {
+    const reference = cells.text("reference", 40);
+    if (/[\s.]/u.test(reference))
+      cells.refuse(
+        "reference",
+        `'${reference}' holds a space or a point. Write one reference in each row, such as R12.`,
+      );
+    const kind = partKindOf(reference);
+    const named = cells.words("pins", MAX_PINS);
+    const wide = named.find((pin) => pin.length > 40);
+    if (wide) cells.refuse("pins", `'${wide}' is too long for a pin's name.`);
+    return {
+      reference,
+      partNumber: cells.text("partNumber", 80),
+      value: cells.text("value", 40),
+      kind,
+      pins: expandCount(named, kind, (reason) => cells.refuse("pins", reason)),
+    };
+  },
+  key: (row) => row.reference.toUpperCase(),
+  unique: "reference",
+};
+
+/** Kind by the letters of the reference (common practice). */
+export function partKindOf(reference: string): PartKind {
+  const letters = /^\p{L}*/u.exec(reference)?.[0].toUpperCase() ?? "";
+  if (/^(R|RN|RP|RA|RES)$/.test(letters)) return "resistor";
+  if (/^(C|CN|CA|CAP)$/.test(letters) && letters !== "CN") return "capacitor";
+  if (/^(FB|FER|BEAD)$/.test(letters)) return "ferrite";
+  if (/^(L|IND)$/.test(letters)) return "inductor";
+  if (/^(U|IC)$/.test(letters)) return "ic";
+  if (/^(J|P|CN|CON|CONN|X|XP|XS)$/.test(letters)) return "connector";
+  return "other";
+}
+
+/** What is strange about a part whose value cannot be read; null when nothing is. */
+export function valueWarning(part: PartDoc): string | null {
+  const wanted = DIMENSIONS[part.kind];
+  if (!wanted || part.value === "" || /^(dn[pim]|nc|nf|do not (fit|place|populate))$/i.test(part.value))
+    return null;
+  try {
+    parseQuantity(firstWord(part.value), ...wanted);
+    return null;
+  } catch (error) {
+    if (!(error instanceof DomainError)) throw error;
+    return `${error.message} Paths through ${part.reference} have no data until its value is known.`;
+  }
+}
+
+/** "100n/16V X7R" says its value first. */
+function firstWord(value: string): string {
+  return /^[^\s/,]+(?:\s(?:[munpfkM]?[ΩFH]|[kM]?ohms?))?/iu.exec(value)?.[0] ?? value;
+}
+
+/** A lone count stands for pins 1…n where pins are counted through; a large package names its own. */
+function expandCount(named: string[], kind: PartKind, refuse: (reason: string) => void): string[] {
+  const [only] = named;
+  if (named.length !== 1 || only === undefined || !/^\d+$/.test(only)) return named;
+  const count = Number(only);
+  if (count > MAX_PINS) {
+    refuse(`'${only}' pins are more than any part has; at most ${MAX_PINS} are kept.`);
+    return [];
+  }
+  return kind === "ic" || kind === "other"
+    ? []
+    : Array.from({ length: count }, (_, index) => String(index + 1));
+}
