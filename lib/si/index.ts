@@ -9,3 +9,6 @@ export * from "./stackup";
 export * from "./materials";
 export * from "./lattice";
 export * from "./waveform";
+export * from "./path";
+export * from "./rules";
+export * from "./version";

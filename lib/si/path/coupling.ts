@@ -1,5 +1,5 @@
 import { NodeMap } from "./node-map";
-import { Trace } from "./trace";
+import { PathTrace } from "./trace";
 import type { DriverModel, PathPart, ResolvedPath } from "./types";
 
 /** A series capacitor this many times slower than the bit passes the edge whole: a coupling capacitor. */
@@ -42,9 +42,12 @@ export function coupledBias(
 ): number | null {
   const blocks = path.parts.filter((part) => isCoupling(path, part, slowest));
   if (blocks.length === 0) return null;
-  const route = new Trace(path, driver).to(receiver);
+  const route = new PathTrace(path, driver).to(receiver);
   if (!route.steps.some((step) => step.kind === "part" && blocks.includes(step.part))) return null;
-  const side = new Trace({ ...path, parts: path.parts.filter((part) => !blocks.includes(part)) }, receiver);
+  const side = new PathTrace(
+    { ...path, parts: path.parts.filter((part) => !blocks.includes(part)) },
+    receiver,
+  );
   let siemens = 0;
   let amperes = 0;
   for (const part of path.parts) {

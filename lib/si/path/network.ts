@@ -4,12 +4,14 @@ import { coupledBias, couplingTime, joinNodes } from "./coupling";
 import { dcLevels, type DcResistor } from "./levels";
 import { chainLines, type PathLine } from "./lines";
 import { NodeMap } from "./node-map";
-import { Trace } from "./trace";
+import { PathTrace } from "./trace";
 import type { DriverModel, PathPin, ReceiverModel, ResolvedPath } from "./types";
 import { watchWindow } from "./window";
 
 /** A linear ramp's 10–90 % time is 0.8 of its whole. */
 export const RAMP_SHARE = 0.8;
+
+const SEVERAL_LINES_GAIN = 0.5;
 
 export interface PathProbe {
   pin: PathPin;
@@ -60,7 +62,7 @@ export class PathNetwork {
     driver: DriverModel,
   ) {
     this.driver = driver;
-    const trace = new Trace(path, driverPin.node);
+    const trace = new PathTrace(path, driverPin.node);
     const listening = path.receivers.filter((pin) => pin.node !== driverPin.node && pin.receiver !== null);
     const delays = listening.map((pin) => trace.to(pin.node).delay ?? 0);
     this.delay = Math.max(0, ...delays);
@@ -125,7 +127,8 @@ export class PathNetwork {
   }
 
   private roundTripGain({ driver, impedance }: Corner): number {
-    let gain = 0;
+    // Steps and branches keep a wave between them: no less than this where there are several lines.
+    let gain = this.lines.length > 1 ? SEVERAL_LINES_GAIN : 0;
     const source = this.driver.resistance[driver] + this.seriesResistance();
     for (const line of this.lines) {
       const z = line.impedance[impedance];

@@ -1,5 +1,5 @@
 import { coupledBias, couplingTime, isCoupling } from "./coupling";
-import { Trace } from "./trace";
+import { PathTrace } from "./trace";
 import type { PathPart, PathPin, ResolvedPath } from "./types";
 
 export interface Unsimulated {
@@ -26,7 +26,7 @@ export function cannotSimulate(path: ResolvedPath): Unsimulated | null {
 function seriesFilter(path: ResolvedPath, pin: PathPin): Unsimulated | null {
   if (!pin.driver) return null;
   const slowest = couplingTime(path, pin.driver);
-  const trace = new Trace(path, pin.node);
+  const trace = new PathTrace(path, pin.node);
   for (const receiver of path.receivers)
     for (const step of trace.to(receiver.node).steps) {
       if (step.kind !== "part" || step.part.kind !== "C" || isCoupling(path, step.part, slowest)) continue;

@@ -1,12 +1,12 @@
 import type { PathPart, PathSection, ResolvedPath } from "./types";
 
-export type TraceStep =
+export type RouteStep =
   | { kind: "section"; section: PathSection; from: string; to: string }
   | { kind: "part"; part: PathPart; from: string; to: string };
 
 export interface Route {
   /** in order from the driver */
-  steps: TraceStep[];
+  steps: RouteStep[];
   /** one-way delay [s]; null where a section's delay is not known */
   delay: number | null;
 }
@@ -15,12 +15,12 @@ export interface Route {
  * The routes that copper and series parts make from one node to every node they reach; in a loop, the one with the
  * fewest steps. Terminations lead to rails and are no route.
  */
-export class Trace {
-  private readonly arrival = new Map<string, TraceStep | null>();
+export class PathTrace {
+  private readonly arrival = new Map<string, RouteStep | null>();
 
   constructor(path: ResolvedPath, start: string) {
-    const leaving = new Map<string, TraceStep[]>();
-    const leave = (step: TraceStep) => {
+    const leaving = new Map<string, RouteStep[]>();
+    const leave = (step: RouteStep) => {
       const list = leaving.get(step.from);
       if (list) list.push(step);
       else leaving.set(step.from, [step]);
@@ -50,14 +50,14 @@ export class Trace {
 
   /** Empty where the node is the start or is not reached. */
   to(node: string): Route {
-    const steps: TraceStep[] = [];
+    const steps: RouteStep[] = [];
     for (let step = this.arrival.get(node); step; step = this.arrival.get(step.from)) steps.push(step);
     steps.reverse();
     return { steps, delay: totalDelay(steps) };
   }
 }
 
-function totalDelay(steps: TraceStep[]): number | null {
+function totalDelay(steps: RouteStep[]): number | null {
   let delay = 0;
   for (const step of steps) {
     if (step.kind === "part") continue;

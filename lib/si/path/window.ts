@@ -2,6 +2,8 @@
 const MOST_ROUND_TRIPS = 60;
 /** Ringing below this share of its start is over. */
 const OVER = 0.02;
+/** Time constants until an exponential tail is below that too. */
+const RC_TAIL = 4;
 
 export interface WindowRequest {
   /** 0–100 % ramp of the source [s] */
@@ -18,8 +20,8 @@ export interface WindowRequest {
 }
 
 /**
- * How long an edge is watched [s]: to the next edge, but no longer than ringing can matter. 20 path delays, longer where
- * the mismatch keeps ringing alive (until 2 % of it is left, at most 60 round trips), plus the edge and its RC tails.
+ * How long an edge is watched [s]: to the next edge, but no longer than ringing can matter: the edge, the round trips
+ * until 2 % of the ringing is left (at most 60), the RC tails.
  */
 export function watchWindow({
   ramp,
@@ -31,8 +33,8 @@ export function watchWindow({
 }: WindowRequest): { until: number; isBit: boolean } {
   const gain = Math.min(0.999, Math.max(1e-6, roundTripGain));
   const trips = Math.min(MOST_ROUND_TRIPS, Math.log(OVER) / Math.log(gain));
-  const ringing = Math.max(20 * delay, 2 * trips * delay, 4 * allDelays);
-  const enough = ramp + ringing + 8 * timeConstants;
+  const ringing = Math.max(2 * (trips + 1) * delay, 4 * allDelays);
+  const enough = ramp + ringing + RC_TAIL * timeConstants;
   if (bitTime !== null && bitTime <= enough) return { until: bitTime, isBit: true };
   return { until: enough, isBit: false };
 }

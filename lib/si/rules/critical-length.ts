@@ -1,4 +1,4 @@
-import { Trace } from "../path/trace";
+import { PathTrace } from "../path/trace";
 import type { ResolvedPath } from "../path/types";
 import { driverSpeeds } from "./corners";
 import { pathLimit, type StaticRule } from "./rule";
@@ -71,7 +71,7 @@ export function isTerminated(path: ResolvedPath): boolean {
 }
 
 function farthestDelay(path: ResolvedPath, start: string): number | null {
-  const trace = new Trace(path, start);
+  const trace = new PathTrace(path, start);
   let farthest: number | null = null;
   for (const pin of path.receivers) {
     if (pin.node === start || !trace.reaches(pin.node)) continue;

@@ -1,4 +1,4 @@
-import { mainSection, Trace, type Route } from "../path/trace";
+import { mainSection, PathTrace, type Route } from "../path/trace";
 import type { PathPart, PathPin, ResolvedPath } from "../path/types";
 import { pathLimit, type Missing, type StaticReading, type StaticRule } from "./rule";
 import { ohms, picoseconds } from "./words";
@@ -46,7 +46,7 @@ export const terminationValue: StaticRule = {
 };
 
 function readDriver(path: ResolvedPath, pin: PathPin): StaticReading | Missing | null {
-  const trace = new Trace(path, pin.node);
+  const trace = new PathTrace(path, pin.node);
   const route = farthest(path, trace, pin);
   if (!pin.driver || !route) return null;
   const series = route.steps.findIndex((step) => step.kind === "part" && step.part.kind === "R");
@@ -65,7 +65,7 @@ function readDriver(path: ResolvedPath, pin: PathPin): StaticReading | Missing |
   return null;
 }
 
-function farthest(path: ResolvedPath, trace: Trace, pin: PathPin): Route | null {
+function farthest(path: ResolvedPath, trace: PathTrace, pin: PathPin): Route | null {
   let longest: Route | null = null;
   for (const receiver of path.receivers) {
     if (receiver.node === pin.node || !trace.reaches(receiver.node)) continue;

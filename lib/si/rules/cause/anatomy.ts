@@ -1,4 +1,4 @@
-import { mainSection, Trace, type Route } from "../../path/trace";
+import { mainSection, PathTrace, type Route } from "../../path/trace";
 import type { DriverModel, PathPin, PathSection, ResolvedPath } from "../../path/types";
 import type { Corner } from "../types";
 
@@ -33,7 +33,7 @@ export function anatomy(
   receiver: PathPin,
   corner: Corner,
 ): Anatomy | null {
-  const route = new Trace(path, driverPin.node).to(receiver.node);
+  const route = new PathTrace(path, driverPin.node).to(receiver.node);
   const main = mainSection(route);
   const line = main?.impedance?.[corner.impedance];
   if (!line) return null;
