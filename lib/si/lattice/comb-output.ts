@@ -1,4 +1,5 @@
 import type { Corner } from "../network/wave";
+import { workspace } from "./workspace";
 
 /** One source's comb: what each channel rises by at each moment, per 1 V of source step. */
 export interface CombRun {
@@ -25,8 +26,8 @@ export function drawComb(runs: readonly CombRun[], rest: Float64Array, until: nu
   const streams = runs.flatMap((run) => run.corners.map((corner) => ({ run, corner, at: 0 })));
   let most = 2;
   for (const { run } of streams) most += 2 * run.times.length;
-  const time = new Float64Array(most);
-  const values = Array.from(rest, () => new Float64Array(most));
+  const time = workspace.take(most);
+  const values = Array.from(rest, () => workspace.take(most));
   const level = rest.slice();
   const slope = new Float64Array(channels);
   const jump = new Float64Array(channels);
@@ -44,7 +45,10 @@ export function drawComb(runs: readonly CombRun[], rest: Float64Array, until: nu
   };
   for (;;) {
     let next = Infinity;
-    for (const { run, corner, at } of streams) if (at < run.times.length) next = Math.min(next, run.times[at]! + corner.time);
+    for (let k = 0; k < streams.length; k++) {
+      const { run, corner, at } = streams[k]!;
+      if (at < run.times.length && run.times[at]! + corner.time < next) next = run.times[at]! + corner.time;
+    }
     if (next > until) break;
     advance(next);
     let jumps = false;

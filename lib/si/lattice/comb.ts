@@ -2,7 +2,7 @@ import type { Circuit } from "./circuit";
 import type { Cluster } from "./clusters";
 import { solveInPlace } from "./linear-solve";
 
-/** What one moment of the comb does, per 1 V of source step. */
+/** What one moment of the comb does, per 1 V of source step. Its arrays are overwritten by the next. */
 export interface CombEvent {
   time: number;
   cluster: CombCluster;
@@ -17,6 +17,12 @@ export interface CombCluster {
   cluster: Cluster;
   /** G⁻¹, row after row */
   inverse: Float64Array;
+  /** working arrays, overwritten at each moment */
+  current: Float64Array;
+  rise: Float64Array;
+  incident: Float64Array;
+  outgoing: Float64Array;
+  isWaiting: boolean;
 }
 
 export interface CombLimits {
@@ -34,10 +40,11 @@ export function combClusters(clusters: readonly Cluster[]): CombCluster[] {
   return clusters.map((cluster) => {
     const { size, g, ports, feeds } = cluster;
     const inverse = new Float64Array(size * size);
-    if (ports.length + feeds.length === 0) return { cluster, inverse };
+    const made = { cluster, inverse, current: new Float64Array(size), rise: new Float64Array(size), incident: new Float64Array(ports.length), outgoing: new Float64Array(ports.length), isWaiting: false };
+    if (ports.length + feeds.length === 0) return made;
     for (let i = 0; i < size; i++) inverse[i * size + i] = 1;
     solveInPlace(g.slice(), inverse, size, size);
-    return { cluster, inverse };
+    return made;
   });
 }
 
@@ -56,24 +63,24 @@ export function runComb(circuit: Circuit, clusters: readonly CombCluster[], fixe
   const together = shortest * SAME_MOMENT;
   const last = until * (1 + 1e-12);
   let count = 0;
-  const scatter = (time: number, at: CombCluster, incident: Float64Array, starts: boolean) => {
-    const { cluster, inverse } = at;
+  const scatter = (time: number, at: CombCluster, starts: boolean) => {
+    const { cluster, inverse, current, rise, incident, outgoing } = at;
     const { size, ports } = cluster;
-    const current = new Float64Array(size);
+    current.fill(0);
     if (starts) for (const feed of cluster.feeds) if (feed.fixed === fixed) current[feed.row] = current[feed.row]! + feed.siemens;
-    ports.forEach((port, k) => {
+    for (let k = 0; k < ports.length; k++) {
+      const port = ports[k]!;
       const inflow = 2 * port.admittance * incident[k]!;
       if (port.node >= 0) current[port.node] = current[port.node]! + inflow;
       if (port.second >= 0) current[port.second] = current[port.second]! + port.sign * inflow;
-    });
-    const rise = new Float64Array(size);
+    }
     for (let i = 0; i < size; i++) {
       let sum = 0;
       for (let j = 0; j < size; j++) sum += inverse[i * size + j]! * current[j]!;
       rise[i] = sum;
     }
-    const outgoing = new Float64Array(ports.length);
-    ports.forEach((port, k) => {
+    for (let k = 0; k < ports.length; k++) {
+      const port = ports[k]!;
       let v = 0;
       if (starts) for (const held of port.held) if (held.fixed === fixed) v += held.factor;
       if (port.node >= 0) v += port.share * rise[port.node]!;
@@ -82,26 +89,32 @@ export function runComb(circuit: Circuit, clusters: readonly CombCluster[], fixe
       outgoing[k] = wave;
       const arrival = time + circuit.lines[port.end >> 1]!.delay;
       if (Math.abs(wave) > floor && arrival <= last) queue.push(arrival, port.end ^ 1, wave);
-    });
+    }
     each({ time, cluster: at, rise, incident, outgoing });
+    incident.fill(0);
+    at.isWaiting = false;
     count++;
   };
   for (const at of clusters) {
     const { feeds, ports } = at.cluster;
-    if (feeds.some((feed) => feed.fixed === fixed) || ports.some((port) => port.held.some((held) => held.fixed === fixed))) scatter(0, at, new Float64Array(ports.length), true);
+    if (feeds.some((feed) => feed.fixed === fixed) || ports.some((port) => port.held.some((held) => held.fixed === fixed))) scatter(0, at, true);
   }
-  const waiting = new Map<number, Float64Array>();
+  const waiting: CombCluster[] = [];
   while (queue.size > 0 && count < most) {
     const time = queue.nextTime();
-    waiting.clear();
+    waiting.length = 0;
     while (queue.size > 0 && queue.nextTime() - time <= together) {
-      const { end, wave } = queue.pop();
+      const end = queue.nextEnd();
       const { index, port } = clusterOfEnd[end]!;
-      let incident = waiting.get(index);
-      if (!incident) waiting.set(index, (incident = new Float64Array(clusters[index]!.cluster.ports.length)));
-      incident[port] = incident[port]! + wave;
+      const at = clusters[index]!;
+      if (!at.isWaiting) {
+        at.isWaiting = true;
+        waiting.push(at);
+      }
+      at.incident[port] = at.incident[port]! + queue.nextWave();
+      queue.drop();
     }
-    for (const [index, incident] of waiting) scatter(time, clusters[index]!, incident, false);
+    for (const at of waiting) scatter(time, at, false);
   }
   return queue.size === 0;
 }
@@ -139,14 +152,21 @@ class WaveQueue {
     waves[i] = wave;
   }
 
-  pop(): { end: number; wave: number } {
+  nextEnd(): number {
+    return this.ends[0]!;
+  }
+
+  nextWave(): number {
+    return this.waves[0]!;
+  }
+
+  drop(): void {
     const { times, ends, waves } = this;
-    const top = { end: ends[0]!, wave: waves[0]! };
     const time = times.pop()!;
     const end = ends.pop()!;
     const wave = waves.pop()!;
     const size = times.length;
-    if (size === 0) return top;
+    if (size === 0) return;
     let i = 0;
     for (;;) {
       let next = 2 * i + 1;
@@ -161,6 +181,5 @@ class WaveQueue {
     times[i] = time;
     ends[i] = end;
     waves[i] = wave;
-    return top;
   }
 }

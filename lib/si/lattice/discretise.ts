@@ -19,7 +19,34 @@ const DOUBLINGS = 8;
  * @param step  [s], > 0
  */
 export function discretise(e: Float64Array, g: Float64Array, size: number, step: number): Propagator {
-  const delta = step / 2 ** DOUBLINGS;
+  let propagator = shortStep(e, g, size, step / 2 ** DOUBLINGS);
+  for (let k = 0; k < DOUBLINGS; k++) propagator = doubled(propagator, size);
+  return propagator;
+}
+
+/** Propagators of step, step/2, step/4, … , `levels` of them. */
+export function discretiseLevels(e: Float64Array, g: Float64Array, size: number, step: number, levels: number): Propagator[] {
+  let propagator = shortStep(e, g, size, step / 2 ** (DOUBLINGS + levels - 1));
+  const found: Propagator[] = [];
+  for (let k = 0; k < DOUBLINGS + levels; k++) {
+    if (k >= DOUBLINGS) found.unshift(propagator);
+    propagator = doubled(propagator, size);
+  }
+  return found;
+}
+
+function doubled({ p, q0, q1 }: Propagator, size: number): Propagator {
+  const next = multiply(p, q0, size);
+  const last = multiply(p, q1, size);
+  for (let i = 0; i < size * size; i++) {
+    const half = (last[i]! + q0[i]!) / 2;
+    next[i] = next[i]! + half;
+    last[i] = q1[i]! + half;
+  }
+  return { p: multiply(p, p, size), q0: next, q1: last };
+}
+
+function shortStep(e: Float64Array, g: Float64Array, size: number, delta: number): Propagator {
   const n = 2 * size;
   const columns = 3 * size;
   const m = new Float64Array(n * n);
@@ -40,9 +67,9 @@ export function discretise(e: Float64Array, g: Float64Array, size: number, step:
     rhs[(size + i) * columns + 2 * size + i] = 1;
   }
   solveInPlace(m, rhs, n, columns);
-  let p = new Float64Array(size * size);
-  let q0 = new Float64Array(size * size);
-  let q1 = new Float64Array(size * size);
+  const p = new Float64Array(size * size);
+  const q0 = new Float64Array(size * size);
+  const q1 = new Float64Array(size * size);
   for (let i = 0; i < size; i++)
     for (let j = 0; j < size; j++) {
       const row = (size + i) * columns;
@@ -50,18 +77,6 @@ export function discretise(e: Float64Array, g: Float64Array, size: number, step:
       q0[i * size + j] = rhs[row + size + j]!;
       q1[i * size + j] = rhs[row + 2 * size + j]!;
     }
-  for (let k = 0; k < DOUBLINGS; k++) {
-    const middle = multiply(p, q1, size);
-    const p0 = multiply(p, q0, size);
-    for (let i = 0; i < size * size; i++) {
-      const half = (middle[i]! + q0[i]!) / 2;
-      p0[i] = p0[i]! + half;
-      middle[i] = q1[i]! + half;
-    }
-    p = multiply(p, p, size);
-    q0 = p0;
-    q1 = middle;
-  }
   return { p, q0, q1 };
 }
 

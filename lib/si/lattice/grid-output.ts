@@ -22,40 +22,68 @@ export function drawGrid(terms: readonly GridTerm[], rest: Float64Array, step: n
   const origin = terms.reduce((first, term) => Math.min(first, term.shift), until);
   const time = sampleTimes(terms, origin, step, until, worthy);
   const values = Array.from(rest, (level) => new Float64Array(time.length).fill(level));
-  const at = new Int32Array(time.length);
-  const part = new Float64Array(time.length);
+  const isRegular = time.length === regularLength(origin, step, until);
+  const lead = origin > 0 ? 1 : 0;
+  let at: Int32Array | null = null;
+  let part: Float64Array | null = null;
   for (const { response, shift, weight } of terms) {
-    let first = time.length;
-    let isAligned = true;
-    for (let i = time.length - 1; i >= 0; i--) {
-      const position = (time[i]! - shift) / step;
-      if (position < -ALIGNED) break;
-      const near = Math.round(position);
-      const whole = Math.abs(position - near) < ALIGNED ? near : Math.floor(position);
-      at[i] = whole;
-      part[i] = position - whole;
-      if (Math.abs(position - whole) < ALIGNED) part[i] = 0;
-      else isAligned = false;
-      first = i;
+    const offset = (shift - origin) / step;
+    const whole = Math.round(offset);
+    if (isRegular && Math.abs(offset - whole) < ALIGNED) {
+      addAligned(values, response, weight, whole + lead);
+      continue;
     }
-    response.forEach((series, c) => {
-      if (!series) return;
-      const value = values[c]!;
-      if (isAligned) for (let i = first; i < value.length; i++) value[i] = value[i]! + weight * series[at[i]!]!;
-      else
-        for (let i = first; i < value.length; i++) {
-          const from = at[i]!;
-          const low = series[from]!;
-          const share = part[i]!;
-          value[i] = value[i]! + weight * (share === 0 ? low : low + share * (series[from + 1]! - low));
-        }
-    });
+    at ??= new Int32Array(time.length);
+    part ??= new Float64Array(time.length);
+    addBetween(values, response, weight, locate(time, shift, step, at, part), at, part);
   }
   return { time, values };
 }
 
+function addAligned(values: readonly Float64Array[], response: GridTerm["response"], weight: number, from: number) {
+  for (let c = 0; c < values.length; c++) {
+    const series = response[c];
+    if (!series) continue;
+    const value = values[c]!;
+    for (let i = from; i < value.length; i++) value[i] = value[i]! + weight * series[i - from]!;
+  }
+}
+
+/** Position of each sample in a response that starts at `shift`; returns the first sample that it reaches. */
+function locate(time: Float64Array, shift: number, step: number, at: Int32Array, part: Float64Array): number {
+  const scale = 1 / step;
+  let i = time.length;
+  while (i > 0) {
+    const position = (time[i - 1]! - shift) * scale;
+    if (position < -ALIGNED) break;
+    i--;
+    const whole = Math.floor(position + ALIGNED);
+    at[i] = whole;
+    part[i] = position - whole < 2 * ALIGNED ? 0 : position - whole;
+  }
+  return i;
+}
+
+function addBetween(values: readonly Float64Array[], response: GridTerm["response"], weight: number, first: number, at: Int32Array, part: Float64Array) {
+  for (let c = 0; c < values.length; c++) {
+    const series = response[c];
+    if (!series) continue;
+    const value = values[c]!;
+    const last = series.length - 1;
+    for (let i = first; i < value.length; i++) {
+      const from = at[i]!;
+      const low = series[from]!;
+      value[i] = value[i]! + weight * (low + part[i]! * (series[from < last ? from + 1 : last]! - low));
+    }
+  }
+}
+
+function regularLength(origin: number, step: number, until: number): number {
+  return Math.max(0, Math.ceil((until - origin) / step - 1e-9)) + 1 + (origin > 0 ? 1 : 0);
+}
+
 function sampleTimes(terms: readonly GridTerm[], origin: number, step: number, until: number, worthy: number): Float64Array {
-  const regular = Math.max(0, Math.ceil((until - origin) / step - 1e-9));
+  const regular = regularLength(origin, step, until);
   const extra: number[] = [];
   const seen: number[] = [];
   for (const { response, shift, weight } of terms) {
@@ -67,19 +95,26 @@ function sampleTimes(terms: readonly GridTerm[], origin: number, step: number, u
     const least = worthy / (Math.abs(weight) * part * (1 - part));
     const length = Math.max(0, ...response.map((series) => series?.length ?? 0));
     const last = Math.min(length - 1, Math.floor((until - shift) / step));
-    for (let k = 0; k <= last; k++) {
-      if (response.some((series) => series !== null && Math.abs((series[k + 1] ?? series[k]!) - 2 * series[k]! + (k > 0 ? series[k - 1]! : 0)) > least)) extra.push(shift + k * step);
-    }
+    for (let k = 0; k <= last; k++) if (bends(response, k, least)) extra.push(shift + k * step);
   }
   extra.sort((a, b) => a - b);
-  const time = new Float64Array(regular + 1 + extra.length + (origin > 0 ? 1 : 0));
-  let count = 0;
+  const time = new Float64Array(regular + extra.length);
+  const lead = origin > 0 ? 1 : 0;
+  let count = lead;
   let next = 0;
-  if (origin > 0) time[count++] = 0;
-  for (let n = 0; n <= regular; n++) {
+  for (let n = 0; n < regular - lead; n++) {
     const t = origin + n * step;
     for (; next < extra.length && extra[next]! < t; next++) time[count++] = extra[next]!;
     time[count++] = t;
   }
   return time.subarray(0, count);
+}
+
+function bends(response: GridTerm["response"], k: number, least: number): boolean {
+  for (const series of response) {
+    if (!series || k + 1 >= series.length) continue;
+    const bend = series[k + 1]! - 2 * series[k]! + (k > 0 ? series[k - 1]! : 0);
+    if (bend > least || bend < -least) return true;
+  }
+  return false;
 }

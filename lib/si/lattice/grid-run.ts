@@ -1,6 +1,8 @@
 import type { GridPlan, PlannedCluster } from "./grid-plan";
 import type { Channel } from "./channels";
 import type { ClusterPort } from "./clusters";
+import { workspace } from "./workspace";
+import { endWorker, junctionWorker, throughWorker, type NodeUpdate, type PortWave, type Worker } from "./node-workers";
 
 /** A deviation from rest of one fixed node, on the grid from its own start. */
 export interface GridInput {
@@ -11,7 +13,7 @@ export interface GridInput {
   rate: Float64Array;
 }
 
-/** Deviations from rest; index 0 is the start of the input. */
+/** Deviations from rest; index 0 is the start of the input. The arrays belong to the workspace. */
 export interface GridRun {
   /** by circuit node, where recorded */
   nodes: (Float64Array | null)[];
@@ -33,16 +35,22 @@ interface Arriving {
 export function runGrid(plan: GridPlan, input: GridInput, nodeCount: number, recorded: Iterable<number>): GridRun {
   const { steps, pad, delays, block } = plan;
   const ends = 2 * delays.length;
-  const outgoing = Array.from({ length: ends }, () => new Float64Array(steps + 1 + pad));
-  const incident: (Float64Array | null)[] = Array.from({ length: ends }, (_, end) => (delays[end >> 1]?.taps ? new Float64Array(steps + 1 + pad) : null));
+  const outgoing: Float64Array[] = [];
+  const incident: (Float64Array | null)[] = [];
+  for (let end = 0; end < ends; end++) {
+    outgoing.push(workspace.take(steps + 1 + pad).fill(0, 0, pad));
+    incident.push(delays[end >> 1]!.taps ? workspace.take(steps + 1 + pad) : null);
+  }
   const nodes: (Float64Array | null)[] = new Array<Float64Array | null>(nodeCount).fill(null);
-  for (const node of recorded) nodes[node] = new Float64Array(steps + 1);
+  for (const node of recorded) nodes[node] = workspace.take(steps + 1);
+  const still = workspace.take(steps + 1).fill(0, 0, steps + 1);
+  const scratch = workspace.take(steps + 1);
   const arriving: Arriving[] = outgoing.map((_, end) => {
     const delayed = incident[end];
     const far = outgoing[end ^ 1]!;
     return delayed ? { samples: delayed, offset: pad } : { samples: far, offset: pad - delays[end >> 1]!.whole };
   });
-  const workers = plan.clusters.map((planned) => clusterWorker(planned, input, arriving, outgoing, pad, nodes));
+  const workers = plan.clusters.map((planned) => clusterWorker(planned, input, arriving, outgoing, pad, nodes, still, scratch));
   for (let from = 0; from <= steps; from += block) {
     const to = Math.min(steps + 1, from + block);
     for (let end = 0; end < ends; end++) {
@@ -58,11 +66,11 @@ export function runGrid(plan: GridPlan, input: GridInput, nodeCount: number, rec
 /** The run's series for each channel, sample 0 at the start of the input; null where nothing moves. */
 export function channelSeries(channels: readonly Channel[], plan: GridPlan, run: GridRun, input: { fixed: number; value: Float64Array }): (Float64Array | null)[] {
   return channels.map((channel) => {
-    if (channel.kind === "node") return run.nodes[channel.node] ?? null;
+    if (channel.kind === "node") return run.nodes[channel.node]?.subarray(0, plan.steps + 1) ?? null;
     if (channel.kind === "fixed") return channel.fixed === input.fixed ? input.value : null;
-    if (channel.kind === "outgoing") return run.outgoing[channel.end]!.subarray(plan.pad);
+    if (channel.kind === "outgoing") return run.outgoing[channel.end]!.subarray(plan.pad, plan.pad + plan.steps + 1);
     const delayed = run.incident[channel.end];
-    if (delayed) return delayed.subarray(plan.pad);
+    if (delayed) return delayed.subarray(plan.pad, plan.pad + plan.steps + 1);
     const from = plan.pad - plan.delays[channel.end >> 1]!.whole;
     return run.outgoing[channel.end ^ 1]!.subarray(from, from + plan.steps + 1);
   });
@@ -76,9 +84,7 @@ function interpolate(source: Float64Array, into: Float64Array, taps: readonly [n
   }
 }
 
-type Worker = (from: number, to: number) => void;
-
-function clusterWorker(planned: PlannedCluster, input: GridInput, arriving: readonly Arriving[], outgoing: readonly Float64Array[], pad: number, nodes: readonly (Float64Array | null)[]): Worker {
+function clusterWorker(planned: PlannedCluster, input: GridInput, arriving: readonly Arriving[], outgoing: readonly Float64Array[], pad: number, nodes: readonly (Float64Array | null)[], still: Float64Array, scratch: Float64Array): Worker {
   const { cluster, single, propagator } = planned;
   const feeds = cluster.feeds.filter((feed) => feed.fixed === input.fixed);
   if (single) {
@@ -88,16 +94,17 @@ function clusterWorker(planned: PlannedCluster, input: GridInput, arriving: read
       siemens += feed.siemens;
       farads += feed.farads;
     }
-    const drive = siemens === 0 && farads === 0 ? null : driveOf(input, siemens, farads);
-    return nodeWorker(single, cluster.ports, drive, arriving, outgoing, pad, nodes[cluster.nodes[0]!] ?? null);
+    const drive = siemens === 0 && farads === 0 ? still : driveOf(input, siemens, farads);
+    return nodeWorker(single, cluster.ports, drive, arriving, outgoing, pad, nodes[cluster.nodes[0]!] ?? scratch);
   }
   if (propagator) return matrixWorker(planned, feeds, input, arriving, outgoing, pad, nodes);
   return heldWorker(cluster.ports, input, arriving, outgoing, pad);
 }
 
 function driveOf(input: GridInput, siemens: number, farads: number): Float64Array {
-  const drive = new Float64Array(input.value.length);
-  for (let n = 0; n < drive.length; n++) drive[n] = siemens * input.value[n]! + farads * input.rate[n]!;
+  const { length } = input.value;
+  const drive = workspace.take(length);
+  for (let n = 0; n < length; n++) drive[n] = siemens * input.value[n]! + farads * input.rate[n]!;
   return drive;
 }
 
@@ -114,58 +121,12 @@ function heldWorker(ports: readonly ClusterPort[], input: GridInput, arriving: r
   };
 }
 
-function nodeWorker(
-  { p, q0, q1 }: { p: number; q0: number; q1: number },
-  ports: readonly ClusterPort[],
-  drive: Float64Array | null,
-  arriving: readonly Arriving[],
-  outgoing: readonly Float64Array[],
-  pad: number,
-  record: Float64Array | null,
-): Worker {
-  const count = ports.length;
-  const current = new Float64Array(256);
-  let v = 0;
-  let before = 0;
-  let started = false;
-  const first = ports[0];
-  return (from, to) => {
-    const length = to - from;
-    if (first) {
-      const { samples, offset } = arriving[first.end]!;
-      const weight = 2 * first.admittance;
-      if (drive) for (let i = 0; i < length; i++) current[i] = drive[from + i]! + weight * samples[from + i + offset]!;
-      else for (let i = 0; i < length; i++) current[i] = weight * samples[from + i + offset]!;
-    } else for (let i = 0; i < length; i++) current[i] = drive ? drive[from + i]! : 0;
-    for (let k = 1; k < count; k++) {
-      const port = ports[k]!;
-      const { samples, offset } = arriving[port.end]!;
-      const weight = 2 * port.admittance;
-      for (let i = 0; i < length; i++) current[i] = current[i]! + weight * samples[from + i + offset]!;
-    }
-    let i = 0;
-    if (!started) {
-      // From rest: a node with capacitance starts at nothing, one without follows at once.
-      started = true;
-      before = current[0]!;
-      v = q0 === 0 ? q1 * before : 0;
-      current[0] = v;
-      i = 1;
-    }
-    for (; i < length; i++) {
-      const now = current[i]!;
-      v = p * v + q0 * before + q1 * now;
-      before = now;
-      current[i] = v;
-    }
-    for (let k = 0; k < count; k++) {
-      const end = ports[k]!.end;
-      const { samples, offset } = arriving[end]!;
-      const out = outgoing[end]!;
-      for (let j = 0; j < length; j++) out[from + j + pad] = current[j]! - samples[from + j + offset]!;
-    }
-    if (record) for (let j = 0; j < length; j++) record[from + j] = current[j]!;
-  };
+function nodeWorker(kept: NodeUpdate, ports: readonly ClusterPort[], drive: Float64Array, arriving: readonly Arriving[], outgoing: readonly Float64Array[], pad: number, record: Float64Array): Worker {
+  const [first, second] = ports;
+  const wave = (port: ClusterPort): PortWave => ({ weight: 2 * port.admittance, ...arriving[port.end]!, out: outgoing[port.end]! });
+  if (first && ports.length === 1) return endWorker(kept, wave(first), drive, pad, record);
+  if (first && second && ports.length === 2) return throughWorker(kept, wave(first), wave(second), drive, pad, record);
+  return junctionWorker(kept, ports.map(wave), drive, pad, record);
 }
 
 function matrixWorker(

@@ -5,7 +5,9 @@ import type { Waveforms } from "./comb-output";
 import { drawGrid, type GridTerm } from "./grid-output";
 import { planGrid } from "./grid-plan";
 import { channelSeries, runGrid, type GridInput } from "./grid-run";
+import { markRoundPeaks } from "./round-peaks";
 import { movingSources, type Prepared } from "./prepared";
+import { workspace } from "./workspace";
 import { chooseStep, type Accuracy } from "./step-size";
 
 /** A corner that a straight line between samples would miss by more than this share of the swing gets its sample. */
@@ -31,20 +33,20 @@ export function simulateGrid({ circuit, clusters, channels, rest, until, accurac
     if (corners) for (const { time, slope } of corners) if (time <= until) terms.push({ response, shift: time, weight: slope });
     if (wave.kind === "sine" && wave.start <= until) terms.push({ response, shift: wave.start, weight: 1 });
   }
-  return { waveforms: drawGrid(terms, rest, step, until, WORTHY[accuracy] * swing), steps };
+  return { waveforms: markRoundPeaks(drawGrid(terms, rest, step, until, WORTHY[accuracy] * swing), swing), steps };
 }
 
 /** A ramp of 1 V/s from t = 0. */
 function rampInput(fixed: number, steps: number, step: number): GridInput {
-  const value = new Float64Array(steps + 1);
+  const value = workspace.take(steps + 1).subarray(0, steps + 1);
   for (let n = 0; n <= steps; n++) value[n] = n * step;
-  return { fixed, value, rate: new Float64Array(steps + 1).fill(1) };
+  return { fixed, value, rate: workspace.take(steps + 1).subarray(0, steps + 1).fill(1) };
 }
 
 /** The sine from its own start, as a deviation from its value there. */
 function sineInput(fixed: number, steps: number, step: number, wave: Sine): GridInput {
-  const value = new Float64Array(steps + 1);
-  const rate = new Float64Array(steps + 1);
+  const value = workspace.take(steps + 1).subarray(0, steps + 1);
+  const rate = workspace.take(steps + 1).subarray(0, steps + 1);
   const { amplitude, frequency, phase } = wave;
   const turn = 2 * Math.PI * frequency;
   for (let n = 0; n <= steps; n++) {

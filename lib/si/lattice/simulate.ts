@@ -9,6 +9,7 @@ import type { Prepared } from "./prepared";
 import { simulateComb } from "./simulate-comb";
 import { simulateGrid } from "./simulate-grid";
 import type { Accuracy } from "./step-size";
+import { workspace } from "./workspace";
 
 export interface SimulateOptions {
   /** [s], > 0; the record ends there or up to one step later */
@@ -73,12 +74,20 @@ export function simulate(network: Network, options: SimulateOptions): Simulation
   const channels = network.probes.map((probe) => nodeChannel(circuit.ref(probe.node)));
   if (options.waves) channels.push(...waveChannels(circuit));
   const prepared: Prepared = { circuit, clusters, channels, rest: restLevels(circuit, channels), until, accuracy, step };
-  const { waveforms, steps } = (clusters.every((cluster) => cluster.isStatic) ? simulateComb(prepared) : null) ?? simulateGrid(prepared);
+  const { waveforms, steps } = draw(prepared);
   const voltage: Record<string, Float64Array> = {};
   network.probes.forEach((probe, i) => (voltage[probe.name] = waveforms.values[i]!));
   const result: Simulation = { time: waveforms.time, voltage, steps };
   if (options.waves) result.waves = sectionWaves(network, circuit, waveforms);
   return result;
+}
+
+function draw(prepared: Prepared): { waveforms: Waveforms; steps: number } {
+  try {
+    return (prepared.clusters.every((cluster) => cluster.isStatic) ? simulateComb(prepared) : null) ?? simulateGrid(prepared);
+  } finally {
+    workspace.endAll();
+  }
 }
 
 function sectionWaves(network: Network, circuit: Circuit, { values }: Waveforms): SectionWaves[] {

@@ -2,6 +2,7 @@ import { DomainError } from "../errors";
 import { corners } from "../network/wave";
 import type { Circuit } from "./circuit";
 import type { Cluster } from "./clusters";
+import { curveStep } from "./curve-step";
 
 export type Accuracy = "live" | "standard" | "reference";
 
@@ -14,7 +15,7 @@ export interface StepChoice {
 /** How finely things are resolved: curvature of charging, ramps between whole steps, a sine's period. */
 const FINENESS: Record<Accuracy, { curve: number; ramp: number; sine: number }> = {
   live: { curve: 0.1, ramp: 1 / 30, sine: 1 / 64 },
-  standard: { curve: 0.06, ramp: 1 / 60, sine: 1 / 160 },
+  standard: { curve: 0.05, ramp: 1 / 60, sine: 1 / 160 },
   reference: { curve: 0.03, ramp: 1 / 160, sine: 1 / 400 },
 };
 const MOST_STEPS = 1_000_000;
@@ -72,7 +73,7 @@ export function chooseStep(circuit: Circuit, clusters: readonly Cluster[], until
   const ramp = shortestRamp(circuit);
   const delays = circuit.lines.map((line) => line.delay);
   const shortest = Math.min(Infinity, ...delays);
-  const wanted = asked ?? Math.min(curveStep(circuit, clusters, ramp, until, fineness), sineStep(circuit, fineness.sine));
+  const wanted = asked ?? Math.min(curveStep(clusters, ramp, until, fineness.curve), sineStep(circuit, fineness.sine));
   const choice = delays.length === 0 ? { step: wanted, delays } : (wholeSteps(circuit, delays, wanted, ramp) ?? betweenSteps(delays, Math.min(asked ?? ramp * fineness.ramp, wanted, shortest / 2)));
   if (until / choice.step > MOST_STEPS) throw new DomainError(`The window of ${until} s takes more than a million steps at a delay of ${shortest} s; end it earlier or join the short sections.`, "until");
   return choice;
@@ -81,32 +82,6 @@ export function chooseStep(circuit: Circuit, clusters: readonly Cluster[], until
 function sineStep(circuit: Circuit, share: number): number {
   let step = Infinity;
   for (const { wave } of circuit.fixed) if (wave?.kind === "sine") step = Math.min(step, share / wave.frequency);
-  return step;
-}
-
-/** A straight chord over one step of exp(−t/τ) started by a ramp misses by step²/(8 τ ramp) of the swing. */
-function curveStep(circuit: Circuit, clusters: readonly Cluster[], ramp: number, until: number, { curve }: { curve: number }): number {
-  let step = Number.isFinite(ramp) ? ramp / 4 : until / 1000;
-  for (const cluster of clusters) {
-    const { size, e, g, nodes } = cluster;
-    for (let i = 0; i < size; i++) {
-      const mass = e[i * size + i]!;
-      if (mass === 0) continue;
-      let tau = mass / (g[i * size + i]! || 1e-30);
-      if (i >= nodes.length) {
-        // A coil: against the conductances and capacitances at its ends.
-        tau = 0;
-        for (let j = 0; j < nodes.length; j++) {
-          if (g[j * size + i] === 0) continue;
-          const siemens = g[j * size + j]!;
-          const farads = e[j * size + j]!;
-          tau = Math.max(tau, farads > 0 ? Math.sqrt(mass * farads) : mass * siemens);
-        }
-      } else for (let j = nodes.length; j < size; j++) if (g[i * size + j] !== 0) tau = Math.min(tau, Math.sqrt(mass * e[j * size + j]!));
-      const scale = Number.isFinite(ramp) ? ramp : tau;
-      if (tau > 1e-4 * scale) step = Math.min(step, Math.max(curve * Math.sqrt(tau * scale), scale / 400));
-    }
-  }
   return step;
 }
 
