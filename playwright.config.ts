@@ -7,7 +7,7 @@ export default defineConfig({
   testDir: "tests/e2e",
   outputDir: "test-results",
   workers: 2,
-  timeout: 60_000,
+  timeout: 90_000,
   expect: { timeout: 10_000 },
   forbidOnly: process.env.CI === "true",
   reporter: [["list"], ...(process.env.PLAYWRIGHT_JSON_OUTPUT_FILE ? ([["json"]] as const) : [])],
