@@ -28,7 +28,11 @@ describe("one pass over a rising wave (values by hand)", () => {
     expect(read(1.5).settled).toBeNaN();
   });
   it("says never where a level is not reached", () => {
-    const low = read(10, {}, voltage.map((v) => 0.15 * v));
+    const low = read(
+      10,
+      {},
+      voltage.map((v) => 0.15 * v),
+    );
     expect(low.nearCrossing).toBeNaN();
     expect(low.dipLevel).toBeNaN();
     expect(low.settled).toBeNaN();

@@ -12,7 +12,8 @@ function read(rule: StaticRule, path: ResolvedPath): StaticReading {
   if (!reading || "input" in reading) throw new Error("the rule has a value here");
   return reading;
 }
-const finding = (rule: StaticRule, path: ResolvedPath) => staticFinding(path, rule.definition, read(rule, path)).finding;
+const finding = (rule: StaticRule, path: ResolvedPath) =>
+  staticFinding(path, rule.definition, read(rule, path)).finding;
 
 /** Driver of `rdrv`, resistor R1 of `rs` beside it, 50 Ω line of 1 ns. */
 function seriesPath(rdrv: number, rs: number): ResolvedPath {
@@ -51,7 +52,14 @@ describe("termination value (common practice, no source)", () => {
   it("Thevenin: the two resistors in parallel", () => {
     const path = parallelPath(100);
     path.rails.push({ name: "+3V3", node: "rail +3V3", volts: 3.3 });
-    path.parts.push({ reference: "R2", kind: "R", a: "U2.1", b: "rail +3V3", value: 100, role: "termination" });
+    path.parts.push({
+      reference: "R2",
+      kind: "R",
+      a: "U2.1",
+      b: "rail +3V3",
+      value: 100,
+      role: "termination",
+    });
     expect(read(terminationValue, path).corners[0]?.value).toBeCloseTo(0, 12);
   });
   it("a pull-up of 10 kΩ is no termination", () => {
@@ -84,7 +92,12 @@ describe("critical length (common practice, no source)", () => {
     const [pin] = path.drivers;
     if (!pin?.driver) throw new Error("the fixture drives");
     pin.driver = { ...pin.driver, riseTime: { slow: 2e-9, typical: 1e-9, fast: 0.5e-9 } };
-    expect(finding(criticalLength, path)).toMatchObject({ corner: "fast/nominal", failsAt: 1, ofCorners: 3, failsAtNominal: false });
+    expect(finding(criticalLength, path)).toMatchObject({
+      corner: "fast/nominal",
+      failsAt: 1,
+      ofCorners: 3,
+      failsAtNominal: false,
+    });
   });
   it("is not asked of a terminated path", () => {
     expect(criticalLength.read(seriesPath(17, 33))).toBeNull();
@@ -105,7 +118,10 @@ describe("spacing (common practice, no source)", () => {
     expect(finding(spacing, beside(0.299e-3)).verdict).toBe("fail");
   });
   it("takes the class's own spacing as its limit", () => {
-    expect(finding(spacing, beside(0.39e-3, { spacing: 0.4e-3 }))).toMatchObject({ verdict: "fail", limitOrigin: "class" });
+    expect(finding(spacing, beside(0.39e-3, { spacing: 0.4e-3 }))).toMatchObject({
+      verdict: "fail",
+      limitOrigin: "class",
+    });
   });
   it("has no data without a neighbour list, nor without a plane", () => {
     expect(spacing.read(beside(1e-3, { geometryKnown: false }))).toMatchObject({ input: "neighbour list" });

@@ -59,10 +59,12 @@ function consequence(rule: string, seen: Observation): string {
   const rising = seen.edge === "rise";
   const at = nanoseconds(rising ? seen.maxTime : seen.minTime);
   const pin = seen.receiverPin.pin;
-  if (rule === "above-rail")
-    return `the peak at ${at} is ${volts(seen.max)}, ${volts(seen.max - seen.receiver.vdd)} from the ${volts(seen.receiver.vdd)} rail`;
+  if (rule === "above-rail") {
+    const rail = `the ${volts(seen.receiver.vdd)} rail`;
+    return `the peak at ${at} is ${volts(seen.max)}, ${aside(seen.max - seen.receiver.vdd, "above", "below")} ${rail}`;
+  }
   if (rule === "below-rail")
-    return `the lowest point at ${at} is ${volts(seen.min)}, ${volts(-seen.min)} below the rail`;
+    return `the lowest point at ${at} is ${volts(seen.min)}, ${aside(-seen.min, "below", "above")} the rail`;
   if (rule === "overshoot") {
     const beyond = rising ? seen.max - seen.high : seen.low - seen.min;
     return `${volts(beyond)} beyond the ${volts(rising ? seen.high : seen.low)} level at ${at} is ${percent((100 * beyond) / (seen.high - seen.low))} of the swing`;
@@ -123,6 +125,10 @@ function lateArrival(seen: Observation): string {
       : "";
   const driver = `The ${seen.corner.driver} driver's ${picoseconds(seen.driver.riseTime[seen.corner.driver])} edge`;
   return `${driver} crosses ${level} at ${seen.receiverPin.pin} after ${picoseconds(seen.measCrossing - seen.sourceCrossing)} of flight${line}${load}.`;
+}
+
+function aside(beyond: number, outside: string, inside: string): string {
+  return beyond >= 0 ? `${volts(beyond)} ${outside}` : `${volts(-beyond)} ${inside}`;
 }
 
 function capital(text: string): string {
