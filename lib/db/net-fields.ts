@@ -87,6 +87,7 @@ export const netsThing: DraftThing<NetsState> = {
   parse: (state) => (state === null ? null : netsState.parse(state)),
   read: async (_actor, draft, _entityId, like) =>
     readingOf(draft, await readNets(draft, like?.map((row) => row.id) ?? [])),
+  // The + keeps these columns' indexes out of the plan: each row of the list looks up its net, not the reverse.
   write: (db, draft, _entityId, state) => [
     db.run(sql`
       update ${net} set
@@ -104,7 +105,7 @@ export const netsThing: DraftThing<NetsState> = {
           '$.bus', json(f.value -> '$.fields.bus'),
           '$.limits', json(f.value -> '$.fields.limits'))
       from json_each(${JSON.stringify(state ?? [])}) as f
-      where net.id = f.value ->> '$.id' and net.team_id = ${draft.teamId} and net.revision_id = ${draft.id}`),
+      where net.id = f.value ->> '$.id' and +net.team_id = ${draft.teamId} and +net.revision_id = ${draft.id}`),
   ],
   mayChange: (actor, before, after) => {
     const was = new Map(before?.map((row) => [row.id, row.fields]));
@@ -158,7 +159,7 @@ function readingOf(draft: RevisionRef, rows: readonly NetRow[]): Reading<NetsSta
     version: 0,
     unchanged: [
       sql`(select count(*) from json_each(${versions}) as j
-        join ${net} on ${net.id} = j.value ->> 0 and ${net.version} = j.value ->> 1
+        cross join ${net} on ${net.id} = j.value ->> 0 and ${net.version} = j.value ->> 1
         where ${net.revisionId} = ${draft.id} and ${net.teamId} = ${draft.teamId}) = ${rows.length}`,
     ],
   };

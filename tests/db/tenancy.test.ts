@@ -29,7 +29,7 @@ let chunks: { name: string; sha256: string }[];
 
 beforeAll(async () => {
   data = await createTestDatabase();
-  designer = data.teams[0].actors.designer;
+  designer = data.own.actors.designer;
   const project = await createProject(designer, { name: "Tide gauge controller", template: "6-layers" });
   projectId = project.id;
   draft = await findRevision(designer, projectId);
@@ -90,33 +90,33 @@ const writes: Record<string, Act> = {
 
 describe("another team", () => {
   it.each(Object.keys(reads))("%s finds nothing", async (name) => {
-    for (const actor of Object.values(data.teams[1].actors))
+    for (const actor of Object.values(data.other.actors))
       await expect(reads[name]?.(actor)).rejects.toThrow(/does not exist/);
   });
   it.each(Object.keys(lists))("%s is empty", async (name) => {
-    for (const actor of Object.values(data.teams[1].actors)) expect(await lists[name]?.(actor)).toEqual([]);
+    for (const actor of Object.values(data.other.actors)) expect(await lists[name]?.(actor)).toEqual([]);
   });
   it.each(Object.keys(writes))("%s finds nothing to write", async (name) => {
-    for (const actor of Object.values(data.teams[1].actors))
+    for (const actor of Object.values(data.other.actors))
       await expect(writes[name]?.(actor)).rejects.toThrow(/does not exist/);
   });
   it("lists none of the projects", async () => {
-    expect(await listProjects(data.teams[1].actors.owner)).toEqual([]);
+    expect(await listProjects(data.other.actors.owner)).toEqual([]);
   });
 });
 
 describe("a manufacturer of the same team", () => {
   it.each(Object.keys({ ...reads, ...writes }))("%s answers as if it did not exist", async (name) => {
-    await expect((reads[name] ?? writes[name])?.(data.teams[0].actors.manufacturer)).rejects.toThrow(/does not exist/);
+    await expect((reads[name] ?? writes[name])?.(data.own.actors.manufacturer)).rejects.toThrow(/does not exist/);
   });
   it.each(Object.keys(lists))("%s is empty", async (name) => {
-    expect(await lists[name]?.(data.teams[0].actors.manufacturer)).toEqual([]);
+    expect(await lists[name]?.(data.own.actors.manufacturer)).toEqual([]);
   });
 });
 
 describe("a reviewer of the same team", () => {
   it.each(Object.keys(reads))("%s is theirs to see", async (name) => {
-    await expect(reads[name]?.(data.teams[0].actors.reviewer)).resolves.toBeDefined();
+    await expect(reads[name]?.(data.own.actors.reviewer)).resolves.toBeDefined();
   });
   const designersOnly = [
     "updateProject",
@@ -132,10 +132,10 @@ describe("a reviewer of the same team", () => {
     "startDraft",
   ];
   it.each(designersOnly)("%s is the designers'", async (name) => {
-    await expect(writes[name]?.(data.teams[0].actors.reviewer)).rejects.toThrow(/does not exist/);
+    await expect(writes[name]?.(data.own.actors.reviewer)).rejects.toThrow(/does not exist/);
   });
   it("sets limits of a class and nothing else of it", async () => {
-    const { reviewer } = data.teams[0].actors;
+    const { reviewer } = data.own.actors;
     const netClass = await getNetClass(reviewer, draft, ids.classId);
     const limits = { overshoot: { enabled: true, limit: "15", note: "" } };
     await expect(
@@ -154,10 +154,10 @@ it("a designer cannot set the project's rules", async () => {
 });
 
 it("nothing that was refused left a trace", async () => {
-  const { owner } = data.teams[0].actors;
+  const { owner } = data.own.actors;
   const actors = new Set((await listAudit(owner)).map((entry) => entry.actorId));
-  expect(actors).toEqual(new Set([designer.userId, data.teams[0].actors.reviewer.userId]));
-  expect(await listAudit(data.teams[1].actors.owner)).toEqual([]);
-  expect(await hasEdited(data.teams[1].actors.owner, draft.id)).toBe(false);
+  expect(actors).toEqual(new Set([designer.userId, data.own.actors.reviewer.userId]));
+  expect(await listAudit(data.other.actors.owner)).toEqual([]);
+  expect(await hasEdited(data.other.actors.owner, draft.id)).toBe(false);
   expect((await verifyAuditChain(owner)).intact).toBe(true);
 });
