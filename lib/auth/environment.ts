@@ -34,7 +34,8 @@ export function clientAddressHeader(): string {
   return process.env.CLIENT_ADDRESS_HEADER ?? "x-forwarded-for";
 }
 
-/** Whether pages that help whoever tries this out exist: the demo, or development. */
+/** Whether pages that help whoever tries this out exist: the demo, a server for this computer alone, development. */
 export function isTrial(): boolean {
-  return process.env.RINGFENCE_DEMO === "1" || process.env.NODE_ENV === "development";
+  const { RINGFENCE_DEMO, RINGFENCE_LOCAL, NODE_ENV } = process.env;
+  return RINGFENCE_DEMO === "1" || RINGFENCE_LOCAL === "1" || NODE_ENV === "development";
 }

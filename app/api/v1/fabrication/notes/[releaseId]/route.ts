@@ -6,8 +6,8 @@ import { id } from "@/lib/schemas/common";
 export const GET = route({
   access: "session",
   params: z.object({ releaseId: id }),
-  handler: async ({ signedIn, params }) => {
-    const sent = await getSentNote(signedIn.email, params.releaseId);
+  handler: async ({ person, params }) => {
+    const sent = await getSentNote(person.email, params.releaseId);
     await markSeen(sent.recipientId, "viewedAt");
     return { note: sent.note, noteHash: sent.noteHash, acknowledgedAt: sent.acknowledgedAt, acknowledgedBy: sent.acknowledgedBy };
   },

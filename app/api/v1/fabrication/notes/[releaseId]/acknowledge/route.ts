@@ -8,7 +8,7 @@ export const POST = route({
   access: "session",
   params: z.object({ releaseId: id }),
   body: acknowledgement,
-  handler: async ({ signedIn, params, body }) => {
-    await acknowledge(await getSentNote(signedIn.email, params.releaseId), signedIn.name, body.words);
+  handler: async ({ person, params, body }) => {
+    await acknowledge(await getSentNote(person.email, params.releaseId), person.name, body.words);
   },
 });

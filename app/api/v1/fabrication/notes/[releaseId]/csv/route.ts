@@ -8,8 +8,8 @@ import { id } from "@/lib/schemas/common";
 export const GET = route({
   access: "session",
   params: z.object({ releaseId: id }),
-  handler: async ({ signedIn, params }) => {
-    const sent = await getSentNote(signedIn.email, params.releaseId);
+  handler: async ({ person, params }) => {
+    const sent = await getSentNote(person.email, params.releaseId);
     await markSeen(sent.recipientId, "downloadedAt");
     return new Response(noteCsv(sent.note), {
       headers: downloadHeaders("text/csv; charset=utf-8", `${sent.note.project} ${sent.note.revision} impedance note.csv`),

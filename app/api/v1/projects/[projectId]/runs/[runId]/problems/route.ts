@@ -16,10 +16,10 @@ export const GET = route({
       listWaivers(actor, params.projectId, run),
       listAcceptances(actor, run.revisionId),
     ]);
-    const flagOf = new Map(
+    const flagOf = new Map<string, (typeof flags)[number]>(
       flags.filter((flag) => flag.state === "open").map((flag) => [`${flag.subjectLineageId} ${flag.mechanism ?? ""}`, flag]),
     );
-    const waiverOf = new Map(waivers.map((waiver) => [`${waiver.pathLineageId} ${waiver.mechanism}`, waiver] as const).reverse());
+    const waiverOf = new Map<string, (typeof waivers)[number]>(waivers.map((waiver) => [`${waiver.pathLineageId} ${waiver.mechanism}`, waiver] as const).reverse());
     const accepted = new Map(acceptances.map((entry) => [entry.missing, entry]));
     return {
       problems: problems.map((problem) => {
