@@ -30,8 +30,8 @@ export function DrawingSvg({ drawing, overlay, onPoint, onPick, children }: Prop
       width={drawing.width}
       height={drawing.height}
       viewBox={`0 0 ${drawing.width} ${drawing.height}`}
-      className="block font-sans tabular-nums"
-      style={{ fontVariantNumeric: "tabular-nums" }}
+      className="block font-sans tabular-nums print:h-auto print:max-w-full"
+
       onMouseOver={onPoint && ((event) => onPoint(find(event)))}
       onMouseLeave={onPoint && (() => onPoint(null))}
       onClick={

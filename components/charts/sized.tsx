@@ -18,7 +18,7 @@ export function Sized({ initial = 880, least = 320, children }: Props) {
     initialSize: { width: initial, height: 0 },
   });
   return (
-    <div ref={parentRef} className="w-full overflow-x-auto">
+    <div ref={parentRef} className="w-full overflow-x-auto print:overflow-visible">
       {children(Math.max(Math.floor(width) || initial, least))}
     </div>
   );

@@ -93,6 +93,11 @@ export class Clearance {
   private readonly taken: (readonly [number, number])[] = [];
   constructor(private readonly gap = 8) {}
 
+  /** Takes a span, free or not: something is drawn there. */
+  block(from: number, to: number): void {
+    this.taken.push([from, to]);
+  }
+
   /** Takes a span if it is free. */
   take(from: number, to: number): boolean {
     if (this.taken.some(([a, b]) => from < b + this.gap && to > a - this.gap)) return false;

@@ -57,7 +57,8 @@ export function quantityText(
 ): string {
   const scaled = scaledUnit(options.like ?? value, base);
   const n = value / scaled.factor;
-  const decimals = options.like === undefined ? decimalsFor(n) : Math.abs(options.like / scaled.factor) < 99.95 ? 2 : 1;
+  const decimals =
+    options.like === undefined ? decimalsFor(n) : Math.abs(options.like / scaled.factor) < 99.95 ? 2 : 1;
   return withUnit(numberText(n, decimals, options.signed), scaled.unit);
 }
 

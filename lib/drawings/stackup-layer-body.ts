@@ -1,4 +1,4 @@
-import { type Mark, type Point, polygon, rect } from "./marks";
+import { group, type Mark, type Point, polygon, rect } from "./marks";
 import { px } from "./marks";
 import type { PlacedLayer, SectionLayer } from "./stackup-layer";
 import { isCopper } from "./stackup-words";
@@ -8,7 +8,7 @@ interface Board {
   right: number;
 }
 
-const TRACE_PITCHES = 4;
+const MOST_TRACES = 4;
 
 /** The body of one layer between the board's broken edges. */
 export function layerBody(
@@ -56,12 +56,13 @@ function tracesOf(placed: readonly PlacedLayer[], index: number, board: Board, s
   const p = placed[index];
   if (!p) return [];
   const wide = board.right - board.left;
-  const foot = Math.min(footWidth(p.layer) * scale, wide / (TRACE_PITCHES * 1.6));
+  const foot = Math.min(footWidth(p.layer) * scale, wide * 0.5);
   const lean = Math.min(((p.layer.etch_m ?? (p.layer.thickness_m ?? 0) * 0.5) * scale) / 2, foot * 0.3);
   const [yFoot, yCrown] = footBelow(placed, index) ? [p.y + p.height, p.y] : [p.y, p.y + p.height];
-  return Array.from({ length: TRACE_PITCHES }, (_, i) => {
+  const count = Math.min(Math.max(Math.floor(wide / (2.6 * foot)), 1), MOST_TRACES);
+  return Array.from({ length: count }, (_, i) => {
     // Layers are set off against each other, so that traces do not stand in columns.
-    const x = board.left + ((i + 0.5 + (index % 4 < 2 ? -0.12 : 0.12)) * wide) / TRACE_PITCHES;
+    const x = board.left + ((i + 0.5 + (index % 4 < 2 ? -0.1 : 0.1)) * wide) / count;
     return [
       [x - foot / 2, yFoot],
       [x + foot / 2, yFoot],
@@ -106,18 +107,32 @@ function maskBody(placed: readonly PlacedLayer[], index: number, board: Board, s
     [board.left, laminate],
     [board.left, laminate + sign * beside],
   ];
-  for (const trace of tracesOf(placed, copperIndex, board, scale)) {
-    const xs = trace.map(([x]) => x);
-    const flank = Math.max(p.height, 1);
-    const [left, right] = [Math.min(...xs) - flank, Math.max(...xs) + flank];
-    points.push([left, laminate + sign * beside], [left + flank, laminate + sign * crest]);
-    points.push([right - flank, laminate + sign * crest], [right, laminate + sign * beside]);
+  for (const [footLeft, footRight, crownRight, crownLeft] of tracesOf(placed, copperIndex, board, scale)) {
+    if (!footLeft || !footRight || !crownRight || !crownLeft) continue;
+    const side = Math.max(p.height * 0.8, 1);
+    points.push(
+      [footLeft[0] - side, laminate + sign * beside],
+      [crownLeft[0] - side, laminate + sign * crest],
+    );
+    points.push(
+      [crownRight[0] + side, laminate + sign * crest],
+      [footRight[0] + side, laminate + sign * beside],
+    );
   }
   points.push([board.right, laminate + sign * beside], [board.right, laminate]);
+  const top = Math.min(p.y, copper.y);
+  const bottom = Math.max(p.y + p.height, copper.y + copper.height);
   return [
-    polygon(
-      points.map(([x, y]) => [px(x), px(y)] as const),
-      style,
+    group(
+      [
+        polygon(
+          points.map(([x, y]) => [px(x), px(y)] as const),
+          style,
+        ),
+      ],
+      {
+        clip: { x: board.left, y: top, width: board.right - board.left, height: bottom - top },
+      },
     ),
   ];
 }

@@ -157,14 +157,20 @@ function footNotes(
   const total = totalThickness(layers);
   const thin = exaggerated.filter((is, i) => is && layers[i]?.thickness_m !== null).length;
   const soft = { ink: "ink-soft" } as const;
+  const narrow = board.right - board.left < 330;
   return [
     ...scaleBar(board.left, y + 4, scale, 90, unit),
     ...(thin > 0
       ? [
-          text(board.right, y + 8, `\u2248 ${thin === 1 ? "1 layer" : `${thin} layers`} drawn thicker`, {
-            ...soft,
-            anchor: "end",
-          }),
+          text(
+            board.right,
+            y + (narrow ? 26 : 8),
+            `\u2248 ${thin === 1 ? "1 layer" : `${thin} layers`} drawn thicker`,
+            {
+              ...soft,
+              anchor: "end",
+            },
+          ),
         ]
       : []),
     line(4, y - 8, board.left - 22, y - 8, { stroke: "ink-soft", weight: 0.75 }),

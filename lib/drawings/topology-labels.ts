@@ -21,12 +21,12 @@ export function rowLabels(layout: TopologyLayout, y: (row: number) => number): M
   // Uprights pass through the lanes of the rows between.
   for (const s of layout.strands)
     for (let r = s.parentRow; r < s.row; r++) {
-      for (const offset of LANES.below) lane(r, offset).take(s.x0 - 2, s.x0 + 2);
-      for (const offset of LANES.above) lane(r + 1, offset).take(s.x0 - 2, s.x0 + 2);
+      for (const offset of LANES.below) lane(r, offset).block(s.x0 - 2, s.x0 + 2);
+      for (const offset of LANES.above) lane(r + 1, offset).block(s.x0 - 2, s.x0 + 2);
     }
   for (const s of layout.strands)
     if (s.row > 0 && s.strand.end.kind === "pin")
-      for (const offset of LANES.below) lane(s.row, offset).take(s.end - 2, s.end + 60);
+      for (const offset of LANES.below) lane(s.row, offset).block(s.end - 2, s.end + 60);
   const place = (
     row: number,
     x1: number,

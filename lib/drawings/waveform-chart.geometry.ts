@@ -82,6 +82,7 @@ export function waveformChart(
     padded(
       Math.min(range.low, ...sound.map((l) => l.volts)),
       Math.max(range.high, ...sound.map((l) => l.volts)),
+      0.1,
     );
   const names = Math.max(...probes.map((p) => textWidth(p.label, LABEL, true)), 40);
   const box: PlotBox = {
@@ -110,7 +111,7 @@ export function waveformChart(
       ],
       { clip: inside },
     ),
-    ...limitNames(sound, violations, y, box),
+    ...limitNames(sound, violations, x, y, box),
     ...worstNotes(violations, x, y, box),
     ...endNames(probes, focus, span, y, box),
   ];

@@ -15,6 +15,7 @@ const ROW = 15;
 export function limitNames(
   limits: readonly LimitLine[],
   violations: readonly Violation[],
+  x: Scale,
   y: Scale,
   box: PlotBox,
 ): Mark[] {
@@ -22,7 +23,8 @@ export function limitNames(
   const rows = spreadLabels(wanted, ROW, box.top, box.bottom);
   return limits.map((l, i) => {
     const broken = violations.some((v) => v.limit === l.id);
-    return text(box.left + 8, (rows[i] ?? 0) + 4, `${l.label} ${voltsText(l.volts)}`, {
+    const from = Math.min(Math.max(l.from === undefined ? box.left : x(l.from), box.left), box.right - 160);
+    return text(from + 8, (rows[i] ?? 0) + 4, `${l.label} ${voltsText(l.volts)}`, {
       ink: l.reference ? "ink-soft" : "fail",
       weight: broken ? 650 : 400,
       halo: true,
@@ -44,12 +46,17 @@ export function worstNotes(violations: readonly Violation[], x: Scale, y: Scale,
     const leftward = cx + room > box.right;
     return [
       circle(cx, cy, 3, { fill: "fail" }),
-      text(leftward ? cx - 8 : cx + 8, Math.min(Math.max(cy + 4, box.top + 10), box.bottom - 4), words, {
-        ink: "fail",
-        weight: 650,
-        anchor: leftward ? "end" : "start",
-        halo: true,
-      }),
+      text(
+        leftward ? cx - 8 : cx + 8,
+        Math.min(Math.max(v.side === "max" ? cy - 7 : cy + 17, box.top + 11), box.bottom - 4),
+        words,
+        {
+          ink: "fail",
+          weight: 650,
+          anchor: leftward ? "end" : "start",
+          halo: true,
+        },
+      ),
     ];
   });
 }

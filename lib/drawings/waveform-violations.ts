@@ -6,6 +6,7 @@ import type { LimitLine, WaveProbe } from "./waveform-chart.geometry";
 export interface Violation extends Excess {
   probe: string;
   limit: string;
+  side: "max" | "min";
 }
 
 /** Every span in which a judged wave passes a limit that holds then. */
@@ -26,7 +27,7 @@ export function findViolations(
             l.side,
             Math.max(l.from ?? span[0], span[0]),
             Math.min(l.to ?? span[1], span[1]),
-          ).map((e) => ({ ...e, probe: p.id, limit: l.id })),
+          ).map((e) => ({ ...e, probe: p.id, limit: l.id, side: l.side })),
         ),
     );
 }
