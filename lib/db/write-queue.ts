@@ -18,7 +18,11 @@ const READS = /^\s*(select|explain|pragma\s+\w+\s*;?\s*$)/i;
  * runs again from its beginning. What cannot be run again whole is refused: interactive transactions, and
  * scripts of several statements outside a transaction. Units of work are batches.
  */
-export function withWriteQueue(client: Client, onRetry: (attempt: number) => void = () => undefined): Client {
+export function withWriteQueue(
+  client: Client,
+  onRetry: (attempt: number) => void = () => undefined,
+  { attempts = MAX_ATTEMPTS }: { attempts?: number } = {},
+): Client {
   let tail: Promise<unknown> = Promise.resolve();
   let closed = false;
 
@@ -27,12 +31,13 @@ export function withWriteQueue(client: Client, onRetry: (attempt: number) => voi
       try {
         return await unit();
       } catch (error) {
-        // A read whose connection a reconnect took away has done nothing yet; after close() nothing runs again.
-        if (closed || attempt >= MAX_ATTEMPTS || !(isBusy(error) || isCutOff(error))) throw error;
-        if (isBusy(error)) {
-          onRetry(attempt);
-          await reconnect(client);
-        }
+        // After close() nothing runs again, and nothing opens the file anew.
+        if (closed || !(isBusy(error) || isCutOff(error))) throw error;
+        // Also when giving up: on the connection that met BUSY the next acknowledged write would vanish.
+        if (isBusy(error)) await reconnect(client);
+        if (attempt >= attempts) throw error;
+        // A read whose connection a reconnect took away has done nothing yet, and is no retry.
+        if (isBusy(error)) onRetry(attempt);
         await pause(attempt);
       }
     }
