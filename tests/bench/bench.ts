@@ -1,8 +1,9 @@
 import type { BenchSection } from "./section";
 import { calibration } from "./sections/calibration";
+import { check } from "./sections/check";
 import { lattice } from "./sections/lattice";
 
-const sections: BenchSection[] = [calibration, lattice];
+const sections: BenchSection[] = [calibration, lattice, check];
 
 const print = (line: string) => process.stdout.write(`${line}\n`);
 for (const section of sections) {
