@@ -7,24 +7,32 @@ const SAMPLE_LINES = 60;
 const PREFERENCE: readonly Delimiter[] = ["\t", ";", ","];
 
 /**
- * The character between cells: the one that splits most lines into as many cells as the first. A comma that is a
- * decimal point (`0,127;12,5`) does not stand in the header and so loses to the semicolon.
+ * The character between cells: the one of which most lines have the same number, the header among them. A comma that
+ * is a decimal point (`0,127;12,5`) does not stand in the header and so loses to the semicolon.
  */
 export function detectDelimiter(text: string): Delimiter {
   let best: Delimiter = ",";
   let bestScore = 0;
   for (const candidate of PREFERENCE) {
     const counts = countPerLine(text, candidate);
-    const first = counts[0] ?? 0;
-    if (first === 0) continue;
-    const same = counts.filter((count) => count === first).length / counts.length;
-    // Agreement decides; of equals, more cells.
-    const score = Math.round(same * 10) * 100 + Math.min(first, 99);
+    const usual = mostFrequent(counts.filter((count) => count > 0));
+    if (usual === null) continue;
+    const same = counts.filter((count) => count === usual).length / counts.length;
+    // A title above the header may have none; a header that has some speaks for it. Of equals, more cells.
+    const score = same + ((counts[0] ?? 0) > 0 ? 0.3 : 0) + Math.min(usual, 99) / 1e4;
     if (score > bestScore) {
       best = candidate;
       bestScore = score;
     }
   }
+  return best;
+}
+
+function mostFrequent(values: readonly number[]): number | null {
+  const times = new Map<number, number>();
+  for (const value of values) times.set(value, (times.get(value) ?? 0) + 1);
+  let best: number | null = null;
+  for (const [value, count] of times) if (best === null || count > (times.get(best) ?? 0)) best = value;
   return best;
 }
 
