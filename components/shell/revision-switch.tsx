@@ -13,12 +13,12 @@ export interface ShellRevision {
   state: "draft" | "released";
 }
 
-/** Chooses the revision that the pages of a project show; the address carries the choice. */
+/** Given newest first. Chooses the revision that the pages of a project show; the address carries the choice. */
 export function RevisionSwitch({ revisions }: { revisions: readonly ShellRevision[] }) {
   const router = useRouter();
   const pathname = usePathname();
   const params = useSearchParams();
-  const draft = revisions.find((revision) => revision.state === "draft") ?? revisions.at(-1);
+  const draft = revisions.find((revision) => revision.state === "draft") ?? revisions[0];
   const letter = params.get(REVISION_PARAM) ?? draft?.letter;
   const current = revisions.find((revision) => revision.letter === letter);
   if (!draft) return null;

@@ -1,7 +1,6 @@
 "use client";
 
 import { ChevronDown } from "lucide-react";
-import type { Route } from "next";
 import Link from "next/link";
 import { Button } from "@/components/ui/button";
 import { Menu, MenuChoice, MenuItem, MenuSeparator } from "@/components/ui/menu";
@@ -39,7 +38,7 @@ export function TeamSwitch({ teams, active }: { teams: readonly ShellTeam[]; act
       ) : null}
       <MenuSeparator />
       <MenuItem asChild>
-        <Link href={"/create-team" as Route}>Make a team</Link>
+        <Link href={"/create-team"}>Make a team</Link>
       </MenuItem>
     </Menu>
   );
