@@ -47,7 +47,9 @@ export function largeBoard(count: number, seed: number, widths: DemoWidths): Dem
     const length = long ? 60 + 90 * random() : 6 + 16 * random();
     if (random() < 0.01) {
       sections.push(`${net},${driver},via${via++},L1 Top,${width("L1 Top")},${(length / 3).toFixed(3)}`);
-      sections.push(`${net},via${via++},${receiver},L6 Bottom,${width("L6 Bottom")},${(length / 2).toFixed(3)}`);
+      sections.push(
+        `${net},via${via++},${receiver},L6 Bottom,${width("L6 Bottom")},${(length / 2).toFixed(3)}`,
+      );
     } else if (layer === "L1 Top") {
       sections.push(`${net},${driver},${receiver},L1 Top,${width("L1 Top")},${length.toFixed(3)}`);
     } else {

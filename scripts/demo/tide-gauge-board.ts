@@ -59,7 +59,14 @@ class BoardWriter {
   }
 
   /** One net on one layer, or escape on top, via, run inside, via, landing on top. */
-  route(net: string, className: string, from: string, to: string, length: number, inner: string | null = null) {
+  route(
+    net: string,
+    className: string,
+    from: string,
+    to: string,
+    length: number,
+    inner: string | null = null,
+  ) {
     if (!inner) {
       this.section(net, from, to, TOP, this.width(className, TOP), length);
       return;
@@ -72,7 +79,15 @@ class BoardWriter {
   }
 
   /** Driver – short escape – series resistor – line – receiver: two nets, one signal path. */
-  series(net: string, className: string, driver: string, receiver: string, value: string, length: number, inner: string | null) {
+  series(
+    net: string,
+    className: string,
+    driver: string,
+    receiver: string,
+    value: string,
+    length: number,
+    inner: string | null,
+  ) {
     const reference = `R${this.nextResistor++}`;
     this.part(reference, `RC0402-${value}`, value, 2);
     this.route(`${net}_S`, className, driver, `${reference}.1`, 2.4);
@@ -131,6 +146,8 @@ function addParts(board: BoardWriter) {
 function addClocks(board: BoardWriter, revision: DemoRevision) {
   board.series("ETH_REFCLK", "Clock", "Y1.3", "U1.E4", "33R", 42, null);
   board.series("SD_CLK", "Clock", "U1.F2", "U2.38", "33R", 38, IN3);
+  // In both revisions: a short clock without a resistor, tolerated by its part and waived.
+  board.route("PUMP_CLK", "Clock", "U1.G2", "J1.9", 34, null);
   // B: the service clock was added in a hurry, straight from the strong driver to the header.
   if (revision === "B") board.route("SVC_CLK", "Clock", "U1.G1", "J1.3", 118, IN4);
 }
@@ -139,10 +156,26 @@ function addMemory(board: BoardWriter, revision: DemoRevision) {
   for (let bit = 0; bit < 8; bit++) {
     // B: a purchasing change put 10 Ω in place of 33 Ω on the upper half.
     const value = revision === "B" && bit >= 4 ? "10R" : "33R";
-    board.series(`SD_DQ${bit}`, "Memory data", `U1.A${bit + 1}`, `U2.D${bit + 1}`, value, 33 + (bit % 5) * 1.3, IN3);
+    board.series(
+      `SD_DQ${bit}`,
+      "Memory data",
+      `U1.A${bit + 1}`,
+      `U2.D${bit + 1}`,
+      value,
+      33 + (bit % 5) * 1.3,
+      IN3,
+    );
   }
   for (let bit = 0; bit < 12; bit++) {
-    board.series(`SD_A${bit}`, "Memory address", `U1.B${bit + 1}`, `U2.A${bit + 1}`, "33R", 36 + (bit % 4) * 1.7, IN4);
+    board.series(
+      `SD_A${bit}`,
+      "Memory address",
+      `U1.B${bit + 1}`,
+      `U2.A${bit + 1}`,
+      "33R",
+      36 + (bit % 4) * 1.7,
+      IN4,
+    );
   }
   for (const [index, name] of ["SD_RAS", "SD_CAS", "SD_WE", "SD_CS"].entries())
     board.route(name, "Memory address", `U1.C${index + 1}`, `U2.C${index + 1}`, 9 + index, null);
@@ -157,7 +190,16 @@ function addFlash(board: BoardWriter, revision: DemoRevision) {
   for (let bit = 0; bit < 4; bit++)
     // B: moved across the board; the line is now long for its edge and has no resistor.
     if (revision === "B" && bit === 3) board.route("QF_IO3", "Flash", "U1.H5", "U3.7", 96, IN4);
-    else board.series(`QF_IO${bit}`, "Flash", `U1.H${bit + 2}`, `U3.${[5, 2, 3, 7][bit]}`, "27R", 23 + bit, null);
+    else
+      board.series(
+        `QF_IO${bit}`,
+        "Flash",
+        `U1.H${bit + 2}`,
+        `U3.${[5, 2, 3, 7][bit]}`,
+        "27R",
+        23 + bit,
+        null,
+      );
   board.route("QF_CS", "Flash", "U1.H6", "U3.1", 11, null);
 }
 
@@ -187,7 +229,14 @@ function addSensors(board: BoardWriter, revision: DemoRevision) {
 
 function addControl(board: BoardWriter, revision: DemoRevision) {
   for (const [index, name] of ["ETH_RST", "SD_CKE", "PUMP_EN", "LED_RUN", "LED_FAULT", "WAKE"].entries())
-    board.route(name, "Control", `U1.M${index + 1}`, index < 2 ? `U${[4, 2][index]}.${25 + index}` : `J1.${index + 2}`, 13 + index, null);
+    board.route(
+      name,
+      "Control",
+      `U1.M${index + 1}`,
+      index < 2 ? `U${[4, 2][index]}.${25 + index}` : `J1.${index + 2}`,
+      13 + index,
+      null,
+    );
   board.route("BUS_TXD", "Control", "U1.N1", "U6.4", 15, null);
   board.route("BUS_DE", "Control", "U1.N2", "U6.3", 16, null);
   if (revision === "B") {
