@@ -38,6 +38,8 @@ export function bounceTable(network: Network, options: { until: number; floor?: 
   const circuit = buildCircuit(network);
   const reactive = circuit.branches.find((branch) => branch.kind !== "R");
   if (reactive) throw new UnsupportedError(`${reactive.name} stores energy, so its bounces have no single height; look at the waveforms instead.`, "parts");
+  const curved = circuit.elements[0];
+  if (curved) throw new UnsupportedError(`${curved.name} is not linear, so its bounces depend on their height; look at the waveforms instead.`, "parts");
   const moving = circuit.fixed.findIndex(({ wave }) => wave !== null && (wave.kind === "sine" || wave.value.some((value) => value !== wave.value[0])));
   const source = moving > 0 ? moving : circuit.fixed.findIndex(({ wave }) => wave !== null);
   if (source < 0) throw new DomainError("A bounce table needs a driver.", "drivers");

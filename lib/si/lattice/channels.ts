@@ -22,7 +22,7 @@ export function recordedNodes(channels: readonly Channel[]): Set<number> {
 /** Each channel's value before t = 0. */
 export function restLevels(circuit: Circuit, channels: readonly Channel[]): Float64Array {
   const levels = circuit.fixed.map((item) => item.rest);
-  const isQuiet = levels.every((level) => level === 0);
+  const isQuiet = levels.every((level) => level === 0) && circuit.elements.length === 0;
   const rest = new Float64Array(channels.length);
   if (isQuiet) return rest;
   const state = dcState(circuit, levels);

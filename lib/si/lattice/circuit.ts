@@ -1,6 +1,7 @@
 import { DomainError, UnsupportedError } from "../errors";
 import { restValue } from "../network/wave";
-import type { Network, Pwl, Section, Sine } from "../network/types";
+import type { IvDriver, Network, Pwl, Section, Sine } from "../network/types";
+import { CurrentTable, diodeTable, driverElement, type TableElement } from "./current-table";
 
 /** ≥ 0: a free node; < 0: the fixed node −1 − ref (−1 is ground). */
 export type Ref = number;
@@ -46,6 +47,7 @@ export interface Circuit {
   fixed: Fixed[];
   branches: Branch[];
   lines: WaveLine[];
+  elements: TableElement[];
 }
 
 /**
@@ -69,9 +71,13 @@ export function buildCircuit(network: Network): Circuit {
   };
   network.rails.forEach((rail, i) => fix(rail.node, { name: rail.name, rest: rail.volts, wave: null }, `rails[${i}].node`));
   const branches: Branch[] = [];
+  const tables: IvDriver[] = [];
   const behind: { node: string; source: Ref; name: string; ohms: number }[] = [];
   network.drivers.forEach((driver, i) => {
-    if (driver.kind === "iv") throw new UnsupportedError(`${driver.name} is a driver with I-V tables, which is not simulated yet.`, `drivers[${i}]`);
+    if (driver.kind === "iv") {
+      tables.push(driver);
+      return;
+    }
     const item: Fixed = { name: driver.name, rest: restValue(driver.wave), wave: driver.wave };
     if (driver.resistance === 0) fix(driver.node, item, `drivers[${i}].node`);
     else {
@@ -88,14 +94,25 @@ export function buildCircuit(network: Network): Circuit {
   };
   const lines = network.sections.flatMap((section, i) => waveLines(section, i, ref));
   for (const { node, source, name, ohms } of behind) branches.push({ name, kind: "R", a: source, b: ref(node), value: ohms });
-  network.parts.forEach((part, i) => {
-    if (part.kind === "diode" || part.kind === "iv") throw new UnsupportedError(`${part.name} is not linear; such parts are not simulated yet.`, `parts[${i}]`);
+  const elements: TableElement[] = [];
+  for (const driver of tables) {
+    const node = ref(driver.node);
+    elements.push(driverElement(driver, node, -1));
+    if (driver.capacitance) branches.push({ name: driver.name, kind: "C", a: node, b: -1, value: driver.capacitance });
+  }
+  network.parts.forEach((part) => {
+    if (part.kind === "diode" || part.kind === "iv") {
+      const table = part.kind === "diode" ? diodeTable(part) : new CurrentTable(part.points);
+      elements.push({ name: part.name, a: ref(part.a), b: ref(part.b), terms: [{ table, weight: null }] });
+      return;
+    }
     const branch: Branch = { name: part.name, kind: part.kind, a: ref(part.a), b: ref(part.b), value: part.value };
     const idle = branch.a === branch.b || (branch.a < 0 && branch.b < 0) || (part.kind === "C" && part.value === 0);
     if (!idle) branches.push(branch);
   });
   for (const probe of network.probes) ref(probe.node);
-  return { nodeCount, ref, fixed, branches, lines };
+  // Between two fixed nodes an element changes nothing that is looked at.
+  return { nodeCount, ref, fixed, branches, lines, elements: elements.filter(({ a, b }) => a !== b && (a >= 0 || b >= 0)) };
 }
 
 function waveLines(section: Section, index: number, ref: (node: string) => Ref): WaveLine[] {

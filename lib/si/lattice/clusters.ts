@@ -1,4 +1,5 @@
 import type { Circuit, Port, Ref } from "./circuit";
+import type { TableElement } from "./current-table";
 
 /** A line end as the lattice numbers it: 2 · line for end a, 2 · line + 1 for end b. */
 export type EndIndex = number;
@@ -32,6 +33,8 @@ export interface Cluster {
   isStatic: boolean;
   /** fixed node → row: J = siemens · s + farads · s′ (rows of coils: siemens holds ±1) */
   feeds: { fixed: number; row: number; siemens: number; farads: number }[];
+  /** parts with tables: rows of their two nodes, −1 where fixed */
+  tables: { element: TableElement; a: number; b: number }[];
 }
 
 export function buildClusters(circuit: Circuit): Cluster[] {
@@ -41,7 +44,7 @@ export function buildClusters(circuit: Circuit): Cluster[] {
   const place = new Int32Array(circuit.nodeCount);
   const branchesOf = new Map<Cluster, typeof circuit.branches>();
   const create = (): Cluster => {
-    const cluster: Cluster = { size: 0, nodes: [], ports: [], e: new Float64Array(0), g: new Float64Array(0), isStatic: true, feeds: [] };
+    const cluster: Cluster = { size: 0, nodes: [], ports: [], e: new Float64Array(0), g: new Float64Array(0), isStatic: true, feeds: [], tables: [] };
     clusters.push(cluster);
     branchesOf.set(cluster, []);
     return cluster;
@@ -64,6 +67,7 @@ export function buildClusters(circuit: Circuit): Cluster[] {
     const cluster = home(branch.a) ?? home(branch.b);
     if (cluster) branchesOf.get(cluster)?.push(branch);
   }
+  for (const element of circuit.elements) home(element.a >= 0 ? element.a : element.b)?.tables.push({ element, a: element.a < 0 ? -1 : place[element.a]!, b: element.b < 0 ? -1 : place[element.b]! });
   for (const cluster of clusters) fill(cluster, branchesOf.get(cluster) ?? [], place);
   return clusters;
 }
@@ -146,6 +150,7 @@ function groupNodes(circuit: Circuit): (node: number) => number {
     if (a >= 0 && b >= 0) parent[find(a)] = find(b);
   };
   for (const branch of circuit.branches) join(branch.a, branch.b);
+  for (const { a, b } of circuit.elements) join(a, b);
   for (const { a, b } of circuit.lines) {
     if (a.second !== null) join(a.node, a.second);
     if (b.second !== null) join(b.node, b.second);

@@ -1,10 +1,12 @@
-import { DomainError } from "../errors";
+import { DomainError, NotConvergedError } from "../errors";
 import type { Circuit, Port, Ref } from "./circuit";
+import { elementCurrent, restWeights } from "./current-table";
 import { solveInPlace } from "./linear-solve";
 
 /** Lines and inductors are given this share of an ohm per ohm, so that loops of them share a current. */
 const NEARLY_NOTHING = 1e-12;
 const ABSURD_CURRENT = 1e6;
+const MOST_ROUNDS = 200;
 
 export interface DcState {
   /** of the free nodes [V] */
@@ -21,6 +23,40 @@ export interface DcState {
  * @throws DomainError where ideal voltages that differ are joined with no resistance between
  */
 export function dcState(circuit: Circuit, levels: ArrayLike<number>): DcState {
+  if (circuit.elements.length === 0) return linearState(circuit, levels, []);
+  const weights = circuit.elements.map(restWeights);
+  const across = ({ a, b }: { a: Ref; b: Ref }, volts: Float64Array) => levelOf(a, volts, levels) - levelOf(b, volts, levels);
+  let guess = circuit.elements.map((element) => across(element, new Float64Array(circuit.nodeCount)));
+  let moved = Infinity;
+  for (let round = 1; round <= MOST_ROUNDS; round++) {
+    const companions = circuit.elements.map((element, k) => {
+      const { amperes, siemens } = elementCurrent(element, weights[k]!, guess[k]!);
+      return { a: element.a, b: element.b, siemens, amperes: amperes - siemens * guess[k]! };
+    });
+    const state = linearState(circuit, levels, companions);
+    const next = circuit.elements.map((element) => across(element, state.volts));
+    moved = Math.max(...next.map((v, k) => Math.abs(v - guess[k]!)));
+    if (moved < 1e-12) return state;
+    // Tables may make full steps go round in circles; shorter ones do not.
+    const share = round < 12 ? 1 : 0.5;
+    guess = guess.map((v, k) => v + share * (next[k]! - v));
+    if (moved < 1e-9 && round > 40) return state;
+  }
+  throw new NotConvergedError("The state of rest before t = 0 was not found; look at the I-V tables around the driver's rest.", moved, MOST_ROUNDS);
+}
+
+interface Companion {
+  a: Ref;
+  b: Ref;
+  siemens: number;
+  amperes: number;
+}
+
+function levelOf(ref: Ref, volts: Float64Array, levels: ArrayLike<number>): number {
+  return ref >= 0 ? volts[ref]! : (levels[-1 - ref] ?? 0);
+}
+
+function linearState(circuit: Circuit, levels: ArrayLike<number>, companions: readonly Companion[]): DcState {
   const nodes = circuit.nodeCount;
   const coils = circuit.branches.filter((branch) => branch.kind === "L");
   const size = nodes + circuit.lines.length + coils.length;
@@ -38,6 +74,13 @@ export function dcState(circuit: Circuit, levels: ArrayLike<number>): DcState {
       addTo(from, to, -1 / value);
     }
   }
+  for (const { a, b, siemens, amperes } of companions)
+    for (const [from, to, sign] of [[a, b, 1], [b, a, -1]] as const) {
+      if (from < 0) continue;
+      addTo(from, from, siemens);
+      addTo(from, to, -siemens);
+      rhs[from] = rhs[from]! - sign * amperes;
+    }
   let row = nodes;
   const leave = (ref: Ref, factor: number) => {
     if (ref >= 0) m[ref * size + row] = m[ref * size + row]! + factor;
@@ -87,6 +130,7 @@ function floatingNodes(circuit: Circuit): number[] {
     parent[find(a < 0 ? held : a)] = find(b < 0 ? held : b);
   };
   for (const branch of circuit.branches) if (branch.kind !== "C") join(branch.a, branch.b);
+  for (const { a, b } of circuit.elements) join(a, b);
   for (const { a, b } of circuit.lines) {
     join(a.node, b.node);
     if (a.second !== null && b.second !== null) join(a.second, b.second);

@@ -63,9 +63,9 @@ function stepDelay(steps: number): StepDelay {
 
 function planCluster(cluster: Cluster, step: number): PlannedCluster {
   const { size, e, g } = cluster;
-  const idle = cluster.ports.length === 0 && cluster.feeds.length === 0;
+  const idle = cluster.ports.length + cluster.feeds.length + cluster.tables.length === 0;
   if (size === 0 || idle) return { cluster, single: null, propagator: null, atOnce: null };
-  const plain = cluster.nodes.length === 1 && size === 1 && cluster.ports.every((port) => port.share === 1);
+  const plain = cluster.tables.length === 0 && cluster.nodes.length === 1 && size === 1 && cluster.ports.every((port) => port.share === 1);
   if (plain) return { cluster, single: discretiseNode(e[0]!, g[0]!, step), propagator: null, atOnce: null };
   const felt = cluster.feeds.some((feed) => feed.farads > 0);
   return { cluster, single: null, propagator: discretise(e, g, size, step), atOnce: felt ? discretise(e, g, size, step * AT_ONCE).q1 : null };

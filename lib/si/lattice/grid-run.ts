@@ -1,17 +1,11 @@
 import type { GridPlan, PlannedCluster } from "./grid-plan";
 import type { Channel } from "./channels";
 import type { ClusterPort } from "./clusters";
+import { driveOf, heldOf, type Arriving, type GridInput } from "./grid-input";
+import { matrixWorker } from "./matrix-worker";
+import type { TableContext } from "./table-worker";
 import { workspace } from "./workspace";
 import { endWorker, junctionWorker, throughWorker, type NodeUpdate, type PortWave, type Worker } from "./node-workers";
-
-/** A deviation from rest of one fixed node, on the grid from its own start. */
-export interface GridInput {
-  fixed: number;
-  /** one value a step, steps + 1 of them */
-  value: Float64Array;
-  /** its rate [1/s], where a capacitor or coil may feel it */
-  rate: Float64Array;
-}
 
 /** Deviations from rest; index 0 is the start of the input. The arrays belong to the workspace. */
 export interface GridRun {
@@ -22,17 +16,11 @@ export interface GridRun {
   incident: (Float64Array | null)[];
 }
 
-/** A wave as a cluster reads it: sample n at `samples[n + offset]`. */
-interface Arriving {
-  samples: Float64Array;
-  offset: number;
-}
-
 /**
- * Steps the lattice through time from rest, one source moving. Waves leave an end, arrive at the other a delay later;
+ * Steps the lattice through time from rest. Waves leave an end, arrive at the other a delay later;
  * each cluster turns arrivals into node voltages, and each port sends what it has less what came: out = v − a.
  */
-export function runGrid(plan: GridPlan, input: GridInput, nodeCount: number, recorded: Iterable<number>): GridRun {
+export function runGrid(plan: GridPlan, inputs: readonly GridInput[], nodeCount: number, recorded: Iterable<number>, tables?: TableContext): GridRun {
   const { steps, pad, delays, block } = plan;
   const ends = 2 * delays.length;
   const outgoing: Float64Array[] = [];
@@ -50,7 +38,7 @@ export function runGrid(plan: GridPlan, input: GridInput, nodeCount: number, rec
     const far = outgoing[end ^ 1]!;
     return delayed ? { samples: delayed, offset: pad } : { samples: far, offset: pad - delays[end >> 1]!.whole };
   });
-  const workers = plan.clusters.map((planned) => clusterWorker(planned, input, arriving, outgoing, pad, nodes, still, scratch));
+  const workers = plan.clusters.map((planned) => clusterWorker(planned, inputs, arriving, outgoing, pad, nodes, still, scratch, tables));
   for (let from = 0; from <= steps; from += block) {
     const to = Math.min(steps + 1, from + block);
     for (let end = 0; end < ends; end++) {
@@ -64,10 +52,10 @@ export function runGrid(plan: GridPlan, input: GridInput, nodeCount: number, rec
 }
 
 /** The run's series for each channel, sample 0 at the start of the input; null where nothing moves. */
-export function channelSeries(channels: readonly Channel[], plan: GridPlan, run: GridRun, input: { fixed: number; value: Float64Array }): (Float64Array | null)[] {
+export function channelSeries(channels: readonly Channel[], plan: GridPlan, run: GridRun, inputs: readonly GridInput[]): (Float64Array | null)[] {
   return channels.map((channel) => {
     if (channel.kind === "node") return run.nodes[channel.node]?.subarray(0, plan.steps + 1) ?? null;
-    if (channel.kind === "fixed") return channel.fixed === input.fixed ? input.value : null;
+    if (channel.kind === "fixed") return inputs.find((input) => input.fixed === channel.fixed)?.value ?? null;
     if (channel.kind === "outgoing") return run.outgoing[channel.end]!.subarray(plan.pad, plan.pad + plan.steps + 1);
     const delayed = run.incident[channel.end];
     if (delayed) return delayed.subarray(plan.pad, plan.pad + plan.steps + 1);
@@ -84,39 +72,34 @@ function interpolate(source: Float64Array, into: Float64Array, taps: readonly [n
   }
 }
 
-function clusterWorker(planned: PlannedCluster, input: GridInput, arriving: readonly Arriving[], outgoing: readonly Float64Array[], pad: number, nodes: readonly (Float64Array | null)[], still: Float64Array, scratch: Float64Array): Worker {
+function clusterWorker(
+  planned: PlannedCluster,
+  inputs: readonly GridInput[],
+  arriving: readonly Arriving[],
+  outgoing: readonly Float64Array[],
+  pad: number,
+  nodes: readonly (Float64Array | null)[],
+  still: Float64Array,
+  scratch: Float64Array,
+  tables: TableContext | undefined,
+): Worker {
   const { cluster, single, propagator } = planned;
-  const feeds = cluster.feeds.filter((feed) => feed.fixed === input.fixed);
-  if (single) {
-    let siemens = 0;
-    let farads = 0;
-    for (const feed of feeds) {
-      siemens += feed.siemens;
-      farads += feed.farads;
-    }
-    const drive = siemens === 0 && farads === 0 ? still : driveOf(input, siemens, farads);
-    return nodeWorker(single, cluster.ports, drive, arriving, outgoing, pad, nodes[cluster.nodes[0]!] ?? scratch);
-  }
-  if (propagator) return matrixWorker(planned, feeds, input, arriving, outgoing, pad, nodes);
-  return heldWorker(cluster.ports, input, arriving, outgoing, pad);
-}
-
-function driveOf(input: GridInput, siemens: number, farads: number): Float64Array {
-  const { length } = input.value;
-  const drive = workspace.take(length);
-  for (let n = 0; n < length; n++) drive[n] = siemens * input.value[n]! + farads * input.rate[n]!;
-  return drive;
+  if (single) return nodeWorker(single, cluster.ports, driveOf(cluster, 0, inputs) ?? still, arriving, outgoing, pad, nodes[cluster.nodes[0]!] ?? scratch);
+  if (propagator) return matrixWorker(planned, inputs, arriving, outgoing, pad, nodes, tables);
+  return heldWorker(cluster.ports, inputs, arriving, outgoing, pad);
 }
 
 /** Ends at fixed nodes. */
-function heldWorker(ports: readonly ClusterPort[], input: GridInput, arriving: readonly Arriving[], outgoing: readonly Float64Array[], pad: number): Worker {
+function heldWorker(ports: readonly ClusterPort[], inputs: readonly GridInput[], arriving: readonly Arriving[], outgoing: readonly Float64Array[], pad: number): Worker {
+  const held = ports.map((port) => heldOf(port, inputs));
   return (from, to) => {
-    for (const port of ports) {
-      const { samples, offset } = arriving[port.end]!;
-      const out = outgoing[port.end]!;
-      let factor = 0;
-      for (const held of port.held) if (held.fixed === input.fixed) factor += held.factor;
-      for (let n = from; n < to; n++) out[n + pad] = factor * input.value[n]! - samples[n + offset]!;
+    for (let k = 0; k < ports.length; k++) {
+      const { end } = ports[k]!;
+      const { samples, offset } = arriving[end]!;
+      const out = outgoing[end]!;
+      const volts = held[k];
+      if (volts) for (let n = from; n < to; n++) out[n + pad] = volts[n]! - samples[n + offset]!;
+      else for (let n = from; n < to; n++) out[n + pad] = -samples[n + offset]!;
     }
   };
 }
@@ -129,58 +112,3 @@ function nodeWorker(kept: NodeUpdate, ports: readonly ClusterPort[], drive: Floa
   return junctionWorker(kept, ports.map(wave), drive, pad, record);
 }
 
-function matrixWorker(
-  { cluster, propagator, atOnce }: PlannedCluster,
-  feeds: readonly { row: number; siemens: number; farads: number }[],
-  input: GridInput,
-  arriving: readonly Arriving[],
-  outgoing: readonly Float64Array[],
-  pad: number,
-  nodes: readonly (Float64Array | null)[],
-): Worker {
-  const { size, ports } = cluster;
-  const { p, q0, q1 } = propagator!;
-  const z = new Float64Array(size);
-  const carry = new Float64Array(size);
-  const current = new Float64Array(size);
-  const records = cluster.nodes.map((node) => nodes[node] ?? null);
-  const held = ports.map((port) => port.held.reduce((sum, { fixed, factor }) => (fixed === input.fixed ? sum + factor : sum), 0));
-  const isStatic = cluster.isStatic;
-  return (from, to) => {
-    for (let n = from; n < to; n++) {
-      current.fill(0);
-      for (const feed of feeds) current[feed.row] = current[feed.row]! + feed.siemens * input.value[n]! + feed.farads * input.rate[n]!;
-      for (const port of ports) {
-        const { samples, offset } = arriving[port.end]!;
-        const inflow = 2 * port.admittance * samples[n + offset]!;
-        if (port.node >= 0) current[port.node] = current[port.node]! + inflow;
-        if (port.second >= 0) current[port.second] = current[port.second]! + port.sign * inflow;
-      }
-      const answer = n === 0 && atOnce ? atOnce : q1;
-      for (let i = 0; i < size; i++) {
-        let sum = carry[i]!;
-        for (let j = 0; j < size; j++) sum += answer[i * size + j]! * current[j]!;
-        z[i] = sum;
-      }
-      if (!isStatic)
-        for (let i = 0; i < size; i++) {
-          let sum = 0;
-          for (let j = 0; j < size; j++) sum += p[i * size + j]! * z[j]! + q0[i * size + j]! * current[j]!;
-          carry[i] = sum;
-        }
-      for (let k = 0; k < ports.length; k++) {
-        const port = ports[k]!;
-        let v = held[k]! * input.value[n]!;
-        if (port.node >= 0) v += port.share * z[port.node]!;
-        if (port.second >= 0) v += port.secondShare * z[port.second]!;
-        const { samples, offset } = arriving[port.end]!;
-        const out = outgoing[port.end]!;
-        out[n + pad] = v - samples[n + offset]!;
-      }
-      for (let i = 0; i < records.length; i++) {
-        const record = records[i];
-        if (record) record[n] = z[i]!;
-      }
-    }
-  };
-}

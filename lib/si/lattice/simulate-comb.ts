@@ -36,7 +36,8 @@ function byTicks(circuit: Circuit, clusters: readonly Cluster[], channels: reado
   const plan = planGrid(circuit, clusters, tick, Math.floor(until / tick + 1e-9) * tick, circuit.lines.map((line) => Math.round(line.delay / tick)));
   const value = new Float64Array(plan.steps + 1);
   value[0] = 1;
-  const series = channelSeries(channels, plan, runGrid(plan, { fixed, value, rate: new Float64Array(plan.steps + 1) }, circuit.nodeCount, recordedNodes(channels)), { fixed, value });
+  const inputs = [{ fixed, value, rate: new Float64Array(plan.steps + 1) }];
+  const series = channelSeries(channels, plan, runGrid(plan, inputs, circuit.nodeCount, recordedNodes(channels)), inputs);
   const active: number[] = [];
   for (let n = 0; n <= plan.steps; n++) if (series.some((rises) => rises !== null && Math.abs(rises[n]!) > FLOOR)) active.push(n);
   return {

@@ -7,6 +7,7 @@ import { buildClusters } from "./clusters";
 import type { Waveforms } from "./comb-output";
 import type { Prepared } from "./prepared";
 import { simulateComb } from "./simulate-comb";
+import { simulateTables } from "./simulate-tables";
 import { simulateGrid } from "./simulate-grid";
 import type { Accuracy } from "./step-size";
 import { workspace } from "./workspace";
@@ -84,6 +85,7 @@ export function simulate(network: Network, options: SimulateOptions): Simulation
 
 function draw(prepared: Prepared): { waveforms: Waveforms; steps: number } {
   try {
+    if (prepared.circuit.elements.length > 0) return simulateTables(prepared);
     return (prepared.clusters.every((cluster) => cluster.isStatic) ? simulateComb(prepared) : null) ?? simulateGrid(prepared);
   } finally {
     workspace.endAll();

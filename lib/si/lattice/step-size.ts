@@ -1,4 +1,5 @@
 import { DomainError } from "../errors";
+import type { Pwl, Sine } from "../network/types";
 import { corners } from "../network/wave";
 import type { Circuit } from "./circuit";
 import type { Cluster } from "./clusters";
@@ -12,11 +13,11 @@ export interface StepChoice {
   delays: number[];
 }
 
-/** How finely things are resolved: curvature of charging, ramps between whole steps, a sine's period. */
-const FINENESS: Record<Accuracy, { curve: number; ramp: number; sine: number }> = {
-  live: { curve: 0.1, ramp: 1 / 30, sine: 1 / 64 },
-  standard: { curve: 0.05, ramp: 1 / 60, sine: 1 / 160 },
-  reference: { curve: 0.03, ramp: 1 / 160, sine: 1 / 400 },
+/** How finely things are resolved: curvature of charging, ramps between whole steps, a sine's period, a table's corners. */
+const FINENESS: Record<Accuracy, { curve: number; ramp: number; sine: number; table: number }> = {
+  live: { curve: 0.1, ramp: 1 / 30, sine: 1 / 64, table: 1 / 40 },
+  standard: { curve: 0.05, ramp: 1 / 60, sine: 1 / 160, table: 1 / 120 },
+  reference: { curve: 0.03, ramp: 1 / 160, sine: 1 / 400, table: 1 / 500 },
 };
 const MOST_STEPS = 1_000_000;
 /** A step may be this much finer than needed before an exact common step is given up. */
@@ -47,11 +48,17 @@ export function commonDelay(delays: readonly number[], least: number): number | 
   return measure;
 }
 
+/** Every wave that moves something: sources, and the weights of drivers with tables. */
+export function wavesOf(circuit: Circuit): (Pwl | Sine)[] {
+  const waves = circuit.fixed.flatMap(({ wave }) => (wave ? [wave] : []));
+  for (const { terms } of circuit.elements) for (const { weight } of terms) if (weight) waves.push(weight);
+  return waves;
+}
+
 /** Shortest moving piece of all sources, in straight ramps [s]; a sine counts with its share of a period. */
 export function shortestRamp(circuit: Circuit): number {
   let ramp = Infinity;
-  for (const { wave } of circuit.fixed) {
-    if (!wave) continue;
+  for (const wave of wavesOf(circuit)) {
     if (wave.kind === "sine") ramp = Math.min(ramp, 0.25 / wave.frequency);
     else
       for (let i = 1; i < wave.time.length; i++) {
@@ -73,7 +80,7 @@ export function chooseStep(circuit: Circuit, clusters: readonly Cluster[], until
   const ramp = shortestRamp(circuit);
   const delays = circuit.lines.map((line) => line.delay);
   const shortest = Math.min(Infinity, ...delays);
-  const wanted = asked ?? Math.min(curveStep(clusters, ramp, until, fineness.curve), sineStep(circuit, fineness.sine));
+  const wanted = asked ?? Math.min(curveStep(clusters, ramp, until, circuit.elements.length > 0 ? 0.7 * fineness.curve : fineness.curve), sineStep(circuit, fineness.sine), clusters.some((cluster) => cluster.isStatic && cluster.tables.length > 0) ? ramp * fineness.table : Infinity);
   const choice = delays.length === 0 ? { step: wanted, delays } : (wholeSteps(circuit, delays, wanted, ramp) ?? betweenSteps(delays, Math.min(asked ?? ramp * fineness.ramp, wanted, shortest / 2)));
   if (until / choice.step > MOST_STEPS) throw new DomainError(`The window of ${until} s takes more than a million steps at a delay of ${shortest} s; end it earlier or join the short sections.`, "until");
   return choice;
@@ -106,10 +113,12 @@ function wholeSteps(circuit: Circuit, delays: readonly number[], wanted: number,
 /** Of the next few divisions, the one whose step comes nearest to dividing the spans between corners. */
 function bestParts(circuit: Circuit, common: number, least: number): number {
   const spans: number[] = [];
-  for (const { wave } of circuit.fixed) {
-    if (wave?.kind !== "pwl") continue;
+  for (const wave of wavesOf(circuit)) {
+    if (wave.kind !== "pwl") continue;
     const found = corners(wave);
-    for (const corner of found.slice(1, 5)) spans.push(corner.time - found[0]!.time);
+    // Without tables each corner starts its own grid; with them, all share the one from t = 0.
+    const origin = circuit.elements.length > 0 ? 0 : (found[0]?.time ?? 0);
+    for (const corner of found.slice(0, 5)) if (corner.time > origin) spans.push(corner.time - origin);
   }
   let best = least;
   let bestMiss = Infinity;
