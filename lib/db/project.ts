@@ -168,10 +168,10 @@ async function writeProject(
   }
 }
 
+// Columns in the fields of a select from one table are written without their table, so the outer one is named here.
 const newest = (state: "draft" | "released") => sql<string | null>`(
-  select ${revision.letter} from ${revision}
-  where ${revision.projectId} = ${project.id} and ${revision.state} = ${state}
-  order by ${revision.createdAt} desc, ${revision.id} desc limit 1)`;
+  select r.letter from ${revision} r where r.project_id = "project"."id" and r.state = ${state}
+  order by r.created_at desc, r.id desc limit 1)`;
 
 const summary = {
   id: project.id,
@@ -184,9 +184,9 @@ const summary = {
   draftLetter: newest("draft"),
   releasedLetter: newest("released"),
   netCount: sql<number>`(
-    select count(*) from ${net} where ${net.revisionId} = (
-      select ${revision.id} from ${revision} where ${revision.projectId} = ${project.id}
-      order by ${revision.createdAt} desc, ${revision.id} desc limit 1))`,
+    select count(*) from ${net} n where n.revision_id = (
+      select r.id from ${revision} r where r.project_id = "project"."id"
+      order by r.created_at desc, r.id desc limit 1))`,
 };
 
 async function naming<T>(name: string, act: () => Promise<T>): Promise<T> {

@@ -172,8 +172,8 @@ export async function listReleases(actor: Actor, projectId: string) {
       title: release.title,
       releasedAt: release.releasedAt,
       releasedByName: sql<string | null>`(SELECT name FROM ${user} WHERE id = ${release.releasedBy})`,
-      recipients: sql<number>`(SELECT count(*) FROM ${releaseRecipient} WHERE release_id = ${release.id})`,
-      acknowledged: sql<number>`(SELECT count(*) FROM ${releaseRecipient} WHERE release_id = ${release.id} AND acknowledged_at IS NOT NULL)`,
+      recipients: sql<number>`(SELECT count(*) FROM ${releaseRecipient} WHERE release_id = "release"."id")`,
+      acknowledged: sql<number>`(SELECT count(*) FROM ${releaseRecipient} WHERE release_id = "release"."id" AND acknowledged_at IS NOT NULL)`,
     })
     .from(release)
     .where(and(eq(release.projectId, projectId), eq(release.teamId, actor.teamId)))

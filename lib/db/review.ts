@@ -34,7 +34,7 @@ export async function listFlags(actor: Actor, projectId: string): Promise<FlagVi
       flag,
       authorName: sql<string | null>`(SELECT name FROM ${user} WHERE id = ${flag.createdBy})`,
       assigneeName: sql<string | null>`(SELECT name FROM ${user} WHERE id = ${flag.assigneeUserId})`,
-      entryCount: sql<number>`(SELECT count(*) FROM ${flagEntry} WHERE flag_id = ${flag.id})`,
+      entryCount: sql<number>`(SELECT count(*) FROM ${flagEntry} WHERE flag_id = "flag"."id")`,
     })
     .from(flag)
     .where(and(eq(flag.projectId, projectId), eq(flag.teamId, actor.teamId)))
