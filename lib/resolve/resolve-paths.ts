@@ -94,7 +94,7 @@ function resolvePath(group: PathGroup, board: BoardIndex): ResolvedPath {
     termination: classTermination(netClass, board),
     flightTimeMax,
     spacing: board.si.orNull(netClass?.spacing ?? null, "length"),
-    missing: [...routeGaps(group, pins.drivers.length + pins.receivers.length), ...pairGaps(group, netClass)],
+    missing: [...routeGaps(group), ...pairGaps(group, netClass)],
     limits: board.limits.of(group.nets, netClass, flightTimeMax),
   };
   path.missing.push(...sections.missing, ...pins.missing, ...joined.missing);
@@ -147,7 +147,7 @@ function resolveNeighbours(group: PathGroup, board: BoardIndex): ResolvedPath["n
     }));
 }
 
-function routeGaps(group: PathGroup, pinCount: number): MissingInput[] {
+function routeGaps(group: PathGroup): MissingInput[] {
   const missing: MissingInput[] = [];
   for (const net of group.nets) {
     const input = `route of ${net.name}`;
@@ -158,7 +158,7 @@ function routeGaps(group: PathGroup, pinCount: number): MissingInput[] {
       });
     else if (net.topology.sections.length === 0 && net.topology.pins.length > 1)
       missing.push({ input, detail: `${net.name} has pins but no routed section.` });
-    else if (!net.topology.shapeKnown && pinCount > 2)
+    else if (!net.topology.shapeKnown && net.topology.pins.length > 2)
       missing.push({
         input: `branch lengths of ${net.name}`,
         detail: "Its length is known, but not how its receivers hang on the line. Import its sections.",

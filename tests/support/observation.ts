@@ -30,6 +30,7 @@ export function observation(over: Partial<Observation> = {}): Observation {
     sourceCrossing: 0.5e-9,
     settled: 1.9e-9,
     ringbackMargin: 1.3,
+    ringbackTime: null,
     ...over,
   };
 }

@@ -4,7 +4,7 @@ import { coupledBias, couplingTime, joinNodes } from "./coupling";
 import { dcLevels, type DcResistor } from "./levels";
 import { chainLines, type PathLine } from "./lines";
 import { NodeMap } from "./node-map";
-import { PathTrace } from "./trace";
+import { PathTrace, sourceResistors } from "./trace";
 import type { DriverModel, PathPin, ReceiverModel, ResolvedPath } from "./types";
 import { watchWindow } from "./window";
 
@@ -53,6 +53,8 @@ export class PathNetwork {
   private readonly loads: { part: LinearPart; farads: Record<DriverSpeed, number> }[] = [];
   private readonly ramp: { time: number[]; value: number[] };
   private readonly driver: DriverModel;
+  /** resistors between the driver and the main line [Ω] */
+  private readonly sourceSeries: number;
   private readonly driverNode: string;
   private readonly nodes: NodeMap;
 
@@ -66,6 +68,10 @@ export class PathNetwork {
     const listening = path.receivers.filter((pin) => pin.node !== driverPin.node && pin.receiver !== null);
     const delays = listening.map((pin) => trace.to(pin.node).delay ?? 0);
     this.delay = Math.max(0, ...delays);
+    const farthest = listening[delays.indexOf(this.delay)];
+    this.sourceSeries = farthest
+      ? sourceResistors(trace.to(farthest.node)).reduce((sum, part) => sum + (part.value ?? 0), 0)
+      : 0;
     const coupling = couplingTime(path, driver);
     this.nodes = joinNodes(path, coupling);
     const rails = new Map(path.rails.map((rail) => [this.nodes.find(rail.node), rail.volts]));
@@ -118,18 +124,10 @@ export class PathNetwork {
     return { network: this.network, until, windowIsBit: isBit, ramp };
   }
 
-  /** Source resistance as the line sees it: the driver with its series resistors [Ω]. */
-  seriesResistance(): number {
-    return this.path.parts.reduce(
-      (sum, part) => (part.role === "series" && part.kind === "R" ? sum + (part.value ?? 0) : sum),
-      0,
-    );
-  }
-
   private roundTripGain({ driver, impedance }: Corner): number {
     // Steps and branches keep a wave between them: no less than this where there are several lines.
     let gain = this.lines.length > 1 ? SEVERAL_LINES_GAIN : 0;
-    const source = this.driver.resistance[driver] + this.seriesResistance();
+    const source = this.driver.resistance[driver] + this.sourceSeries;
     for (const line of this.lines) {
       const z = line.impedance[impedance];
       gain = Math.max(gain, Math.abs((source - z) / (source + z)));
@@ -142,7 +140,7 @@ export class PathNetwork {
     for (const load of this.loads) farads += load.farads[driver];
     for (const part of this.network.parts)
       if (part.kind === "C" && part.name !== "load") farads += part.value;
-    const source = this.driver.resistance[driver] + this.seriesResistance();
+    const source = this.driver.resistance[driver] + this.sourceSeries;
     const henries = this.network.parts.reduce((sum, part) => (part.kind === "L" ? sum + part.value : sum), 0);
     const z = this.lines[0]?.impedance[impedance] ?? line;
     return farads * Math.max(source, z) + henries / z;

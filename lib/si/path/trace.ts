@@ -75,3 +75,14 @@ export function mainSection(route: Route, after = 0): PathSection | null {
       main = step.section;
   return main;
 }
+
+/** Resistors in series between the driver and the route's main line: what makes the source, with the driver. */
+export function sourceResistors(route: Route): PathPart[] {
+  const main = mainSection(route);
+  const found: PathPart[] = [];
+  for (const step of route.steps) {
+    if (step.kind === "section" && step.section === main) break;
+    if (step.kind === "part" && step.part.kind === "R" && step.part.value) found.push(step.part);
+  }
+  return found;
+}

@@ -136,6 +136,7 @@ function blankObservation(
     sourceCrossing: 0,
     settled: null,
     ringbackMargin: null,
+    ringbackTime: null,
   };
 }
 

@@ -55,6 +55,7 @@ export function observe(seen: Observation, probe: PathProbe, edge: Edge, wave: W
   seen.measCrossing = orNull(reading.measCrossing);
   seen.settled = orNull(reading.settled);
   seen.ringbackMargin = dc === null || Number.isNaN(reading.dipLevel) ? null : reading.dipLevel - seenAs(dc);
+  seen.ringbackTime = orNull(reading.dipTime);
   const share = Math.min(1, Math.max(0, meas / seen.driver.vdd));
   seen.sourceCrossing = wave.ramp * (rising ? share : 1 - share);
 }

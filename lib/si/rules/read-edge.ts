@@ -11,6 +11,8 @@ export interface EdgeReading {
   settled: number;
   /** lowest v after the first maximum that follows the far threshold's crossing; the last v without a drop; NaN: never across */
   dipLevel: number;
+  /** when that is [s] */
+  dipTime: number;
 }
 
 export interface EdgeLevels {
@@ -36,6 +38,7 @@ export function newReading(): EdgeReading {
     measCrossing: NaN,
     settled: NaN,
     dipLevel: NaN,
+    dipTime: NaN,
   };
 }
 
@@ -71,6 +74,7 @@ export function readEdge(
   let top = before;
   let dropped = false;
   let dip = before;
+  let dipTime = 0;
   for (let i = 1; i < time.length; i++) {
     let t = time[i] ?? 0;
     let v = voltage[i] ?? 0;
@@ -102,11 +106,15 @@ export function readEdge(
         dip = v;
       }
     } else if (dropped) {
-      if (v < dip) dip = v;
+      if (v < dip) {
+        dip = v;
+        dipTime = t;
+      }
     } else if (v > top) top = v;
     else if (v < top - epsilon) {
       dropped = true;
       dip = v;
+      dipTime = t;
     }
     before = v;
     beforeTime = t;
@@ -120,6 +128,7 @@ export function readEdge(
   into.measCrossing = measCrossing;
   into.settled = outside ? NaN : settled;
   into.dipLevel = !across ? NaN : dropped ? dip : before;
+  into.dipTime = dropped ? dipTime : NaN;
 }
 
 function crossing(t0: number, v0: number, t1: number, v1: number, level: number): number {

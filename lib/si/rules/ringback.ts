@@ -30,7 +30,7 @@ export const ringback: EdgeRule = {
   lacks: (_path, receiver) => lacksThresholds(receiver),
   limit: (path) => pathLimit(path, definition),
   read(seen) {
-    if (seen.ringbackMargin !== null) return { value: 1e3 * seen.ringbackMargin, time: null };
+    if (seen.ringbackMargin !== null) return { value: 1e3 * seen.ringbackMargin, time: seen.ringbackTime };
     const { vih, vil } = seen.receiver;
     if (vih === null || vil === null) return { value: null, time: null };
     const short = seen.edge === "rise" ? Math.min(0, seen.max - vih) : Math.min(0, vil - seen.min);

@@ -32,6 +32,8 @@ export interface Observation {
   settled: number | null;
   /** V beyond the far threshold at the worst of the dip back, mirrored on the falling edge; null without thresholds */
   ringbackMargin: number | null;
+  /** time of that dip; null where nothing dips */
+  ringbackTime: number | null;
 }
 
 /** One measured value; `fails` where there is none but the behaviour itself breaks the rule (never gets there). */

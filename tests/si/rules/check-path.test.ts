@@ -85,7 +85,7 @@ describe("the other rules through a simulation", () => {
     expect(margin).toMatchObject({ verdict: "fail", mechanism: "level", edge: "rise" });
     expect(margin.value).toBeCloseTo((100 * ((3.3 * 50) / 83 - 2)) / 3.3, 9);
     expect(margin.cause).toBe(
-      "R9 (50 Ω) against the 33 Ω driver of 3.30 V leaves a steady high level of 1.99 V at U2.1, 12 mV short of VIH of 2.00 V.",
+      "R9 (50 Ω) against the 33 Ω driver of 3.30 V leaves a steady high level of 1.99 V at U2.1, 12 mV short of VIH of 2.00 V; 0.33 V is asked for.",
     );
   });
   it("a 5 V driver on a 3.3 V input is a static level, not ringing", () => {
@@ -110,6 +110,14 @@ describe("the other rules through a simulation", () => {
     const over = finding(check(path), "overshoot");
     expect(over.mechanism).toBe("impedance step");
     expect(over.cause).toContain("The line steps from 50 Ω to 110 Ω on L3");
+  });
+  it("a resistor at the far end is no part of the source", () => {
+    const path = pointToPoint(driverModel(17, 1e-9), 50, 1e-9, {
+      sections: [section("U1.1", "R1.1", 50, 1e-9), section("R1.2", "U2.1", 50, 0.05e-9)],
+      parts: [{ reference: "R1", kind: "R", a: "R1.1", b: "R1.2", value: 33, role: "series" }],
+    });
+    const above = finding(check(path), "above-rail");
+    expect(above.cause).toContain("The driver is 17 Ω on a 50 Ω line and reflects −0.49");
   });
   it("falling edges are the mirror of rising ones", () => {
     const result = check(pointToPoint(driverModel(17, 1e-9), 50, 1e-9));

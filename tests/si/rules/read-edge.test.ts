@@ -15,7 +15,7 @@ function read(until: number, over: Partial<typeof levels> = {}, v = voltage) {
 describe("one pass over a rising wave (values by hand)", () => {
   it("finds extremes, crossings, settling and the dip", () => {
     const seen = read(10);
-    expect(seen).toMatchObject({ max: 1.3, maxTime: 2, min: 0, minTime: 0, dipLevel: 0.85 });
+    expect(seen).toMatchObject({ max: 1.3, maxTime: 2, min: 0, minTime: 0, dipLevel: 0.85, dipTime: 3 });
     expect(seen.nearCrossing).toBeCloseTo(0.2, 12);
     expect(seen.measCrossing).toBeCloseTo(0.5, 12);
     // last outside ± 0.1: 0.9 on the way up from 0.85 at 3 to 1 at 4

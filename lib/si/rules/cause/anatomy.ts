@@ -1,4 +1,4 @@
-import { mainSection, PathTrace, type Route } from "../../path/trace";
+import { mainSection, PathTrace, sourceResistors, type Route } from "../../path/trace";
 import type { DriverModel, PathPin, PathSection, ResolvedPath } from "../../path/types";
 import type { Corner } from "../types";
 
@@ -39,11 +39,10 @@ export function anatomy(
   if (!line) return null;
   const riseTime = driver.riseTime[corner.driver];
   const driverOhms = driver.resistance[corner.driver];
-  const seriesParts = route.steps.flatMap((step) =>
-    step.kind === "part" && step.part.kind === "R" && step.part.value
-      ? [{ reference: step.part.reference, ohms: step.part.value }]
-      : [],
-  );
+  const seriesParts = sourceResistors(route).map((part) => ({
+    reference: part.reference,
+    ohms: part.value ?? 0,
+  }));
   const source = seriesParts.reduce((sum, part) => sum + part.ohms, driverOhms);
   const end = endOf(path, route, line);
   const farads = path.receivers.reduce(

@@ -24,7 +24,7 @@ export function explain(rule: EdgeRule, seen: Observation): Explanation {
   const beyondRail = id === "above-rail" || id === "below-rail";
   if (beyondRail && isStaticLevel(seen)) return { mechanism: "static level", cause: staticLevel(seen) };
   if (rule.family === "level" || (id === "ringback" && isLevelShort(seen)))
-    return { mechanism: "level", cause: level(seen) };
+    return { mechanism: "level", cause: level(seen, askedVolts(rule, seen)) };
   const found = anatomy(seen.path, seen.driverPin, seen.driver, seen.receiverPin, seen.corner);
   const seenThere = consequence(id, seen);
   if (!found) return { mechanism: "driver mismatch", cause: capital(`${seenThere}.`) };
@@ -52,7 +52,7 @@ function reflector(mechanism: string, found: Anatomy, seen: Observation): string
   const end = found.end
     ? `the ${ohms(found.end.ohms)} end at ${seen.receiverPin.pin} returns ${reflection(found.rhoEnd)} of it`
     : `the open end at ${seen.receiverPin.pin} returns all of it`;
-  return `${source} on a ${ohms(found.line)} line and reflects ${reflection(found.rhoSource)}; ${end}`;
+  return `${source} on a ${ohms(found.line)} line and ${parts ? "reflect" : "reflects"} ${reflection(found.rhoSource)}; ${end}`;
 }
 
 function consequence(rule: string, seen: Observation): string {
@@ -98,7 +98,13 @@ function isLevelShort({ edge, high, low, receiver }: Observation): boolean {
     : receiver.vil !== null && low >= receiver.vil;
 }
 
-function level(seen: Observation): string {
+/** The clear voltage that the level rule asks for; null under other rules. */
+function askedVolts(rule: EdgeRule, { path, receiver, edge }: Observation): number | null {
+  const { limit } = rule.limit(path, receiver, edge);
+  return rule.family === "level" && limit !== null ? (limit / 100) * receiver.vdd : null;
+}
+
+function level(seen: Observation, asked: number | null): string {
   const { edge, high, low, receiver, receiverPin, driver, corner, path } = seen;
   const steady = edge === "rise" ? high : low;
   const threshold = edge === "rise" ? (receiver.vih ?? 0) : (receiver.vil ?? 0);
@@ -110,7 +116,9 @@ function level(seen: Observation): string {
     ? `${dividers.map((part) => `${part.reference} (${ohms(part.value ?? 0)})`).join(" and ")} against the ${ohms(driver.resistance[corner.driver])} driver of ${volts(driver.vdd)}`
     : `The ${volts(driver.vdd)} driver`;
   const name = `${edge === "rise" ? "VIH" : "VIL"} of ${volts(threshold)}`;
-  return `${why} leaves a steady ${edge === "rise" ? "high" : "low"} level of ${volts(steady)} at ${receiverPin.pin}, ${clear < 0 ? `${volts(-clear)} short of` : `${volts(clear)} clear of`} ${name}.`;
+  const stands = clear < 0 ? `${volts(-clear)} short of ${name}` : `${volts(clear)} clear of ${name}`;
+  const wanted = asked === null ? "" : `; ${volts(asked)} is asked for`;
+  return `${why} leaves a steady ${edge === "rise" ? "high" : "low"} level of ${volts(steady)} at ${receiverPin.pin}, ${stands}${wanted}.`;
 }
 
 function lateArrival(seen: Observation): string {
