@@ -250,6 +250,9 @@ export async function addClasses(
     bind("U5", "*", "receiver", "Logic input"),
     bind("U6", "*", "receiver", "Logic input"),
     bind("J*", "*", "receiver", "Logic input"),
+    // The large board has many of each device: told apart by part number.
+    { ...bind("*", "*", "driver", "Controller pin, medium drive"), partNumberPattern: "SSC-MCU-*" },
+    { ...bind("*", "*", "receiver", "Memory pin"), partNumberPattern: "SDR-*" },
   ]);
   const widths: DemoWidths = {};
   for (const entry of CLASSES) {
