@@ -10,9 +10,12 @@ import { commonDelay } from "./step-size";
 
 /** Most ticks × line ends for stepping through every tick; beyond, only the moments at which something arrives. */
 const MOST_TICKS = 40_000;
-const MOST_MOMENTS = { live: 4_000, standard: 12_000, reference: 60_000 };
-/** Waves below this share of a source step are dropped: 1e-13 a drop, thousands of drops stay below 1e-9. */
+/** Moments that are followed with nothing but rounding lost, and with small waves dropped. */
+const MOST_MOMENTS = { live: [2_000, 8_000], standard: [4_000, 20_000], reference: [20_000, 100_000] } as const;
+/** Waves below this share of a source step are dropped: thousands of drops stay below 1e-9 … */
 const FLOOR = 1e-13;
+/** … or, where echoes multiply, below 0.02 %: they add like noise. */
+const COARSE_FLOOR = 1e-6;
 
 /** Exact waveforms of a resistive network, or null where a source is a sine or the arrivals are too many. */
 export function simulateComb({ circuit, clusters, channels, rest, until, accuracy }: Prepared): { waveforms: Waveforms; steps: number } | null {
@@ -20,11 +23,12 @@ export function simulateComb({ circuit, clusters, channels, rest, until, accurac
   const delays = circuit.lines.map((line) => line.delay);
   const shortest = Math.min(until, ...delays);
   const tick = delays.length === 0 ? until : commonDelay(delays, (2 * until * delays.length) / MOST_TICKS);
+  const [exact, coarse] = MOST_MOMENTS[accuracy];
   const runs: CombRun[] = [];
   let steps = 0;
   for (const { fixed, corners } of sources) {
     if (!corners) return null;
-    const run = tick === null ? byMoments(circuit, clusters, channels, fixed, until, MOST_MOMENTS[accuracy]) : byTicks(circuit, clusters, channels, fixed, until, tick);
+    const run = tick === null ? (byMoments(circuit, clusters, channels, fixed, until, FLOOR, exact) ?? byMoments(circuit, clusters, channels, fixed, until, COARSE_FLOOR, coarse)) : byTicks(circuit, clusters, channels, fixed, until, tick);
     if (!run) return null;
     runs.push({ ...run, corners });
     steps += run.times.length;
@@ -46,7 +50,7 @@ function byTicks(circuit: Circuit, clusters: readonly Cluster[], channels: reado
   };
 }
 
-function byMoments(circuit: Circuit, clusters: readonly Cluster[], channels: readonly Channel[], fixed: number, until: number, most: number): Omit<CombRun, "corners"> | null {
+function byMoments(circuit: Circuit, clusters: readonly Cluster[], channels: readonly Channel[], fixed: number, until: number, floor: number, most: number): Omit<CombRun, "corners"> | null {
   const times: number[] = [];
   const rises: number[][] = channels.map(() => []);
   const ofNode = new Map<number, number[]>();
@@ -65,7 +69,7 @@ function byMoments(circuit: Circuit, clusters: readonly Cluster[], channels: rea
   channels.forEach((channel, c) => {
     if (channel.kind === "fixed" && channel.fixed === fixed) set(c, 1);
   });
-  const isWhole = runComb(circuit, combClusters(clusters), fixed, { until, floor: FLOOR, most }, ({ time, cluster: { cluster }, rise, incident, outgoing }) => {
+  const isWhole = runComb(circuit, combClusters(clusters), fixed, { until, floor, most }, ({ time, cluster: { cluster }, rise, incident, outgoing }) => {
     if (time !== times[times.length - 1]) times.push(time);
     cluster.nodes.forEach((node, i) => ofNode.get(node)?.forEach((c) => set(c, rise[i]!)));
     if (ofEnd.size > 0)

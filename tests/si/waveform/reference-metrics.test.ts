@@ -37,6 +37,16 @@ function tolerance(metric: string, wanted: number, swing: number, edge: EdgeMetr
   return Math.max(own, 2e-3 * Math.abs(wanted));
 }
 
+/** Is the published waveform there within 0.2 % of the swing of its peak? */
+function isAsHigh({ t_ps, v }: { t_ps: number[]; v: number[] }, at: number, edge: EdgeMetrics): boolean {
+  const sign = edge.edge === "rise" ? 1 : -1;
+  const i = Math.max(1, t_ps.findIndex((t) => t >= at));
+  const share = (at - t_ps[i - 1]!) / (t_ps[i]! - t_ps[i - 1]! || 1);
+  const there = v[i - 1]! + share * (v[i]! - v[i - 1]!);
+  const peak = sign * edge.v_post_ss + (edge.overshoot_V as number);
+  return sign * there > peak - 2e-3 * Math.abs(edge.v_post_ss - edge.v_pre_ss);
+}
+
 const cases = [...referenceCases("A"), ...referenceCases("B")].filter((entry) => !entry.circuit.sections.some((section) => (section.kind as string) === "rlc_line"));
 
 function faults(entry: (typeof cases)[number], time: Float64Array, voltages: Record<string, Float64Array>): string[] {
@@ -53,6 +63,8 @@ function faults(entry: (typeof cases)[number], time: Float64Array, voltages: Rec
         if (edge.ill_conditioned.includes(metric) || !(metric in edge)) continue;
         const wanted = edge[metric] as number | boolean | null;
         const got = of(measured);
+        // Of two peaks of one height either may be the highest.
+        if (metric === "t_peak_ps" && typeof got === "number" && isAsHigh(entry.waveforms[name]!, from + got, edge)) continue;
         const ok = typeof wanted === "number" && typeof got === "number" ? Math.abs(wanted - got) <= tolerance(metric, wanted, high - low, edge) : wanted === got;
         if (!ok) found.push(`${name} ${edge.edge} ${metric}: ${String(got)} instead of ${String(wanted)}`);
       }
