@@ -4,6 +4,9 @@ import type { GoodRow, ListField, ListFormat, RowProblem } from "./list-field";
 import { listFormats, type ListRows } from "./list-formats";
 import { MappedRow } from "./row-cells";
 
+/** Rows read before others get a turn. */
+const ROWS_A_TURN = 500;
+
 export interface ListPreview<T> {
   kind: ListKind;
   /** Rows below the header that are not blank: good + bad, none lost. */
@@ -35,6 +38,31 @@ export function previewTable<K extends ListKind>(
   table: DelimitedTable,
   mapping: ListMapping & { kind: K },
 ): ListPreview<ListRows[K]> {
+  const steps = previewSteps(table, mapping);
+  for (;;) {
+    const step = steps.next();
+    if (step.done) return step.value;
+  }
+}
+
+/** The same in turns, for a thread that others wait for. `rest` is called between them. */
+export async function previewInTurns<K extends ListKind>(
+  table: DelimitedTable,
+  mapping: ListMapping & { kind: K },
+  rest: () => Promise<void>,
+): Promise<ListPreview<ListRows[K]>> {
+  const steps = previewSteps(table, mapping);
+  for (;;) {
+    const step = steps.next();
+    if (step.done) return step.value;
+    await rest();
+  }
+}
+
+function* previewSteps<K extends ListKind>(
+  table: DelimitedTable,
+  mapping: ListMapping & { kind: K },
+): Generator<void, ListPreview<ListRows[K]>> {
   const format: ListFormat<ListRows[K]> = listFormats[mapping.kind];
   const fields = new Map(format.fields.map((field) => [field.id, field]));
   const headerRow = mapping.headerRow ?? 0;
@@ -46,7 +74,8 @@ export function previewTable<K extends ListKind>(
   const duplicates: { row: number; firstRow: number; text: string }[] = [];
   const seen = new Map<string, GoodRow<ListRows[K]>>();
   let badRows = 0;
-  for (const row of rows) {
+  for (const [index, row] of rows.entries()) {
+    if (index % ROWS_A_TURN === ROWS_A_TURN - 1) yield;
     const found = readRow(row, mapping, fields, format, headerWidth, seen);
     if (found.problems.length > 0) {
       badRows++;
@@ -55,11 +84,7 @@ export function previewTable<K extends ListKind>(
     }
     good.push(found.row);
     if (found.row.duplicateOf !== null)
-      duplicates.push({
-        row: row.row,
-        firstRow: found.row.duplicateOf,
-        text: row.cells.join(" ").slice(0, 120),
-      });
+      duplicates.push({ row: row.row, firstRow: found.row.duplicateOf, text: row.cells.join(" ").slice(0, 120) });
   }
   return {
     kind: mapping.kind,
