@@ -10,11 +10,13 @@ import { commonDelay } from "./step-size";
 
 /** Most ticks × line ends for stepping through every tick; beyond, only the moments at which something arrives. */
 const MOST_TICKS = 40_000;
-/** Moments that are followed with nothing but rounding lost, and with small waves dropped. */
-const MOST_MOMENTS = { live: [2_000, 8_000], standard: [4_000, 20_000], reference: [20_000, 100_000] } as const;
+/** Moments that are followed with nothing but rounding lost; beyond, the grid is quicker and near enough. */
+const MOST_MOMENTS = { live: 1_500, standard: 3_000, reference: 20_000 } as const;
+/** A jump keeps its sharpness through every echo, which a grid between whole steps would not; so its echoes are followed further. */
+const MOST_OF_A_JUMP = 60_000;
 /** Waves below this share of a source step are dropped: thousands of drops stay below 1e-9 … */
 const FLOOR = 1e-13;
-/** … or, where echoes multiply, below 0.02 %: they add like noise. */
+/** … or, where the echoes of a jump multiply, below 0.02 %: they add like noise. */
 const COARSE_FLOOR = 1e-6;
 
 /** Exact waveforms of a resistive network, or null where a source is a sine or the arrivals are too many. */
@@ -23,12 +25,13 @@ export function simulateComb({ circuit, clusters, channels, rest, until, accurac
   const delays = circuit.lines.map((line) => line.delay);
   const shortest = Math.min(until, ...delays);
   const tick = delays.length === 0 ? until : commonDelay(delays, (2 * until * delays.length) / MOST_TICKS);
-  const [exact, coarse] = MOST_MOMENTS[accuracy];
+  const most = MOST_MOMENTS[accuracy];
   const runs: CombRun[] = [];
   let steps = 0;
   for (const { fixed, corners } of sources) {
     if (!corners) return null;
-    const run = tick === null ? (byMoments(circuit, clusters, channels, fixed, until, FLOOR, exact) ?? byMoments(circuit, clusters, channels, fixed, until, COARSE_FLOOR, coarse)) : byTicks(circuit, clusters, channels, fixed, until, tick);
+    let run = tick === null ? byMoments(circuit, clusters, channels, fixed, until, FLOOR, most) : byTicks(circuit, clusters, channels, fixed, until, tick);
+    if (!run && corners.some((corner) => corner.jump !== 0)) run = byMoments(circuit, clusters, channels, fixed, until, COARSE_FLOOR, MOST_OF_A_JUMP);
     if (!run) return null;
     runs.push({ ...run, corners });
     steps += run.times.length;

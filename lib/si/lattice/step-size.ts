@@ -83,7 +83,7 @@ export function chooseStep(circuit: Circuit, clusters: readonly Cluster[], until
   const wanted = asked ?? Math.min(curveStep(clusters, ramp, until, circuit.elements.length > 0 ? 0.7 * fineness.curve : fineness.curve), sineStep(circuit, fineness.sine), clusters.some((cluster) => cluster.isStatic && cluster.tables.length > 0) ? ramp * fineness.table : Infinity);
   // Where nothing rounds the corners off, they must be kept by the step alone.
   const sharp = clusters.every((cluster) => cluster.isStatic);
-  const choice = delays.length === 0 ? { step: wanted, delays } : (wholeSteps(circuit, delays, wanted, ramp) ?? betweenSteps(delays, Math.min(asked ?? (sharp ? 0.4 : 1) * fineness.ramp * ramp, wanted, shortest / 2)));
+  const choice = delays.length === 0 ? { step: wanted, delays } : (wholeSteps(circuit, delays, wanted, ramp) ?? betweenSteps(delays, Math.min(asked ?? (sharp ? 0.16 : 1) * fineness.ramp * ramp, wanted, shortest / 2)));
   if (until / choice.step > MOST_STEPS) throw new DomainError(`The window of ${until} s takes more than a million steps at a delay of ${shortest} s; end it earlier or join the short sections.`, "until");
   return choice;
 }
