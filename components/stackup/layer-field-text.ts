@@ -1,0 +1,90 @@
+import { stackupLayer, type StackupLayerDoc } from "@/lib/schemas/stackup";
+import { convert, Decimal, formatQuantity, parseQuantity, type Quantity } from "@/lib/si/units";
+
+export type LengthField = "thickness" | "baseFoil" | "plating" | "etch" | "roughness" | "maskOverTrace";
+export type NumberField = "tolerancePercent" | "coveragePercent" | "dk" | "df";
+export type WordField = "name" | "material" | "planeNet";
+export type LayerField = LengthField | NumberField | WordField | "dkFrequency";
+
+const LENGTHS: ReadonlySet<string> = new Set<LengthField>([
+  "thickness",
+  "baseFoil",
+  "plating",
+  "etch",
+  "roughness",
+  "maskOverTrace",
+]);
+const WORDS: ReadonlySet<string> = new Set<WordField>(["name", "material", "planeNet"]);
+
+export const fieldNames: Record<LayerField, string> = {
+  name: "name",
+  material: "material",
+  thickness: "thickness",
+  tolerancePercent: "tolerance",
+  dk: "Dk",
+  df: "Df",
+  dkFrequency: "frequency of Dk and Df",
+  baseFoil: "base foil",
+  plating: "plating",
+  coveragePercent: "copper coverage",
+  etch: "etch",
+  roughness: "roughness",
+  maskOverTrace: "mask over trace",
+  planeNet: "net",
+};
+
+/**
+ * The value that a typed text gives a field, checked by the shared schema.
+ * @param unit  of a bare length
+ * @throws Error with one sentence that says what is wrong and what to write
+ */
+export function readLayerField(field: LayerField, text: string, unit: string): Partial<StackupLayerDoc> {
+  const value = valueOf(field, text, unit);
+  const parsed = stackupLayer.shape[field].safeParse(value);
+  if (!parsed.success)
+    throw new Error(parsed.error.issues[0]?.message ?? "This is not a value for this field.");
+  return { [field]: parsed.data };
+}
+
+/** What the field holds while one types in it: the value as it was typed. */
+export function typedText(layer: StackupLayerDoc, field: LayerField): string {
+  const value = layer[field];
+  if (value === null) return "";
+  return typeof value === "string" ? value : formatQuantity(value);
+}
+
+/** What the field shows otherwise: lengths in the reader's unit, foils by their weight. */
+export function shownText(layer: StackupLayerDoc, field: LayerField, unit: string): string {
+  const value = layer[field];
+  if (value === null) return "";
+  if (typeof value !== "string") return LENGTHS.has(field) ? shownLength(value, unit) : formatQuantity(value);
+  return value !== "" && field.endsWith("Percent") ? `${value} %` : value;
+}
+
+export function shownLength(value: Quantity, unit: string): string {
+  if (value.unit === unit || value.unit === "oz" || value.unit === "g/m²") return formatQuantity(value);
+  const converted = convert(value, unit);
+  const number = new Decimal(converted.value).toSignificantDigits(5).toString();
+  return formatQuantity({ value: number, unit: converted.unit });
+}
+
+function valueOf(field: LayerField, text: string, unit: string): unknown {
+  const typed = text.trim();
+  if (WORDS.has(field)) return typed;
+  if (typed === "") return null;
+  if (LENGTHS.has(field)) return parseQuantity(typed, "length", unit);
+  if (field === "dkFrequency") return parseQuantity(typed, "frequency", "GHz");
+  const number = typed.replace(/\s*%$/, "").replace(",", ".");
+  if (!/^[+-]?(\d+(\.\d*)?|\.\d+)(e[+-]?\d{1,2})?$/i.test(number))
+    throw new Error(
+      `'${typed.slice(0, 40)}' is not a number. Write one such as ${EXAMPLES[field as NumberField]}.`,
+    );
+  return number;
+}
+
+const EXAMPLES: Record<NumberField, string> = {
+  tolerancePercent: "10 %",
+  coveragePercent: "40 %",
+  dk: "4.2",
+  df: "0.018",
+};

@@ -1,0 +1,107 @@
+"use client";
+
+import { useCallback, useEffect, useRef, useState } from "react";
+
+export type SaveState = "saved" | "waiting" | "saving" | "failed" | "blocked";
+
+interface Options {
+  /** What would be saved, as text that differs when it differs. */
+  content: string;
+  /** True where it must not be saved as it is. */
+  blocked: boolean;
+  /** Saves what is on screen now. */
+  save: () => Promise<void>;
+  /** Quiet time before a save [ms] */
+  delay?: number;
+}
+
+export interface Autosave {
+  state: SaveState;
+  error: unknown;
+  /** Saves at once what waits; true when nothing is left to save. */
+  flush: () => Promise<boolean>;
+  /** Tries again what failed. */
+  retry: () => void;
+  /** Says that this content is what the server has. */
+  settle: (content: string) => void;
+}
+
+/** Saves a document a moment after its last change, one request at a time, and never loses the latest state. */
+export function useAutosave({ content, blocked, save, delay = 700 }: Options): Autosave {
+  const [saved, setSaved] = useState(content);
+  const [busy, setBusy] = useState(false);
+  const [failure, setFailure] = useState<{ content: string; error: unknown } | null>(null);
+  const latest = useRef({ content, blocked, save, saved });
+  const running = useRef<Promise<boolean> | null>(null);
+  useEffect(() => {
+    latest.current = { content, blocked, save, saved };
+  });
+
+  const flush = useCallback(async (): Promise<boolean> => {
+    if (running.current) await running.current;
+    const { content: sending, blocked: held, save: act, saved: known } = latest.current;
+    if (sending === known) return true;
+    if (held) return false;
+    const work = (async () => {
+      setBusy(true);
+      try {
+        await act();
+        latest.current.saved = sending;
+        setSaved(sending);
+        setFailure(null);
+        return true;
+      } catch (error) {
+        setFailure({ content: sending, error });
+        return false;
+      } finally {
+        running.current = null;
+        setBusy(false);
+      }
+    })();
+    running.current = work;
+    return work;
+  }, []);
+
+  const dirty = content !== saved;
+  // The same content is not sent again by itself: it failed, and somebody has to say what shall happen.
+  const failed = failure !== null && failure.content === content && dirty;
+  const conflicting = failure !== null && dirty && isConflict(failure.error);
+  useEffect(() => {
+    if (!dirty || blocked || busy || failed || conflicting) return;
+    const timer = setTimeout(() => void flush(), delay);
+    return () => clearTimeout(timer);
+  }, [content, dirty, blocked, busy, failed, conflicting, delay, flush]);
+
+  useEffect(() => {
+    if (!dirty) return;
+    const warn = (event: BeforeUnloadEvent) => event.preventDefault();
+    window.addEventListener("beforeunload", warn);
+    return () => window.removeEventListener("beforeunload", warn);
+  }, [dirty]);
+
+  const retry = useCallback(() => {
+    setFailure(null);
+    void flush();
+  }, [flush]);
+  const settle = useCallback((settled: string) => {
+    latest.current.saved = settled;
+    setSaved(settled);
+    setFailure(null);
+  }, []);
+
+  const state: SaveState = busy
+    ? "saving"
+    : !dirty
+      ? "saved"
+      : blocked
+        ? "blocked"
+        : failed || conflicting
+          ? "failed"
+          : "waiting";
+  return { state, error: state === "failed" ? (failure?.error ?? null) : null, flush, retry, settle };
+}
+
+/** Only its maker decides between two versions: further typing must not. */
+function isConflict(error: unknown): boolean {
+  return typeof error === "object" && error !== null && "isConflict" in error && error.isConflict === true;
+}
