@@ -1,5 +1,4 @@
 import { EngineError } from "../errors";
-import { simulate } from "../lattice/simulate";
 import { PathNetwork } from "../path/network";
 import { cannotSimulate } from "../path/simulable";
 import type { PathPin, ResolvedPath } from "../path/types";
@@ -9,6 +8,7 @@ import { observe } from "./observe";
 import { groupProblems, pathVerdict } from "./problems";
 import type { EdgeRule, Missing, Observation } from "./rule";
 import { Tally } from "./tally";
+import { watch } from "./watch";
 import type { CheckContext, Corner, CornerValue, Finding, PathResult, RuleDefinition } from "./types";
 
 /**
@@ -80,9 +80,10 @@ function simulateDriver(
       const lacks = tally.rule.lacks(path, probe.receiver);
       if (lacks) tally.lack(lacks);
     }
+  let simulations = 0;
   for (const corner of corners) {
-    const { network, until, windowIsBit, ramp } = prepared.at(corner);
-    const { time, voltage } = simulate(network, { until });
+    const { time, voltage, until, windowIsBit, ramp, runs } = watch(prepared, corner, path.bitTime);
+    simulations += runs;
     const seen = blankObservation(path, pin, corner, until, windowIsBit);
     for (const probe of prepared.probes) {
       const wave = voltage[probe.pin.pin];
@@ -102,7 +103,7 @@ function simulateDriver(
       }
     }
   }
-  return corners.length;
+  return simulations;
 }
 
 function blankObservation(

@@ -3,6 +3,7 @@ import type { ResolvedPath } from "../path/types";
 import { driverSpeeds } from "./corners";
 import { pathLimit, type StaticRule } from "./rule";
 import { number, picoseconds } from "./words";
+import { PULL } from "./pulls";
 import type { RuleDefinition } from "./types";
 
 const definition: RuleDefinition = {
@@ -18,9 +19,6 @@ const definition: RuleDefinition = {
   enabledByDefault: true,
   source: "Common practice, no source.",
 };
-
-/** End resistors of more than this many line impedances end nothing: pulls. */
-const PULL = 5;
 
 /**
  * One-way delay from the driver to its farthest receiver ÷ 10–90 % rise time [1], at each driver speed; the fast edge

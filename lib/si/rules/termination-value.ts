@@ -2,6 +2,7 @@ import { mainSection, PathTrace, type Route } from "../path/trace";
 import type { PathPart, PathPin, ResolvedPath } from "../path/types";
 import { pathLimit, type Missing, type StaticReading, type StaticRule } from "./rule";
 import { ohms, picoseconds } from "./words";
+import { PULL } from "./pulls";
 import type { RuleDefinition } from "./types";
 
 const definition: RuleDefinition = {
@@ -18,8 +19,6 @@ const definition: RuleDefinition = {
   source: "Common practice, no source.",
 };
 
-/** End resistors of more than this many line impedances are pulls, not terminations. */
-const PULL = 5;
 /** Below this share of the fast edge a line needs no resistor: one sixth, as in `critical-length`. */
 const SHORT = 1 / 6;
 

@@ -101,6 +101,21 @@ describe("the other rules through a simulation", () => {
       finding(check(pointToPoint(driverModel(8, 1e-9), 50, 1e-9, { bitTime: 100e-9 })), "settling").verdict,
     ).toBe("pass");
   });
+  it("a stub that rings longer than estimated is watched until it settles, not failed", () => {
+    const path = pointToPoint(driverModel(48, 0.3e-9), 50, 1e-9, { bitTime: 400e-9 });
+    const [pin] = path.receivers;
+    if (!pin) throw new Error("the fixture receives");
+    path.sections = [
+      section("U1.1", "v", 50, 0.1e-9),
+      section("v", "U2.1", 50, 0.8e-9),
+      section("v", "U3.1", 50, 0.75e-9),
+      section("v", "U4.1", 50, 0.9e-9),
+    ];
+    path.receivers.push({ ...pin, pin: "U3.1", node: "U3.1" }, { ...pin, pin: "U4.1", node: "U4.1" });
+    const settled = finding(check(path), "settling");
+    expect(settled.value).not.toBeNull();
+    expect(settled.verdict).toBe("pass");
+  });
   it("a step on the way is named where it reflects more than the driver", () => {
     const path = series(33);
     path.sections = [

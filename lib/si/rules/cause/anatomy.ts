@@ -1,9 +1,8 @@
 import { mainSection, PathTrace, sourceResistors, type Route } from "../../path/trace";
 import type { DriverModel, PathPin, PathSection, ResolvedPath } from "../../path/types";
+import { PULL } from "../pulls";
 import type { Corner } from "../types";
 
-/** Pulls are no end: above this many line impedances. */
-const PULL = 5;
 /** A piece shorter than this share of the rise time does not act as a step or a branch. */
 const SHORT = 0.1;
 
