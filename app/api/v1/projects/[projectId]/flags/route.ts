@@ -1,4 +1,5 @@
 import { route } from "@/lib/auth/route";
+import { getProject } from "@/lib/db/project";
 import { listFlags, raiseFlag, subjectTitle } from "@/lib/db/review";
 import { flagInput } from "@/lib/schemas/review";
 import { projectParams } from "@/lib/schemas/route-params";
@@ -7,7 +8,10 @@ import { notifyAssignee } from "./notify-assignee";
 export const GET = route({
   access: "project:read",
   params: projectParams,
-  handler: async ({ actor, params }) => ({ flags: await listFlags(actor, params.projectId) }),
+  handler: async ({ actor, params }) => {
+    await getProject(actor, params.projectId);
+    return { flags: await listFlags(actor, params.projectId) };
+  },
 });
 
 export const POST = route({

@@ -1,4 +1,5 @@
 import { route } from "@/lib/auth/route";
+import { getProject } from "@/lib/db/project";
 import { listReleases } from "@/lib/db/release";
 import { makeRelease } from "@/lib/jobs/make-release";
 import { releaseInput } from "@/lib/schemas/release";
@@ -7,7 +8,10 @@ import { projectParams } from "@/lib/schemas/route-params";
 export const GET = route({
   access: "release:read",
   params: projectParams,
-  handler: async ({ actor, params }) => ({ releases: await listReleases(actor, params.projectId) }),
+  handler: async ({ actor, params }) => {
+    await getProject(actor, params.projectId);
+    return { releases: await listReleases(actor, params.projectId) };
+  },
 });
 
 export const POST = route({

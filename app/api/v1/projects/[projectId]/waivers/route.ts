@@ -1,5 +1,6 @@
 import { z } from "zod";
 import { route } from "@/lib/auth/route";
+import { getProject } from "@/lib/db/project";
 import { getRun } from "@/lib/db/run";
 import { grantWaiver, listWaivers } from "@/lib/db/waiver";
 import { id } from "@/lib/schemas/common";
@@ -11,6 +12,7 @@ export const GET = route({
   params: projectParams,
   query: z.object({ run: id.optional() }),
   handler: async ({ actor, params, query }) => {
+    await getProject(actor, params.projectId);
     const run = query.run ? await getRun(actor, params.projectId, query.run) : null;
     return { waivers: await listWaivers(actor, params.projectId, run) };
   },
