@@ -14,6 +14,7 @@ export default defineConfig({
     include: ["tests/**/*.test.{ts,tsx}"],
     exclude: ["tests/e2e/**", "tests/**/*.long.test.ts", "node_modules/**"],
     setupFiles: ["tests/support/setup.ts"],
+    globalSetup: ["tests/support/global-setup.ts"],
     pool: "forks",
     maxWorkers: 2,
     testTimeout: 60_000,

@@ -1,15 +1,19 @@
 import "server-only";
-import { and, asc, desc, eq, inArray, lt, notInArray, or, sql } from "drizzle-orm";
+import { and, asc, desc, eq, inArray, lt, notInArray, notLike, or, sql } from "drizzle-orm";
 import { can, type Actor } from "@/lib/schemas/actor";
 import { NotFoundError, RefusedError } from "@/lib/schemas/errors";
+import type { ProblemEntry, SelectorEntry } from "@/lib/schemas/problem-list";
 import { recordAudit } from "./audit";
 import { getDb } from "./client";
 import { now } from "./clock";
 import { newId } from "./ids";
-import { finding, net, pathResult, problem, project, revision, run } from "./schema";
+import { finding, net, pathResult, problem, project, revision, run, user } from "./schema";
 
 /** How long a process may be silent before another takes its run over. */
 export const LEASE_MS = 15_000;
+
+/** Results of controlled lines stand beside those of paths, and are not counted as paths. */
+const LINE_PATTERN = "line %";
 
 export type RunRow = typeof run.$inferSelect;
 export type PathResultRow = typeof pathResult.$inferSelect;
@@ -65,16 +69,23 @@ export async function getRun(actor: Actor, projectId: string, runId: string): Pr
 }
 
 /** Newest first. */
-export async function listRuns(actor: Actor, projectId: string): Promise<(Omit<RunRow, "inputChunks"> & { letter: string })[]> {
+export async function listRuns(
+  actor: Actor,
+  projectId: string,
+): Promise<(Omit<RunRow, "inputChunks"> & { letter: string; startedByName: string | null })[]> {
   if (!can(actor, "project:read")) throw new NotFoundError("The project");
   const db = await getDb();
   const rows = await db
-    .select({ run, letter: revision.letter })
+    .select({
+      run,
+      letter: revision.letter,
+      startedByName: sql<string | null>`(SELECT name FROM ${user} WHERE id = ${run.createdBy})`,
+    })
     .from(run)
     .innerJoin(revision, eq(revision.id, run.revisionId))
     .where(and(eq(run.projectId, projectId), eq(run.teamId, actor.teamId)))
     .orderBy(desc(run.number));
-  return rows.map(({ run: { inputChunks: _chunks, ...row }, letter }) => ({ ...row, letter }));
+  return rows.map(({ run: { inputChunks: _chunks, ...row }, ...more }) => ({ ...row, ...more }));
 }
 
 /** The newest run of a revision, or null. */
@@ -171,12 +182,19 @@ export async function saveBatch(runId: string, batch: CheckedBatch): Promise<boo
   const progress = db
     .update(run)
     .set({
-      done: sql`(SELECT count(*) FROM ${pathResult} WHERE run_id = ${runId})`,
+      done: sql`(SELECT count(*) FROM ${pathResult} WHERE run_id = ${runId} AND path_id NOT LIKE ${LINE_PATTERN})`,
       leaseUntil: now() + LEASE_MS,
     })
     .where(and(eq(run.id, runId), eq(run.state, "running")))
     .returning({ id: run.id });
+  const ofRun = batch.results.map((row) => row.pathId);
+  // A path that is judged twice, by a process that was thought dead and by its successor, is held once.
+  const cleared = slices(ofRun, 500).flatMap((ids) => [
+    db.delete(finding).where(and(eq(finding.runId, runId), inArray(finding.pathId, ids))),
+    db.delete(problem).where(and(eq(problem.runId, runId), inArray(problem.pathId, ids))),
+  ]);
   const inserts = [
+    ...cleared,
     ...slices(batch.results, 200).map((rows) => db.insert(pathResult).values(rows).onConflictDoNothing()),
     ...slices(batch.problems, 200).map((rows) => db.insert(problem).values(rows).onConflictDoNothing()),
     ...slices(batch.findings, 200).map((rows) => db.insert(finding).values(rows)),
@@ -214,7 +232,7 @@ export async function countVerdicts(runId: string): Promise<Record<string, numbe
   const rows = await db
     .select({ verdict: pathResult.verdict, count: sql<number>`count(*)` })
     .from(pathResult)
-    .where(eq(pathResult.runId, runId))
+    .where(and(eq(pathResult.runId, runId), notLike(pathResult.pathId, LINE_PATTERN)))
     .groupBy(pathResult.verdict);
   return Object.fromEntries(rows.map((row) => [row.verdict, row.count]));
 }
@@ -228,6 +246,69 @@ export async function listProblems(actor: Actor, projectId: string, runId: strin
     .from(problem)
     .where(and(eq(problem.runId, runId), eq(problem.teamId, actor.teamId)))
     .orderBy(asc(problem.verdict), asc(problem.worstShare), asc(problem.pathName));
+}
+
+/** What the table of problems shows of one: with its path's driver and layers, and the worst finding's numbers. */
+export async function listProblemRows(actor: Actor, projectId: string, runId: string): Promise<ProblemEntry[]> {
+  await getRun(actor, projectId, runId);
+  const db = await getDb();
+  return db
+    .select({
+      pathId: problem.pathId,
+      path: problem.pathName,
+      className: problem.className,
+      driver: pathResult.driver,
+      layers: pathResult.layers,
+      mechanism: problem.mechanism,
+      title: problem.title,
+      verdict: problem.verdict,
+      severity: problem.severity,
+      rule: problem.worstRule,
+      value: finding.value,
+      limit: finding.limit,
+      unit: finding.unit,
+      margin: problem.worstMargin,
+      share: problem.worstShare,
+      corner: problem.worstCorner,
+      failsAt: problem.failsAt,
+      ofCorners: problem.ofCorners,
+      failsAtNominal: problem.failsAtNominal,
+      missing: problem.missing,
+      assumed: problem.restsOnAssumed,
+    })
+    .from(problem)
+    .innerJoin(pathResult, and(eq(pathResult.runId, problem.runId), eq(pathResult.pathId, problem.pathId)))
+    .leftJoin(
+      finding,
+      sql`${finding.id} = (SELECT f.id FROM ${finding} AS f WHERE f.run_id = ${problem.runId} AND f.path_id = ${problem.pathId}
+        AND f.mechanism = ${problem.mechanism} AND f.rule = ${problem.worstRule} AND f.counts AND f.margin IS NOT NULL
+        ORDER BY f.margin LIMIT 1)`,
+    )
+    .where(and(eq(problem.runId, runId), eq(problem.teamId, actor.teamId)))
+    .orderBy(asc(problem.verdict), asc(problem.worstShare), asc(problem.pathName));
+}
+
+/** Findings of selectors, which choose what to look at and count for nothing once simulation has judged the path. */
+export async function listSelectorRows(actor: Actor, projectId: string, runId: string): Promise<SelectorEntry[]> {
+  await getRun(actor, projectId, runId);
+  const db = await getDb();
+  return db
+    .select({
+      pathId: finding.pathId,
+      path: pathResult.name,
+      className: pathResult.className,
+      rule: finding.rule,
+      verdict: finding.verdict,
+      value: finding.value,
+      limit: finding.limit,
+      unit: finding.unit,
+      margin: finding.margin,
+      missing: finding.missing,
+    })
+    .from(finding)
+    .innerJoin(pathResult, and(eq(pathResult.runId, finding.runId), eq(pathResult.pathId, finding.pathId)))
+    .where(and(eq(finding.runId, runId), eq(finding.teamId, actor.teamId), eq(finding.counts, false)))
+    .orderBy(asc(finding.verdict), asc(finding.margin));
 }
 
 export interface RunPath {
@@ -295,17 +376,21 @@ export async function classByRule(actor: Actor, projectId: string, runId: string
     .select({
       className: pathResult.className,
       rule: finding.rule,
-      fail: sql<number>`sum(${finding.verdict} = 'fail' AND ${finding.counts})`,
-      near: sql<number>`sum(${finding.verdict} = 'near' AND ${finding.counts})`,
-      noData: sql<number>`sum(${finding.verdict} = 'no data')`,
+      fail: pathsOf("fail"),
+      near: pathsOf("near"),
+      noData: pathsOf("no data"),
       worstMargin: sql<number | null>`min(${finding.margin})`,
       unit: sql<string>`max(${finding.unit})`,
     })
     .from(finding)
     .innerJoin(pathResult, and(eq(pathResult.runId, finding.runId), eq(pathResult.pathId, finding.pathId)))
-    .where(and(eq(finding.runId, runId), eq(finding.teamId, actor.teamId)))
+    .where(and(eq(finding.runId, runId), eq(finding.teamId, actor.teamId), eq(finding.counts, true)))
     .groupBy(pathResult.className, finding.rule);
 }
+
+/** A path that fails a rule at two pins fails it once. */
+const pathsOf = (verdict: FindingRow["verdict"]) =>
+  sql<number>`count(DISTINCT CASE WHEN ${finding.verdict} = ${verdict} THEN ${finding.pathId} END)`;
 
 /** How many nets stand in and out of scope or unfinished; always shown beside the verdicts. */
 export async function countScopes(actor: Actor, revisionId: string): Promise<Record<string, number>> {

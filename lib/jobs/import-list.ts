@@ -140,7 +140,10 @@ export function viewOf(row: ImportRow): ImportView {
 async function readAgain(actor: Actor, projectId: string, row: ImportRow, wanted: ListMapping) {
   const draft = await findRevision(actor, projectId);
   if (draft.id !== row.revisionId)
-    throw new RefusedError("The draft this list was meant for is released. Import the list into the new draft.", "no-draft");
+    throw new RefusedError(
+      "The draft this list was meant for is released. Import the list into the new draft.",
+      "no-draft",
+    );
   const text = await readImportText(actor, projectId, row.id);
   const table = refuseUnreadable(() => readTable(text, { delimiter: wanted.delimiter }));
   const context = await readDraftContext(actor, draft);
@@ -149,7 +152,9 @@ async function readAgain(actor: Actor, projectId: string, row: ImportRow, wanted
   const anew = wanted.kind !== former.kind || wanted.delimiter !== former.delimiter;
   const mapping = withLayers(
     table,
-    anew ? { ...guessMapping(table, wanted.kind, draft.projectUnit), decimalComma: wanted.decimalComma } : wanted,
+    anew
+      ? { ...guessMapping(table, wanted.kind, draft.projectUnit), decimalComma: wanted.decimalComma }
+      : wanted,
     context,
   );
   const read = await readList(table, mapping, context);
@@ -170,12 +175,20 @@ function withLayers(table: DelimitedTable, mapping: ListMapping, context: DraftC
   return { ...mapping, layers };
 }
 
-function previewOf(table: DelimitedTable, mapping: ListMapping, read: ReadList, context: DraftContext): ImportPreview {
+function previewOf(
+  table: DelimitedTable,
+  mapping: ListMapping,
+  read: ReadList,
+  context: DraftContext,
+): ImportPreview {
   const { preview } = read;
   const header = table.rows.find(({ row }) => row === mapping.headerRow);
   const cut = (text: string) => (text.length > 80 ? `${text.slice(0, 80)}…` : text);
   return {
-    columns: Array.from({ length: table.columns }, (_, index) => cut(header?.cells[index] ?? "") || `Column ${letter(index)}`),
+    columns: Array.from(
+      { length: table.columns },
+      (_, index) => cut(header?.cells[index] ?? "") || `Column ${letter(index)}`,
+    ),
     sample: table.rows
       .filter(({ row }) => row > (mapping.headerRow ?? 0))
       .slice(0, SAMPLE_ROWS)
@@ -207,7 +220,9 @@ function previewOf(table: DelimitedTable, mapping: ListMapping, read: ReadList, 
 
 /** A, B, … Z, AA as spreadsheets name columns. */
 function letter(index: number): string {
-  return index < 26 ? String.fromCharCode(65 + index) : letter(Math.floor(index / 26) - 1) + letter(index % 26);
+  return index < 26
+    ? String.fromCharCode(65 + index)
+    : letter(Math.floor(index / 26) - 1) + letter(index % 26);
 }
 
 function refuseUnreadable<T>(read: () => T): T {
@@ -215,6 +230,11 @@ function refuseUnreadable<T>(read: () => T): T {
     return read();
   } catch (error) {
     if (!(error instanceof DelimitedError)) throw error;
-    throw new RefusedError(error.message, "unreadable", { file: error.message }, { row: error.row, kind: error.code });
+    throw new RefusedError(
+      error.message,
+      "unreadable",
+      { file: error.message },
+      { row: error.row, kind: error.code },
+    );
   }
 }

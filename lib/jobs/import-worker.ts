@@ -60,7 +60,11 @@ async function work(): Promise<void> {
 async function applyOne({ row, projectId, actor }: ClaimedImport): Promise<void> {
   const progress = (share: number) => loop().progress.set(row.id, share);
   try {
-    if (!actor) throw new RefusedError("Whoever confirmed this list is no longer in the team. Confirm it again.", "no-actor");
+    if (!actor)
+      throw new RefusedError(
+        "Whoever confirmed this list is no longer in the team. Confirm it again.",
+        "no-actor",
+      );
     const draft = await getDraft(actor, projectId);
     if (draft.id !== row.revisionId)
       throw new RefusedError(
@@ -96,7 +100,8 @@ async function applyOne({ row, projectId, actor }: ClaimedImport): Promise<void>
 }
 
 function sentenceOf(error: unknown): string {
-  if (error instanceof RefusedError || error instanceof ConflictError || error instanceof NotFoundError) return error.message;
+  if (error instanceof RefusedError || error instanceof ConflictError || error instanceof NotFoundError)
+    return error.message;
   log().error({ err: error }, "An import failed");
   return "The server failed at this import; nothing of it was written. Try again; if it fails once more, tell whoever runs it.";
 }

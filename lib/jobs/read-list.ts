@@ -10,7 +10,12 @@ import type { LayoutLists } from "@/lib/db/layout-lists";
 import type { DelimitedTable } from "@/lib/formats/delimited/table";
 import { copperLayers, type LayerChoice } from "@/lib/formats/lists/layer-names";
 import type { RowProblem } from "@/lib/formats/lists/list-field";
-import { netsFromNetList, netsFromSections, unknownClasses, type ProjectContext } from "@/lib/formats/lists/nets-from-rows";
+import {
+  netsFromNetList,
+  netsFromSections,
+  unknownClasses,
+  type ProjectContext,
+} from "@/lib/formats/lists/nets-from-rows";
 import { valueWarning } from "@/lib/formats/lists/parts-list";
 import { previewInTurns, type ListPreview } from "@/lib/formats/lists/preview";
 import type { Actor } from "@/lib/schemas/actor";
@@ -55,7 +60,11 @@ export async function readDraftContext(actor: Actor, draft: RevisionRef): Promis
 }
 
 /** Reads a whole table under a mapping into what would be written, in turns. */
-export async function readList(table: DelimitedTable, mapping: ListMapping, draft: DraftContext): Promise<ReadList> {
+export async function readList(
+  table: DelimitedTable,
+  mapping: ListMapping,
+  draft: DraftContext,
+): Promise<ReadList> {
   const context = { ...draft, layers: mapping.layers };
   switch (mapping.kind) {
     case "section list": {
@@ -67,7 +76,13 @@ export async function readList(table: DelimitedTable, mapping: ListMapping, draf
       const preview = await previewInTurns(table, { ...mapping, kind: mapping.kind }, turn);
       const nets = netsFromNetList(preview.good, context);
       const unknown = unknownClasses(preview.good, draft.classes);
-      return { preview, lists: { nets }, warnings: [], unknownClasses: unknown, effect: netEffect(nets, draft) };
+      return {
+        preview,
+        lists: { nets },
+        warnings: [],
+        unknownClasses: unknown,
+        effect: netEffect(nets, draft),
+      };
     }
     case "parts list": {
       const preview = await previewInTurns(table, { ...mapping, kind: mapping.kind }, turn);
@@ -82,7 +97,14 @@ export async function readList(table: DelimitedTable, mapping: ListMapping, draf
         lists: { parts },
         warnings,
         unknownClasses: [],
-        effect: { ...effectOf(parts.map(({ reference }) => reference), draft.references), things: "parts", incomplete: 0 },
+        effect: {
+          ...effectOf(
+            parts.map(({ reference }) => reference),
+            draft.references,
+          ),
+          things: "parts",
+          incomplete: 0,
+        },
       };
     }
     case "neighbour list": {
@@ -104,14 +126,24 @@ export async function readList(table: DelimitedTable, mapping: ListMapping, draf
         lists: { neighbours },
         warnings,
         unknownClasses: [],
-        effect: { things: "neighbour rows", added: neighbours.length, present: 0, absent: draft.neighbours, incomplete: 0 },
+        effect: {
+          things: "neighbour rows",
+          added: neighbours.length,
+          present: 0,
+          absent: draft.neighbours,
+          incomplete: 0,
+        },
       };
     }
   }
 }
 
 /** Roles that a net list gave pins outlive a section list, which knows none. */
-export async function keepPinRoles(actor: Actor, draft: RevisionRef, lists: LayoutLists): Promise<LayoutLists> {
+export async function keepPinRoles(
+  actor: Actor,
+  draft: RevisionRef,
+  lists: LayoutLists,
+): Promise<LayoutLists> {
   if (!lists.nets?.some((net) => net.source === "section list")) return lists;
   const known = new Map<string, Map<string, NetPinDoc["role"]>>();
   for await (const nets of readNetChunks(actor, draft))
@@ -131,13 +163,19 @@ export async function keepPinRoles(actor: Actor, draft: RevisionRef, lists: Layo
 
 function netEffect(nets: readonly NetDoc[], draft: DraftContext): ReadList["effect"] {
   return {
-    ...effectOf(nets.map(({ name }) => name), draft.netNames),
+    ...effectOf(
+      nets.map(({ name }) => name),
+      draft.netNames,
+    ),
     things: "nets",
     incomplete: nets.filter(({ scope }) => scope === "incomplete").length,
   };
 }
 
-function effectOf(names: readonly string[], known: ReadonlySet<string>): { added: number; present: number; absent: number } {
+function effectOf(
+  names: readonly string[],
+  known: ReadonlySet<string>,
+): { added: number; present: number; absent: number } {
   const present = names.filter((name) => known.has(name)).length;
   return { added: names.length - present, present, absent: known.size - present };
 }

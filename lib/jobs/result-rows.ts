@@ -9,7 +9,9 @@ export function resultRows(runId: string, teamId: string, checked: CheckedPath[]
   const batch: CheckedBatch = { results: [], problems: [], findings: [] };
   for (const path of checked) {
     const { result } = path;
-    const worst = worstOf(result.findings.filter((finding) => finding.counts && finding.verdict !== "no data"));
+    const worst = worstOf(
+      result.findings.filter((finding) => finding.counts && finding.verdict !== "no data"),
+    );
     batch.results.push({
       runId,
       teamId,
@@ -27,7 +29,8 @@ export function resultRows(runId: string, teamId: string, checked: CheckedPath[]
     });
     for (const problem of result.problems) batch.problems.push(problemRow(runId, teamId, path, problem));
     for (const finding of result.findings)
-      if (finding.verdict !== "pass") batch.findings.push(findingRow(runId, teamId, path.pathId, finding, finding.verdict));
+      if (finding.verdict !== "pass")
+        batch.findings.push(findingRow(runId, teamId, path.pathId, finding, finding.verdict));
   }
   return batch;
 }
@@ -46,7 +49,9 @@ function problemRow(runId: string, teamId: string, path: CheckedPath, problem: P
     mechanism: problem.mechanism,
     title: problem.title,
     verdict: problem.verdict,
-    severity: judged.some((finding) => finding.severity === "error") ? "error" : (worst?.severity ?? "warning"),
+    severity: judged.some((finding) => finding.severity === "error")
+      ? "error"
+      : (worst?.severity ?? "warning"),
     worstRule: worst?.rule ?? problem.mechanism,
     worstMargin: worst?.margin ?? null,
     worstShare: worst ? share(worst) : null,

@@ -1,9 +1,20 @@
 import "server-only";
-import { claimRun, checkedPathIds, countVerdicts, failRun, finishRun, saveBatch, type RunRow } from "@/lib/db/run";
+import { log } from "@/lib/db/log";
+import {
+  claimRun,
+  checkedPathIds,
+  countVerdicts,
+  failRun,
+  finishRun,
+  saveBatch,
+  type RunRow,
+} from "@/lib/db/run";
 import { thawInputs } from "@/lib/db/snapshot";
+import { controlledLines } from "@/lib/resolve/controlled-lines";
 import { resolvePaths } from "@/lib/resolve/resolve-paths";
 import { systemActor } from "@/lib/schemas/actor";
 import { parseCorner } from "@/lib/si";
+import { checkLines } from "./check-lines";
 import { checkInWorker, checkThreads } from "./check-pool";
 import { resultRows } from "./result-rows";
 
@@ -19,10 +30,12 @@ const loop = () => (shared.__ringfenceRunLoop ??= { active: null, again: false, 
 export function wakeRunWorker(): void {
   const state = loop();
   state.again = true;
-  state.active ??= work().finally(() => {
-    state.active = null;
-    if (state.again) wakeRunWorker();
-  });
+  state.active ??= work()
+    .catch((error: unknown) => log().error({ err: error }, "Runs stopped; the next one wakes them."))
+    .finally(() => {
+      state.active = null;
+      if (state.again) wakeRunWorker();
+    });
 }
 
 /** Settles when nothing is being worked; for scripts and tests. */
@@ -49,6 +62,8 @@ async function workRun(row: RunRow): Promise<void> {
   try {
     const inputs = await thawInputs(systemActor(row.teamId), row.inputChunks);
     const done = await checkedPathIds(row.id);
+    const lines = checkLines(controlledLines(inputs)).filter((line) => !done.has(line.pathId));
+    if (lines.length > 0 && !(await saveBatch(row.id, resultRows(row.id, row.teamId, lines)))) return;
     const paths = resolvePaths(inputs).paths.filter((path) => !done.has(path.id));
     const corners = row.corners.map(parseCorner);
     let next = 0;

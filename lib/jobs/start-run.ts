@@ -15,7 +15,10 @@ export async function startRun(actor: Actor, projectId: string): Promise<RunRow>
   const inputs = await readInputs(actor, draft.id);
   const { paths } = resolvePaths(inputs);
   if (paths.length === 0)
-    throw new RefusedError("There is no net in scope to check. Import a net list or a section list first.", "no-paths");
+    throw new RefusedError(
+      "There is no net in scope to check. Import a net list or a section list first.",
+      "no-paths",
+    );
   const { chunks, inputHash } = await freezeInputs(actor, inputs);
   const row = await createRun(actor, {
     projectId,

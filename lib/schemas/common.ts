@@ -3,6 +3,12 @@ import { z } from "zod";
 /** UUIDv7 text; ids are made by the server. */
 export const id = z.uuid();
 
+/** What a result is about: a signal path's lineage id, or "line", a class's and a layer's. */
+export const resultKey = z.union([
+  id,
+  z.string().regex(/^line [0-9a-f-]{36} [0-9a-f-]{36}$/, "That names neither a path nor a line."),
+]);
+
 /** Where an input came from; findings that rest on an assumed one are counted apart. */
 export const origins = ["measured", "model", "data sheet", "fabricator", "assumed"] as const;
 export const origin = z.enum(origins);

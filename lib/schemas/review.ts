@@ -1,5 +1,5 @@
 import { z } from "zod";
-import { id, proseText, version } from "./common";
+import { proseText, resultKey, version } from "./common";
 
 export const flagStates = ["open", "resolved"] as const;
 export const flagSubjects = ["problem", "path", "layer"] as const;
@@ -7,8 +7,8 @@ export const flagSubjects = ["problem", "path", "layer"] as const;
 /** What a flag or waiver is about; keys survive revisions (lineage ids). */
 export const subject = z.object({
   kind: z.enum(flagSubjects),
-  /** path or layer lineage id */
-  lineageId: id,
+  /** path or layer lineage id, or a controlled line's: "line", its class's and its layer's */
+  lineageId: resultKey,
   /** problem only: its mechanism */
   mechanism: z.string().max(60).nullable().default(null),
 });
