@@ -1,8 +1,9 @@
-import { UnsupportedError } from "../errors";
 import type { Sine } from "../network/types";
 import { recordedNodes } from "./channels";
 import type { Waveforms } from "./comb-output";
 import { drawGrid, type GridTerm } from "./grid-output";
+import { drawJumps, type JumpTerm } from "./jump-output";
+import { runJump } from "./jump-run";
 import { planGrid } from "./grid-plan";
 import type { GridInput } from "./grid-input";
 import { channelSeries, runGrid } from "./grid-run";
@@ -19,22 +20,31 @@ export function simulateGrid({ circuit, clusters, channels, rest, until, accurac
   const { step, delays } = chooseStep(circuit, clusters, until, accuracy, asked);
   const plan = planGrid(circuit, clusters, step, until, delays);
   const terms: GridTerm[] = [];
+  const jumping: JumpTerm[] = [];
   const nodes = recordedNodes(channels);
   let swing = 0;
   let steps = 0;
   for (const { fixed, corners } of movingSources(circuit)) {
-    const { name, wave } = circuit.fixed[fixed]!;
+    const { wave } = circuit.fixed[fixed]!;
     if (!wave) continue;
     swing += wave.kind === "sine" ? 2 * Math.abs(wave.amplitude) : Math.max(...wave.value) - Math.min(...wave.value);
-    if (corners?.some((corner) => corner.jump !== 0)) throw new UnsupportedError(`${name} jumps; give its edge a rise time where capacitors or coils are in the network.`, "drivers");
     const input = wave.kind === "sine" ? sineInput(fixed, plan.steps, step, wave) : rampInput(fixed, plan.steps, step);
+    const jumps = corners?.filter((corner) => corner.jump !== 0 && corner.time <= until) ?? [];
+    if (jumps.length > 0) {
+      const { before, after } = runJump(plan, fixed, channels);
+      steps += plan.steps;
+      for (const { time, jump } of jumps) jumping.push({ before, response: after, shift: time, weight: jump });
+      if (corners?.every((corner) => corner.slope === 0)) continue;
+    }
     const run = runGrid(plan, [input], circuit.nodeCount, nodes);
     const response = channelSeries(channels, plan, run, [input]);
     steps += plan.steps;
-    if (corners) for (const { time, slope } of corners) if (time <= until) terms.push({ response, shift: time, weight: slope });
+    if (corners) for (const { time, slope } of corners) if (time <= until && slope !== 0) terms.push({ response, shift: time, weight: slope });
     if (wave.kind === "sine" && wave.start <= until) terms.push({ response, shift: wave.start, weight: 1 });
   }
-  return { waveforms: markRoundPeaks(drawGrid(terms, rest, step, until, WORTHY[accuracy] * swing), swing), steps };
+  const worthy = WORTHY[accuracy] * swing;
+  const waveforms = jumping.length > 0 ? drawJumps(terms, jumping, rest, step, until, worthy) : drawGrid(terms, rest, step, until, worthy);
+  return { waveforms: markRoundPeaks(waveforms, swing), steps };
 }
 
 /** A ramp of 1 V/s from t = 0. */
