@@ -157,7 +157,7 @@ const holder = globalThis as typeof globalThis & { ringfenceChains?: Map<string,
 
 /** One writer of a team's chain at a time within this process, so that none is turned back by its own kin. */
 function inTurn<T>(teamId: string, act: () => Promise<T>): Promise<T> {
-  const chains = (holder.ringfenceChains ??= new Map());
+  const chains = (holder.ringfenceChains ??= new Map<string, Promise<unknown>>());
   const result = (chains.get(teamId) ?? Promise.resolve()).then(act);
   const settled = result.catch(() => undefined).then(() => {
     if (chains.get(teamId) === settled) chains.delete(teamId);

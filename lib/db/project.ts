@@ -1,6 +1,6 @@
 import "server-only";
 import { and, asc, desc, eq, isNotNull, isNull, sql } from "drizzle-orm";
-import { z } from "zod";
+import type { z } from "zod";
 import { stackupFromTemplate, stackupTemplates } from "@/lib/resolve/stackup-templates";
 import type { Actor } from "@/lib/schemas/actor";
 import { ConflictError, NotFoundError, RefusedError } from "@/lib/schemas/errors";

@@ -89,7 +89,7 @@ const REMEMBERED = 200;
 /** The input hash of a revision as it is now; remembered until its next edit. */
 export async function currentInputHash(actor: Actor, revisionId: string): Promise<string> {
   const { teamId, editCount, projectVersion } = await getRevision(actor, revisionId);
-  const known = (holder.ringfenceInputHashes ??= new Map());
+  const known = (holder.ringfenceInputHashes ??= new Map<string, string>());
   const key = `${teamId} ${revisionId} ${editCount} ${projectVersion}`;
   const found = known.get(key);
   if (found) return found;

@@ -16,6 +16,10 @@ import { aClass, aNet } from "../support/documents";
 import { createTestDatabase, type TestDatabase } from "../support/database";
 import { setAuthEnvironment, signedIn, TEST_URL } from "../support/signed-in";
 
+interface ErrorAnswer {
+  error: { fields?: Record<string, string> };
+}
+
 let data: TestDatabase;
 let designer: UserActor;
 let project: ProjectSummary;
@@ -61,7 +65,8 @@ describe("the API of a project", () => {
 
   it("refuses two projects of one name at the field, and an unknown template", async () => {
     const twice = await call(projectsRoutes.POST, designer, "POST", {}, { name: "Tide gauge controller" });
-    expect(twice).toMatchObject({ status: 422, body: { error: { code: "name-taken", fields: { name: expect.any(String) } } } });
+    expect(twice).toMatchObject({ status: 422, body: { error: { code: "name-taken" } } });
+    expect((twice.body as ErrorAnswer).error.fields?.name).toContain("already");
     const odd = await call(projectsRoutes.POST, designer, "POST", {}, { name: "Other", template: "7-layers" });
     expect(odd).toMatchObject({ status: 422, body: { error: { code: "unknown-template" } } });
   });
@@ -86,10 +91,8 @@ describe("the API of a project", () => {
     const bad = await call(classesRoutes.POST, designer, "POST", here(), {
       netClass: { ...aClass("Bad"), targetImpedance: { value: "-50", unit: "Ω" } },
     });
-    expect(bad).toMatchObject({
-      status: 400,
-      body: { error: { fields: { "netClass.targetImpedance": expect.stringContaining("above zero") } } },
-    });
+    expect(bad.status).toBe(400);
+    expect((bad.body as ErrorAnswer).error.fields?.["netClass.targetImpedance"]).toContain("above zero");
   });
 
   it("keeps a class with nets until it is told where they go", async () => {

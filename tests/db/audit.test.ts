@@ -15,10 +15,11 @@ const note = (action: string) => ({ action, subjectKind: "test", subjectId: null
 it("200 entries of two teams at one moment make two whole chains, none lost or doubled", async () => {
   const actors = [data.own, data.other].flatMap((team) => [team.actors.owner, team.actors.designer]);
   await Promise.all(
-    Array.from({ length: 200 }, (_, index) => {
-      const actor = actors[index % actors.length];
-      return actor && recordAudit(actor, { ...note(`test.${index}`), detail: { index, share: index / 3 } });
-    }),
+    actors.flatMap((actor) =>
+      Array.from({ length: 50 }, (_, index) =>
+        recordAudit(actor, { ...note(`test.${index}`), detail: { index, share: index / 3 } }),
+      ),
+    ),
   );
   for (const team of [data.own, data.other]) {
     expect(await verifyAuditChain(team.actors.owner)).toMatchObject({ entries: 100, intact: true, brokenAt: null });
