@@ -12,10 +12,11 @@ export function markRoundPeaks(waveforms: Waveforms, swing: number): Waveforms {
   const extra = new Map<number, number>();
   for (const v of values) findPeaks(time, v, swing, extra);
   if (extra.size === 0) return waveforms;
-  const order = [...extra].map(([i, offset]) => ({ from: offset < 0 ? i - 1 : i, i, offset })).sort((a, b) => a.from - b.from || a.offset - b.offset);
-  const at = order.map(({ i, offset }) => time[i]! + offset * (time[i + 1]! - time[i]!));
+  const order = [...extra]
+    .map(([i, offset]) => ({ from: offset < 0 ? i - 1 : i, i, offset, at: time[i]! + offset * (time[i + 1]! - time[i]!) }))
+    .sort((a, b) => a.at - b.at);
   return {
-    time: woven(time, order, (k) => at[k]!),
+    time: woven(time, order, (k) => order[k]!.at),
     values: values.map((v) => woven(v, order, (k) => (isRoundAt(v, order[k]!.i) ? parabola(v, order[k]!.i, order[k]!.offset) : straight(v, order[k]!.i, order[k]!.offset)))),
   };
 }
