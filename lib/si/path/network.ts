@@ -12,6 +12,8 @@ import { watchWindow } from "./window";
 export const RAMP_SHARE = 0.8;
 
 const SEVERAL_LINES_GAIN = 0.5;
+/** Pieces this many times shorter than the fast edge are no lines of their own. */
+const NEGLIGIBLE = 200;
 
 export interface PathProbe {
   pin: PathPin;
@@ -74,10 +76,11 @@ export class PathNetwork {
       : 0;
     const coupling = couplingTime(path, driver);
     this.nodes = joinNodes(path, coupling);
-    const rails = new Map(path.rails.map((rail) => [this.nodes.find(rail.node), rail.volts]));
     const kept = new Set([...path.drivers, ...path.receivers].map((pin) => this.nodes.find(pin.node)));
     for (const part of path.parts) kept.add(this.nodes.find(part.a)).add(this.nodes.find(part.b));
-    this.lines = chainLines(path.sections, this.nodes, kept);
+    const chained = chainLines(path.sections, this.nodes, kept, driver.riseTime.fast / NEGLIGIBLE);
+    this.lines = chained.lines;
+    const rails = new Map(path.rails.map((rail) => [this.nodes.find(rail.node), rail.volts]));
     this.driverNode = this.nodes.find(driverPin.node);
     this.ramp = { time: [0, 1e-12], value: [0, driver.vdd] };
     this.network = {
@@ -98,6 +101,8 @@ export class PathNetwork {
     this.addLines();
     this.addParts();
     this.addLoads(listening);
+    for (const { node, farads } of chained.lumps)
+      this.addLoad(node, { slow: farads, typical: farads, fast: farads });
     this.addProbes(listening, delays, coupling);
   }
 

@@ -1,6 +1,8 @@
 import { describe, expect, it } from "vitest";
 import { dcLevels } from "@/lib/si/path/levels";
 import { PathNetwork } from "@/lib/si/path/network";
+import { simulate } from "@/lib/si/lattice/simulate";
+import type { Network } from "@/lib/si/network";
 import { cannotSimulate } from "@/lib/si/path/simulable";
 import { NodeMap } from "@/lib/si/path/node-map";
 import { watchWindow } from "@/lib/si/path/window";
@@ -66,6 +68,56 @@ describe("a path as a network", () => {
     const { lines } = prepare(path);
     expect(lines.map((line) => Math.round(line.delay * 1e12)).sort()).toEqual([100, 200, 500]);
     expect(lines.reduce((sum, line) => sum + line.delay, 0)).toBeCloseTo(0.8e-9, 18);
+  });
+
+  it("pieces 200 times shorter than the edge join their line, or become capacitance, and change the wave by less than 0.2 % of swing", () => {
+    const ends = (pieces: ResolvedPath["sections"]) => {
+      const path = pointToPoint(driverModel(17, 1e-9), 50, 1e-9, { sections: pieces });
+      const prepared = prepare(path);
+      const { network, until } = prepared.at(nominal);
+      return { prepared, network, until };
+    };
+    const pieces = [
+      section("U1.1", "a", 50, 0.4e-9),
+      section("a", "b", 70, 3e-12),
+      section("b", "U2.1", 50, 0.5e-9),
+    ];
+    const short = ends(pieces);
+    expect(short.prepared.lines).toHaveLength(1);
+    const exact: Network = {
+      ...short.network,
+      sections: pieces.map(({ a, b, impedance, length, delayPerMeter }, i) => ({
+        name: `s${i}`,
+        kind: "line",
+        a,
+        b,
+        impedance: impedance?.nominal ?? 0,
+        delay: length * (delayPerMeter ?? 0),
+      })),
+    };
+    const one = simulate(short.network, { until: short.until });
+    const all = simulate(exact, { until: short.until });
+    const at = (wave: typeof one, t: number) => {
+      const v = wave.voltage["U2.1"] ?? new Float64Array();
+      let i = 1;
+      while (i < wave.time.length - 1 && (wave.time[i] ?? 0) < t) i++;
+      const [t0 = 0, t1 = 0] = [wave.time[i - 1], wave.time[i]];
+      const [v0 = 0, v1 = 0] = [v[i - 1], v[i]];
+      return t1 > t0 ? v0 + ((v1 - v0) * (t - t0)) / (t1 - t0) : v1;
+    };
+    for (let t = 0; t < short.until; t += 13e-12)
+      expect(Math.abs(at(one, t) - at(all, t))).toBeLessThan(0.002 * 3.3);
+  });
+
+  it("a piece between a pin and a resistor becomes its capacitance", () => {
+    const path = pointToPoint(driverModel(17, 1e-9), 50, 1e-9, {
+      sections: [section("U1.1", "R1.1", 50, 2e-12), section("R1.2", "U2.1", 50, 1e-9)],
+      parts: [{ reference: "R1", kind: "R", a: "U1.1", b: "R1.2", value: 33, role: "series" }],
+    });
+    path.parts = [{ reference: "R1", kind: "R", a: "R1.1", b: "R1.2", value: 33, role: "series" }];
+    const { network } = prepare(path).at(nominal);
+    expect(network.sections).toHaveLength(1);
+    expect(network.parts.find((part) => part.kind === "C")).toMatchObject({ value: 2e-12 / 50 });
   });
 
   it("corners fill in one network: weak, long and heavily loaded when slow", () => {
