@@ -8,6 +8,8 @@ import type { Accuracy } from "./step-size";
 export interface Prepared {
   circuit: Circuit;
   clusters: Cluster[];
+  /** what sets the step: `clusters`, or those there were before short lines were lumped */
+  measured: Cluster[];
   channels: Channel[];
   rest: Float64Array;
   until: number;

@@ -16,8 +16,8 @@ import { chooseStep, type Accuracy } from "./step-size";
 const WORTHY: Record<Accuracy, number> = { live: 1e-3, standard: 2e-4, reference: 5e-5 };
 
 /** Waveforms of a linear network on a grid, by superposition of the responses to one corner of each source. */
-export function simulateGrid({ circuit, clusters, channels, rest, until, accuracy, step: asked }: Prepared): { waveforms: Waveforms; steps: number } {
-  const { step, delays } = chooseStep(circuit, clusters, until, accuracy, asked);
+export function simulateGrid({ circuit, clusters, measured, channels, rest, until, accuracy, step: asked }: Prepared): { waveforms: Waveforms; steps: number } {
+  const { step, delays } = chooseStep(circuit, measured, until, accuracy, { asked, isLumped: measured !== clusters });
   const plan = planGrid(circuit, clusters, step, until, delays);
   const terms: GridTerm[] = [];
   const jumping: JumpTerm[] = [];

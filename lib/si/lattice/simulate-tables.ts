@@ -14,8 +14,8 @@ import type { ElementWeights } from "./table-worker";
 import { workspace } from "./workspace";
 
 /** Waveforms of a network with I-V tables or diodes, all sources at once on one grid from t = 0. */
-export function simulateTables({ circuit, clusters, channels, rest, until, accuracy, step: asked }: Prepared): { waveforms: Waveforms; steps: number } {
-  const { step, delays } = chooseStep(circuit, clusters, until, accuracy, asked);
+export function simulateTables({ circuit, clusters, measured, channels, rest, until, accuracy, step: asked }: Prepared): { waveforms: Waveforms; steps: number } {
+  const { step, delays } = chooseStep(circuit, measured, until, accuracy, { asked, isLumped: measured !== clusters });
   const plan = planGrid(circuit, clusters, step, until, delays);
   const levels = circuit.fixed.map((item) => item.rest);
   const inputs: GridInput[] = circuit.fixed.flatMap(({ wave }, fixed) => (wave ? [movement(fixed, wave, plan.steps, step)] : []));

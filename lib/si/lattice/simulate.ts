@@ -9,7 +9,8 @@ import type { Prepared } from "./prepared";
 import { simulateComb } from "./simulate-comb";
 import { simulateTables } from "./simulate-tables";
 import { simulateGrid } from "./simulate-grid";
-import type { Accuracy } from "./step-size";
+import { lumpShortLines } from "./lump";
+import { shortestRamp, type Accuracy } from "./step-size";
 import { workspace } from "./workspace";
 
 export interface SimulateOptions {
@@ -51,6 +52,9 @@ export interface Simulation {
   steps: number;
 }
 
+/** Lines shorter than this share of the edge are lumped where time goes in steps. */
+const LUMPED: Record<Accuracy, number> = { live: 1 / 120, standard: 1 / 250, reference: 1 / 800 };
+
 /**
  * Waveforms of a network from rest, by the method of characteristics: on lossless lines the voltage is the sum of two
  * waves that travel unchanged, v = a + b, and each node sends v − a into every line, v = G⁻¹ Σ 2Y a (Bergeron).
@@ -67,26 +71,38 @@ export interface Simulation {
  */
 export function simulate(network: Network, options: SimulateOptions): Simulation {
   validateNetwork(network);
-  const { until, accuracy = "standard", step } = options;
+  const { until, step } = options;
   if (!(until > 0) || !Number.isFinite(until)) throw new DomainError("A simulation needs an end time above zero.", "until");
   if (step !== undefined && !(step > 0)) throw new DomainError("The step must be above zero.", "step");
-  const circuit = buildCircuit(network);
-  const clusters = buildClusters(circuit);
-  const channels = network.probes.map((probe) => nodeChannel(circuit.ref(probe.node)));
-  if (options.waves) channels.push(...waveChannels(circuit));
-  const prepared: Prepared = { circuit, clusters, channels, rest: restLevels(circuit, channels), until, accuracy, step };
-  const { waveforms, steps } = draw(prepared);
+  const prepared = prepare(network, options);
+  const { waveforms, steps } = draw(network, prepared, options);
   const voltage: Record<string, Float64Array> = {};
   network.probes.forEach((probe, i) => (voltage[probe.name] = waveforms.values[i]!));
   const result: Simulation = { time: waveforms.time, voltage, steps };
-  if (options.waves) result.waves = sectionWaves(network, circuit, waveforms);
+  if (options.waves) result.waves = sectionWaves(network, prepared.circuit, waveforms);
   return result;
 }
 
-function draw(prepared: Prepared): { waveforms: Waveforms; steps: number } {
+function prepare(network: Network, { until, accuracy = "standard", step, waves }: SimulateOptions): Prepared {
+  const circuit = buildCircuit(network);
+  const channels = network.probes.map((probe) => nodeChannel(circuit.ref(probe.node)));
+  if (waves) channels.push(...waveChannels(circuit));
+  const clusters = buildClusters(circuit);
+  return { circuit, clusters, measured: clusters, channels, rest: restLevels(circuit, channels), until, accuracy, step };
+}
+
+function draw(network: Network, prepared: Prepared, options: SimulateOptions): { waveforms: Waveforms; steps: number } {
+  const { circuit, clusters, accuracy } = prepared;
   try {
-    if (prepared.circuit.elements.length > 0) return simulateTables(prepared);
-    return (prepared.clusters.every((cluster) => cluster.isStatic) ? simulateComb(prepared) : null) ?? simulateGrid(prepared);
+    const hasTables = circuit.elements.length > 0;
+    const exact = !hasTables && clusters.every((cluster) => cluster.isStatic) ? simulateComb(prepared) : null;
+    if (exact) return exact;
+    const ramp = shortestRamp(circuit);
+    // Whoever asks for the waves wants those of every section.
+    const lumped = options.waves || !Number.isFinite(ramp) ? network : lumpShortLines(network, ramp * LUMPED[accuracy]);
+    // Echoes inside what was lumped are what the step need not follow.
+    const ready = lumped === network ? prepared : { ...prepare(lumped, options), measured: clusters };
+    return hasTables ? simulateTables(ready) : simulateGrid(ready);
   } finally {
     workspace.endAll();
   }

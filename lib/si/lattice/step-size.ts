@@ -75,12 +75,14 @@ export function shortestRamp(circuit: Circuit): number {
  *
  * @throws DomainError where the window would take more than a million steps
  */
-export function chooseStep(circuit: Circuit, clusters: readonly Cluster[], until: number, accuracy: Accuracy, asked?: number): StepChoice {
+export function chooseStep(circuit: Circuit, clusters: readonly Cluster[], until: number, accuracy: Accuracy, { asked, isLumped }: { asked?: number; isLumped: boolean }): StepChoice {
   const fineness = FINENESS[accuracy];
   const ramp = shortestRamp(circuit);
   const delays = circuit.lines.map((line) => line.delay);
   const shortest = Math.min(Infinity, ...delays);
-  const wanted = asked ?? Math.min(curveStep(clusters, ramp, until, circuit.elements.length > 0 ? 0.7 * fineness.curve : fineness.curve), sineStep(circuit, fineness.sine), clusters.some((cluster) => cluster.isStatic && cluster.tables.length > 0) ? ramp * fineness.table : Infinity);
+  // A lumped line shifts corners by less than a step, so that they fall between samples.
+  const between = isLumped ? 0.6 * fineness.ramp * ramp : Infinity;
+  const wanted = asked ?? Math.min(between, curveStep(clusters, ramp, until, circuit.elements.length > 0 ? 0.7 * fineness.curve : fineness.curve), sineStep(circuit, fineness.sine), clusters.some((cluster) => cluster.isStatic && cluster.tables.length > 0) ? ramp * fineness.table : Infinity);
   // Where nothing rounds the corners off, they must be kept by the step alone.
   const sharp = clusters.every((cluster) => cluster.isStatic);
   const choice = delays.length === 0 ? { step: wanted, delays } : (wholeSteps(circuit, delays, wanted, ramp) ?? betweenSteps(delays, Math.min(asked ?? (sharp ? 0.16 : 1) * fineness.ramp * ramp, wanted, shortest / 2)));
