@@ -1,9 +1,11 @@
 "use client";
 
-import { Download, FileUp, LayoutTemplate, Redo2, Undo2 } from "lucide-react";
+import { Download, FileUp, LayoutTemplate } from "lucide-react";
 import { useMemo, useState } from "react";
 import { save } from "@/components/charts/save-file";
 import { StackupSection } from "@/components/charts/stackup-section";
+import { UndoButtons } from "@/components/undo/undo-buttons";
+import { useUndo } from "@/components/undo/use-undo";
 import { Button } from "@/components/ui/button";
 import { EmptyState } from "@/components/ui/empty-state";
 import { PageHeader } from "@/components/ui/page-header";
@@ -27,7 +29,6 @@ import { StackupName } from "./stackup-name";
 import { StackupUnits, useStackupUnits } from "./stackup-units";
 import { TemplateDialog } from "./template-dialog";
 import { useStackupEditor } from "./use-stackup-editor";
-import { useUndo } from "./use-undo";
 import { WarningsList } from "./warnings-list";
 
 interface Props {
@@ -109,26 +110,7 @@ function Editor({ projectId, projectName, stackup: stored, readOnly }: Props) {
           <>
             {readOnly === null ? (
               <>
-                <Button
-                  size="icon"
-                  aria-label={undo.undoWords ? `Undo: ${undo.undoWords}` : "Undo"}
-                  title={undo.undoWords ? `Undo: ${undo.undoWords} (Ctrl Z)` : "Nothing to undo"}
-                  disabled={
-                    (undo.known && undo.undoWords === null && editor.saving.state === "saved") || undo.busy
-                  }
-                  onClick={undo.undo}
-                >
-                  <Undo2 size={15} aria-hidden="true" />
-                </Button>
-                <Button
-                  size="icon"
-                  aria-label={undo.redoWords ? `Redo: ${undo.redoWords}` : "Redo"}
-                  title={undo.redoWords ? `Redo: ${undo.redoWords} (Ctrl Shift Z)` : "Nothing to redo"}
-                  disabled={undo.redoWords === null || undo.busy}
-                  onClick={undo.redo}
-                >
-                  <Redo2 size={15} aria-hidden="true" />
-                </Button>
+                <UndoButtons undo={undo} unsaved={editor.saving.state !== "saved"} />
                 <Button onClick={() => setDialog("template")}>
                   <LayoutTemplate size={14} aria-hidden="true" />
                   Templates

@@ -7,7 +7,7 @@ export type SaveState = "saved" | "waiting" | "saving" | "failed" | "blocked";
 interface Options {
   /** What would be saved, as text that differs when it differs. */
   content: string;
-  /** True where it must not be saved as it is. */
+  /** True where it must not be saved as it is, or where a field holds what could not be read. */
   blocked: boolean;
   /** Saves what is on screen now. */
   save: () => Promise<void>;
@@ -40,8 +40,8 @@ export function useAutosave({ content, blocked, save, delay = 700 }: Options): A
   const flush = useCallback(async (): Promise<boolean> => {
     if (running.current) await running.current;
     const { content: sending, blocked: held, save: act, saved: known } = latest.current;
-    if (sending === known) return true;
     if (held) return false;
+    if (sending === known) return true;
     const work = (async () => {
       setBusy(true);
       try {
@@ -72,12 +72,13 @@ export function useAutosave({ content, blocked, save, delay = 700 }: Options): A
     return () => clearTimeout(timer);
   }, [content, dirty, blocked, busy, failed, conflicting, delay, flush]);
 
+  const unsaved = dirty || blocked;
   useEffect(() => {
-    if (!dirty) return;
+    if (!unsaved) return;
     const warn = (event: BeforeUnloadEvent) => event.preventDefault();
     window.addEventListener("beforeunload", warn);
     return () => window.removeEventListener("beforeunload", warn);
-  }, [dirty]);
+  }, [unsaved]);
 
   const retry = useCallback(() => {
     setFailure(null);
@@ -91,10 +92,10 @@ export function useAutosave({ content, blocked, save, delay = 700 }: Options): A
 
   const state: SaveState = busy
     ? "saving"
-    : !dirty
-      ? "saved"
-      : blocked
-        ? "blocked"
+    : blocked
+      ? "blocked"
+      : !dirty
+        ? "saved"
         : failed || conflicting
           ? "failed"
           : "waiting";

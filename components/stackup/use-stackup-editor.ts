@@ -41,7 +41,7 @@ export function useStackupEditor(projectId: string, stored: StoredStackup, readO
 
   const autosave = useAutosave({
     content,
-    blocked: readOnly || issues.length > 0,
+    blocked: !readOnly && issues.length > 0,
     save: async () => {
       const sent = stackup;
       const saved = await putStackup(projectId, version.current, toDoc(sent));

@@ -28,10 +28,12 @@ interface Props {
   footer?: ReactNode;
   /** Moves the focus into the panel when it opens. Leave off where j/k in the list must keep working. */
   takeFocus?: boolean;
+  /** Room for a drawing of a trace. */
+  wide?: boolean;
 }
 
 /** Opens beside the table, never over what is being compared; fills the page on a narrow screen. Esc closes. */
-export function SidePanel({ title, onClose, children, footer, takeFocus = false }: Props) {
+export function SidePanel({ title, onClose, children, footer, takeFocus = false, wide = false }: Props) {
   const id = useId();
   const ref = useRef<HTMLElement>(null);
   useEffect(() => {
@@ -45,7 +47,7 @@ export function SidePanel({ title, onClose, children, footer, takeFocus = false 
       onKeyDown={(event) => {
         if (event.key === "Escape" && !event.defaultPrevented) onClose();
       }}
-      className="border-rule-line bg-sheet flex w-full min-w-0 shrink-0 flex-col outline-none lg:sticky lg:top-12 lg:ml-4 lg:max-h-[calc(100dvh-3rem)] lg:w-[400px] lg:border-l print:hidden"
+      className={`border-rule-line bg-sheet flex w-full min-w-0 shrink-0 flex-col outline-none lg:sticky lg:top-12 lg:ml-4 lg:max-h-[calc(100dvh-3rem)] lg:border-l print:hidden ${wide ? "lg:w-[528px]" : "lg:w-[400px]"}`}
     >
       <header className="border-rule-line flex items-center justify-between gap-2 border-b px-4 py-2">
         <h2 id={id} className="min-w-0 truncate text-base font-semibold">

@@ -15,6 +15,8 @@ interface Options {
   reload: () => Promise<unknown>;
 }
 
+export type Undo = ReturnType<typeof useUndo>;
+
 /** Undo and redo of this person's edits of the draft, by button and by Ctrl+Z, Ctrl+Shift+Z. */
 export function useUndo({ projectId, enabled, flush, reload }: Options) {
   const client = useQueryClient();
@@ -57,7 +59,6 @@ export function useUndo({ projectId, enabled, flush, reload }: Options) {
     redo: () => mutate("redo"),
     undoWords: data?.undo ?? null,
     redoWords: data?.redo ?? null,
-    known: data !== undefined,
     busy: isPending,
   };
 }

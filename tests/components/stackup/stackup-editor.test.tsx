@@ -1,0 +1,213 @@
+// @vitest-environment jsdom
+import { QueryClient, QueryClientProvider } from "@tanstack/react-query";
+import { cleanup, render, screen, waitFor, within } from "@testing-library/react";
+import userEvent from "@testing-library/user-event";
+import { Tooltip } from "radix-ui";
+import { afterEach, beforeAll, beforeEach, describe, expect, it, vi } from "vitest";
+import { LengthUnitProvider } from "@/components/shell/length-unit";
+import { StackupEditor } from "@/components/stackup/stackup-editor";
+import { type StackupDoc, stackupDoc, type StoredStackup } from "@/lib/schemas/stackup";
+import { stackupTemplates } from "@/lib/si/stackup";
+
+const PROJECT = "0198f000-0000-7000-8000-000000000001";
+const uuid = (index: number) => `0198f000-0000-7000-8000-1000000000${String(index).padStart(2, "0")}`;
+
+function stored(copperLayers = 4): StoredStackup {
+  const template = stackupTemplates.find((entry) => entry.copperLayers === copperLayers);
+  const layers = (template?.layers ?? []).map((layer, index) => ({
+    ...layer,
+    id: uuid(index),
+    lineageId: uuid(index + 50),
+  }));
+  return { name: "Tide gauge", version: 3, layers };
+}
+
+interface Put {
+  version: number;
+  stackup: StackupDoc;
+}
+let puts: Put[] = [];
+let refuse: ((put: Put) => Response | null) | null = null;
+
+beforeAll(() => {
+  Object.defineProperty(Element.prototype, "scrollIntoView", { value: () => undefined });
+  globalThis.ResizeObserver ??= class {
+    observe() {}
+    unobserve() {}
+    disconnect() {}
+  };
+});
+beforeEach(() => {
+  puts = [];
+  refuse = null;
+  vi.stubGlobal(
+    "fetch",
+    vi.fn(async (address: string, init?: RequestInit) => {
+      if (init?.method === "PUT" && address.endsWith("/stackup")) {
+        const put = JSON.parse(String(init.body)) as Put;
+        const refused = refuse?.(put);
+        if (refused) return refused;
+        stackupDoc.parse(put.stackup);
+        puts.push(put);
+        const layers = put.stackup.layers.map((layer, index) => ({
+          ...layer,
+          id: layer.id ?? uuid(index + 20),
+          lineageId: layer.lineageId ?? uuid(index + 70),
+        }));
+        return Response.json({ name: put.stackup.name, version: put.version + 1, layers });
+      }
+      return Response.json({ undo: null, redo: null });
+    }),
+  );
+});
+afterEach(() => {
+  cleanup();
+  vi.unstubAllGlobals();
+});
+
+function show(stackup = stored(), readOnly: string | null = null) {
+  render(
+    <QueryClientProvider client={new QueryClient({ defaultOptions: { queries: { retry: false } } })}>
+      <LengthUnitProvider initial="mm">
+        <Tooltip.Provider>
+          <StackupEditor
+            projectId={PROJECT}
+            projectName="Tide gauge controller"
+            unit="mm"
+            stackup={stackup}
+            readOnly={readOnly}
+          />
+        </Tooltip.Provider>
+      </LengthUnitProvider>
+    </QueryClientProvider>,
+  );
+  return userEvent.setup();
+}
+
+const field = (name: string) => screen.getByRole<HTMLInputElement>("textbox", { name });
+const combo = (name: string) => screen.getByRole<HTMLInputElement>("combobox", { name });
+const order = () =>
+  within(screen.getByRole("table", { name: "Layers, top to bottom" }))
+    .getAllByRole<HTMLInputElement>("textbox", { name: /^Name of/ })
+    .map((input) => input.value);
+const overCopper = () => screen.getByText("Over copper").nextElementSibling?.textContent;
+
+async function retype(user: ReturnType<typeof userEvent.setup>, input: HTMLInputElement, text: string) {
+  await user.click(input);
+  await user.clear(input);
+  await user.type(input, text);
+  await user.tab();
+}
+
+describe("stackup editor", () => {
+  it("lets the total follow an edit at once and saves it a moment later with the version that was read", async () => {
+    const user = show();
+    const before = overCopper();
+    await retype(user, field("Thickness of Core 2-3"), "1");
+    expect(overCopper()).not.toBe(before);
+    await waitFor(() => expect(puts).toHaveLength(1), { timeout: 3000 });
+    expect(puts[0]?.version).toBe(3);
+    expect(puts[0]?.stackup.layers.find(({ name }) => name === "Core 2-3")?.thickness).toEqual({
+      value: "1",
+      unit: "mm",
+    });
+    await waitFor(() => expect(screen.getByText("Saved")).toBeTruthy());
+  });
+
+  it("keeps a refused text when another layer is chosen, says which layer and why, and saves nothing", async () => {
+    const user = show();
+    await retype(user, field("Dk of Core 2-3"), "0.2");
+    expect(field("Dk of Core 2-3").value).toBe("0.2");
+    expect(screen.getByText("Core 2-3, Dk: Dk is at least 1 (air).")).toBeTruthy();
+    expect(screen.getByRole("status").textContent).toContain("Not saved");
+    await user.click(field("Name of L1"));
+    expect(field("Dk of Core 2-3").value).toBe("0.2");
+    await retype(user, field("Dk of Core 2-3"), "4.4");
+    await waitFor(() => expect(puts).toHaveLength(1), { timeout: 3000 });
+    expect(puts[0]?.stackup.layers.find(({ name }) => name === "Core 2-3")?.dk).toBe("4.4");
+  });
+
+  it("does not save two layers of one name, and says which", async () => {
+    const user = show();
+    await retype(user, field("Name of L2"), "L1");
+    expect(screen.getByText(/both named "L1"/)).toBeTruthy();
+    expect(screen.getByRole("status").textContent).toContain("Not saved");
+    expect(puts).toHaveLength(0);
+  });
+
+  it("moves a layer with Alt and an arrow, and the focus with it", async () => {
+    const user = show();
+    const [first, second] = order();
+    await user.click(field(`Name of ${first}`));
+    await user.keyboard("{Alt>}{ArrowDown}{/Alt}");
+    expect(order().slice(0, 2)).toEqual([second, first]);
+    await waitFor(() => expect(document.activeElement).toBe(field(`Name of ${first}`)));
+  });
+
+  it("says on a conflict what was changed, and saves over it only when told to", async () => {
+    const user = show();
+    const current = { ...stored(), version: 9, name: "Theirs" };
+    refuse = (put) =>
+      put.version === 9
+        ? null
+        : Response.json(
+            {
+              error: {
+                code: "conflict",
+                message: "The stackup was changed by Ines.",
+                current,
+                changed: ["L1 etch"],
+              },
+            },
+            { status: 409 },
+          );
+    await retype(user, field("Thickness of Core 2-3"), "0.9");
+    await waitFor(() => expect(screen.getByText("The stackup was changed by Ines.")).toBeTruthy(), {
+      timeout: 3000,
+    });
+    expect(screen.getByText("L1 etch")).toBeTruthy();
+    expect(field("Thickness of Core 2-3").value).toBe("0.9 mm");
+    await user.click(screen.getByRole("button", { name: "Keep mine" }));
+    await waitFor(() => expect(puts).toHaveLength(1));
+    expect(puts[0]?.version).toBe(9);
+  });
+
+  it("presses a prepreg from its plies, exactly", async () => {
+    const user = show();
+    await user.click(field("Name of Prepreg 1-2"));
+    await retype(user, combo("Glass style of ply 1"), "2116");
+    // 120 µm − 34.3 µm × (1 − 0.8): the inner plane of 1 oz sinks in, computed.
+    const details = screen.getByRole("region", { name: "Layer Prepreg 1-2" });
+    expect(within(details).getByText("0.11314 mm")).toBeTruthy();
+  });
+
+  it("shows a released stackup without anything to edit", () => {
+    show(stored(), "Revision A is released and stays as it is.");
+    expect(screen.queryAllByRole("textbox")).toHaveLength(0);
+    expect(screen.queryByRole("button", { name: "Templates" })).toBeNull();
+    expect(screen.getByText("Revision A is released and stays as it is.")).toBeTruthy();
+  });
+
+  it("replaces the layers by a template only after saying what is replaced", async () => {
+    const user = show();
+    await user.click(screen.getByRole("button", { name: "Templates" }));
+    const dialog = await screen.findByRole("dialog");
+    expect(within(dialog).getByText(/replaces the 9 layers of “Tide gauge”/)).toBeTruthy();
+    await user.click(within(dialog).getByRole("radio", { name: /^6 layers/ }));
+    await user.click(within(dialog).getByRole("button", { name: "Replace 9 layers by 13" }));
+    expect(order()).toHaveLength(13);
+  });
+
+  it("takes the good rows of a list only after confirming, and names the bad ones", async () => {
+    const user = show();
+    await user.click(screen.getByRole("button", { name: "Import" }));
+    const dialog = await screen.findByRole("dialog");
+    await user.click(within(dialog).getByRole("textbox", { name: "Or paste from a spreadsheet" }));
+    await user.paste(
+      "kind\tname\tthickness\tDk\tbase foil\nsignal\tTop\t\t\t1/2 oz\ncore\tC1\t12..7\t4.2\t\nplane\tGnd\t\t\t1 oz\n",
+    );
+    expect(within(dialog).getByText(/'12\.\.7' is not a length/)).toBeTruthy();
+    await user.click(within(dialog).getByRole("button", { name: "Take the 2 good rows, leave out 1" }));
+    expect(order()).toEqual(["Top", "Gnd"]);
+  });
+});
