@@ -3,12 +3,14 @@
  * with a released revision A and a draft B that fails in several ways, and a large board from a seed.
  */
 import { getAuth } from "@/lib/auth/auth";
+import { baseUrl } from "@/lib/auth/environment";
 import { closeDb } from "@/lib/db/client";
 import { createProject } from "@/lib/db/project";
 import { startDraft } from "@/lib/db/draft-copy";
 import { getRun, listProblems } from "@/lib/db/run";
 import { raiseFlag } from "@/lib/db/review";
 import { acceptNoData, grantWaiver, missingInputs, signRun } from "@/lib/db/waiver";
+import { sendNoteLinks } from "@/lib/email/note-links";
 import { closeCheckPool } from "@/lib/jobs/check-pool";
 import { makeRelease } from "@/lib/jobs/make-release";
 import { runWorkerIdle } from "@/lib/jobs/run-worker";
@@ -54,7 +56,7 @@ async function makeTideGauge(
   const runA = await check(designer, project.id);
   await settle(reviewer, project.id, runA);
   await signRun(reviewer, project.id, runA, "Checked against the layout of revision A.");
-  await makeRelease(reviewer, project.id, {
+  const { links, ...names } = await makeRelease(reviewer, project.id, {
     runId: runA,
     title: "Tide gauge controller, first build",
     remarks: "Impedance coupons on every panel; report foot widths after etching.",
@@ -66,6 +68,7 @@ async function makeTideGauge(
       },
     ],
   });
+  sendNoteLinks(links, { ...names, baseUrl: baseUrl() });
   await startDraft(designer, project.id);
   await importBoard(designer, project.id, tideGaugeBoard("B", widths), "Layout of draft B imported");
   const runB = await check(designer, project.id);

@@ -57,7 +57,7 @@ export async function releaseBoard(
       reason: "Accepted so that it can be released.",
     });
   await signRun(reviewer, projectId, runId, "");
-  const releaseId = await makeRelease(reviewer, projectId, {
+  const { releaseId } = await makeRelease(reviewer, projectId, {
     runId,
     title: "First build",
     remarks: "",

@@ -10,7 +10,10 @@ export const GET = route({
   handler: async ({ actor, params }) => {
     const { release } = await getRelease(actor, params.projectId, params.releaseId);
     return new Response(noteCsv(release.note), {
-      headers: downloadHeaders("text/csv; charset=utf-8", `${release.note.project} ${release.letter} impedance note.csv`),
+      headers: downloadHeaders(
+        "text/csv; charset=utf-8",
+        `${release.note.project} ${release.letter} impedance note.csv`,
+      ),
     });
   },
 });

@@ -10,7 +10,10 @@ export const GET = route({
   handler: async ({ actor, params }) => {
     const { release, zip } = await ruleReport(actor, params.projectId, params.releaseId);
     return new Response(zip, {
-      headers: downloadHeaders("application/zip", `${release.note.project} ${release.letter} rule report.zip`),
+      headers: downloadHeaders(
+        "application/zip",
+        `${release.note.project} ${release.letter} rule report.zip`,
+      ),
     });
   },
 });
