@@ -82,9 +82,11 @@ function share(finding: Finding): number | null {
   return finding.margin / Math.max(Math.abs(finding.limit ?? 0), 1e-12 + Math.abs(finding.value ?? 0), 1e-12);
 }
 
+/** What a simulation saw speaks before what a formula expects: a wrong resistor matters by what it does. */
 function worstOf(findings: Finding[]): Finding | null {
+  const seen = findings.filter((finding) => finding.edge !== null && finding.verdict === "fail");
   let worst: Finding | null = null;
-  for (const finding of findings) {
+  for (const finding of seen.length > 0 ? seen : findings) {
     if (finding.margin === null) continue;
     if (!worst || (share(finding) ?? 0) < (share(worst) ?? 0)) worst = finding;
   }
