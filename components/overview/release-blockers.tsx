@@ -33,14 +33,14 @@ export function ReleaseBlockers({ blockers, letter, releasedAt, openFlags, base 
       {blockers === null ? (
         <p className="text-sm">
           Revision {letter} is released{releasedAt === null ? "" : `, ${timeText(releasedAt)}`}, and stays as it is.{" "}
-          <Link href={`${base}/releases` as Route} className="text-violet hover:underline">
+          <Link href={`${base}/releases` as Route} className="text-violet underline underline-offset-2">
             See its note
           </Link>
         </p>
       ) : blockers.length === 0 ? (
         <p className="text-sm">
           Nothing.{" "}
-          <Link href={`${base}/releases` as Route} className="text-violet hover:underline">
+          <Link href={`${base}/releases` as Route} className="text-violet underline underline-offset-2">
             Release revision {letter}
           </Link>
         </p>
@@ -51,7 +51,7 @@ export function ReleaseBlockers({ blockers, letter, releasedAt, openFlags, base 
               {blocker.text}{" "}
               <Link
                 href={`${base}/${PLACES[blocker.kind].place}` as Route}
-                className="text-violet whitespace-nowrap hover:underline"
+                className="text-violet whitespace-nowrap underline underline-offset-2"
               >
                 {PLACES[blocker.kind].label}
               </Link>
@@ -59,9 +59,11 @@ export function ReleaseBlockers({ blockers, letter, releasedAt, openFlags, base 
           ))}
         </ul>
       )}
-      <p className="text-ink-soft mt-2 text-sm">
-        {openFlags === 0 ? "No flag is open." : openFlags === 1 ? "1 flag is open." : `${openFlags} flags are open.`}
-      </p>
+      {blockers?.some((blocker) => blocker.kind === "flags") ? null : (
+        <p className="text-ink-soft mt-2 text-sm">
+          {openFlags === 0 ? "No flag is open." : openFlags === 1 ? "1 flag is open." : `${openFlags} flags are open.`}
+        </p>
+      )}
     </section>
   );
 }

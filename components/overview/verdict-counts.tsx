@@ -22,7 +22,7 @@ export function VerdictCounts({ run, waived, base }: Props) {
         Verdicts
       </h2>
       <p className="text-ink-soft mb-3 text-sm">
-        <Link href={`${base}/runs/${run.id}` as Route} className="text-violet hover:underline">
+        <Link href={`${base}/runs/${run.id}` as Route} className="text-violet underline underline-offset-2">
           Run {run.number}
         </Link>{" "}
         judged {judged.toLocaleString("en")} signal {judged === 1 ? "path" : "paths"}
@@ -42,7 +42,7 @@ export function VerdictCounts({ run, waived, base }: Props) {
             <dt>
               <VerdictMark verdict={verdict} />
             </dt>
-            <dd className="text-2xl tabular-nums">{(run.counts?.[verdict] ?? 0).toLocaleString("en")}</dd>
+            <dd className="text-xl tabular-nums">{(run.counts?.[verdict] ?? 0).toLocaleString("en")}</dd>
           </div>
         ))}
       </dl>

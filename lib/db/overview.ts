@@ -9,6 +9,7 @@ import { countOpenFlags } from "./review";
 import { findRevision } from "./revision";
 import { latestDoneRun, latestRun } from "./run";
 import { currentInputHash } from "./snapshot";
+import { coveredProblems } from "./waiver";
 
 const EDITS_SHOWN = 8;
 
@@ -26,7 +27,13 @@ export async function readOverview(actor: Actor, projectId: string, letter?: str
   const readiness =
     revision.state === "draft" ? await releaseReadiness(actor, projectId, revision.id, inputHash) : null;
   return {
-    project: { id: project.id, name: project.name, description: project.description, archived: revision.archived },
+    project: {
+      id: project.id,
+      name: project.name,
+      description: project.description,
+      archived: revision.archived,
+      draftLetter: project.draftLetter,
+    },
     revision: {
       id: revision.id,
       letter: revision.letter,
@@ -38,7 +45,7 @@ export async function readOverview(actor: Actor, projectId: string, letter?: str
     openFlags,
     running: newest && (newest.state === "queued" || newest.state === "running") ? runFacts(newest, inputHash) : null,
     run: judged ? runFacts(judged, inputHash) : null,
-    waived: readiness?.waived ?? 0,
+    waived: readiness ? readiness.waived : judged ? (await coveredProblems(actor, projectId, judged)).size : 0,
     blockers: readiness?.blockers ?? null,
     edits: edits.map(({ id, at, actorName, summary, undoneAt }) => ({ id, at, actorName, summary, undone: undoneAt !== null })),
   };

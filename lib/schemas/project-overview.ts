@@ -15,7 +15,7 @@ export interface OverviewRun {
 }
 
 export interface ProjectOverview {
-  project: { id: string; name: string; description: string; archived: boolean };
+  project: { id: string; name: string; description: string; archived: boolean; draftLetter: string | null };
   revision: RevisionSummary;
   /** nets by scope: they stand beside the verdicts, which are of paths in scope */
   scopes: { in: number; out: number; incomplete: number };
