@@ -275,6 +275,8 @@ function Spacer({ span, height }: { span: number; height: number }) {
 
 /** A click on a link, button or field inside a row is that control's, not the row's. */
 function isOwnControl(target: EventTarget, row: Element): boolean {
+  // A menu that hangs from the row stands elsewhere in the page, yet its clicks reach the row.
+  if (target instanceof Element && !row.contains(target)) return true;
   const control =
     target instanceof Element ? target.closest("a, button, input, select, textarea, label") : null;
   return control !== null && row.contains(control);
