@@ -18,9 +18,18 @@ export interface WavesAt {
  * @param t         [s]; at a jump, the value after
  * @throws DomainError where the place is not on the section
  */
-export function wavesAlong({ a, b, delay }: SectionWaves, time: Float64Array, position: number, t: number): WavesAt {
-  if (!(position >= 0 && position <= 1)) throw new DomainError("A place on a section is between 0 and 1.", "position");
-  return { forward: valueAt(time, a.outgoing, t - position * delay), backward: valueAt(time, b.outgoing, t - (1 - position) * delay) };
+export function wavesAlong(
+  { a, b, delay }: SectionWaves,
+  time: Float64Array,
+  position: number,
+  t: number,
+): WavesAt {
+  if (!(position >= 0 && position <= 1))
+    throw new DomainError("A place on a section is between 0 and 1.", "position");
+  return {
+    forward: valueAt(time, a.outgoing, t - position * delay),
+    backward: valueAt(time, b.outgoing, t - (1 - position) * delay),
+  };
 }
 
 function valueAt(time: Float64Array, value: Float64Array, t: number): number {

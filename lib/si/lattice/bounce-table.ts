@@ -34,13 +34,25 @@ const MOST_MOMENTS = 20_000;
  */
 export function bounceTable(network: Network, options: { until: number; floor?: number }): Bounce[] {
   validateNetwork(network);
-  if (!(options.until > 0) || !Number.isFinite(options.until)) throw new DomainError("The bounce table needs an end time above zero.", "until");
+  if (!(options.until > 0) || !Number.isFinite(options.until))
+    throw new DomainError("The bounce table needs an end time above zero.", "until");
   const circuit = buildCircuit(network);
   const reactive = circuit.branches.find((branch) => branch.kind !== "R");
-  if (reactive) throw new UnsupportedError(`${reactive.name} stores energy, so its bounces have no single height; look at the waveforms instead.`, "parts");
+  if (reactive)
+    throw new UnsupportedError(
+      `${reactive.name} stores energy, so its bounces have no single height; look at the waveforms instead.`,
+      "parts",
+    );
   const curved = circuit.elements[0];
-  if (curved) throw new UnsupportedError(`${curved.name} is not linear, so its bounces depend on their height; look at the waveforms instead.`, "parts");
-  const moving = circuit.fixed.findIndex(({ wave }) => wave !== null && (wave.kind === "sine" || wave.value.some((value) => value !== wave.value[0])));
+  if (curved)
+    throw new UnsupportedError(
+      `${curved.name} is not linear, so its bounces depend on their height; look at the waveforms instead.`,
+      "parts",
+    );
+  const moving = circuit.fixed.findIndex(
+    ({ wave }) =>
+      wave !== null && (wave.kind === "sine" || wave.value.some((value) => value !== wave.value[0])),
+  );
   const source = moving > 0 ? moving : circuit.fixed.findIndex(({ wave }) => wave !== null);
   if (source < 0) throw new DomainError("A bounce table needs a driver.", "drivers");
   const clusters = combClusters(buildClusters(circuit));
@@ -48,18 +60,33 @@ export function bounceTable(network: Network, options: { until: number; floor?: 
   const held = new Float64Array(circuit.fixed.length);
   held[source] = 1;
   const table: Bounce[] = [];
-  runComb(circuit, clusters, source, { until: options.until, floor: options.floor ?? 1e-6, most: MOST_MOMENTS }, ({ time, cluster: { cluster }, rise, incident, outgoing }) => {
-    cluster.nodes.forEach((node, i) => (volts[node] = volts[node]! + rise[i]!));
-    cluster.ports.forEach(({ end }, k) => {
-      if (incident[k] === 0 && outgoing[k] === 0) return;
-      const line = circuit.lines[end >> 1]!;
-      const section = network.sections[line.section]!;
-      const isB = (end & 1) === 1;
-      const port: Port = isB ? line.b : line.a;
-      const voltage = port.node >= 0 ? volts[port.node]! : held[-1 - port.node]!;
-      table.push({ time, node: endNode(section, isB), section: section.name, end: isB ? "b" : "a", mode: line.mode, incident: incident[k]!, outgoing: outgoing[k]!, voltage });
-    });
-  });
+  runComb(
+    circuit,
+    clusters,
+    source,
+    { until: options.until, floor: options.floor ?? 1e-6, most: MOST_MOMENTS },
+    ({ time, cluster: { cluster }, rise, incident, outgoing }) => {
+      cluster.nodes.forEach((node, i) => (volts[node] = volts[node]! + rise[i]!));
+      cluster.ports.forEach(({ end }, k) => {
+        if (incident[k] === 0 && outgoing[k] === 0) return;
+        const line = circuit.lines[end >> 1]!;
+        const section = network.sections[line.section]!;
+        const isB = (end & 1) === 1;
+        const port: Port = isB ? line.b : line.a;
+        const voltage = port.node >= 0 ? volts[port.node]! : held[-1 - port.node]!;
+        table.push({
+          time,
+          node: endNode(section, isB),
+          section: section.name,
+          end: isB ? "b" : "a",
+          mode: line.mode,
+          incident: incident[k]!,
+          outgoing: outgoing[k]!,
+          voltage,
+        });
+      });
+    },
+  );
   return table;
 }
 

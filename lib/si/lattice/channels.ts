@@ -2,7 +2,10 @@ import type { Circuit, Port } from "./circuit";
 import { dcState, type DcState } from "./dc";
 
 /** Something that is reported over time: a node, or a wave at a line end. */
-export type Channel = { kind: "node"; node: number } | { kind: "fixed"; fixed: number } | { kind: "outgoing" | "incident"; end: number };
+export type Channel =
+  | { kind: "node"; node: number }
+  | { kind: "fixed"; fixed: number }
+  | { kind: "outgoing" | "incident"; end: number };
 
 export function nodeChannel(ref: number): Channel {
   return ref >= 0 ? { kind: "node", node: ref } : { kind: "fixed", fixed: -1 - ref };
@@ -10,7 +13,12 @@ export function nodeChannel(ref: number): Channel {
 
 /** Every wave of every line end: outgoing and incident of end 0, of end 1, … */
 export function waveChannels(circuit: Circuit): Channel[] {
-  return circuit.lines.flatMap((_, i) => [2 * i, 2 * i + 1].flatMap((end): Channel[] => [{ kind: "outgoing", end }, { kind: "incident", end }]));
+  return circuit.lines.flatMap((_, i) =>
+    [2 * i, 2 * i + 1].flatMap((end): Channel[] => [
+      { kind: "outgoing", end },
+      { kind: "incident", end },
+    ]),
+  );
 }
 
 export function recordedNodes(channels: readonly Channel[]): Set<number> {

@@ -64,12 +64,17 @@ export function buildCircuit(network: Network): Circuit {
     if (taken !== undefined) {
       const other = fixed[-1 - taken];
       if (other && !item.wave && !other.wave && other.rest === item.rest) return;
-      throw new DomainError(`${item.name} and ${other?.name ?? "ground"} both hold node ${node} at a voltage of their own; put a resistance between them.`, field);
+      throw new DomainError(
+        `${item.name} and ${other?.name ?? "ground"} both hold node ${node} at a voltage of their own; put a resistance between them.`,
+        field,
+      );
     }
     refs.set(root, -1 - fixed.length);
     fixed.push(item);
   };
-  network.rails.forEach((rail, i) => fix(rail.node, { name: rail.name, rest: rail.volts, wave: null }, `rails[${i}].node`));
+  network.rails.forEach((rail, i) =>
+    fix(rail.node, { name: rail.name, rest: rail.volts, wave: null }, `rails[${i}].node`),
+  );
   const branches: Branch[] = [];
   const tables: IvDriver[] = [];
   const behind: { node: string; source: Ref; name: string; ohms: number }[] = [];
@@ -81,7 +86,12 @@ export function buildCircuit(network: Network): Circuit {
     const item: Fixed = { name: driver.name, rest: restValue(driver.wave), wave: driver.wave };
     if (driver.resistance === 0) fix(driver.node, item, `drivers[${i}].node`);
     else {
-      behind.push({ node: driver.node, source: -1 - fixed.length, name: driver.name, ohms: driver.resistance });
+      behind.push({
+        node: driver.node,
+        source: -1 - fixed.length,
+        name: driver.name,
+        ohms: driver.resistance,
+      });
       fixed.push(item);
     }
   });
@@ -93,12 +103,14 @@ export function buildCircuit(network: Network): Circuit {
     return at;
   };
   const lines = network.sections.flatMap((section, i) => waveLines(section, i, ref));
-  for (const { node, source, name, ohms } of behind) branches.push({ name, kind: "R", a: source, b: ref(node), value: ohms });
+  for (const { node, source, name, ohms } of behind)
+    branches.push({ name, kind: "R", a: source, b: ref(node), value: ohms });
   const elements: TableElement[] = [];
   for (const driver of tables) {
     const node = ref(driver.node);
     elements.push(driverElement(driver, node, -1));
-    if (driver.capacitance) branches.push({ name: driver.name, kind: "C", a: node, b: -1, value: driver.capacitance });
+    if (driver.capacitance)
+      branches.push({ name: driver.name, kind: "C", a: node, b: -1, value: driver.capacitance });
   }
   network.parts.forEach((part) => {
     if (part.kind === "diode" || part.kind === "iv") {
@@ -106,30 +118,80 @@ export function buildCircuit(network: Network): Circuit {
       elements.push({ name: part.name, a: ref(part.a), b: ref(part.b), terms: [{ table, weight: null }] });
       return;
     }
-    const branch: Branch = { name: part.name, kind: part.kind, a: ref(part.a), b: ref(part.b), value: part.value };
-    const idle = branch.a === branch.b || (branch.a < 0 && branch.b < 0) || (part.kind === "C" && part.value === 0);
+    const branch: Branch = {
+      name: part.name,
+      kind: part.kind,
+      a: ref(part.a),
+      b: ref(part.b),
+      value: part.value,
+    };
+    const idle =
+      branch.a === branch.b || (branch.a < 0 && branch.b < 0) || (part.kind === "C" && part.value === 0);
     if (!idle) branches.push(branch);
   });
   for (const probe of network.probes) ref(probe.node);
   // Between two fixed nodes an element changes nothing that is looked at.
-  return { nodeCount, ref, fixed, branches, lines, elements: elements.filter(({ a, b }) => a !== b && (a >= 0 || b >= 0)) };
+  return {
+    nodeCount,
+    ref,
+    fixed,
+    branches,
+    lines,
+    elements: elements.filter(({ a, b }) => a !== b && (a >= 0 || b >= 0)),
+  };
 }
 
 function waveLines(section: Section, index: number, ref: (node: string) => Ref): WaveLine[] {
   const field = `sections[${index}]`;
   const port = (node: string): Port => ({ node: ref(node), second: null, sign: 1 });
   if (section.kind === "line") {
-    if (section.skin) throw new UnsupportedError(`${section.name} has skin loss, which is not simulated yet.`, `${field}.skin`);
-    return [{ section: index, mode: "line", a: port(section.a), b: port(section.b), impedance: section.impedance, delay: section.delay }];
+    if (section.skin)
+      throw new UnsupportedError(
+        `${section.name} has skin loss, which is not simulated yet.`,
+        `${field}.skin`,
+      );
+    return [
+      {
+        section: index,
+        mode: "line",
+        a: port(section.a),
+        b: port(section.b),
+        impedance: section.impedance,
+        delay: section.delay,
+      },
+    ];
   }
   if (section.kind === "rlc") {
-    if (section.r > 0) throw new UnsupportedError(`${section.name} has series loss, which is not simulated yet.`, `${field}.r`);
+    if (section.r > 0)
+      throw new UnsupportedError(
+        `${section.name} has series loss, which is not simulated yet.`,
+        `${field}.r`,
+      );
     const delay = section.length * Math.sqrt(section.l * section.c);
-    return [{ section: index, mode: "line", a: port(section.a), b: port(section.b), impedance: Math.sqrt(section.l / section.c), delay }];
+    return [
+      {
+        section: index,
+        mode: "line",
+        a: port(section.a),
+        b: port(section.b),
+        impedance: Math.sqrt(section.l / section.c),
+        delay,
+      },
+    ];
   }
   return (["even", "odd"] as const).map((mode) => {
-    const both = (first: string, second: string): Port => ({ node: ref(first), second: ref(second), sign: mode === "even" ? 1 : -1 });
-    return { section: index, mode, a: both(section.a1, section.a2), b: both(section.b1, section.b2), ...section[mode] };
+    const both = (first: string, second: string): Port => ({
+      node: ref(first),
+      second: ref(second),
+      sign: mode === "even" ? 1 : -1,
+    });
+    return {
+      section: index,
+      mode,
+      a: both(section.a1, section.a2),
+      b: both(section.b1, section.b2),
+      ...section[mode],
+    };
   });
 }
 

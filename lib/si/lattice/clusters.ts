@@ -44,7 +44,16 @@ export function buildClusters(circuit: Circuit): Cluster[] {
   const place = new Int32Array(circuit.nodeCount);
   const branchesOf = new Map<Cluster, typeof circuit.branches>();
   const create = (): Cluster => {
-    const cluster: Cluster = { size: 0, nodes: [], ports: [], e: new Float64Array(0), g: new Float64Array(0), isStatic: true, feeds: [], tables: [] };
+    const cluster: Cluster = {
+      size: 0,
+      nodes: [],
+      ports: [],
+      e: new Float64Array(0),
+      g: new Float64Array(0),
+      isStatic: true,
+      feeds: [],
+      tables: [],
+    };
     clusters.push(cluster);
     branchesOf.set(cluster, []);
     return cluster;
@@ -58,7 +67,10 @@ export function buildClusters(circuit: Circuit): Cluster[] {
   }
   const home = (ref: Ref) => (ref < 0 ? undefined : clusterOf.get(group(ref)));
   circuit.lines.forEach((line, i) => {
-    for (const [port, end] of [[line.a, 2 * i], [line.b, 2 * i + 1]] as const) {
+    for (const [port, end] of [
+      [line.a, 2 * i],
+      [line.b, 2 * i + 1],
+    ] as const) {
       const cluster = home(port.node) ?? (port.second === null ? undefined : home(port.second)) ?? create();
       cluster.ports.push(clusterPort(port, end, 1 / line.impedance, place));
     }
@@ -67,7 +79,12 @@ export function buildClusters(circuit: Circuit): Cluster[] {
     const cluster = home(branch.a) ?? home(branch.b);
     if (cluster) branchesOf.get(cluster)?.push(branch);
   }
-  for (const element of circuit.elements) home(element.a >= 0 ? element.a : element.b)?.tables.push({ element, a: element.a < 0 ? -1 : place[element.a]!, b: element.b < 0 ? -1 : place[element.b]! });
+  for (const element of circuit.elements)
+    home(element.a >= 0 ? element.a : element.b)?.tables.push({
+      element,
+      a: element.a < 0 ? -1 : place[element.a]!,
+      b: element.b < 0 ? -1 : place[element.b]!,
+    });
   for (const cluster of clusters) fill(cluster, branchesOf.get(cluster) ?? [], place);
   return clusters;
 }
@@ -76,7 +93,8 @@ function clusterPort(port: Port, end: EndIndex, admittance: number, place: Int32
   const share = port.second === null ? 1 : 0.5;
   const held: ClusterPort["held"] = [];
   if (port.node < 0) held.push({ fixed: -1 - port.node, factor: share });
-  if (port.second !== null && port.second < 0) held.push({ fixed: -1 - port.second, factor: share * port.sign });
+  if (port.second !== null && port.second < 0)
+    held.push({ fixed: -1 - port.second, factor: share * port.sign });
   return {
     end,
     admittance,
@@ -101,19 +119,31 @@ function fill(cluster: Cluster, branches: Circuit["branches"], place: Int32Array
     if (kind === "L") continue;
     const amount = kind === "R" ? 1 / value : value;
     if (kind === "C") cluster.isStatic = false;
-    for (const [from, to] of [[a, b], [b, a]] as const) {
+    for (const [from, to] of [
+      [a, b],
+      [b, a],
+    ] as const) {
       if (from < 0) continue;
       const row = place[from]!;
       add(kind === "R" ? g : e, row, row, amount);
       if (to >= 0) add(kind === "R" ? g : e, row, place[to]!, -amount);
-      else if (to < -1) cluster.feeds.push({ fixed: -1 - to, row, siemens: kind === "R" ? amount : 0, farads: kind === "C" ? amount : 0 });
+      else if (to < -1)
+        cluster.feeds.push({
+          fixed: -1 - to,
+          row,
+          siemens: kind === "R" ? amount : 0,
+          farads: kind === "C" ? amount : 0,
+        });
     }
   }
   let row = cluster.nodes.length;
   for (const { a, b, value } of coils) {
     cluster.isStatic = false;
     add(e, row, row, value);
-    for (const [ref, sign] of [[a, 1], [b, -1]] as const) {
+    for (const [ref, sign] of [
+      [a, 1],
+      [b, -1],
+    ] as const) {
       if (ref >= 0) {
         add(g, place[ref]!, row, sign);
         add(g, row, place[ref]!, -sign);
@@ -122,12 +152,16 @@ function fill(cluster: Cluster, branches: Circuit["branches"], place: Int32Array
     row++;
   }
   for (const port of cluster.ports) {
-    for (const [node, weight] of [[port.node, 1], [port.second, port.sign]] as const) {
+    for (const [node, weight] of [
+      [port.node, 1],
+      [port.second, port.sign],
+    ] as const) {
       if (node < 0) continue;
       const siemens = port.admittance * weight;
       if (port.node >= 0) add(g, node, port.node, siemens * port.share);
       if (port.second >= 0) add(g, node, port.second, siemens * port.secondShare);
-      for (const { fixed, factor } of port.held) if (fixed > 0) cluster.feeds.push({ fixed, row: node, siemens: -siemens * factor, farads: 0 });
+      for (const { fixed, factor } of port.held)
+        if (fixed > 0) cluster.feeds.push({ fixed, row: node, siemens: -siemens * factor, farads: 0 });
     }
   }
   // A node that nothing but open lines' far ends could define keeps a defined value: it is held at rest.

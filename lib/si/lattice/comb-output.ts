@@ -21,7 +21,12 @@ export interface Waveforms {
  *
  * @param together  moments closer than this are one [s]
  */
-export function drawComb(runs: readonly CombRun[], rest: Float64Array, until: number, together: number): Waveforms {
+export function drawComb(
+  runs: readonly CombRun[],
+  rest: Float64Array,
+  until: number,
+  together: number,
+): Waveforms {
   const channels = rest.length;
   const streams = runs.flatMap((run) => run.corners.map((corner) => ({ run, corner, at: 0 })));
   let most = 2;

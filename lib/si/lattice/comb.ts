@@ -40,7 +40,15 @@ export function combClusters(clusters: readonly Cluster[]): CombCluster[] {
   return clusters.map((cluster) => {
     const { size, g, ports, feeds } = cluster;
     const inverse = new Float64Array(size * size);
-    const made = { cluster, inverse, current: new Float64Array(size), rise: new Float64Array(size), incident: new Float64Array(ports.length), outgoing: new Float64Array(ports.length), isWaiting: false };
+    const made = {
+      cluster,
+      inverse,
+      current: new Float64Array(size),
+      rise: new Float64Array(size),
+      incident: new Float64Array(ports.length),
+      outgoing: new Float64Array(ports.length),
+      isWaiting: false,
+    };
     if (ports.length + feeds.length === 0) return made;
     for (let i = 0; i < size; i++) inverse[i * size + i] = 1;
     solveInPlace(g.slice(), inverse, size, size);
@@ -54,10 +62,18 @@ export function combClusters(clusters: readonly Cluster[]): CombCluster[] {
  *
  * @returns false where `most` was reached before `until`
  */
-export function runComb(circuit: Circuit, clusters: readonly CombCluster[], fixed: number, { until, floor, most }: CombLimits, each: (event: CombEvent) => void): boolean {
+export function runComb(
+  circuit: Circuit,
+  clusters: readonly CombCluster[],
+  fixed: number,
+  { until, floor, most }: CombLimits,
+  each: (event: CombEvent) => void,
+): boolean {
   const queue = new WaveQueue();
   const clusterOfEnd: { index: number; port: number }[] = [];
-  clusters.forEach(({ cluster }, index) => cluster.ports.forEach(({ end }, port) => (clusterOfEnd[end] = { index, port })));
+  clusters.forEach(({ cluster }, index) =>
+    cluster.ports.forEach(({ end }, port) => (clusterOfEnd[end] = { index, port })),
+  );
   let shortest = Infinity;
   for (const line of circuit.lines) shortest = Math.min(shortest, line.delay);
   const together = shortest * SAME_MOMENT;
@@ -67,7 +83,9 @@ export function runComb(circuit: Circuit, clusters: readonly CombCluster[], fixe
     const { cluster, inverse, current, rise, incident, outgoing } = at;
     const { size, ports } = cluster;
     current.fill(0);
-    if (starts) for (const feed of cluster.feeds) if (feed.fixed === fixed) current[feed.row] = current[feed.row]! + feed.siemens;
+    if (starts)
+      for (const feed of cluster.feeds)
+        if (feed.fixed === fixed) current[feed.row] = current[feed.row]! + feed.siemens;
     for (let k = 0; k < ports.length; k++) {
       const port = ports[k]!;
       const inflow = 2 * port.admittance * incident[k]!;
@@ -97,7 +115,11 @@ export function runComb(circuit: Circuit, clusters: readonly CombCluster[], fixe
   };
   for (const at of clusters) {
     const { feeds, ports } = at.cluster;
-    if (feeds.some((feed) => feed.fixed === fixed) || ports.some((port) => port.held.some((held) => held.fixed === fixed))) scatter(0, at, true);
+    if (
+      feeds.some((feed) => feed.fixed === fixed) ||
+      ports.some((port) => port.held.some((held) => held.fixed === fixed))
+    )
+      scatter(0, at, true);
   }
   const waiting: CombCluster[] = [];
   while (queue.size > 0 && count < most) {

@@ -55,7 +55,12 @@ const FINE = 0.05;
 const LARGEST_CURRENT = 1e3;
 
 /** A diode as a table: the junction's exponential stretched by its series resistance. */
-export function diodeTable({ saturationCurrent, emission, thermalVoltage, seriesResistance }: DiodePart): CurrentTable {
+export function diodeTable({
+  saturationCurrent,
+  emission,
+  thermalVoltage,
+  seriesResistance,
+}: DiodePart): CurrentTable {
   const unit = emission * thermalVoltage;
   const points: [number, number][] = [[-40 * unit, -saturationCurrent]];
   for (let x = -12; ; x += FINE) {
@@ -72,7 +77,11 @@ export function restWeights(element: TableElement): number[] {
 }
 
 /** Current and its slope at v, into the element's first term's scratch. */
-export function elementCurrent({ terms }: TableElement, weights: readonly number[], v: number): { amperes: number; siemens: number } {
+export function elementCurrent(
+  { terms }: TableElement,
+  weights: readonly number[],
+  v: number,
+): { amperes: number; siemens: number } {
   let amperes = 0;
   let siemens = 0;
   for (let k = 0; k < terms.length; k++) {

@@ -5,9 +5,16 @@ import { discretiseLevels, type Propagator } from "./discretise";
  * A chord over one step of exp(−t/τ) started by a ramp misses by step²/(8 τ ramp) of the swing; where several clusters
  * follow one another, their misses add.
  */
-export function curveStep(clusters: readonly Cluster[], ramp: number, until: number, fineness: number): number {
+export function curveStep(
+  clusters: readonly Cluster[],
+  ramp: number,
+  until: number,
+  fineness: number,
+): number {
   const longest = Number.isFinite(ramp) ? ramp / 4 : until / 1000;
-  const dynamic = clusters.filter((cluster) => !cluster.isStatic && cluster.ports.length + cluster.feeds.length > 0);
+  const dynamic = clusters.filter(
+    (cluster) => !cluster.isStatic && cluster.ports.length + cluster.feeds.length > 0,
+  );
   const curve = fineness / Math.max(1, dynamic.length / 2) ** 0.25;
   let step = longest;
   for (const { size, e, g } of dynamic) {
@@ -16,7 +23,8 @@ export function curveStep(clusters: readonly Cluster[], ramp: number, until: num
     const scale = Number.isFinite(ramp) ? ramp : tau;
     if (tau > 1e-3 * scale) step = Math.min(step, Math.max(curve * Math.sqrt(tau * scale), scale / 400));
   }
-  for (const cluster of dynamic) if (cluster.size > 1) step = Math.min(step, clusterStep(cluster, step, ramp, (curve * curve) / 8));
+  for (const cluster of dynamic)
+    if (cluster.size > 1) step = Math.min(step, clusterStep(cluster, step, ramp, (curve * curve) / 8));
   return step;
 }
 
@@ -49,7 +57,13 @@ function clusterStep(cluster: Cluster, step: number, ramp: number, tolerance: nu
 }
 
 /** Unknowns after each of `count` steps of a current that grows by `rate` a step into one row, from rest. */
-function rampAnswer({ p, q0, q1 }: Propagator, size: number, row: number, rate: number, count: number): Float64Array {
+function rampAnswer(
+  { p, q0, q1 }: Propagator,
+  size: number,
+  row: number,
+  rate: number,
+  count: number,
+): Float64Array {
   const z = new Float64Array((count + 1) * size);
   for (let n = 1; n <= count; n++)
     for (let i = 0; i < size; i++) {

@@ -25,7 +25,8 @@ export interface DcState {
 export function dcState(circuit: Circuit, levels: ArrayLike<number>): DcState {
   if (circuit.elements.length === 0) return linearState(circuit, levels, []);
   const weights = circuit.elements.map(restWeights);
-  const across = ({ a, b }: { a: Ref; b: Ref }, volts: Float64Array) => levelOf(a, volts, levels) - levelOf(b, volts, levels);
+  const across = ({ a, b }: { a: Ref; b: Ref }, volts: Float64Array) =>
+    levelOf(a, volts, levels) - levelOf(b, volts, levels);
   let guess = circuit.elements.map((element) => across(element, new Float64Array(circuit.nodeCount)));
   let moved = Infinity;
   for (let round = 1; round <= MOST_ROUNDS; round++) {
@@ -42,7 +43,11 @@ export function dcState(circuit: Circuit, levels: ArrayLike<number>): DcState {
     guess = guess.map((v, k) => v + share * (next[k]! - v));
     if (moved < 1e-9 && round > 40) return state;
   }
-  throw new NotConvergedError("The state of rest before t = 0 was not found; look at the I-V tables around the driver's rest.", moved, MOST_ROUNDS);
+  throw new NotConvergedError(
+    "The state of rest before t = 0 was not found; look at the I-V tables around the driver's rest.",
+    moved,
+    MOST_ROUNDS,
+  );
 }
 
 interface Companion {
@@ -68,14 +73,20 @@ function linearState(circuit: Circuit, levels: ArrayLike<number>, companions: re
   };
   for (const { kind, a, b, value } of circuit.branches) {
     if (kind !== "R") continue;
-    for (const [from, to] of [[a, b], [b, a]] as const) {
+    for (const [from, to] of [
+      [a, b],
+      [b, a],
+    ] as const) {
       if (from < 0) continue;
       addTo(from, from, 1 / value);
       addTo(from, to, -1 / value);
     }
   }
   for (const { a, b, siemens, amperes } of companions)
-    for (const [from, to, sign] of [[a, b, 1], [b, a, -1]] as const) {
+    for (const [from, to, sign] of [
+      [a, b, 1],
+      [b, a, -1],
+    ] as const) {
       if (from < 0) continue;
       addTo(from, from, siemens);
       addTo(from, to, -siemens);
@@ -89,7 +100,10 @@ function linearState(circuit: Circuit, levels: ArrayLike<number>, companions: re
     portVolts(a, 1, (ref, factor) => addTo(row, ref, factor));
     portVolts(b, -1, (ref, factor) => addTo(row, ref, factor));
     m[row * size + row] = -NEARLY_NOTHING * impedance;
-    for (const [port, sign] of [[a, 1], [b, -1]] as const) {
+    for (const [port, sign] of [
+      [a, 1],
+      [b, -1],
+    ] as const) {
       leave(port.node, sign);
       if (port.second !== null) leave(port.second, sign * port.sign);
     }
@@ -106,7 +120,11 @@ function linearState(circuit: Circuit, levels: ArrayLike<number>, companions: re
   for (const node of floatingNodes(circuit)) m[node * size + node] = m[node * size + node]! + 1;
   solveInPlace(m, rhs, size, 1);
   for (let i = nodes; i < size; i++)
-    if (Math.abs(rhs[i]!) > ABSURD_CURRENT) throw new DomainError("Before t = 0 two different voltages are joined with no resistance between; the network has no state of rest.", "drivers");
+    if (Math.abs(rhs[i]!) > ABSURD_CURRENT)
+      throw new DomainError(
+        "Before t = 0 two different voltages are joined with no resistance between; the network has no state of rest.",
+        "drivers",
+      );
   return { volts: rhs.slice(0, nodes), current: rhs.slice(nodes, nodes + circuit.lines.length) };
 }
 

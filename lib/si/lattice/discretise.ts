@@ -25,7 +25,13 @@ export function discretise(e: Float64Array, g: Float64Array, size: number, step:
 }
 
 /** Propagators of step, step/2, step/4, … , `levels` of them. */
-export function discretiseLevels(e: Float64Array, g: Float64Array, size: number, step: number, levels: number): Propagator[] {
+export function discretiseLevels(
+  e: Float64Array,
+  g: Float64Array,
+  size: number,
+  step: number,
+  levels: number,
+): Propagator[] {
   let propagator = shortStep(e, g, size, step / 2 ** (DOUBLINGS + levels - 1));
   const found: Propagator[] = [];
   for (let k = 0; k < DOUBLINGS + levels; k++) {
@@ -82,6 +88,8 @@ function shortStep(e: Float64Array, g: Float64Array, size: number, delta: number
 
 /** The same for one node of total conductance g and capacitance c ≥ 0: exact. */
 export function discretiseNode(c: number, g: number, step: number): { p: number; q0: number; q1: number } {
+  // Nothing but capacitors: charge only adds up.
+  if (g === 0) return { p: 1, q0: step / (2 * c), q1: step / (2 * c) };
   const x = (g * step) / c;
   if (!(x < 700)) return { p: 0, q0: 0, q1: 1 / g };
   const p = Math.exp(-x);

@@ -24,7 +24,8 @@ export function driveOf({ feeds }: Cluster, row: number, inputs: readonly GridIn
     for (const { fixed, value, rate } of inputs) {
       if (fixed !== feed.fixed) continue;
       drive ??= workspace.take(value.length).fill(0, 0, value.length);
-      for (let n = 0; n < value.length; n++) drive[n] = drive[n]! + feed.siemens * value[n]! + feed.farads * rate[n]!;
+      for (let n = 0; n < value.length; n++)
+        drive[n] = drive[n]! + feed.siemens * value[n]! + feed.farads * rate[n]!;
     }
   }
   return drive;

@@ -18,7 +18,13 @@ const ALIGNED = 1e-7;
  *
  * @param worthy  a corner that a straight line would miss by more than this gets its sample [V]
  */
-export function drawGrid(terms: readonly GridTerm[], rest: Float64Array, step: number, until: number, worthy: number): Waveforms {
+export function drawGrid(
+  terms: readonly GridTerm[],
+  rest: Float64Array,
+  step: number,
+  until: number,
+  worthy: number,
+): Waveforms {
   const origin = terms.reduce((first, term) => Math.min(first, term.shift), until);
   const time = sampleTimes(terms, origin, step, until, worthy);
   const values = Array.from(rest, (level) => new Float64Array(time.length).fill(level));
@@ -40,7 +46,12 @@ export function drawGrid(terms: readonly GridTerm[], rest: Float64Array, step: n
   return { time, values };
 }
 
-function addAligned(values: readonly Float64Array[], response: GridTerm["response"], weight: number, from: number) {
+function addAligned(
+  values: readonly Float64Array[],
+  response: GridTerm["response"],
+  weight: number,
+  from: number,
+) {
   for (let c = 0; c < values.length; c++) {
     const series = response[c];
     if (!series) continue;
@@ -64,7 +75,14 @@ function locate(time: Float64Array, shift: number, step: number, at: Int32Array,
   return i;
 }
 
-function addBetween(values: readonly Float64Array[], response: GridTerm["response"], weight: number, first: number, at: Int32Array, part: Float64Array) {
+function addBetween(
+  values: readonly Float64Array[],
+  response: GridTerm["response"],
+  weight: number,
+  first: number,
+  at: Int32Array,
+  part: Float64Array,
+) {
   for (let c = 0; c < values.length; c++) {
     const series = response[c];
     if (!series) continue;
@@ -82,7 +100,13 @@ function regularLength(origin: number, step: number, until: number): number {
   return Math.max(0, Math.ceil((until - origin) / step - 1e-9)) + 1 + (origin > 0 ? 1 : 0);
 }
 
-function sampleTimes(terms: readonly GridTerm[], origin: number, step: number, until: number, worthy: number): Float64Array {
+function sampleTimes(
+  terms: readonly GridTerm[],
+  origin: number,
+  step: number,
+  until: number,
+  worthy: number,
+): Float64Array {
   const regular = regularLength(origin, step, until);
   const extra: number[] = [];
   const seen: number[] = [];

@@ -39,7 +39,13 @@ export const WHOLE = 1e-7;
 /**
  * @param delayOf  each line's delay in steps as the step search settled it
  */
-export function planGrid(circuit: Circuit, clusters: readonly Cluster[], step: number, until: number, delaysInSteps: readonly number[]): GridPlan {
+export function planGrid(
+  circuit: Circuit,
+  clusters: readonly Cluster[],
+  step: number,
+  until: number,
+  delaysInSteps: readonly number[],
+): GridPlan {
   const delays = delaysInSteps.map(stepDelay);
   let block = 256;
   let pad = 4;
@@ -57,7 +63,12 @@ function stepDelay(steps: number): StepDelay {
   const whole = Math.floor(steps);
   const x = steps - whole;
   // Cubic Lagrange weights for the value x steps before sample n − whole, on offsets −2, −1, 0, +1.
-  const taps = [(x * (x * x - 1)) / 6, (x * (1 + x) * (2 - x)) / 2, ((1 + x) * (1 - x) * (2 - x)) / 2, (-x * (1 - x) * (2 - x)) / 6] as const;
+  const taps = [
+    (x * (x * x - 1)) / 6,
+    (x * (1 + x) * (2 - x)) / 2,
+    ((1 + x) * (1 - x) * (2 - x)) / 2,
+    (-x * (1 - x) * (2 - x)) / 6,
+  ] as const;
   return { whole, taps };
 }
 
@@ -65,8 +76,17 @@ function planCluster(cluster: Cluster, step: number): PlannedCluster {
   const { size, e, g } = cluster;
   const idle = cluster.ports.length + cluster.feeds.length + cluster.tables.length === 0;
   if (size === 0 || idle) return { cluster, single: null, propagator: null, atOnce: null };
-  const plain = cluster.tables.length === 0 && cluster.nodes.length === 1 && size === 1 && cluster.ports.every((port) => port.share === 1);
+  const plain =
+    cluster.tables.length === 0 &&
+    cluster.nodes.length === 1 &&
+    size === 1 &&
+    cluster.ports.every((port) => port.share === 1);
   if (plain) return { cluster, single: discretiseNode(e[0]!, g[0]!, step), propagator: null, atOnce: null };
   const felt = cluster.feeds.some((feed) => feed.farads > 0);
-  return { cluster, single: null, propagator: discretise(e, g, size, step), atOnce: felt ? discretise(e, g, size, step * AT_ONCE).q1 : null };
+  return {
+    cluster,
+    single: null,
+    propagator: discretise(e, g, size, step),
+    atOnce: felt ? discretise(e, g, size, step * AT_ONCE).q1 : null,
+  };
 }

@@ -5,7 +5,14 @@ import { driveOf, heldOf, type Arriving, type GridInput } from "./grid-input";
 import { matrixWorker } from "./matrix-worker";
 import type { TableContext } from "./table-worker";
 import { workspace } from "./workspace";
-import { endWorker, junctionWorker, throughWorker, type NodeUpdate, type PortWave, type Worker } from "./node-workers";
+import {
+  endWorker,
+  junctionWorker,
+  throughWorker,
+  type NodeUpdate,
+  type PortWave,
+  type Worker,
+} from "./node-workers";
 
 /** Deviations from rest; index 0 is the start of the input. The arrays belong to the workspace. */
 export interface GridRun {
@@ -20,7 +27,13 @@ export interface GridRun {
  * Steps the lattice through time from rest. Waves leave an end, arrive at the other a delay later;
  * each cluster turns arrivals into node voltages, and each port sends what it has less what came: out = v − a.
  */
-export function runGrid(plan: GridPlan, inputs: readonly GridInput[], nodeCount: number, recorded: Iterable<number>, tables?: TableContext): GridRun {
+export function runGrid(
+  plan: GridPlan,
+  inputs: readonly GridInput[],
+  nodeCount: number,
+  recorded: Iterable<number>,
+  tables?: TableContext,
+): GridRun {
   const { steps, pad, delays, block } = plan;
   const ends = 2 * delays.length;
   const outgoing: Float64Array[] = [];
@@ -36,9 +49,13 @@ export function runGrid(plan: GridPlan, inputs: readonly GridInput[], nodeCount:
   const arriving: Arriving[] = outgoing.map((_, end) => {
     const delayed = incident[end];
     const far = outgoing[end ^ 1]!;
-    return delayed ? { samples: delayed, offset: pad } : { samples: far, offset: pad - delays[end >> 1]!.whole };
+    return delayed
+      ? { samples: delayed, offset: pad }
+      : { samples: far, offset: pad - delays[end >> 1]!.whole };
   });
-  const workers = plan.clusters.map((planned) => clusterWorker(planned, inputs, arriving, outgoing, pad, nodes, still, scratch, tables));
+  const workers = plan.clusters.map((planned) =>
+    clusterWorker(planned, inputs, arriving, outgoing, pad, nodes, still, scratch, tables),
+  );
   for (let from = 0; from <= steps; from += block) {
     const to = Math.min(steps + 1, from + block);
     for (let end = 0; end < ends; end++) {
@@ -52,11 +69,17 @@ export function runGrid(plan: GridPlan, inputs: readonly GridInput[], nodeCount:
 }
 
 /** The run's series for each channel, sample 0 at the start of the input; null where nothing moves. */
-export function channelSeries(channels: readonly Channel[], plan: GridPlan, run: GridRun, inputs: readonly GridInput[]): (Float64Array | null)[] {
+export function channelSeries(
+  channels: readonly Channel[],
+  plan: GridPlan,
+  run: GridRun,
+  inputs: readonly GridInput[],
+): (Float64Array | null)[] {
   return channels.map((channel) => {
     if (channel.kind === "node") return run.nodes[channel.node]?.subarray(0, plan.steps + 1) ?? null;
     if (channel.kind === "fixed") return inputs.find((input) => input.fixed === channel.fixed)?.value ?? null;
-    if (channel.kind === "outgoing") return run.outgoing[channel.end]!.subarray(plan.pad, plan.pad + plan.steps + 1);
+    if (channel.kind === "outgoing")
+      return run.outgoing[channel.end]!.subarray(plan.pad, plan.pad + plan.steps + 1);
     const delayed = run.incident[channel.end];
     if (delayed) return delayed.subarray(plan.pad, plan.pad + plan.steps + 1);
     const from = plan.pad - plan.delays[channel.end >> 1]!.whole;
@@ -64,7 +87,15 @@ export function channelSeries(channels: readonly Channel[], plan: GridPlan, run:
   });
 }
 
-function interpolate(source: Float64Array, into: Float64Array, taps: readonly [number, number, number, number], shift: number, pad: number, from: number, to: number) {
+function interpolate(
+  source: Float64Array,
+  into: Float64Array,
+  taps: readonly [number, number, number, number],
+  shift: number,
+  pad: number,
+  from: number,
+  to: number,
+) {
   const [c0, c1, c2, c3] = taps;
   for (let n = from; n < to; n++) {
     const i = n + shift;
@@ -84,13 +115,28 @@ function clusterWorker(
   tables: TableContext | undefined,
 ): Worker {
   const { cluster, single, propagator } = planned;
-  if (single) return nodeWorker(single, cluster.ports, driveOf(cluster, 0, inputs) ?? still, arriving, outgoing, pad, nodes[cluster.nodes[0]!] ?? scratch);
+  if (single)
+    return nodeWorker(
+      single,
+      cluster.ports,
+      driveOf(cluster, 0, inputs) ?? still,
+      arriving,
+      outgoing,
+      pad,
+      nodes[cluster.nodes[0]!] ?? scratch,
+    );
   if (propagator) return matrixWorker(planned, inputs, arriving, outgoing, pad, nodes, tables);
   return heldWorker(cluster.ports, inputs, arriving, outgoing, pad);
 }
 
 /** Ends at fixed nodes. */
-function heldWorker(ports: readonly ClusterPort[], inputs: readonly GridInput[], arriving: readonly Arriving[], outgoing: readonly Float64Array[], pad: number): Worker {
+function heldWorker(
+  ports: readonly ClusterPort[],
+  inputs: readonly GridInput[],
+  arriving: readonly Arriving[],
+  outgoing: readonly Float64Array[],
+  pad: number,
+): Worker {
   const held = ports.map((port) => heldOf(port, inputs));
   return (from, to) => {
     for (let k = 0; k < ports.length; k++) {
@@ -104,11 +150,23 @@ function heldWorker(ports: readonly ClusterPort[], inputs: readonly GridInput[],
   };
 }
 
-function nodeWorker(kept: NodeUpdate, ports: readonly ClusterPort[], drive: Float64Array, arriving: readonly Arriving[], outgoing: readonly Float64Array[], pad: number, record: Float64Array): Worker {
+function nodeWorker(
+  kept: NodeUpdate,
+  ports: readonly ClusterPort[],
+  drive: Float64Array,
+  arriving: readonly Arriving[],
+  outgoing: readonly Float64Array[],
+  pad: number,
+  record: Float64Array,
+): Worker {
   const [first, second] = ports;
-  const wave = (port: ClusterPort): PortWave => ({ weight: 2 * port.admittance, ...arriving[port.end]!, out: outgoing[port.end]! });
+  const wave = (port: ClusterPort): PortWave => ({
+    weight: 2 * port.admittance,
+    ...arriving[port.end]!,
+    out: outgoing[port.end]!,
+  });
   if (first && ports.length === 1) return endWorker(kept, wave(first), drive, pad, record);
-  if (first && second && ports.length === 2) return throughWorker(kept, wave(first), wave(second), drive, pad, record);
+  if (first && second && ports.length === 2)
+    return throughWorker(kept, wave(first), wave(second), drive, pad, record);
   return junctionWorker(kept, ports.map(wave), drive, pad, record);
 }
-

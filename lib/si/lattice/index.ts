@@ -1,4 +1,10 @@
-export { simulate, type EndWaves, type SectionWaves, type SimulateOptions, type Simulation } from "./simulate";
+export {
+  simulate,
+  type EndWaves,
+  type SectionWaves,
+  type SimulateOptions,
+  type Simulation,
+} from "./simulate";
 export type { Accuracy } from "./step-size";
 export { bounceTable, type Bounce } from "./bounce-table";
 export { wavesAlong, type WavesAt } from "./along-line";

@@ -24,10 +24,17 @@ const AT_ONCE = 1e-9;
 export function runJump(plan: GridPlan, fixed: number, channels: readonly Channel[]): JumpRun {
   const { steps, pad, delays, step } = plan;
   const length = steps + 1 + pad;
-  const outgoing: Waves[] = delays.flatMap(() => [0, 1].map(() => ({ before: new Float64Array(length), after: new Float64Array(length) })));
-  const incident: Waves[] = outgoing.map(() => ({ before: new Float64Array(length), after: new Float64Array(length) }));
+  const outgoing: Waves[] = delays.flatMap(() =>
+    [0, 1].map(() => ({ before: new Float64Array(length), after: new Float64Array(length) })),
+  );
+  const incident: Waves[] = outgoing.map(() => ({
+    before: new Float64Array(length),
+    after: new Float64Array(length),
+  }));
   const nodes = new Map<number, Waves>();
-  for (const channel of channels) if (channel.kind === "node") nodes.set(channel.node, { before: new Float64Array(steps + 1), after: new Float64Array(steps + 1) });
+  for (const channel of channels)
+    if (channel.kind === "node")
+      nodes.set(channel.node, { before: new Float64Array(steps + 1), after: new Float64Array(steps + 1) });
   const states = plan.clusters.map((planned) => clusterState(planned, fixed, step));
   for (let n = 0; n <= steps; n++) {
     const at = n + pad;
@@ -49,8 +56,14 @@ export function runJump(plan: GridPlan, fixed: number, channels: readonly Channe
   const series = (side: keyof Waves) =>
     channels.map((channel) => {
       if (channel.kind === "node") return nodes.get(channel.node)![side];
-      if (channel.kind === "fixed") return channel.fixed === fixed ? new Float64Array(steps + 1).fill(1, side === "before" ? 1 : 0) : null;
-      return (channel.kind === "outgoing" ? outgoing : incident)[channel.end]![side].subarray(pad, pad + steps + 1);
+      if (channel.kind === "fixed")
+        return channel.fixed === fixed
+          ? new Float64Array(steps + 1).fill(1, side === "before" ? 1 : 0)
+          : null;
+      return (channel.kind === "outgoing" ? outgoing : incident)[channel.end]![side].subarray(
+        pad,
+        pad + steps + 1,
+      );
     });
   return { before: series("before"), after: series("after") };
 }
@@ -82,21 +95,35 @@ function clusterState(planned: PlannedCluster, fixed: number, step: number): Sta
     farads[feed.row] = farads[feed.row]! + feed.farads;
   }
   const kick = new Float64Array(size);
-  const held = ports.map((port) => port.held.reduce((sum, item) => (item.fixed === fixed ? sum + item.factor : sum), 0));
+  const held = ports.map((port) =>
+    port.held.reduce((sum, item) => (item.fixed === fixed ? sum + item.factor : sum), 0),
+  );
   const common = { planned, drive, kick, held, z: new Float64Array(size), kept: new Float64Array(size) };
   if (!single && !propagator) return { ...common, p: kick, q0: kick, q1: kick, atOnce: kick };
   const short = step * AT_ONCE;
   const instant = discretise(e, g, size, short);
   for (let i = 0; i < size; i++) {
     let sum = 0;
-    for (let j = 0; j < size; j++) sum += (instant.q0[i * size + j]! + instant.q1[i * size + j]!) * (farads[j]! / short);
+    for (let j = 0; j < size; j++)
+      sum += (instant.q0[i * size + j]! + instant.q1[i * size + j]!) * (farads[j]! / short);
     kick[i] = sum;
   }
-  const update = propagator ?? { p: Float64Array.of(single!.p), q0: Float64Array.of(single!.q0), q1: Float64Array.of(single!.q1) };
+  const update = propagator ?? {
+    p: Float64Array.of(single!.p),
+    q0: Float64Array.of(single!.q0),
+    q1: Float64Array.of(single!.q1),
+  };
   return { ...common, ...update, atOnce: instant.q1 };
 }
 
-function advance(state: State, n: number, at: number, incident: readonly Waves[], outgoing: readonly Waves[], nodes: ReadonlyMap<number, Waves>) {
+function advance(
+  state: State,
+  n: number,
+  at: number,
+  incident: readonly Waves[],
+  outgoing: readonly Waves[],
+  nodes: ReadonlyMap<number, Waves>,
+) {
   const { planned, p, q0, q1, atOnce, drive, kick, held, z, kept } = state;
   const { cluster, single, propagator } = planned;
   const { size, ports } = cluster;

@@ -18,7 +18,8 @@ export function solveInPlace(m: Float64Array, b: Float64Array, n: number, column
         best = i;
       }
     }
-    if (!(size > 0)) throw new NotConvergedError("The network leaves a node without any defined voltage.", size, k);
+    if (!(size > 0))
+      throw new NotConvergedError("The network leaves a node without any defined voltage.", size, k);
     if (best !== k) {
       swapRows(m, best, k, n);
       swapRows(b, best, k, columns);
@@ -28,7 +29,8 @@ export function solveInPlace(m: Float64Array, b: Float64Array, n: number, column
       const factor = m[i * n + k]! * pivot;
       if (factor === 0) continue;
       for (let j = k + 1; j < n; j++) m[i * n + j] = m[i * n + j]! - factor * m[k * n + j]!;
-      for (let j = 0; j < columns; j++) b[i * columns + j] = b[i * columns + j]! - factor * b[k * columns + j]!;
+      for (let j = 0; j < columns; j++)
+        b[i * columns + j] = b[i * columns + j]! - factor * b[k * columns + j]!;
     }
   }
   for (let k = n - 1; k >= 0; k--) {

@@ -17,7 +17,11 @@ export function lumpShortLines(network: Network, shorter: number): Network {
     }
     const { name, a, b, impedance, delay } = section;
     const half = delay / impedance / 2;
-    parts.push({ name, kind: "L", a, b, value: impedance * delay }, { name, kind: "C", a, b: "0", value: half }, { name, kind: "C", a: b, b: "0", value: half });
+    parts.push(
+      { name, kind: "L", a, b, value: impedance * delay },
+      { name, kind: "C", a, b: "0", value: half },
+      { name, kind: "C", a: b, b: "0", value: half },
+    );
   }
   return parts.length === 0 ? network : { ...network, sections, parts: [...network.parts, ...parts] };
 }

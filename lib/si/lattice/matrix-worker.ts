@@ -21,7 +21,10 @@ export function matrixWorker(
   const drives = Array.from({ length: size }, (_, row) => driveOf(cluster, row, inputs));
   const held = ports.map((port) => heldOf(port, inputs));
   const records = cluster.nodes.map((node) => nodes[node] ?? null);
-  const group = context && tables.length > 0 ? new TableGroup(cluster, elementResistance(cluster, q1), context.rest, context.weights) : null;
+  const group =
+    context && tables.length > 0
+      ? new TableGroup(cluster, elementResistance(cluster, q1), context.rest, context.weights)
+      : null;
   return (from, to) => {
     for (let n = from; n < to; n++) {
       for (let i = 0; i < size; i++) current[i] = drives[i]?.[n] ?? 0;

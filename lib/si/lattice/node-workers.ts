@@ -18,7 +18,13 @@ export interface PortWave {
 }
 
 /** A node at which one line ends. */
-export function endWorker({ p, q0, q1 }: NodeUpdate, { weight, samples, offset, out }: PortWave, drive: Float64Array, pad: number, record: Float64Array): Worker {
+export function endWorker(
+  { p, q0, q1 }: NodeUpdate,
+  { weight, samples, offset, out }: PortWave,
+  drive: Float64Array,
+  pad: number,
+  record: Float64Array,
+): Worker {
   let v = 0;
   let before = 0;
   return (from, to) => {
@@ -39,7 +45,14 @@ export function endWorker({ p, q0, q1 }: NodeUpdate, { weight, samples, offset, 
 }
 
 /** A node between two lines. */
-export function throughWorker({ p, q0, q1 }: NodeUpdate, first: PortWave, second: PortWave, drive: Float64Array, pad: number, record: Float64Array): Worker {
+export function throughWorker(
+  { p, q0, q1 }: NodeUpdate,
+  first: PortWave,
+  second: PortWave,
+  drive: Float64Array,
+  pad: number,
+  record: Float64Array,
+): Worker {
   const { weight: weightA, samples: samplesA, offset: offsetA, out: outA } = first;
   const { weight: weightB, samples: samplesB, offset: offsetB, out: outB } = second;
   let v = 0;
@@ -63,12 +76,19 @@ export function throughWorker({ p, q0, q1 }: NodeUpdate, first: PortWave, second
 }
 
 /** A node with no line or with three and more. */
-export function junctionWorker({ p, q0, q1 }: NodeUpdate, ports: readonly PortWave[], drive: Float64Array, pad: number, record: Float64Array): Worker {
+export function junctionWorker(
+  { p, q0, q1 }: NodeUpdate,
+  ports: readonly PortWave[],
+  drive: Float64Array,
+  pad: number,
+  record: Float64Array,
+): Worker {
   let v = 0;
   let before = 0;
   return (from, to) => {
     for (let n = from; n < to; n++) record[n] = drive[n]!;
-    for (const { weight, samples, offset } of ports) for (let n = from; n < to; n++) record[n] = record[n]! + weight * samples[n + offset]!;
+    for (const { weight, samples, offset } of ports)
+      for (let n = from; n < to; n++) record[n] = record[n]! + weight * samples[n + offset]!;
     let volts = v;
     let last = before;
     for (let n = from; n < to; n++) {
@@ -79,6 +99,7 @@ export function junctionWorker({ p, q0, q1 }: NodeUpdate, ports: readonly PortWa
     }
     v = volts;
     before = last;
-    for (const { samples, offset, out } of ports) for (let n = from; n < to; n++) out[n + pad] = record[n]! - samples[n + offset]!;
+    for (const { samples, offset, out } of ports)
+      for (let n = from; n < to; n++) out[n + pad] = record[n]! - samples[n + offset]!;
   };
 }

@@ -13,11 +13,22 @@ export function markRoundPeaks(waveforms: Waveforms, swing: number): Waveforms {
   for (const v of values) findPeaks(time, v, swing, extra);
   if (extra.size === 0) return waveforms;
   const order = [...extra]
-    .map(([i, offset]) => ({ from: offset < 0 ? i - 1 : i, i, offset, at: time[i]! + offset * (time[i + 1]! - time[i]!) }))
+    .map(([i, offset]) => ({
+      from: offset < 0 ? i - 1 : i,
+      i,
+      offset,
+      at: time[i]! + offset * (time[i + 1]! - time[i]!),
+    }))
     .sort((a, b) => a.at - b.at);
   return {
     time: woven(time, order, (k) => order[k]!.at),
-    values: values.map((v) => woven(v, order, (k) => (isRoundAt(v, order[k]!.i) ? parabola(v, order[k]!.i, order[k]!.offset) : straight(v, order[k]!.i, order[k]!.offset)))),
+    values: values.map((v) =>
+      woven(v, order, (k) =>
+        isRoundAt(v, order[k]!.i)
+          ? parabola(v, order[k]!.i, order[k]!.offset)
+          : straight(v, order[k]!.i, order[k]!.offset),
+      ),
+    ),
   };
 }
 
@@ -28,7 +39,8 @@ function findPeaks(time: Float64Array, v: Float64Array, swing: number, extra: Ma
     if (rise * next > 0 || rise === next || !isRound(v, i) || !isEven(time, i)) continue;
     const curvature = next - rise;
     const offset = -(rise + next) / (2 * curvature);
-    if (Math.abs(offset) > 0.02 && Math.abs(curvature * offset * offset) > 2 * WORTH * swing) extra.set(i, offset);
+    if (Math.abs(offset) > 0.02 && Math.abs(curvature * offset * offset) > 2 * WORTH * swing)
+      extra.set(i, offset);
   }
 }
 
@@ -63,7 +75,11 @@ function straight(v: Float64Array, i: number, x: number): number {
 }
 
 /** The array with one value more behind each `from`. */
-function woven(array: Float64Array, order: readonly { from: number }[], value: (k: number) => number): Float64Array {
+function woven(
+  array: Float64Array,
+  order: readonly { from: number }[],
+  value: (k: number) => number,
+): Float64Array {
   const out = new Float64Array(array.length + order.length);
   let start = 0;
   order.forEach(({ from }, k) => {

@@ -20,7 +20,14 @@ const FLOOR = 1e-13;
 const COARSE_FLOOR = 1e-6;
 
 /** Exact waveforms of a resistive network, or null where a source is a sine or the arrivals are too many. */
-export function simulateComb({ circuit, clusters, channels, rest, until, accuracy }: Prepared): { waveforms: Waveforms; steps: number } | null {
+export function simulateComb({
+  circuit,
+  clusters,
+  channels,
+  rest,
+  until,
+  accuracy,
+}: Prepared): { waveforms: Waveforms; steps: number } | null {
   const sources = movingSources(circuit);
   const delays = circuit.lines.map((line) => line.delay);
   const shortest = Math.min(until, ...delays);
@@ -30,8 +37,12 @@ export function simulateComb({ circuit, clusters, channels, rest, until, accurac
   let steps = 0;
   for (const { fixed, corners } of sources) {
     if (!corners) return null;
-    let run = tick === null ? byMoments(circuit, clusters, channels, fixed, until, FLOOR, most) : byTicks(circuit, clusters, channels, fixed, until, tick);
-    if (!run && corners.some((corner) => corner.jump !== 0)) run = byMoments(circuit, clusters, channels, fixed, until, COARSE_FLOOR, MOST_OF_A_JUMP);
+    let run =
+      tick === null
+        ? byMoments(circuit, clusters, channels, fixed, until, FLOOR, most)
+        : byTicks(circuit, clusters, channels, fixed, until, tick);
+    if (!run && corners.some((corner) => corner.jump !== 0))
+      run = byMoments(circuit, clusters, channels, fixed, until, COARSE_FLOOR, MOST_OF_A_JUMP);
     if (!run) return null;
     runs.push({ ...run, corners });
     steps += run.times.length;
@@ -39,21 +50,48 @@ export function simulateComb({ circuit, clusters, channels, rest, until, accurac
   return { waveforms: drawComb(runs, rest, until, shortest * 1e-9), steps };
 }
 
-function byTicks(circuit: Circuit, clusters: readonly Cluster[], channels: readonly Channel[], fixed: number, until: number, tick: number): Omit<CombRun, "corners"> {
-  const plan = planGrid(circuit, clusters, tick, Math.floor(until / tick + 1e-9) * tick, circuit.lines.map((line) => Math.round(line.delay / tick)));
+function byTicks(
+  circuit: Circuit,
+  clusters: readonly Cluster[],
+  channels: readonly Channel[],
+  fixed: number,
+  until: number,
+  tick: number,
+): Omit<CombRun, "corners"> {
+  const plan = planGrid(
+    circuit,
+    clusters,
+    tick,
+    Math.floor(until / tick + 1e-9) * tick,
+    circuit.lines.map((line) => Math.round(line.delay / tick)),
+  );
   const value = new Float64Array(plan.steps + 1);
   value[0] = 1;
   const inputs = [{ fixed, value, rate: new Float64Array(plan.steps + 1) }];
-  const series = channelSeries(channels, plan, runGrid(plan, inputs, circuit.nodeCount, recordedNodes(channels)), inputs);
+  const series = channelSeries(
+    channels,
+    plan,
+    runGrid(plan, inputs, circuit.nodeCount, recordedNodes(channels)),
+    inputs,
+  );
   const active: number[] = [];
-  for (let n = 0; n <= plan.steps; n++) if (series.some((rises) => rises !== null && Math.abs(rises[n]!) > FLOOR)) active.push(n);
+  for (let n = 0; n <= plan.steps; n++)
+    if (series.some((rises) => rises !== null && Math.abs(rises[n]!) > FLOOR)) active.push(n);
   return {
     times: Float64Array.from(active, (n) => n * tick),
     rises: series.map((rises) => rises && Float64Array.from(active, (n) => rises[n]!)),
   };
 }
 
-function byMoments(circuit: Circuit, clusters: readonly Cluster[], channels: readonly Channel[], fixed: number, until: number, floor: number, most: number): Omit<CombRun, "corners"> | null {
+function byMoments(
+  circuit: Circuit,
+  clusters: readonly Cluster[],
+  channels: readonly Channel[],
+  fixed: number,
+  until: number,
+  floor: number,
+  most: number,
+): Omit<CombRun, "corners"> | null {
   const times: number[] = [];
   const rises: number[][] = channels.map(() => []);
   const ofNode = new Map<number, number[]>();
@@ -72,15 +110,21 @@ function byMoments(circuit: Circuit, clusters: readonly Cluster[], channels: rea
   channels.forEach((channel, c) => {
     if (channel.kind === "fixed" && channel.fixed === fixed) set(c, 1);
   });
-  const isWhole = runComb(circuit, combClusters(clusters), fixed, { until, floor, most }, ({ time, cluster: { cluster }, rise, incident, outgoing }) => {
-    if (time !== times[times.length - 1]) times.push(time);
-    cluster.nodes.forEach((node, i) => ofNode.get(node)?.forEach((c) => set(c, rise[i]!)));
-    if (ofEnd.size > 0)
-      cluster.ports.forEach(({ end }, k) => {
-        set(ofEnd.get(`incident ${end}`), incident[k]!);
-        set(ofEnd.get(`outgoing ${end}`), outgoing[k]!);
-      });
-  });
+  const isWhole = runComb(
+    circuit,
+    combClusters(clusters),
+    fixed,
+    { until, floor, most },
+    ({ time, cluster: { cluster }, rise, incident, outgoing }) => {
+      if (time !== times[times.length - 1]) times.push(time);
+      cluster.nodes.forEach((node, i) => ofNode.get(node)?.forEach((c) => set(c, rise[i]!)));
+      if (ofEnd.size > 0)
+        cluster.ports.forEach(({ end }, k) => {
+          set(ofEnd.get(`incident ${end}`), incident[k]!);
+          set(ofEnd.get(`outgoing ${end}`), outgoing[k]!);
+        });
+    },
+  );
   if (!isWhole) return null;
   return {
     times: Float64Array.from(times),

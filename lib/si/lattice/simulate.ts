@@ -10,6 +10,7 @@ import { simulateComb } from "./simulate-comb";
 import { simulateTables } from "./simulate-tables";
 import { simulateGrid } from "./simulate-grid";
 import { lumpShortLines } from "./lump";
+import { splitLossySections } from "./split-lossy";
 import { shortestRamp, type Accuracy } from "./step-size";
 import { workspace } from "./workspace";
 
@@ -72,14 +73,16 @@ const LUMPED: Record<Accuracy, number> = { live: 1 / 120, standard: 1 / 250, ref
 export function simulate(network: Network, options: SimulateOptions): Simulation {
   validateNetwork(network);
   const { until, step } = options;
-  if (!(until > 0) || !Number.isFinite(until)) throw new DomainError("A simulation needs an end time above zero.", "until");
+  if (!(until > 0) || !Number.isFinite(until))
+    throw new DomainError("A simulation needs an end time above zero.", "until");
   if (step !== undefined && !(step > 0)) throw new DomainError("The step must be above zero.", "step");
-  const prepared = prepare(network, options);
-  const { waveforms, steps } = draw(network, prepared, options);
+  const whole = splitLossySections(network, options.accuracy ?? "standard");
+  const prepared = prepare(whole, options);
+  const { waveforms, steps } = draw(whole, prepared, options);
   const voltage: Record<string, Float64Array> = {};
   network.probes.forEach((probe, i) => (voltage[probe.name] = waveforms.values[i]!));
   const result: Simulation = { time: waveforms.time, voltage, steps };
-  if (options.waves) result.waves = sectionWaves(network, prepared.circuit, waveforms);
+  if (options.waves) result.waves = sectionWaves(whole, prepared.circuit, waveforms);
   return result;
 }
 
@@ -88,10 +91,23 @@ function prepare(network: Network, { until, accuracy = "standard", step, waves }
   const channels = network.probes.map((probe) => nodeChannel(circuit.ref(probe.node)));
   if (waves) channels.push(...waveChannels(circuit));
   const clusters = buildClusters(circuit);
-  return { circuit, clusters, measured: clusters, channels, rest: restLevels(circuit, channels), until, accuracy, step };
+  return {
+    circuit,
+    clusters,
+    measured: clusters,
+    channels,
+    rest: restLevels(circuit, channels),
+    until,
+    accuracy,
+    step,
+  };
 }
 
-function draw(network: Network, prepared: Prepared, options: SimulateOptions): { waveforms: Waveforms; steps: number } {
+function draw(
+  network: Network,
+  prepared: Prepared,
+  options: SimulateOptions,
+): { waveforms: Waveforms; steps: number } {
   const { circuit, clusters, accuracy } = prepared;
   try {
     const hasTables = circuit.elements.length > 0;
@@ -99,7 +115,8 @@ function draw(network: Network, prepared: Prepared, options: SimulateOptions): {
     if (exact) return exact;
     const ramp = shortestRamp(circuit);
     // Whoever asks for the waves wants those of every section.
-    const lumped = options.waves || !Number.isFinite(ramp) ? network : lumpShortLines(network, ramp * LUMPED[accuracy]);
+    const lumped =
+      options.waves || !Number.isFinite(ramp) ? network : lumpShortLines(network, ramp * LUMPED[accuracy]);
     // Echoes inside what was lumped are what the step need not follow.
     const ready = lumped === network ? prepared : { ...prepare(lumped, options), measured: clusters };
     return hasTables ? simulateTables(ready) : simulateGrid(ready);
@@ -109,15 +126,25 @@ function draw(network: Network, prepared: Prepared, options: SimulateOptions): {
 }
 
 function sectionWaves(network: Network, circuit: Circuit, { values }: Waveforms): SectionWaves[] {
-  return circuit.lines.map(({ section, mode, impedance, delay }, i) => {
+  const all: SectionWaves[] = [];
+  circuit.lines.forEach(({ section, mode, impedance, delay }, i) => {
     const at = network.probes.length + 4 * i;
-    return {
-      section: network.sections[section]!.name,
-      mode,
-      impedance,
-      delay,
-      a: { outgoing: values[at]!, incident: values[at + 1]! },
-      b: { outgoing: values[at + 2]!, incident: values[at + 3]! },
-    };
+    const name = network.sections[section]!.name;
+    const b = { outgoing: values[at + 2]!, incident: values[at + 3]! };
+    const before = all[all.length - 1];
+    if (before?.section === name && before.mode === mode) {
+      // The pieces of a lossy section are one section.
+      before.delay += delay;
+      before.b = b;
+    } else
+      all.push({
+        section: name,
+        mode,
+        impedance,
+        delay,
+        a: { outgoing: values[at]!, incident: values[at + 1]! },
+        b,
+      });
   });
+  return all;
 }

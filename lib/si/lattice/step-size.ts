@@ -75,29 +75,61 @@ export function shortestRamp(circuit: Circuit): number {
  *
  * @throws DomainError where the window would take more than a million steps
  */
-export function chooseStep(circuit: Circuit, clusters: readonly Cluster[], until: number, accuracy: Accuracy, { asked, isLumped }: { asked?: number; isLumped: boolean }): StepChoice {
+export function chooseStep(
+  circuit: Circuit,
+  clusters: readonly Cluster[],
+  until: number,
+  accuracy: Accuracy,
+  { asked, isLumped }: { asked?: number; isLumped: boolean },
+): StepChoice {
   const fineness = FINENESS[accuracy];
   const ramp = shortestRamp(circuit);
   const delays = circuit.lines.map((line) => line.delay);
   const shortest = Math.min(Infinity, ...delays);
   // A lumped line shifts corners by less than a step, so that they fall between samples.
   const between = isLumped ? 0.6 * fineness.ramp * ramp : Infinity;
-  const wanted = asked ?? Math.min(between, curveStep(clusters, ramp, until, circuit.elements.length > 0 ? 0.7 * fineness.curve : fineness.curve), sineStep(circuit, fineness.sine), clusters.some((cluster) => cluster.isStatic && cluster.tables.length > 0) ? ramp * fineness.table : Infinity);
+  const wanted =
+    asked ??
+    Math.min(
+      between,
+      curveStep(clusters, ramp, until, circuit.elements.length > 0 ? 0.7 * fineness.curve : fineness.curve),
+      sineStep(circuit, fineness.sine),
+      clusters.some((cluster) => cluster.isStatic && cluster.tables.length > 0)
+        ? ramp * fineness.table
+        : Infinity,
+    );
   // Where nothing rounds the corners off, they must be kept by the step alone.
   const sharp = clusters.every((cluster) => cluster.isStatic);
-  const choice = delays.length === 0 ? { step: wanted, delays } : (wholeSteps(circuit, delays, wanted, ramp) ?? betweenSteps(delays, Math.min(asked ?? (sharp ? 0.16 : 1) * fineness.ramp * ramp, wanted, shortest / 2)));
-  if (until / choice.step > MOST_STEPS) throw new DomainError(`The window of ${until} s takes more than a million steps at a delay of ${shortest} s; end it earlier or join the short sections.`, "until");
+  const choice =
+    delays.length === 0
+      ? { step: wanted, delays }
+      : (wholeSteps(circuit, delays, wanted, ramp) ??
+        betweenSteps(
+          delays,
+          Math.min(asked ?? (sharp ? 0.16 : 1) * fineness.ramp * ramp, wanted, shortest / 2),
+        ));
+  if (until / choice.step > MOST_STEPS)
+    throw new DomainError(
+      `The window of ${until} s takes more than a million steps at a delay of ${shortest} s; end it earlier or join the short sections.`,
+      "until",
+    );
   return choice;
 }
 
 function sineStep(circuit: Circuit, share: number): number {
   let step = Infinity;
-  for (const { wave } of circuit.fixed) if (wave?.kind === "sine") step = Math.min(step, share / wave.frequency);
+  for (const { wave } of circuit.fixed)
+    if (wave?.kind === "sine") step = Math.min(step, share / wave.frequency);
   return step;
 }
 
 /** A step that divides every delay, as near below `wanted` as can be and in tune with the sources' corners. */
-function wholeSteps(circuit: Circuit, delays: readonly number[], wanted: number, ramp: number): StepChoice | null {
+function wholeSteps(
+  circuit: Circuit,
+  delays: readonly number[],
+  wanted: number,
+  ramp: number,
+): StepChoice | null {
   const common = commonDelay(delays, wanted / FINER);
   if (common !== null) {
     const parts = bestParts(circuit, common, Math.max(1, Math.ceil(common / wanted - 1e-9)));
@@ -109,7 +141,12 @@ function wholeSteps(circuit: Circuit, delays: readonly number[], wanted: number,
   const slip = Number.isFinite(ramp) ? 1e-5 * ramp : 1e-6 * Math.min(...delays);
   for (let n = least; n <= FINER * least; n++) {
     const step = longest / n;
-    if (delays.every((delay) => Math.round(delay / step) > 0 && Math.abs(delay - step * Math.round(delay / step)) <= slip)) return { step, delays: delays.map((delay) => Math.round(delay / step)) };
+    if (
+      delays.every(
+        (delay) => Math.round(delay / step) > 0 && Math.abs(delay - step * Math.round(delay / step)) <= slip,
+      )
+    )
+      return { step, delays: delays.map((delay) => Math.round(delay / step)) };
   }
   return null;
 }

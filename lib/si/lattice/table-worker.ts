@@ -56,7 +56,9 @@ export class TableGroup {
     this.matrix = new Float64Array(count * count);
     this.miss = new Float64Array(count);
     this.weightsNow = tables.map(({ element }) => restWeights(element));
-    this.restCurrents = tables.map(({ element }, k) => elementCurrent(element, this.weightsNow[k]!, this.volts[k]!).amperes);
+    this.restCurrents = tables.map(
+      ({ element }, k) => elementCurrent(element, this.weightsNow[k]!, this.volts[k]!).amperes,
+    );
     this.weights = tables.map(({ element }) => weights.get(element) ?? element.terms.map(() => null));
   }
 
@@ -67,7 +69,8 @@ export class TableGroup {
     const { count, cluster, open, volts, restVolts } = this;
     for (let k = 0; k < count; k++) {
       const { element, a, b } = cluster.tables[k]!;
-      open[k] = restVolts[k]! + (a >= 0 ? z[a]! : fixedShift(element.a)) - (b >= 0 ? z[b]! : fixedShift(element.b));
+      open[k] =
+        restVolts[k]! + (a >= 0 ? z[a]! : fixedShift(element.a)) - (b >= 0 ? z[b]! : fixedShift(element.b));
       const weights = this.weights[k]!;
       for (let j = 0; j < weights.length; j++) {
         const series = weights[j];
@@ -97,7 +100,8 @@ export class TableGroup {
       if (miss > 0) high = v;
       else low = v;
       let next = v - miss / (1 + r * siemens);
-      if (!(next > low && next < high)) next = Number.isFinite(low) && Number.isFinite(high) ? (low + high) / 2 : next;
+      if (!(next > low && next < high))
+        next = Number.isFinite(low) && Number.isFinite(high) ? (low + high) / 2 : next;
       const moved = Math.abs(next - v);
       if (moved < CLOSE || high - low < CLOSE) {
         this.currents[0] = amperes - rest + siemens * (next - v);
@@ -105,7 +109,11 @@ export class TableGroup {
       }
       v = next;
     }
-    throw new NotConvergedError(`${element.name} found no voltage that fits its table.`, high - low, MOST_ROUNDS);
+    throw new NotConvergedError(
+      `${element.name} found no voltage that fits its table.`,
+      high - low,
+      MOST_ROUNDS,
+    );
   }
 
   private solveAll(): void {
@@ -113,7 +121,11 @@ export class TableGroup {
     let moved = Infinity;
     for (let round = 0; round < MOST_ROUNDS; round++) {
       for (let k = 0; k < count; k++) {
-        const { amperes, siemens } = elementCurrent(cluster.tables[k]!.element, this.weightsNow[k]!, volts[k]!);
+        const { amperes, siemens } = elementCurrent(
+          cluster.tables[k]!.element,
+          this.weightsNow[k]!,
+          volts[k]!,
+        );
         currents[k] = amperes - this.restCurrents[k]!;
         slopes[k] = siemens;
       }
@@ -135,7 +147,11 @@ export class TableGroup {
       }
       if (moved < CLOSE) return;
     }
-    throw new NotConvergedError(`${cluster.tables.map(({ element }) => element.name).join(", ")} found no voltages that fit their tables.`, moved, MOST_ROUNDS);
+    throw new NotConvergedError(
+      `${cluster.tables.map(({ element }) => element.name).join(", ")} found no voltages that fit their tables.`,
+      moved,
+      MOST_ROUNDS,
+    );
   }
 }
 
@@ -144,6 +160,12 @@ export function elementResistance({ tables, size }: Cluster, q: Float64Array): F
   const count = tables.length;
   const r = new Float64Array(count * count);
   const at = (row: number, column: number) => (row < 0 || column < 0 ? 0 : q[row * size + column]!);
-  tables.forEach((one, k) => tables.forEach((other, j) => (r[k * count + j] = at(one.a, other.a) - at(one.a, other.b) - at(one.b, other.a) + at(one.b, other.b))));
+  tables.forEach((one, k) =>
+    tables.forEach(
+      (other, j) =>
+        (r[k * count + j] =
+          at(one.a, other.a) - at(one.a, other.b) - at(one.b, other.a) + at(one.b, other.b)),
+    ),
+  );
   return r;
 }

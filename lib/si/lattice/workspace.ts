@@ -8,14 +8,16 @@ class Workspace {
 
   take(length: number): Float64Array {
     let array = this.free.pop();
-    if (!array || array.length < length) array = new Float64Array(Math.max(1024, 2 ** Math.ceil(Math.log2(length))) + 24);
+    if (!array || array.length < length)
+      array = new Float64Array(Math.max(1024, 2 ** Math.ceil(Math.log2(length))) + 24);
     this.lent.push(array);
     return array;
   }
 
   /** Takes everything back. Nothing lent may be used after. */
   endAll(): void {
-    for (const array of this.lent) if (array.length <= LARGEST_KEPT && this.free.length < MOST_KEPT) this.free.push(array);
+    for (const array of this.lent)
+      if (array.length <= LARGEST_KEPT && this.free.length < MOST_KEPT) this.free.push(array);
     this.lent = [];
   }
 }

@@ -18,8 +18,16 @@ export function validateNetwork(network: Network): void {
   for (const part of network.parts) known.add(part.a).add(part.b);
   const names = new Set<string>();
   network.probes.forEach((probe, i) => {
-    if (!known.has(probe.node)) throw new DomainError(`Probe ${probe.name} is at node ${probe.node}, which nothing else touches.`, `probes[${i}].node`);
-    if (names.has(probe.name)) throw new DomainError(`Two probes are called ${probe.name}; give each its own name.`, `probes[${i}].name`);
+    if (!known.has(probe.node))
+      throw new DomainError(
+        `Probe ${probe.name} is at node ${probe.node}, which nothing else touches.`,
+        `probes[${i}].node`,
+      );
+    if (names.has(probe.name))
+      throw new DomainError(
+        `Two probes are called ${probe.name}; give each its own name.`,
+        `probes[${i}].name`,
+      );
     names.add(probe.name);
   });
 }
@@ -74,13 +82,25 @@ function checkPart(part: Part, field: string) {
 
 function checkPwl(wave: Pwl, field: string, name: string) {
   const { time, value } = wave;
-  if (time.length === 0 || time.length !== value.length) throw new DomainError(`The wave of ${name} needs as many values as times, at least one.`, `${field}.time`);
+  if (time.length === 0 || time.length !== value.length)
+    throw new DomainError(
+      `The wave of ${name} needs as many values as times, at least one.`,
+      `${field}.time`,
+    );
   for (let i = 0; i < time.length; i++) {
     number(time[i] ?? NaN, `${field}.time[${i}]`, name);
     number(value[i] ?? NaN, `${field}.value[${i}]`, name);
-    if (i > 0 && (time[i] ?? 0) < (time[i - 1] ?? 0)) throw new DomainError(`The wave of ${name} goes back in time at point ${i + 1}; times must not decrease.`, `${field}.time[${i}]`);
+    if (i > 0 && (time[i] ?? 0) < (time[i - 1] ?? 0))
+      throw new DomainError(
+        `The wave of ${name} goes back in time at point ${i + 1}; times must not decrease.`,
+        `${field}.time[${i}]`,
+      );
   }
-  if ((time[0] ?? 0) < 0) throw new DomainError(`The wave of ${name} starts before t = 0, where the circuit is at rest.`, `${field}.time[0]`);
+  if ((time[0] ?? 0) < 0)
+    throw new DomainError(
+      `The wave of ${name} starts before t = 0, where the circuit is at rest.`,
+      `${field}.time[0]`,
+    );
 }
 
 function checkSine(wave: Sine, field: string, name: string) {
@@ -96,7 +116,11 @@ function checkTable(points: IvTable, field: string, name: string) {
   points.forEach(([volts, amperes], i) => {
     number(volts, `${field}[${i}]`, name);
     number(amperes, `${field}[${i}]`, name);
-    if (i > 0 && volts <= (points[i - 1]?.[0] ?? 0)) throw new DomainError(`The I-V table of ${name} must go up in volts; point ${i + 1} does not.`, `${field}[${i}]`);
+    if (i > 0 && volts <= (points[i - 1]?.[0] ?? 0))
+      throw new DomainError(
+        `The I-V table of ${name} must go up in volts; point ${i + 1} does not.`,
+        `${field}[${i}]`,
+      );
   });
 }
 
@@ -105,11 +129,13 @@ function number(value: number, field: string, name: string) {
 }
 
 function positive(value: number, field: string, name: string) {
-  if (!(Number.isFinite(value) && value > 0)) throw new DomainError(`${name}: ${last(field)} must be above zero.`, field);
+  if (!(Number.isFinite(value) && value > 0))
+    throw new DomainError(`${name}: ${last(field)} must be above zero.`, field);
 }
 
 function notNegative(value: number, field: string, name: string) {
-  if (!(Number.isFinite(value) && value >= 0)) throw new DomainError(`${name}: ${last(field)} must be zero or more.`, field);
+  if (!(Number.isFinite(value) && value >= 0))
+    throw new DomainError(`${name}: ${last(field)} must be zero or more.`, field);
 }
 
 function last(field: string): string {

@@ -1,7 +1,12 @@
 /** Readings of a waveform joined by straight lines; a repeated time is a jump (before, after). */
 
 /** Times and values inside a window: from the value after a jump at its start to the value before one at its end. */
-export function cutWindow(time: ArrayLike<number>, value: ArrayLike<number>, from: number, to: number): { t: Float64Array; v: Float64Array } {
+export function cutWindow(
+  time: ArrayLike<number>,
+  value: ArrayLike<number>,
+  from: number,
+  to: number,
+): { t: Float64Array; v: Float64Array } {
   const count = time.length;
   // First sample later than `from`, first at or later than `to`: the ends are read between samples.
   const first = firstWhere(count, (i) => time[i]! > from);

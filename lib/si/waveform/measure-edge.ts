@@ -58,8 +58,10 @@ const NOTHING = 0.005;
  */
 export function measureEdge(time: Float64Array, voltage: Float64Array, window: EdgeWindow): EdgeMeasures {
   const { from, to, low, high, settleBand = 0.05 } = window;
-  if (time.length === 0 || time.length !== voltage.length) throw new DomainError("A waveform needs as many voltages as times, at least one.", "voltage");
-  if (!(high > low)) throw new DomainError("The edge has no swing: its high level must be above its low level.", "high");
+  if (time.length === 0 || time.length !== voltage.length)
+    throw new DomainError("A waveform needs as many voltages as times, at least one.", "voltage");
+  if (!(high > low))
+    throw new DomainError("The edge has no swing: its high level must be above its low level.", "high");
   if (!(to > from)) throw new DomainError("The window must end after it starts.", "to");
   const swing = high - low;
   const eps = NOTHING * swing;
@@ -89,7 +91,11 @@ export function measureEdge(time: Float64Array, voltage: Float64Array, window: E
     vilCrossing: isRise ? nearFirst : farFirst,
     vihCrossing: isRise ? farFirst : nearFirst,
     farThresholdLast: lastBelow(t, v, far),
-    slew2080: slew(0.6 * swing, firstAtOrAbove(t, v, pre + 0.2 * swing), firstAtOrAbove(t, v, pre + 0.8 * swing)),
+    slew2080: slew(
+      0.6 * swing,
+      firstAtOrAbove(t, v, pre + 0.2 * swing),
+      firstAtOrAbove(t, v, pre + 0.8 * swing),
+    ),
     slewThresholds: slew(far - near, nearFirst, farFirst),
     settling: settling(t, v, post, settleBand * swing),
     ringback: ringback(v, farAc, far, eps, isRise),
@@ -112,7 +118,8 @@ function highest(v: Float64Array): number {
 /** Lowest value at or after a time at which the waveform passes upward (or starts). */
 function lowestAfter(t: Float64Array, v: Float64Array, since: number): number {
   let lowest = Infinity;
-  for (let i = v.length - 1; i >= 0 && t[i]! >= since; i--) if (v[i]! < lowest && (t[i]! > since || i === 0 || v[i]! >= v[i - 1]!)) lowest = v[i]!;
+  for (let i = v.length - 1; i >= 0 && t[i]! >= since; i--)
+    if (v[i]! < lowest && (t[i]! > since || i === 0 || v[i]! >= v[i - 1]!)) lowest = v[i]!;
   return lowest;
 }
 
@@ -143,7 +150,13 @@ function fallBack(v: Float64Array, near: number, far: number): number {
 }
 
 /** From the first crossing of the far threshold: the lowest value after the running maximum first drops by more than eps. */
-function ringback(v: Float64Array, start: number, far: number, eps: number, isRise: boolean): EdgeMeasures["ringback"] {
+function ringback(
+  v: Float64Array,
+  start: number,
+  far: number,
+  eps: number,
+  isRise: boolean,
+): EdgeMeasures["ringback"] {
   let i = 0;
   while (i < v.length && v[i]! < start) i++;
   if (i === v.length) return { present: false, level: null, margin: null };

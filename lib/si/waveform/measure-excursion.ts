@@ -20,8 +20,13 @@ export interface Excursion {
  * @param rails  [V], low < high
  * @throws DomainError where the record is empty or the rails are the wrong way round
  */
-export function measureExcursion(time: Float64Array, voltage: Float64Array, rails: { high: number; low: number }): Excursion {
-  if (time.length === 0 || time.length !== voltage.length) throw new DomainError("A waveform needs as many voltages as times, at least one.", "voltage");
+export function measureExcursion(
+  time: Float64Array,
+  voltage: Float64Array,
+  rails: { high: number; low: number },
+): Excursion {
+  if (time.length === 0 || time.length !== voltage.length)
+    throw new DomainError("A waveform needs as many voltages as times, at least one.", "voltage");
   if (!(rails.low < rails.high)) throw new DomainError("The upper rail must be above the lower.", "rails");
   let highest = -Infinity;
   let lowest = Infinity;
@@ -29,7 +34,14 @@ export function measureExcursion(time: Float64Array, voltage: Float64Array, rail
     if (v > highest) highest = v;
     if (v < lowest) lowest = v;
   }
-  const result: Excursion = { above: Math.max(0, highest - rails.high), below: Math.max(0, rails.low - lowest), aboveArea: 0, belowArea: 0, aboveTime: 0, belowTime: 0 };
+  const result: Excursion = {
+    above: Math.max(0, highest - rails.high),
+    below: Math.max(0, rails.low - lowest),
+    aboveArea: 0,
+    belowArea: 0,
+    aboveTime: 0,
+    belowTime: 0,
+  };
   if (result.above > 0) {
     result.aboveArea = areaAbove(time, voltage, rails.high);
     result.aboveTime = longestAbove(time, voltage, rails.high);

@@ -9,7 +9,13 @@ const HALVES = 6;
  *
  * @param since  only what is later counts [s]
  */
-export function ringFrequency(t: Float64Array, v: Float64Array, since: number, level: number, band: number): number | null {
+export function ringFrequency(
+  t: Float64Array,
+  v: Float64Array,
+  since: number,
+  level: number,
+  band: number,
+): number | null {
   const crossings: number[] = [];
   let isAbove = false;
   let met: number | null = null;

@@ -15,6 +15,13 @@ export const calibration: BenchSection = {
       kept += v;
     };
     const value = microseconds(loop);
-    return [{ what: "100,000 steps of a recursion with a delay", value, unit: "µs", note: kept > 0 ? "" : "no result" }];
+    return [
+      {
+        what: "100,000 steps of a recursion with a delay",
+        value,
+        unit: "µs",
+        note: kept > 0 ? "" : "no result",
+      },
+    ];
   },
 };

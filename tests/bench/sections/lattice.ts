@@ -7,20 +7,54 @@ const PS = 1e-12;
 export const lattice: BenchSection = {
   title: "Lattice",
   run: () => [
-    { what: "point to point, open, 20 round trips", value: microseconds(() => simulate(pointToPoint(0.5, 0, 17), { until: 20e-9 })), unit: "µs", goal: 50 },
-    { what: "point to point, 5 pF at the end, 20 round trips", value: microseconds(() => simulate(pointToPoint(0.5, 5, 17), { until: 20e-9 })), unit: "µs" },
-    { what: "fly-by, 8 loads of 2 pF, 15 ns", value: microseconds(() => simulate(flyBy(8, 100), { until: 15e-9 })), unit: "µs", goal: 300 },
-    { what: "fly-by, 8 loads, lengths all different, 15 ns", value: microseconds(() => simulate(flyBy(8, 100, 7.3), { until: 15e-9 })), unit: "µs" },
-    { what: "tee, incommensurate, resistive, 15 ns", value: microseconds(() => simulate(tee(), { until: 15e-9 })), unit: "µs" },
+    {
+      what: "point to point, open, 20 round trips",
+      value: microseconds(() => simulate(pointToPoint(0.5, 0, 17), { until: 20e-9 })),
+      unit: "µs",
+      goal: 50,
+    },
+    {
+      what: "point to point, 5 pF at the end, 20 round trips",
+      value: microseconds(() => simulate(pointToPoint(0.5, 5, 17), { until: 20e-9 })),
+      unit: "µs",
+    },
+    {
+      what: "fly-by, 8 loads of 2 pF, 15 ns",
+      value: microseconds(() => simulate(flyBy(8, 100), { until: 15e-9 })),
+      unit: "µs",
+      goal: 300,
+    },
+    {
+      what: "fly-by, 8 loads, lengths all different, 15 ns",
+      value: microseconds(() => simulate(flyBy(8, 100, 7.3), { until: 15e-9 })),
+      unit: "µs",
+    },
+    {
+      what: "tee, incommensurate, resistive, 15 ns",
+      value: microseconds(() => simulate(tee(), { until: 15e-9 })),
+      unit: "µs",
+    },
     { what: "10,000 different point to point with metrics", value: manyDifferent(), unit: "ms", goal: 1000 },
   ],
 };
 
 function driver(resistance: number, ramp: number): Network["drivers"][number] {
-  return { name: "U1", kind: "thevenin", node: "n0", resistance, wave: { kind: "pwl", time: [0, ramp], value: [0, 3.3] } };
+  return {
+    name: "U1",
+    kind: "thevenin",
+    node: "n0",
+    resistance,
+    wave: { kind: "pwl", time: [0, ramp], value: [0, 3.3] },
+  };
 }
 
-function pointToPoint(delayNs: number, pf: number, resistance: number, impedance = 50, ramp = 300 * PS): Network {
+function pointToPoint(
+  delayNs: number,
+  pf: number,
+  resistance: number,
+  impedance = 50,
+  ramp = 300 * PS,
+): Network {
   return {
     rails: [],
     drivers: [driver(resistance, ramp)],
@@ -35,7 +69,14 @@ function flyBy(loads: number, delayPs: number, spreadPs = 0): Network {
   const parts: Network["parts"] = [];
   const probes: Network["probes"] = [];
   for (let i = 1; i <= loads; i++) {
-    sections.push({ name: `s${i}`, kind: "line", a: `n${i - 1}`, b: `n${i}`, impedance: 50, delay: (delayPs + spreadPs * Math.sqrt(i * i + 1)) * PS });
+    sections.push({
+      name: `s${i}`,
+      kind: "line",
+      a: `n${i - 1}`,
+      b: `n${i}`,
+      impedance: 50,
+      delay: (delayPs + spreadPs * Math.sqrt(i * i + 1)) * PS,
+    });
     parts.push({ name: `c${i}`, kind: "C", a: `n${i}`, b: "0", value: 2 * PS });
     probes.push({ name: `rx${i}`, node: `n${i}` });
   }
@@ -43,8 +84,24 @@ function flyBy(loads: number, delayPs: number, spreadPs = 0): Network {
 }
 
 function tee(): Network {
-  const line = (name: string, a: string, b: string, delay: number): Section => ({ name, kind: "line", a, b, impedance: 50, delay: delay * PS });
-  return { rails: [], drivers: [driver(20, 300 * PS)], sections: [line("t", "n0", "j", 301.7), line("u", "j", "e", 411.13), line("w", "j", "f", 233.91)], parts: [], probes: [{ name: "e", node: "e" }, { name: "f", node: "f" }] };
+  const line = (name: string, a: string, b: string, delay: number): Section => ({
+    name,
+    kind: "line",
+    a,
+    b,
+    impedance: 50,
+    delay: delay * PS,
+  });
+  return {
+    rails: [],
+    drivers: [driver(20, 300 * PS)],
+    sections: [line("t", "n0", "j", 301.7), line("u", "j", "e", 411.13), line("w", "j", "f", 233.91)],
+    parts: [],
+    probes: [
+      { name: "e", node: "e" },
+      { name: "f", node: "f" },
+    ],
+  };
 }
 
 /** Every net has its own length, load, driver and edge; the whole in ms. */
@@ -55,7 +112,16 @@ function manyDifferent(): number {
     const delay = 0.15 + 0.5 * ((i * 0.6180339887) % 1);
     const net = pointToPoint(delay, 1 + ((i * 7) % 5), 15 + (i % 40), 45 + (i % 21), (300 + (i % 700)) * PS);
     const { time, voltage } = simulate(net, { until: 20 * delay * 1e-9 });
-    const edge = measureEdge(time, voltage.rx!, { edge: "rise", from: 0, to: time[time.length - 1]!, low: 0, high: 3.3, vil: 0.8, vih: 2, vmeas: 1.5 });
+    const edge = measureEdge(time, voltage.rx!, {
+      edge: "rise",
+      from: 0,
+      to: time[time.length - 1]!,
+      low: 0,
+      high: 3.3,
+      vil: 0.8,
+      vih: 2,
+      vmeas: 1.5,
+    });
     seen += edge.overshoot;
   }
   return seen >= 0 ? performance.now() - start : NaN;

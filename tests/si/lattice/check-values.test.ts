@@ -5,15 +5,32 @@ import { pointToPoint, readAt } from "./nets";
 const T = 1e-9;
 
 /** Voltages just after 1, 3, 5 … one-way delays at the load, 0, 2, 4 … at the source. */
-function steps(volts: number, resistance: number, load: number | null, where: "source" | "load", count: number): number[] {
-  const { time, voltage } = simulate(pointToPoint({ volts, resistance, load, delay: T }), { until: (2 * count + 1) * T });
-  return Array.from({ length: count }, (_, k) => readAt(time, voltage[where]!, (2 * k + (where === "load" ? 1 : 0) + 0.5) * T));
+function steps(
+  volts: number,
+  resistance: number,
+  load: number | null,
+  where: "source" | "load",
+  count: number,
+): number[] {
+  const { time, voltage } = simulate(pointToPoint({ volts, resistance, load, delay: T }), {
+    until: (2 * count + 1) * T,
+  });
+  return Array.from({ length: count }, (_, k) =>
+    readAt(time, voltage[where]!, (2 * k + (where === "load" ? 1 : 0) + 0.5) * T),
+  );
 }
 
 describe("lattice voltages after a step, to 1e-3 V", () => {
   it.each([
     ["2 V, 75 Ω, open, load (computed; textbook kind, from memory)", 2, 75, null, "load", [1.6, 1.92, 1.984]],
-    ["2 V, 75 Ω, open, source (computed; textbook kind, from memory)", 2, 75, null, "source", [0.8, 1.76, 1.952]],
+    [
+      "2 V, 75 Ω, open, source (computed; textbook kind, from memory)",
+      2,
+      75,
+      null,
+      "source",
+      [0.8, 1.76, 1.952],
+    ],
     ["2 V, 25 Ω, open (computed)", 2, 25, null, "load", [2.667, 1.778, 2.074, 1.975]],
     ["3.3 V, 10 Ω, open (computed)", 3.3, 10, null, "load", [5.5, 1.833, 4.278, 2.648, 3.735]],
     ["3.3 V, 17 Ω, open (computed)", 3.3, 17, null, "load", [4.925, 2.499, 3.694, 3.106]],
@@ -62,8 +79,20 @@ describe("overshoot of a straight ramp at an open 50 Ω line, % of the swing, to
   ])("%d Ω driver", (resistance, row) => {
     ratios.forEach((ratio, i) => {
       const until = 200 * T;
-      const { time, voltage } = simulate(pointToPoint({ resistance, load: null, delay: T, ramp: ratio * T }), { until });
-      const { overshoot } = measureEdge(time, voltage.load!, { edge: "rise", from: 0, to: until, low: 0, high: 1, vil: 0.3, vih: 0.7, vmeas: 0.5 });
+      const { time, voltage } = simulate(
+        pointToPoint({ resistance, load: null, delay: T, ramp: ratio * T }),
+        { until },
+      );
+      const { overshoot } = measureEdge(time, voltage.load!, {
+        edge: "rise",
+        from: 0,
+        to: until,
+        low: 0,
+        high: 1,
+        vil: 0.3,
+        vih: 0.7,
+        vmeas: 0.5,
+      });
       expect(Math.abs(100 * overshoot - row[i]!)).toBeLessThan(0.0501);
     });
   });

@@ -32,29 +32,57 @@ const trees = (most: number, reactive: boolean): fc.Arbitrary<Tree> =>
 function treeNet({ lines, resistance, ramp }: Tree, scale = { ohms: 1, time: 1 }, wave?: Pwl): Network {
   const net: Network = {
     rails: [],
-    drivers: [{ name: "U1", kind: "thevenin", node: "n0", resistance: resistance * scale.ohms, wave: wave ?? edge(1, ramp * 10 * PS * scale.time) }],
+    drivers: [
+      {
+        name: "U1",
+        kind: "thevenin",
+        node: "n0",
+        resistance: resistance * scale.ohms,
+        wave: wave ?? edge(1, ramp * 10 * PS * scale.time),
+      },
+    ],
     sections: [],
     parts: [],
     probes: [{ name: "n0", node: "n0" }],
   };
   lines.forEach((line, i) => {
     const node = `n${i + 1}`;
-    net.sections.push({ name: `s${i}`, kind: "line", a: `n${line.parent % (i + 1)}`, b: node, impedance: line.impedance * scale.ohms, delay: line.delay * 10 * PS * scale.time });
-    if (line.farads) net.parts.push({ name: `c${i}`, kind: "C", a: node, b: "0", value: (line.farads * PS * scale.time) / scale.ohms });
-    if (line.ohms) net.parts.push({ name: `r${i}`, kind: "R", a: node, b: "0", value: line.ohms * scale.ohms });
+    net.sections.push({
+      name: `s${i}`,
+      kind: "line",
+      a: `n${line.parent % (i + 1)}`,
+      b: node,
+      impedance: line.impedance * scale.ohms,
+      delay: line.delay * 10 * PS * scale.time,
+    });
+    if (line.farads)
+      net.parts.push({
+        name: `c${i}`,
+        kind: "C",
+        a: node,
+        b: "0",
+        value: (line.farads * PS * scale.time) / scale.ohms,
+      });
+    if (line.ohms)
+      net.parts.push({ name: `r${i}`, kind: "R", a: node, b: "0", value: line.ohms * scale.ohms });
     net.probes.push({ name: node, node });
   });
   return net;
 }
 
 /** Final voltage of a tree, whose lines are wires at DC. */
-const dcLevel = ({ lines, resistance }: Tree) => 1 / (1 + resistance * lines.reduce((sum, { ohms }) => (ohms ? sum + 1 / ohms : sum), 0));
+const dcLevel = ({ lines, resistance }: Tree) =>
+  1 / (1 + resistance * lines.reduce((sum, { ohms }) => (ohms ? sum + 1 / ohms : sum), 0));
 
 describe("laws of the lattice", () => {
   it("superposition: the answer to a + b is the sum of the answers, to 1e-9 resistive and 0.1 % with capacitors", () => {
     fc.assert(
       fc.property(trees(5, true), (tree) => {
-        const waves = [edge(1, 200 * PS), edge(-0.4, 300 * PS, 700 * PS), { kind: "pwl" as const, time: [0, 200 * PS, 700 * PS, 1000 * PS], value: [0, 1, 1, 0.6] }];
+        const waves = [
+          edge(1, 200 * PS),
+          edge(-0.4, 300 * PS, 700 * PS),
+          { kind: "pwl" as const, time: [0, 200 * PS, 700 * PS, 1000 * PS], value: [0, 1, 1, 0.6] },
+        ];
         const isPlain = tree.lines.every((line) => !line.farads);
         const runs = waves.map((wave) => simulate(treeNet(tree, undefined, wave), { until: 6e-9 }));
         for (let t = 0; t < 6e-9; t += 3.7e-11) {
@@ -70,9 +98,14 @@ describe("laws of the lattice", () => {
     fc.assert(
       fc.property(trees(5, true), fc.integer({ min: 1, max: 900 }), (tree, late) => {
         const now = simulate(treeNet(tree), { until: 4e-9 });
-        const later = simulate(treeNet(tree, undefined, edge(1, tree.ramp * 10 * PS, late * PS)), { until: 4e-9 + late * PS });
+        const later = simulate(treeNet(tree, undefined, edge(1, tree.ramp * 10 * PS, late * PS)), {
+          until: 4e-9 + late * PS,
+        });
         now.time.forEach((t, i) => {
-          if (t <= 4e-9) expect(Math.abs(readAt(later.time, later.voltage.n1!, t + late * PS) - now.voltage.n1![i]!)).toBeLessThan(1e-4);
+          if (t <= 4e-9)
+            expect(
+              Math.abs(readAt(later.time, later.voltage.n1!, t + late * PS) - now.voltage.n1![i]!),
+            ).toBeLessThan(1e-4);
         });
       }),
       settings,
@@ -138,7 +171,8 @@ describe("laws of the lattice", () => {
     fc.assert(
       fc.property(trees(40, true), (tree) => {
         const { time, voltage } = simulate(treeNet(tree), { until: 3e-9, accuracy: "live" });
-        for (const values of Object.values(voltage)) for (const v of values) if (!Number.isFinite(v) || Math.abs(v) > 50) throw new Error(`${v}`);
+        for (const values of Object.values(voltage))
+          for (const v of values) if (!Number.isFinite(v) || Math.abs(v) > 50) throw new Error(`${v}`);
         for (let i = 1; i < time.length; i++) if (!(time[i]! >= time[i - 1]!)) throw new Error(`${time[i]}`);
         expect(time[0]).toBe(0);
         expect(time[time.length - 1]).toBeGreaterThanOrEqual(3e-9 * (1 - 1e-12));
@@ -148,8 +182,21 @@ describe("laws of the lattice", () => {
   });
 
   it("equal legs of a star see equal voltages, exactly", () => {
-    const leg = (i: number): Section => ({ name: `leg${i}`, kind: "line", a: "hub", b: `r${i}`, impedance: 60, delay: 333.3 * PS });
-    const net: Network = { rails: [], drivers: [{ name: "U1", kind: "thevenin", node: "hub", resistance: 20, wave: edge(3.3, 150 * PS) }], sections: [0, 1, 2, 3].map(leg), parts: [], probes: [] };
+    const leg = (i: number): Section => ({
+      name: `leg${i}`,
+      kind: "line",
+      a: "hub",
+      b: `r${i}`,
+      impedance: 60,
+      delay: 333.3 * PS,
+    });
+    const net: Network = {
+      rails: [],
+      drivers: [{ name: "U1", kind: "thevenin", node: "hub", resistance: 20, wave: edge(3.3, 150 * PS) }],
+      sections: [0, 1, 2, 3].map(leg),
+      parts: [],
+      probes: [],
+    };
     for (let i = 0; i < 4; i++) {
       net.parts.push({ name: `c${i}`, kind: "C", a: `r${i}`, b: "0", value: 3e-12 });
       net.probes.push({ name: `r${i}`, node: `r${i}` });

@@ -12,7 +12,14 @@ export interface PointToPoint {
 }
 
 /** Driver at "a", one line, load at "b". */
-export function pointToPoint({ volts = 1, resistance, impedance = 50, load, delay, ramp = 0 }: PointToPoint): Network {
+export function pointToPoint({
+  volts = 1,
+  resistance,
+  impedance = 50,
+  load,
+  delay,
+  ramp = 0,
+}: PointToPoint): Network {
   return {
     rails: [],
     drivers: [{ name: "U1", kind: "thevenin", node: "a", resistance, wave: edge(volts, ramp) }],

@@ -5,8 +5,18 @@ import type { Network, Section } from "@/lib/si";
 export interface ReferenceCase {
   id: string;
   linear: boolean;
-  circuit: { rails: Raw[]; drivers: Raw[]; sections: Raw[]; parts: Raw[]; receivers: { name: string; node: string; role: string }[] };
-  settings: { t_stop_ps: number; thresholds: { vil: number; vih: number; vmeas: number }; rails: { vdd: number; vss: number } };
+  circuit: {
+    rails: Raw[];
+    drivers: Raw[];
+    sections: Raw[];
+    parts: Raw[];
+    receivers: { name: string; node: string; role: string }[];
+  };
+  settings: {
+    t_stop_ps: number;
+    thresholds: { vil: number; vih: number; vmeas: number };
+    rails: { vdd: number; vss: number };
+  };
   waveforms: Record<string, { t_ps: number[]; v: number[] }>;
   metrics: Record<string, { edges?: EdgeMetrics[]; absolute?: Record<string, number> }>;
   bounce_table?: { rows: BounceRow[] };
@@ -49,16 +59,42 @@ export function networkOf({ circuit }: ReferenceCase): Network {
     rails: circuit.rails.map((r) => ({ name: r.name, node: r.node, volts: r.v })),
     drivers: circuit.drivers.map((d, i) => {
       const { t_ps, v } = d.wave as { t_ps: number[]; v: number[] };
-      if ((d.kind as string) === "thevenin") return { name: named(d, i, "driver"), kind: "thevenin", node: d.node, resistance: d.r_ohm, wave: pwl(t_ps, v) };
+      if ((d.kind as string) === "thevenin")
+        return {
+          name: named(d, i, "driver"),
+          kind: "thevenin",
+          node: d.node,
+          resistance: d.r_ohm,
+          wave: pwl(t_ps, v),
+        };
       const weight = ({ t_ps: t, k }: { t_ps: number[]; k: number[] }) => pwl(t, k);
-      return { name: named(d, i, "driver"), kind: "iv", node: d.node, vdd: d.vdd, pullup: d.pullup, pulldown: d.pulldown, pullupWeight: weight(d.k_pu), pulldownWeight: weight(d.k_pd) };
+      return {
+        name: named(d, i, "driver"),
+        kind: "iv",
+        node: d.node,
+        vdd: d.vdd,
+        pullup: d.pullup,
+        pulldown: d.pulldown,
+        pullupWeight: weight(d.k_pu),
+        pulldownWeight: weight(d.k_pd),
+      };
     }),
     sections: circuit.sections.map((s, i) => sectionOf(s, named(s, i, "section"))),
     parts: circuit.parts.map((p, i) => {
       const { a, b } = p as { a: string; b: string };
       const name = named(p, i, "part");
       const kind = p.kind as string;
-      if (kind === "D") return { name, kind: "diode", a, b, saturationCurrent: p.is_a, emission: p.n, thermalVoltage: p.vt_v, seriesResistance: p.rs_ohm };
+      if (kind === "D")
+        return {
+          name,
+          kind: "diode",
+          a,
+          b,
+          saturationCurrent: p.is_a,
+          emission: p.n,
+          thermalVoltage: p.vt_v,
+          seriesResistance: p.rs_ohm,
+        };
       if (kind === "IV") return { name, kind: "iv", a, b, points: p.points };
       if (kind === "C") return { name, kind, a, b, value: (p.pf as number) * PS };
       if (kind === "L") return { name, kind, a, b, value: (p.nh as number) * 1e-9 };
@@ -72,16 +108,46 @@ function sectionOf(s: Raw, name: string): Section {
   const kind = s.kind as string;
   if (kind === "coupled_pair") {
     const mode = (z: number, td: number) => ({ impedance: z, delay: td * PS });
-    return { name, kind: "pair", a1: s.a1, a2: s.a2, b1: s.b1, b2: s.b2, even: mode(s.z_even_ohm, s.td_even_ps), odd: mode(s.z_odd_ohm, s.td_odd_ps) };
+    return {
+      name,
+      kind: "pair",
+      a1: s.a1,
+      a2: s.a2,
+      b1: s.b1,
+      b2: s.b2,
+      even: mode(s.z_even_ohm, s.td_even_ps),
+      odd: mode(s.z_odd_ohm, s.td_odd_ps),
+    };
   }
-  if (kind === "rlc_line") return { name, kind: "rlc", a: s.a, b: s.b, l: (s.l_nh_per_m as number) * 1e-9, c: (s.c_pf_per_m as number) * PS, r: s.r_ohm_per_m, length: s.length_m };
-  const line: Section = { name, kind: "line", a: s.a, b: s.b, impedance: s.z0_ohm, delay: (s.td_ps as number) * PS };
+  if (kind === "rlc_line")
+    return {
+      name,
+      kind: "rlc",
+      a: s.a,
+      b: s.b,
+      l: (s.l_nh_per_m as number) * 1e-9,
+      c: (s.c_pf_per_m as number) * PS,
+      r: s.r_ohm_per_m,
+      length: s.length_m,
+    };
+  const line: Section = {
+    name,
+    kind: "line",
+    a: s.a,
+    b: s.b,
+    impedance: s.z0_ohm,
+    delay: (s.td_ps as number) * PS,
+  };
   if (kind === "skin_line") line.skin = (s.skin_A_sqrt_ps as number) * Math.sqrt(PS);
   return line;
 }
 
 /** Largest difference between two waveforms joined by straight lines, looked at on both sets of samples, away from jumps. */
-export function largestMiss(time: Float64Array, voltage: Float64Array, reference: { t_ps: number[]; v: number[] }): number {
+export function largestMiss(
+  time: Float64Array,
+  voltage: Float64Array,
+  reference: { t_ps: number[]; v: number[] },
+): number {
   const refTime = Float64Array.from(reference.t_ps, (t) => t * PS);
   const refVolts = Float64Array.from(reference.v);
   const jumps: number[] = [];
@@ -114,5 +180,8 @@ function reader(time: Float64Array, value: Float64Array): (t: number) => number 
 
 /** Peak to peak of all sources [V]. */
 export function sourceSwing({ circuit }: ReferenceCase): number {
-  return circuit.drivers.reduce((sum, d) => sum + Math.max(...(d.wave as { v: number[] }).v) - Math.min(...(d.wave as { v: number[] }).v), 0);
+  return circuit.drivers.reduce(
+    (sum, d) => sum + Math.max(...(d.wave as { v: number[] }).v) - Math.min(...(d.wave as { v: number[] }).v),
+    0,
+  );
 }

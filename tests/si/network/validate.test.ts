@@ -6,13 +6,43 @@ type Change = (net: Network) => void;
 
 /** Each is refused with the field it is about. */
 const faults: [string, string, Change][] = [
-  ["impedance of nothing", "sections[0].impedance", (net) => Object.assign(net.sections[0]!, { impedance: 0 })],
+  [
+    "impedance of nothing",
+    "sections[0].impedance",
+    (net) => Object.assign(net.sections[0]!, { impedance: 0 }),
+  ],
   ["delay below zero", "sections[0].delay", (net) => Object.assign(net.sections[0]!, { delay: -1 })],
-  ["a resistance that is no number", "drivers[0].resistance", (net) => Object.assign(net.drivers[0]!, { resistance: NaN })],
+  [
+    "a resistance that is no number",
+    "drivers[0].resistance",
+    (net) => Object.assign(net.drivers[0]!, { resistance: NaN }),
+  ],
   ["a resistor below zero", "parts[0].value", (net) => Object.assign(net.parts[0]!, { value: -5 })],
-  ["a wave that goes back in time", "drivers[0].wave.time[1]", (net) => Object.assign(net.drivers[0]!, { wave: { kind: "pwl", time: [2e-9, 1e-9], value: [0, 1] } })],
-  ["a wave without points", "drivers[0].wave.time", (net) => Object.assign(net.drivers[0]!, { wave: { kind: "pwl", time: [], value: [] } })],
-  ["an I-V table that falls back in volts", "parts[0].points[1]", (net) => (net.parts[0] = { name: "X", kind: "iv", a: "b", b: "0", points: [[1, 0], [0, 1]] })],
+  [
+    "a wave that goes back in time",
+    "drivers[0].wave.time[1]",
+    (net) => Object.assign(net.drivers[0]!, { wave: { kind: "pwl", time: [2e-9, 1e-9], value: [0, 1] } }),
+  ],
+  [
+    "a wave without points",
+    "drivers[0].wave.time",
+    (net) => Object.assign(net.drivers[0]!, { wave: { kind: "pwl", time: [], value: [] } }),
+  ],
+  [
+    "an I-V table that falls back in volts",
+    "parts[0].points[1]",
+    (net) =>
+      (net.parts[0] = {
+        name: "X",
+        kind: "iv",
+        a: "b",
+        b: "0",
+        points: [
+          [1, 0],
+          [0, 1],
+        ],
+      }),
+  ],
   ["a probe at a node that nothing touches", "probes[0].node", (net) => (net.probes[0]!.node = "nowhere")],
   ["two probes of one name", "probes[1].name", (net) => (net.probes[1]!.name = net.probes[0]!.name)],
 ];
@@ -31,7 +61,9 @@ describe("a network that means nothing is refused, naming the field", () => {
   });
 
   it.each([0, -1, NaN, Infinity])("a window of %d s", (until) => {
-    expect(() => simulate(pointToPoint({ resistance: 50, load: 50, delay: 1e-9 }), { until })).toThrow(DomainError);
+    expect(() => simulate(pointToPoint({ resistance: 50, load: 50, delay: 1e-9 }), { until })).toThrow(
+      DomainError,
+    );
   });
 
   it("two ideal voltages in one node, by name", () => {
@@ -48,7 +80,10 @@ describe("a network that means nothing is refused, naming the field", () => {
 
   it("a node that only capacitors hold rests at 0 V instead of failing", () => {
     const net = pointToPoint({ resistance: 50, load: 50, delay: 1e-9, ramp: 1e-10 });
-    net.parts.push({ name: "C1", kind: "C", a: "b", b: "c", value: 1e-12 }, { name: "C2", kind: "C", a: "c", b: "0", value: 1e-12 });
+    net.parts.push(
+      { name: "C1", kind: "C", a: "b", b: "c", value: 1e-12 },
+      { name: "C2", kind: "C", a: "c", b: "0", value: 1e-12 },
+    );
     net.probes.push({ name: "between", node: "c" });
     const { voltage } = simulate(net, { until: 1e-8 });
     expect(voltage.between![0]).toBe(0);
