@@ -12,7 +12,7 @@ import { hasEdited } from "./edit";
 import { newId } from "./ids";
 import { countOpenFlags } from "./review";
 import { getDraft } from "./revision";
-import { getRun, latestRun, listProblems, type RunRow } from "./run";
+import { getRun, latestRun, listFailing, type RunRow } from "./run";
 import { organization, project, release, releaseRecipient, revision, user } from "./schema";
 import { guard, GuardError } from "./unit";
 import { coveredProblems, listAcceptances, listSignatures, missingInputs } from "./waiver";
@@ -47,7 +47,7 @@ export async function releaseReadiness(actor: Actor, projectId: string, draftId:
     return { run: row, blockers, failing: 0, waived: 0, signature: null };
   }
   const covered = await coveredProblems(actor, projectId, row);
-  const failing = (await listProblems(actor, projectId, row.id)).filter((problem) => problem.verdict === "fail");
+  const failing = await listFailing(actor, row.id);
   const open = failing.filter((problem) => !covered.has(`${problem.pathId} ${problem.mechanism}`));
   const accepted = new Set((await listAcceptances(actor, row.revisionId)).map((entry) => entry.missing));
   const missing = (await missingInputs(actor, row)).filter((entry) => !accepted.has(entry.missing));

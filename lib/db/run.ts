@@ -248,6 +248,16 @@ export async function listProblems(actor: Actor, projectId: string, runId: strin
     .orderBy(asc(problem.verdict), asc(problem.worstShare), asc(problem.pathName));
 }
 
+/** The failing problems of a run, by the keys that waivers carry. */
+export async function listFailing(actor: Actor, runId: string): Promise<{ pathId: string; mechanism: string }[]> {
+  if (!can(actor, "project:read")) throw new NotFoundError("The run");
+  const db = await getDb();
+  return db
+    .select({ pathId: problem.pathId, mechanism: problem.mechanism })
+    .from(problem)
+    .where(and(eq(problem.runId, runId), eq(problem.teamId, actor.teamId), eq(problem.verdict, "fail")));
+}
+
 /** What the table of problems shows of one: with its path's driver and layers, and the worst finding's numbers. */
 export async function listProblemRows(actor: Actor, projectId: string, runId: string): Promise<ProblemEntry[]> {
   await getRun(actor, projectId, runId);
@@ -275,6 +285,9 @@ export async function listProblemRows(actor: Actor, projectId: string, runId: st
       failsAtNominal: problem.failsAtNominal,
       missing: problem.missing,
       assumed: problem.restsOnAssumed,
+      rules: sql<string>`coalesce((SELECT group_concat(rule) FROM (SELECT DISTINCT f.rule AS rule FROM ${finding} AS f
+        WHERE f.run_id = ${problem.runId} AND f.path_id = ${problem.pathId} AND f.mechanism = ${problem.mechanism}
+        AND f.counts ORDER BY f.rule)), '')`,
     })
     .from(problem)
     .innerJoin(pathResult, and(eq(pathResult.runId, problem.runId), eq(pathResult.pathId, problem.pathId)))

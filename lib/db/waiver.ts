@@ -1,5 +1,5 @@
 import "server-only";
-import { and, desc, eq, isNull, sql } from "drizzle-orm";
+import { and, desc, eq, inArray, isNull, sql } from "drizzle-orm";
 import { judgeWaiver, type JudgedWaiver } from "@/lib/resolve/waiver-state";
 import { can, type Actor } from "@/lib/schemas/actor";
 import { NotFoundError, RefusedError } from "@/lib/schemas/errors";
@@ -17,7 +17,11 @@ export type WaiverRow = typeof waiver.$inferSelect;
 export interface WaiverView extends WaiverRow {
   authorName: string | null;
   judged: JudgedWaiver;
+  /** what the run it is held against found of the same path and problem */
+  current: FoundNow[];
 }
+
+type FoundNow = Pick<typeof finding.$inferSelect, "rule" | "verdict" | "value" | "unit" | "margin">;
 
 /**
  * Excuses one problem of a finished run, bound to the values it had there. Not by somebody who edited the
@@ -111,35 +115,51 @@ export async function listWaivers(actor: Actor, projectId: string, row: RunRow |
     .where(and(eq(waiver.projectId, projectId), eq(waiver.teamId, actor.teamId)))
     .orderBy(desc(waiver.createdAt));
   const at = now();
-  const views: WaiverView[] = [];
-  for (const { waiver: granted, authorName } of rows) {
-    const current = row ? await currentValues(actor, row.id, granted) : { findings: [], sameInputs: true };
-    views.push({ ...granted, authorName, judged: judgeWaiver(granted, current.findings, current.sameInputs, at) });
-  }
-  return views;
+  const found = row ? await valuesNow(actor, row.id, rows.map((entry) => entry.waiver)) : null;
+  return rows.map(({ waiver: granted, authorName }) => {
+    const current = found?.findings.get(`${granted.pathLineageId} ${granted.mechanism}`) ?? [];
+    const sameInputs = !found || found.hash(granted.runId, granted.pathLineageId) === found.hash(row?.id ?? "", granted.pathLineageId);
+    return { ...granted, authorName, judged: judgeWaiver(granted, current, sameInputs, at), current };
+  });
 }
 
-async function currentValues(actor: Actor, runId: string, granted: WaiverRow) {
+/** Paths asked for in one statement. */
+const SLICE = 400;
+
+/** What a run found on the waived paths, and what each of them rested on then and now. */
+async function valuesNow(actor: Actor, runId: string, granted: readonly WaiverRow[]) {
   const db = await getDb();
-  const [findings, hashes] = await db.batch([
-    db
-      .select({ rule: finding.rule, verdict: finding.verdict, margin: finding.margin })
-      .from(finding)
-      .where(
-        and(
-          eq(finding.runId, runId),
-          eq(finding.pathId, granted.pathLineageId),
-          eq(finding.mechanism, granted.mechanism),
-          eq(finding.counts, true),
-          eq(finding.teamId, actor.teamId),
-        ),
-      ),
-    db
-      .select({ runId: pathResult.runId, inputHash: pathResult.inputHash })
-      .from(pathResult)
-      .where(and(eq(pathResult.pathId, granted.pathLineageId), sql`${pathResult.runId} IN (${runId}, ${granted.runId})`)),
-  ]);
-  return { findings, sameInputs: new Set(hashes.map((entry) => entry.inputHash)).size <= 1 };
+  const findings = new Map<string, FoundNow[]>();
+  const hashes = new Map<string, string>();
+  const paths = [...new Set(granted.map((entry) => entry.pathLineageId))];
+  const runs = [...new Set([runId, ...granted.map((entry) => entry.runId)])];
+  for (let start = 0; start < paths.length; start += SLICE) {
+    const slice = paths.slice(start, start + SLICE);
+    const [found, rested] = await db.batch([
+      db
+        .select({
+          pathId: finding.pathId,
+          mechanism: finding.mechanism,
+          rule: finding.rule,
+          verdict: finding.verdict,
+          value: finding.value,
+          unit: finding.unit,
+          margin: finding.margin,
+        })
+        .from(finding)
+        .where(and(eq(finding.runId, runId), inArray(finding.pathId, slice), eq(finding.counts, true), eq(finding.teamId, actor.teamId))),
+      db
+        .select({ runId: pathResult.runId, pathId: pathResult.pathId, inputHash: pathResult.inputHash })
+        .from(pathResult)
+        .where(and(inArray(pathResult.runId, runs), inArray(pathResult.pathId, slice), eq(pathResult.teamId, actor.teamId))),
+    ]);
+    for (const { pathId, mechanism, ...values } of found) {
+      const key = `${pathId} ${mechanism}`;
+      findings.set(key, [...(findings.get(key) ?? []), values]);
+    }
+    for (const entry of rested) hashes.set(`${entry.runId} ${entry.pathId}`, entry.inputHash);
+  }
+  return { findings, hash: (run: string, pathId: string) => hashes.get(`${run} ${pathId}`) };
 }
 
 /** Keys of problems whose failures a waiver covers in this run: path lineage and mechanism. */

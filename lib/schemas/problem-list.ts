@@ -27,6 +27,8 @@ export interface ProblemEntry {
   failsAtNominal: boolean;
   missing: string | null;
   assumed: boolean;
+  /** every rule that it touches, by id, with commas between */
+  rules: string;
 }
 
 /** A selector's finding: shown, but no failure. */

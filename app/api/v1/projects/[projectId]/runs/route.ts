@@ -1,12 +1,24 @@
 import { route } from "@/lib/auth/route";
+import { listRevisions } from "@/lib/db/revision";
 import { listRuns } from "@/lib/db/run";
+import { currentInputHash } from "@/lib/db/snapshot";
 import { startRun } from "@/lib/jobs/start-run";
 import { projectParams } from "@/lib/schemas/route-params";
 
 export const GET = route({
   access: "project:read",
   params: projectParams,
-  handler: async ({ actor, params }) => ({ runs: await listRuns(actor, params.projectId) }),
+  handler: async ({ actor, params }) => {
+    const [runs, revisions] = await Promise.all([
+      listRuns(actor, params.projectId),
+      listRevisions(actor, params.projectId),
+    ]);
+    const draft = revisions.find((revision) => revision.state === "draft");
+    return {
+      runs,
+      draft: draft ? { letter: draft.letter, inputHash: await currentInputHash(actor, draft.id) } : null,
+    };
+  },
 });
 
 export const POST = route({

@@ -7,8 +7,6 @@ export const POST = route({
   access: "review:comment",
   params: flagParams,
   body: flagComment,
-  handler: async ({ actor, params, body }) => {
-    await commentOnFlag(actor, params.projectId, params.flagId, body.comment);
-    return new Response(null, { status: 201 });
-  },
+  handler: ({ actor, params, body }) =>
+    commentOnFlag(actor, params.projectId, params.flagId, body.comment),
 });
