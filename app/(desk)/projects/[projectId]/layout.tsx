@@ -1,5 +1,6 @@
 import { notFound } from "next/navigation";
 import type { ReactNode } from "react";
+import { BlockerCount } from "@/components/review/blocker-count";
 import { ProjectBar } from "@/components/shell/project-bar";
 import { requireActor } from "@/lib/auth/require-actor";
 import { listRevisions } from "@/lib/db/revision";
@@ -22,6 +23,9 @@ export default async function ProjectLayout({ children, params }: Props) {
         projectId={projectId}
         name={name}
         revisions={revisions.map(({ letter, state }) => ({ letter, state }))}
+        blockers={
+          revisions.some(({ state }) => state === "draft") ? <BlockerCount projectId={projectId} /> : undefined
+        }
       />
       {children}
     </>
