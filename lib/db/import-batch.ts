@@ -70,7 +70,10 @@ export async function createImport(
 /** @throws NotFoundError */
 export async function getImport(actor: Actor, projectId: string, importId: string): Promise<ImportRow> {
   const db = await getDb();
-  const [row] = await db.select(columns).from(importBatch).where(own(actor, projectId, importId));
+  const [row] = await db
+    .select(columns)
+    .from(importBatch)
+    .where(own(actor, projectId, importId));
   if (!row) throw new NotFoundError("This import");
   return readRow(row);
 }
@@ -188,7 +191,10 @@ async function confirmer(row: ImportRow): Promise<UserActor | null> {
   const role = await readRole(userId, row.teamId);
   if (!role) return null;
   const db = await getDb();
-  const [person] = await db.select({ name: user.name, email: user.email }).from(user).where(eq(user.id, userId));
+  const [person] = await db
+    .select({ name: user.name, email: user.email })
+    .from(user)
+    .where(eq(user.id, userId));
   return person ? { kind: "user", userId, teamId: row.teamId, role, ...person } : null;
 }
 
@@ -227,7 +233,13 @@ function own(actor: Actor, projectId: string, importId?: string, toEdit = false)
   );
 }
 
-function readRow(row: { mapping: unknown; report: unknown } & Omit<ImportRow, "settings" | "report">): ImportRow {
+function readRow(
+  row: { mapping: unknown; report: unknown } & Omit<ImportRow, "settings" | "report">,
+): ImportRow {
   const { mapping, report, ...rest } = row;
-  return { ...rest, settings: importSettings.parse(mapping), report: (report as ImportReport | null) ?? null };
+  return {
+    ...rest,
+    settings: importSettings.parse(mapping),
+    report: (report as ImportReport | null) ?? null,
+  };
 }

@@ -42,18 +42,25 @@ export function assignRoles(pins: readonly RolePin[], rules: readonly RoleRule[]
     nets: { noDriver: 0, oneDriver: 0, severalDrivers: 0 },
   };
   const drivers = new Map<string, number>();
+  // A part has hundreds of pins, and few rules fit it.
+  const ofPart = new Map<string, { index: number; test: (typeof tests)[number] }[]>();
+  const fitting = ({ reference, partNumber }: RolePin) => {
+    const key = `${reference}\u0000${partNumber}`;
+    let found = ofPart.get(key);
+    if (!found) {
+      found = tests.flatMap((test, index) =>
+        test.reference(reference) && test.partNumber(partNumber) ? [{ index, test }] : [],
+      );
+      ofPart.set(key, found);
+    }
+    return found;
+  };
   for (const pin of pins) {
     let role = pin.role ?? null;
     if (role === null) {
-      const index = tests.findIndex(
-        (test) =>
-          test.reference(pin.reference) &&
-          test.pin(pin.pin) &&
-          test.net(pin.net) &&
-          test.partNumber(pin.partNumber),
-      );
-      role = tests[index]?.role ?? null;
-      if (role !== null) result.pinsOfRule[index] = (result.pinsOfRule[index] ?? 0) + 1;
+      const rule = fitting(pin).find(({ test }) => test.pin(pin.pin) && test.net(pin.net));
+      role = rule?.test.role ?? null;
+      if (rule) result.pinsOfRule[rule.index] = (result.pinsOfRule[rule.index] ?? 0) + 1;
     }
     result.roles.push(role);
     result.pins[role ?? "open"]++;

@@ -6,7 +6,12 @@ import { scopeKinds } from "./net";
 /** What names suggest of a draft's nets, and its pins for the roles step. */
 export interface DraftProposals {
   outOfScope: { id: string; net: string; kind: (typeof scopeKinds)[number]; reason: string; sure: boolean }[];
-  pairs: { name: string; positive: { id: string; net: string }; negative: { id: string; net: string }; how: string }[];
+  pairs: {
+    name: string;
+    positive: { id: string; net: string };
+    negative: { id: string; net: string };
+    how: string;
+  }[];
   buses: { name: string; label: string; members: { id: string; index: number }[] }[];
   matchGroups: { name: string; reason: string; ids: string[] }[];
   bindings: { version: number; bindings: StoredBinding[] };
@@ -21,7 +26,9 @@ export interface DraftProposals {
 
 /** What a person confirmed of it. */
 export const confirmedProposals = z.object({
-  outOfScope: z.array(z.object({ id, kind: z.enum(scopeKinds), reason: z.string().trim().max(300) })).max(25_000),
+  outOfScope: z
+    .array(z.object({ id, kind: z.enum(scopeKinds), reason: z.string().trim().max(300) }))
+    .max(25_000),
   pairs: z.array(z.object({ positive: id, negative: id })).max(12_500),
   buses: z
     .array(
@@ -31,7 +38,9 @@ export const confirmedProposals = z.object({
       }),
     )
     .max(5_000),
-  matchGroups: z.array(z.object({ name: z.string().trim().min(1).max(120), ids: z.array(id).max(5_000) })).max(5_000),
+  matchGroups: z
+    .array(z.object({ name: z.string().trim().min(1).max(120), ids: z.array(id).max(5_000) }))
+    .max(5_000),
   bindings: bindingsUpdate.nullable(),
 });
 export type ConfirmedProposals = z.infer<typeof confirmedProposals>;

@@ -9,10 +9,12 @@ import { neutraliseCell, restoreCell, writeDelimited } from "@/lib/formats/delim
 
 const bytes = (text: string) => new TextEncoder().encode(text);
 const utf16 = (text: string, big: boolean) =>
-  Uint8Array.from([...text].flatMap((char) => {
-    const code = char.charCodeAt(0);
-    return big ? [code >> 8, code & 255] : [code & 255, code >> 8];
-  }));
+  Uint8Array.from(
+    [...text].flatMap((char) => {
+      const code = char.charCodeAt(0);
+      return big ? [code >> 8, code & 255] : [code & 255, code >> 8];
+    }),
+  );
 const codeOf = (act: () => unknown) => {
   try {
     act();
@@ -26,8 +28,14 @@ describe("decodeText", () => {
   it("strips the byte-order mark of UTF-8 and both UTF-16", () => {
     const text = "net,width µm\nA,1\n";
     expect(decodeText(Uint8Array.from([0xef, 0xbb, 0xbf, ...bytes(text)])).text).toBe(text);
-    expect(decodeText(Uint8Array.from([0xff, 0xfe, ...utf16(text, false)]))).toMatchObject({ text, encoding: "UTF-16 LE" });
-    expect(decodeText(Uint8Array.from([0xfe, 0xff, ...utf16(text, true)]))).toMatchObject({ text, encoding: "UTF-16 BE" });
+    expect(decodeText(Uint8Array.from([0xff, 0xfe, ...utf16(text, false)]))).toMatchObject({
+      text,
+      encoding: "UTF-16 LE",
+    });
+    expect(decodeText(Uint8Array.from([0xfe, 0xff, ...utf16(text, true)]))).toMatchObject({
+      text,
+      encoding: "UTF-16 BE",
+    });
   });
 
   it("reads UTF-16 without a mark and says so", () => {
@@ -119,7 +127,9 @@ describe("readTable", () => {
 });
 
 describe("writeDelimited", () => {
-  const cell = fc.string({ unit: "grapheme", maxLength: 20 }).map((text) => text.replace(/\r\n?/g, "\n").trim());
+  const cell = fc
+    .string({ unit: "grapheme", maxLength: 20 })
+    .map((text) => text.replace(/\r\n?/g, "\n").trim());
 
   it("is read back cell by cell as it was, whatever the cells hold", () => {
     fc.assert(
@@ -129,7 +139,9 @@ describe("writeDelimited", () => {
         (rows, delimiter) => {
           const kept = rows.filter((row) => row.some((text) => text !== ""));
           const text = writeDelimited(rows, delimiter as ",").replace(/\r\n/g, "\n");
-          expect(readTable(text, { delimiter: delimiter as "," }).rows.map(({ cells }) => cells)).toEqual(kept);
+          expect(readTable(text, { delimiter: delimiter as "," }).rows.map(({ cells }) => cells)).toEqual(
+            kept,
+          );
         },
       ),
       { numRuns: 400 },
@@ -139,7 +151,8 @@ describe("writeDelimited", () => {
   it("gives no spreadsheet a formula, and leaves numbers alone", () => {
     for (const danger of ["=1+1", "+12V", "-VEE", "@SUM(A1)", "\tx", "\rx", "-5 mil"])
       expect(neutraliseCell(danger)).toBe(`'${danger}`);
-    for (const number of ["-0.3", "+5", "-1e-9", "-12,5", "-.5", "7"]) expect(neutraliseCell(number)).toBe(number);
+    for (const number of ["-0.3", "+5", "-1e-9", "-12,5", "-.5", "7"])
+      expect(neutraliseCell(number)).toBe(number);
   });
 
   it("restores what it made harmless", () => {

@@ -20,7 +20,9 @@ const SECTIONS = "net,from,to,layer,width_mm,length_mm\n";
 
 describe("guessMapping", () => {
   it("finds columns in any order under other headers, with their units", () => {
-    const table = readTable("Board X export\nLayer Name;Routed Length [mil];Net Name;Start;End;Trace Width (um)\nTOP;500;A;U1.1;U2.1;127\n");
+    const table = readTable(
+      "Board X export\nLayer Name;Routed Length [mil];Net Name;Start;End;Trace Width (um)\nTOP;500;A;U1.1;U2.1;127\n",
+    );
     const mapping = guessMapping(table, "section list", "mm");
     expect(mapping.headerRow).toBe(2);
     expect(mapping.fields).toMatchObject({
@@ -59,23 +61,50 @@ describe("previewImport", () => {
     expect(preview.badRows).toBe(4);
     expect(preview.problems).toEqual([
       { row: 3, column: "width", value: "-1", reason: "-1 mm must be above zero." },
-      { row: 3, column: "length", value: "12..7", reason: "'12..7' is not a length. Write 12.7 mm or 500 mil." },
+      {
+        row: 3,
+        column: "length",
+        value: "12..7",
+        reason: "'12..7' is not a length. Write 12.7 mm or 500 mil.",
+      },
       { row: 4, column: "net", value: "", reason: "is empty. Every row needs a net." },
-      { row: 5, column: "to", value: "U1.4", reason: "is the same node as its start, U1.4. A section joins two nodes." },
-      { row: 6, column: "length", value: "20 m", reason: "20 m is longer than 10 m, which no board reaches. Check the unit." },
+      {
+        row: 5,
+        column: "to",
+        value: "U1.4",
+        reason: "is the same node as its start, U1.4. A section joins two nodes.",
+      },
+      {
+        row: 6,
+        column: "length",
+        value: "20 m",
+        reason: "20 m is longer than 10 m, which no board reaches. Check the unit.",
+      },
     ]);
   });
 
   it("reads a cell's own unit before the header's, and the decimal comma", () => {
-    const preview = read("net;from;to;layer;width_mm;length_mm\nA;U1.1;U2.1;TOP;5 mil;12,5\nB;U1.2;U2.2;TOP;0,127;1,250\n", "section list");
+    const preview = read(
+      "net;from;to;layer;width_mm;length_mm\nA;U1.1;U2.1;TOP;5 mil;12,5\nB;U1.2;U2.2;TOP;0,127;1,250\n",
+      "section list",
+    );
     expect(preview.good.map(({ value }) => [value.width, value.length])).toEqual([
-      [{ value: "5", unit: "mil" }, { value: "12.5", unit: "mm" }],
-      [{ value: "0.127", unit: "mm" }, { value: "1.25", unit: "mm" }],
+      [
+        { value: "5", unit: "mil" },
+        { value: "12.5", unit: "mm" },
+      ],
+      [
+        { value: "0.127", unit: "mm" },
+        { value: "1.25", unit: "mm" },
+      ],
     ]);
   });
 
   it("refuses a cell of 10 MB by row and column and keeps the rest", () => {
-    const preview = read(`${SECTIONS}${"x".repeat(10_000_000)},U1.1,U2.1,TOP,0.1,1\nB,U1.2,U2.2,TOP,0.1,1\n`, "section list");
+    const preview = read(
+      `${SECTIONS}${"x".repeat(10_000_000)},U1.1,U2.1,TOP,0.1,1\nB,U1.2,U2.2,TOP,0.1,1\n`,
+      "section list",
+    );
     expect([preview.good.length, preview.badRows]).toEqual([1, 1]);
     expect(preview.problems[0]).toMatchObject({ row: 2, column: "net" });
     expect(preview.problems[0]?.reason).toContain("10,000,000 characters");
@@ -99,18 +128,42 @@ describe("previewImport", () => {
 
   it("loses no row on any cells: good + bad = total, each bad row has a reason", () => {
     const cell = fc.oneof(
-      fc.constantFrom("", "A", "U1.1", "U2.1", "TOP", "0.1", "5 mil", "-3", "12..7", "=1+1", "'", "NaN", "1e999", "0x10"),
+      fc.constantFrom(
+        "",
+        "A",
+        "U1.1",
+        "U2.1",
+        "TOP",
+        "0.1",
+        "5 mil",
+        "-3",
+        "12..7",
+        "=1+1",
+        "'",
+        "NaN",
+        "1e999",
+        "0x10",
+      ),
       fc.string({ maxLength: 8 }),
     );
     fc.assert(
-      fc.property(fc.array(fc.array(cell, { minLength: 6, maxLength: 8 }), { maxLength: 20 }), fc.constantFrom(...listKinds), (rows, kind) => {
-        const header = { "section list": SECTIONS, "net list": "net,class,layer,width,length,vias\n", "parts list": "reference,part number,value,pins,a,b\n", "neighbour list": "net,neighbour,layer,gap,parallel length,c\n" }[kind];
-        const text = header + writeDelimited(rows).replace(/\r\n?/g, "\n");
-        const preview = read(text, kind);
-        expect(preview.good.length + preview.badRows).toBe(preview.total);
-        expect(new Set(preview.problems.map(({ row }) => row)).size).toBe(preview.badRows);
-        expect(preview.problems.every(({ reason }) => reason.length > 3)).toBe(true);
-      }),
+      fc.property(
+        fc.array(fc.array(cell, { minLength: 6, maxLength: 8 }), { maxLength: 20 }),
+        fc.constantFrom(...listKinds),
+        (rows, kind) => {
+          const header = {
+            "section list": SECTIONS,
+            "net list": "net,class,layer,width,length,vias\n",
+            "parts list": "reference,part number,value,pins,a,b\n",
+            "neighbour list": "net,neighbour,layer,gap,parallel length,c\n",
+          }[kind];
+          const text = header + writeDelimited(rows).replace(/\r\n?/g, "\n");
+          const preview = read(text, kind);
+          expect(preview.good.length + preview.badRows).toBe(preview.total);
+          expect(new Set(preview.problems.map(({ row }) => row)).size).toBe(preview.badRows);
+          expect(preview.problems.every(({ reason }) => reason.length > 3)).toBe(true);
+        },
+      ),
       { numRuns: 200 },
     );
   });
@@ -123,14 +176,24 @@ describe("previewImport", () => {
 
 describe("nets from rows", () => {
   it("gives documents that the schema takes", () => {
-    const nets = netsFromSections(read(`${SECTIONS}A,U1.1,via1,TOP,0.1,1\nA,via1,U2.1,IN1,0.1,9\n`, "section list").good, {
-      layers: { TOP: "0190a000-0000-7000-8000-000000000001" },
-      classes: [{ lineageId: "0190a000-0000-7000-8000-000000000002", name: "Data", netPatterns: ["a*"] }],
-    });
+    const nets = netsFromSections(
+      read(`${SECTIONS}A,U1.1,via1,TOP,0.1,1\nA,via1,U2.1,IN1,0.1,9\n`, "section list").good,
+      {
+        layers: { TOP: "0190a000-0000-7000-8000-000000000001" },
+        classes: [{ lineageId: "0190a000-0000-7000-8000-000000000002", name: "Data", netPatterns: ["a*"] }],
+      },
+    );
     const net = netDoc.parse(nets[0]);
-    expect(net).toMatchObject({ scope: "in", classLineageId: "0190a000-0000-7000-8000-000000000002", gaps: [] });
+    expect(net).toMatchObject({
+      scope: "in",
+      classLineageId: "0190a000-0000-7000-8000-000000000002",
+      gaps: [],
+    });
     expect(net.topology.viaCount).toBe(1);
-    expect(net.topology.sections.map(({ layerLineageId }) => layerLineageId)).toEqual(["0190a000-0000-7000-8000-000000000001", null]);
+    expect(net.topology.sections.map(({ layerLineageId }) => layerLineageId)).toEqual([
+      "0190a000-0000-7000-8000-000000000001",
+      null,
+    ]);
   });
 
   it("makes of a net-list row a section between two pins; with more pins the shape is unknown", () => {
@@ -139,8 +202,14 @@ describe("nets from rows", () => {
       "net list",
     );
     expect(preview.problems).toEqual([]);
-    const [a, b, c] = netsFromNetList(preview.good, { layers: {}, classes: [] }).map((doc) => netDoc.parse(doc));
-    expect(a?.topology).toMatchObject({ shapeKnown: true, viaCount: 2, sections: [{ from: "U1.1", to: "U2.1" }] });
+    const [a, b, c] = netsFromNetList(preview.good, { layers: {}, classes: [] }).map((doc) =>
+      netDoc.parse(doc),
+    );
+    expect(a?.topology).toMatchObject({
+      shapeKnown: true,
+      viaCount: 2,
+      sections: [{ from: "U1.1", to: "U2.1" }],
+    });
     expect(a?.topology.pins.map(({ role }) => role)).toEqual(["driver", "receiver"]);
     expect(b?.topology).toMatchObject({ shapeKnown: false });
     expect(b?.topology.pins).toHaveLength(5);
@@ -149,21 +218,45 @@ describe("nets from rows", () => {
   });
 
   it("refuses a driver that names no pin", () => {
-    expect(read("net,driver\nA,U1\n", "net list").problems[0]?.reason).toContain("Write reference and pin, such as U1.E10.");
+    expect(read("net,driver\nA,U1\n", "net list").problems[0]?.reason).toContain(
+      "Write reference and pin, such as U1.E10.",
+    );
   });
 });
 
 describe("parts list", () => {
   it("reads pins as a count or as names, and the kind from the reference", () => {
-    const preview = read("reference,part number,value,pins\nR10,RC0402,33R,2\nU1,MCU,,196\nU2,MEM,,A1 A2;B1\nFB3,,600R,2\n", "parts list");
-    expect(preview.good.map(({ value }) => partDoc.parse(value).pins)).toEqual([["1", "2"], [], ["A1", "A2", "B1"], ["1", "2"]]);
-    expect(["R1", "C2", "L3", "FB4", "U5", "J6", "CN7", "Y8", "RN9"].map(partKindOf)).toEqual(
-      ["resistor", "capacitor", "inductor", "ferrite", "ic", "connector", "connector", "other", "resistor"],
+    const preview = read(
+      "reference,part number,value,pins\nR10,RC0402,33R,2\nU1,MCU,,196\nU2,MEM,,A1 A2;B1\nFB3,,600R,2\n",
+      "parts list",
     );
+    expect(preview.good.map(({ value }) => partDoc.parse(value).pins)).toEqual([
+      ["1", "2"],
+      [],
+      ["A1", "A2", "B1"],
+      ["1", "2"],
+    ]);
+    expect(["R1", "C2", "L3", "FB4", "U5", "J6", "CN7", "Y8", "RN9"].map(partKindOf)).toEqual([
+      "resistor",
+      "capacitor",
+      "inductor",
+      "ferrite",
+      "ic",
+      "connector",
+      "connector",
+      "other",
+      "resistor",
+    ]);
   });
 
   it("warns of a value that cannot be read, not of one that is not fitted", () => {
-    const part = (reference: string, value: string) => ({ reference, value, kind: partKindOf(reference), partNumber: "", pins: [] });
+    const part = (reference: string, value: string) => ({
+      reference,
+      value,
+      kind: partKindOf(reference),
+      partNumber: "",
+      pins: [],
+    });
     expect(valueWarning(part("R1", "33R"))).toBeNull();
     expect(valueWarning(part("C1", "100n/16V X7R"))).toBeNull();
     expect(valueWarning(part("C1", "10 uF 25V"))).toBeNull();
@@ -174,10 +267,27 @@ describe("parts list", () => {
 
 describe("proposeLayer", () => {
   const copper = copperLayers(
-    ["L1 Top", "L2 Ground", "L3 Inner", "L4 Inner", "L5 Power", "L6 Bottom"].map((name, index) => ({ kind: "signal" as const, name, lineageId: String(index + 1) })),
+    ["L1 Top", "L2 Ground", "L3 Inner", "L4 Inner", "L5 Power", "L6 Bottom"].map((name, index) => ({
+      kind: "signal" as const,
+      name,
+      lineageId: String(index + 1),
+    })),
   );
   it.each([
-    ["l1 top", "1"], ["TOP", "1"], ["L1_TOP", "1"], ["BOTTOM", "6"], ["bot", "6"], ["L3", "3"], ["Layer 4", "4"], ["IN1", "2"], ["INT4", "5"], ["power", "5"], ["5", "5"], ["L9", null], ["Inner", null], ["DRILL", null],
+    ["l1 top", "1"],
+    ["TOP", "1"],
+    ["L1_TOP", "1"],
+    ["BOTTOM", "6"],
+    ["bot", "6"],
+    ["L3", "3"],
+    ["Layer 4", "4"],
+    ["IN1", "2"],
+    ["INT4", "5"],
+    ["power", "5"],
+    ["5", "5"],
+    ["L9", null],
+    ["Inner", null],
+    ["DRILL", null],
   ])("takes %j for layer %j", (name, lineageId) => {
     expect(proposeLayer(name, copper)).toBe(lineageId);
   });
@@ -185,7 +295,11 @@ describe("proposeLayer", () => {
 
 // Speed is read from the benchmark; here only the size is tried.
 it("reads 20,000 rows into nets whole", () => {
-  const rows = Array.from({ length: 20_000 }, (_, index) => `N${index >> 1},U${index % 7}.${index},${index % 2 ? "via" : `U9.${index}`},TOP,0.127,${1 + (index % 50)}`);
+  const rows = Array.from(
+    { length: 20_000 },
+    (_, index) =>
+      `N${index >> 1},U${index % 7}.${index},${index % 2 ? "via" : `U9.${index}`},TOP,0.127,${1 + (index % 50)}`,
+  );
   const preview = read(`${SECTIONS}${rows.join("\n")}\n`, "section list");
   expect([preview.good.length, preview.badRows]).toEqual([20_000, 0]);
   expect(netsFromSections(preview.good, { layers: {}, classes: [] })).toHaveLength(10_000);

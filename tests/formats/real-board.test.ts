@@ -12,7 +12,10 @@ import { assignRoles } from "@/lib/formats/pin-roles";
 // A real 18-layer board, outer layers only; its counts are stated in the reference's README.
 const file = fileURLToPath(new URL("../../../shared/reference/boards/outer-sections.csv", import.meta.url));
 const present = existsSync(file);
-if (!present) console.info("Skipped: the real board's section list is not beside this repository (shared/reference/boards).");
+if (!present)
+  console.info(
+    "Skipped: the real board's section list is not beside this repository (shared/reference/boards).",
+  );
 
 describe.skipIf(!present)("the real board's section list", () => {
   const read = () => {
@@ -48,7 +51,9 @@ describe.skipIf(!present)("the real board's section list", () => {
     expect(preview.duplicates).toHaveLength(1);
     expect(preview.duplicates[0]).toMatchObject({ row: 79, firstRow: 78 });
     const net = nets.find(({ name }) => name === "LN8_PAD_TX_P");
-    expect(net?.topology.sections.length).toBe(preview.good.filter(({ value }) => value.net === "LN8_PAD_TX_P").length - 1);
+    expect(net?.topology.sections.length).toBe(
+      preview.good.filter(({ value }) => value.net === "LN8_PAD_TX_P").length - 1,
+    );
   });
 
   it("names the gap", () => {
@@ -63,7 +68,10 @@ describe.skipIf(!present)("the real board's section list", () => {
     const proposals = proposeFromNames(names);
     const power = proposals.outOfScope.filter(({ kind }) => kind === "power").map(({ net }) => net);
     expect(power).toEqual(["+12V", "VDDD", "VREFL", "VREFR"]);
-    expect(proposals.pairs.find(({ name }) => name === "REFCLK")).toMatchObject({ positive: "REFCLK_P", negative: "REFCLK_N" });
+    expect(proposals.pairs.find(({ name }) => name === "REFCLK")).toMatchObject({
+      positive: "REFCLK_P",
+      negative: "REFCLK_N",
+    });
     expect(proposals.buses.map(({ label }) => label)).toEqual([
       "L_ADDR[0..11]",
       "L_BE*[0..15]",
@@ -74,7 +82,9 @@ describe.skipIf(!present)("the real board's section list", () => {
   });
 
   it("counts what 'U1 drives' decides", () => {
-    const pins = read().nets.flatMap(({ name, topology }) => topology.pins.map((pin) => ({ ...pin, net: name, partNumber: "" })));
+    const pins = read().nets.flatMap(({ name, topology }) =>
+      topology.pins.map((pin) => ({ ...pin, net: name, partNumber: "" })),
+    );
     const any = { partNumberPattern: "*", pinPattern: "*", netPattern: "*" };
     const result = assignRoles(pins, [
       { ...any, referencePattern: "U1", role: "driver" },

@@ -39,7 +39,9 @@ describe("buildRoute", () => {
     expect(route(["U1.1", "a"], ["a", "b"], ["b", "U2.1"], ["b", "c"], ["c", "a"]).gaps).toEqual([
       { kind: "loop", text: "A loop: c – a – b – c" },
     ]);
-    expect(route(["U1.1", "U2.1"], ["U1.1", "U2.1", "IN1"]).gaps[0]?.text).toContain("side by side between U1.1 and U2.1");
+    expect(route(["U1.1", "U2.1"], ["U1.1", "U2.1", "IN1"]).gaps[0]?.text).toContain(
+      "side by side between U1.1 and U2.1",
+    );
     expect(route(["U1.1", "via1"]).gaps).toEqual([
       { kind: "one pin", text: "U1.1 is the only pin; the route leads no further than via1." },
     ]);
@@ -48,7 +50,9 @@ describe("buildRoute", () => {
   });
 
   it("keeps its words short for a plane-like net of thousands of sections", () => {
-    const found = route(...Array.from({ length: 6000 }, (_, i): [string, string] => [`C${i}.1`, `via${i % 97}`]));
+    const found = route(
+      ...Array.from({ length: 6000 }, (_, i): [string, string] => [`C${i}.1`, `via${i % 97}`]),
+    );
     expect(found.gaps.every(({ text }) => text.length <= 400)).toBe(true);
     expect(found.pins).toHaveLength(6000);
   });
@@ -56,14 +60,20 @@ describe("buildRoute", () => {
   it("has as many loops as sections − nodes + islands, and every node in one island", () => {
     const node = fc.integer({ min: 0, max: 8 }).map((n) => (n < 4 ? `U${n}.1` : `n${n}`));
     fc.assert(
-      fc.property(fc.array(fc.tuple(node, node).filter(([a, b]) => a !== b), { minLength: 1, maxLength: 7 }), (edges) => {
-        const found = route(...edges.map(([a, b]): [string, string] => [a, b]));
-        const nodes = new Set(edges.flat());
-        expect(found.islands.flat().sort()).toEqual([...nodes].sort());
-        const loops = edges.length - nodes.size + found.islands.length;
-        expect(found.gaps.filter(({ kind }) => kind === "loop")).toHaveLength(loops);
-        expect(found.complete).toBe(loops === 0 && found.islands.length === 1 && found.pins.length >= 2);
-      }),
+      fc.property(
+        fc.array(
+          fc.tuple(node, node).filter(([a, b]) => a !== b),
+          { minLength: 1, maxLength: 7 },
+        ),
+        (edges) => {
+          const found = route(...edges.map(([a, b]): [string, string] => [a, b]));
+          const nodes = new Set(edges.flat());
+          expect(found.islands.flat().sort()).toEqual([...nodes].sort());
+          const loops = edges.length - nodes.size + found.islands.length;
+          expect(found.gaps.filter(({ kind }) => kind === "loop")).toHaveLength(loops);
+          expect(found.complete).toBe(loops === 0 && found.islands.length === 1 && found.pins.length >= 2);
+        },
+      ),
     );
   });
 });

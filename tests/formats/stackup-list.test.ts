@@ -4,7 +4,10 @@ import { readStackupList } from "@/lib/formats/stackup-list/read";
 import { writeStackupList } from "@/lib/formats/stackup-list/write";
 import { layerKinds, stackupDoc, type StackupLayerDoc } from "@/lib/schemas/stackup";
 
-const quantity = fc.record({ value: fc.integer({ min: 1, max: 999 }).map(String), unit: fc.constantFrom("µm", "mm", "mil") });
+const quantity = fc.record({
+  value: fc.integer({ min: 1, max: 999 }).map(String),
+  unit: fc.constantFrom("µm", "mm", "mil"),
+});
 const number = fc.integer({ min: 1, max: 9 }).map((n) => `${n}.25`);
 const maybe = <T>(value: fc.Arbitrary<T>) => fc.option(value, { nil: null });
 const layer = fc
@@ -32,7 +35,12 @@ const layer = fc
       name: "",
       thickness: copper || press ? null : thickness,
       thicknessMode: press ? "pressed" : "typed",
-      plies: press ? [{ style: "1080", resinPercent: "62", thickness, count: 2 }, { style: "", resinPercent: null, thickness, count: 1 }] : [],
+      plies: press
+        ? [
+            { style: "1080", resinPercent: "62", thickness, count: 2 },
+            { style: "", resinPercent: null, thickness, count: 1 },
+          ]
+        : [],
       baseFoil: copper ? foil : null,
       plating: copper ? plating : null,
       roughness: null,
@@ -46,7 +54,10 @@ describe("stackup as CSV", () => {
   it("reads back what it wrote, layer by layer", () => {
     fc.assert(
       fc.property(fc.array(layer, { minLength: 1, maxLength: 8 }), (layers) => {
-        const doc = stackupDoc.parse({ name: "S", layers: layers.map((one, index) => ({ ...one, name: `L${index + 1}` })) });
+        const doc = stackupDoc.parse({
+          name: "S",
+          layers: layers.map((one, index) => ({ ...one, name: `L${index + 1}` })),
+        });
         const back = readStackupList(writeStackupList(doc).replace(/\r\n/g, "\n"), "S", "mm");
         expect(back.problems).toEqual([]);
         expect(back.doc).toEqual(doc);
@@ -71,9 +82,19 @@ describe("stackup as CSV", () => {
     const text = "kind,name,thickness,Dk\nsignal,Top,,\nwood,D1,0.1,4\ncore,D2,0.1x,0.5\nplane,top,,\n";
     const { doc, problems } = readStackupList(text, "S", "mm");
     expect(doc).toBeNull();
-    expect(problems.map(({ row, column }) => [row, column])).toEqual([[3, "kind"], [4, "thickness"]]);
-    const second = readStackupList("kind,name,thickness,Dk\nsignal,Top,,\ncore,D2,0.1,0.5\nplane,top,,\n", "S", "mm");
-    expect(second.problems.map(({ row, column }) => [row, column])).toEqual([[3, "Dk"], [4, "name"]]);
+    expect(problems.map(({ row, column }) => [row, column])).toEqual([
+      [3, "kind"],
+      [4, "thickness"],
+    ]);
+    const second = readStackupList(
+      "kind,name,thickness,Dk\nsignal,Top,,\ncore,D2,0.1,0.5\nplane,top,,\n",
+      "S",
+      "mm",
+    );
+    expect(second.problems.map(({ row, column }) => [row, column])).toEqual([
+      [3, "Dk"],
+      [4, "name"],
+    ]);
     expect(readStackupList("a,b\n1,2\n", "S", "mm").problems[0]?.reason).toContain("kind and name");
   });
 });

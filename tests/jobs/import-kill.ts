@@ -23,9 +23,15 @@ export async function killDuringImport(waits: readonly number[]): Promise<number
   const data = await createTestDatabase();
   try {
     const { designer } = data.own.actors;
-    const { id: projectId } = await createProject(designer, { name: "Tide gauge controller", template: "6-layers" });
+    const { id: projectId } = await createProject(designer, {
+      name: "Tide gauge controller",
+      template: "6-layers",
+    });
     const draft = await findRevision(designer, projectId);
-    const list = Array.from({ length: NETS }, (_, i) => `N${i},U1.${i},U2.${i},TOP,0.127,${1 + (i % 50)}`).join("\n");
+    const list = Array.from(
+      { length: NETS },
+      (_, i) => `N${i},U1.${i},U2.${i},TOP,0.127,${1 + (i % 50)}`,
+    ).join("\n");
     const { import: batch } = await receiveList(designer, projectId, {
       bytes: new TextEncoder().encode(HEADER + list),
       fileName: "nets.csv",
@@ -64,7 +70,8 @@ function workAndKill(file: string, wait: number | null): Promise<void> {
     let errors = "";
     child.stderr.on("data", (chunk: Buffer) => (errors += chunk.toString()));
     child.stdout.on("data", (chunk: Buffer) => {
-      if (wait !== null && chunk.toString().includes("working")) setTimeout(() => child.kill("SIGKILL"), wait);
+      if (wait !== null && chunk.toString().includes("working"))
+        setTimeout(() => child.kill("SIGKILL"), wait);
     });
     child.on("error", reject);
     child.on("exit", (code, signal) => {

@@ -17,9 +17,17 @@ afterAll(() => data.close());
 
 it("proposes from names, writes what is confirmed as undoable edits, and does not propose it again", async () => {
   const { designer } = data.own.actors;
-  const { id: projectId } = await createProject(designer, { name: "Tide gauge controller", template: "6-layers" });
+  const { id: projectId } = await createProject(designer, {
+    name: "Tide gauge controller",
+    template: "6-layers",
+  });
   const names = ["+3V3", "CLK_P", "CLK_N", "DQ0", "DQ1", "DQ2", "DQ3", "RESET"];
-  await applyLayoutLists(designer, projectId, { nets: names.map((name) => aNet(name)) }, { mode: "merge", summary: "nets" });
+  await applyLayoutLists(
+    designer,
+    projectId,
+    { nets: names.map((name) => aNet(name)) },
+    { mode: "merge", summary: "nets" },
+  );
   const draft = await findRevision(designer, projectId);
 
   const found = await proposeForDraft(designer, projectId);
@@ -37,7 +45,14 @@ it("proposes from names, writes what is confirmed as undoable edits, and does no
     bindings: {
       version: found.bindings.version,
       bindings: [
-        { referencePattern: "U1", partNumberPattern: "*", pinPattern: "*", netPattern: "*", role: "driver", modelLineageId: null },
+        {
+          referencePattern: "U1",
+          partNumberPattern: "*",
+          pinPattern: "*",
+          netPattern: "*",
+          role: "driver",
+          modelLineageId: null,
+        },
       ],
     },
   });
@@ -47,7 +62,9 @@ it("proposes from names, writes what is confirmed as undoable edits, and does no
   expect(net("+3V3")).toMatchObject({ scope: "out", scopeKind: "power" });
   expect(net("CLK_P")).toMatchObject({ pairPartner: "CLK_N" });
   expect(net("DQ3")).toMatchObject({ bus: "DQ", matchGroup: "DQ" });
-  expect((await getBindings(designer, draft)).bindings).toMatchObject([{ referencePattern: "U1", role: "driver" }]);
+  expect((await getBindings(designer, draft)).bindings).toMatchObject([
+    { referencePattern: "U1", role: "driver" },
+  ]);
 
   const again = await proposeForDraft(designer, projectId);
   expect([again.outOfScope, again.pairs, again.buses, again.matchGroups]).toEqual([[], [], [], []]);
@@ -58,7 +75,10 @@ it("proposes from names, writes what is confirmed as undoable edits, and does no
 });
 
 it("is a designer's: a reviewer and another team see nothing of it", async () => {
-  const { id: projectId } = await createProject(data.own.actors.designer, { name: "Other", template: "6-layers" });
+  const { id: projectId } = await createProject(data.own.actors.designer, {
+    name: "Other",
+    template: "6-layers",
+  });
   for (const actor of [data.own.actors.reviewer, data.own.actors.manufacturer, data.other.actors.owner])
     await expect(proposeForDraft(actor, projectId)).rejects.toThrow(/does not exist/);
 });

@@ -84,7 +84,11 @@ function* previewSteps<K extends ListKind>(
     }
     good.push(found.row);
     if (found.row.duplicateOf !== null)
-      duplicates.push({ row: row.row, firstRow: found.row.duplicateOf, text: row.cells.join(" ").slice(0, 120) });
+      duplicates.push({
+        row: row.row,
+        firstRow: found.row.duplicateOf,
+        text: row.cells.join(" ").slice(0, 120),
+      });
   }
   return {
     kind: mapping.kind,

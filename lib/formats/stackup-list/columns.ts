@@ -11,7 +11,11 @@ export const stackupColumns = [
   { id: "dk", label: "Dk", headers: ["dk", "er", "permittivity", "epsilon r", "εr", "dielectric constant"] },
   { id: "df", label: "Df", headers: ["df", "loss tangent", "tan d", "tand", "dissipation factor"] },
   { id: "dkFrequency", label: "Dk at", headers: ["dk at", "frequency", "dk frequency", "at"] },
-  { id: "baseFoil", label: "base foil", headers: ["base foil", "foil", "copper", "base copper", "copper weight", "cu"] },
+  {
+    id: "baseFoil",
+    label: "base foil",
+    headers: ["base foil", "foil", "copper", "base copper", "copper weight", "cu"],
+  },
   { id: "plating", label: "plating", headers: ["plating", "plated"] },
   { id: "coverage", label: "coverage %", headers: ["coverage", "copper coverage", "coverage percent"] },
   { id: "etch", label: "etch", headers: ["etch", "undercut", "etch back"] },

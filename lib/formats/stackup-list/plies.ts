@@ -9,7 +9,12 @@ const PLY = /^(\d{1,2})\s*[x×]\s*(\S+?)(?:\s+([\d.,]+)\s*%)?\s+(.+)$/iu;
 export function writePlies(plies: readonly Ply[]): string {
   return plies
     .map(({ count, style, resinPercent, thickness }) =>
-      [`${count} ×`, style || "?", ...(resinPercent === null ? [] : [`${resinPercent} %`]), `${thickness.value} ${thickness.unit}`].join(" "),
+      [
+        `${count} ×`,
+        style || "?",
+        ...(resinPercent === null ? [] : [`${resinPercent} %`]),
+        `${thickness.value} ${thickness.unit}`,
+      ].join(" "),
     )
     .join(" + ");
 }

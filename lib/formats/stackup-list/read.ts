@@ -36,7 +36,8 @@ export function readStackupList(text: string, name: string, defaultUnit: string)
           row: header?.row ?? 1,
           column: "header",
           value: header?.cells.join(", ").slice(0, 60) ?? "",
-          reason: "names no columns kind and name. Begin with a header row; the export of a stackup shows how.",
+          reason:
+            "names no columns kind and name. Begin with a header row; the export of a stackup shows how.",
         },
       ],
     };
@@ -63,7 +64,8 @@ function findColumns(header: TableRow): Columns {
   for (const { id, headers } of stackupColumns)
     header.cells.forEach((cell, column) => {
       const { name, unit } = readHeader(cell);
-      if (!columns.has(id) && (headers as readonly string[]).includes(name)) columns.set(id, { column, unit });
+      if (!columns.has(id) && (headers as readonly string[]).includes(name))
+        columns.set(id, { column, unit });
     });
   return columns;
 }
@@ -110,9 +112,16 @@ class LayerRow {
   }
 
   kind(): LayerKind {
-    const word = this.text("kind").toLowerCase().replace(/[^a-z]+/g, " ").trim();
+    const word = this.text("kind")
+      .toLowerCase()
+      .replace(/[^a-z]+/g, " ")
+      .trim();
     const kind = layerKinds.find((candidate) => kindWords[candidate].includes(word));
-    if (!kind) this.refuse("kind", `'${this.text("kind")}' is no kind of layer. Write mask, foil, signal, plane, core or prepreg.`);
+    if (!kind)
+      this.refuse(
+        "kind",
+        `'${this.text("kind")}' is no kind of layer. Write mask, foil, signal, plane, core or prepreg.`,
+      );
     return kind ?? "signal";
   }
 
@@ -142,7 +151,10 @@ class LayerRow {
     try {
       const plies = readPlies(this.text("plies"));
       if (plies) return plies;
-      this.refuse("plies", `'${this.text("plies")}' cannot be read. Write 2 × 1080 62 % 76 µm + 1 × 2116 120 µm.`);
+      this.refuse(
+        "plies",
+        `'${this.text("plies")}' cannot be read. Write 2 × 1080 62 % 76 µm + 1 × 2116 120 µm.`,
+      );
     } catch (error) {
       if (!(error instanceof DomainError)) throw error;
       this.refuse("plies", error.message);
@@ -151,7 +163,12 @@ class LayerRow {
   }
 
   private refuse(column: StackupColumn, reason: string): void {
-    this.problems.push({ row: this.source.row, column: labelOf(column), value: this.text(column).slice(0, 60), reason });
+    this.problems.push({
+      row: this.source.row,
+      column: labelOf(column),
+      value: this.text(column).slice(0, 60),
+      reason,
+    });
   }
 }
 
