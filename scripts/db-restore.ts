@@ -12,6 +12,8 @@ await report(async () => {
   const names = process.argv.slice(2);
   const file = names.find((name) => !name.startsWith("--"));
   if (!file) throw new Error("Which copy? Write: npm run db:restore FILE");
-  const { kept } = await restoreDatabase(path.resolve(file), databaseUrl(), { force: names.includes("--force") });
+  const { kept } = await restoreDatabase(path.resolve(file), databaseUrl(), {
+    force: names.includes("--force"),
+  });
   return kept ? `Restored. What was there before is kept: ${kept}` : "Restored.";
 });

@@ -53,7 +53,8 @@ function createAuth(db: Database) {
     onAPIError: {
       // What was refused is for the person who asked; only what failed is for whoever runs this.
       onError: (error) => {
-        if (!isAPIError(error) || error.status === "INTERNAL_SERVER_ERROR") log().error({ err: error }, "Sign-in failed");
+        if (!isAPIError(error) || error.status === "INTERNAL_SERVER_ERROR")
+          log().error({ err: error }, "Sign-in failed");
       },
     },
     emailAndPassword: {
@@ -66,13 +67,16 @@ function createAuth(db: Database) {
       sendResetPassword: async ({ user, url }) => sendMailLater(resetMessage(user.email, user.name, url)),
       onPasswordReset: ({ user }) => forgiveSignIns(user.email),
       onExistingUserSignUp: async ({ user }) =>
-        sendMailLater(alreadyRegisteredMessage(user.email, user.name, user.emailVerified, `${baseUrl()}/forgot`)),
+        sendMailLater(
+          alreadyRegisteredMessage(user.email, user.name, user.emailVerified, `${baseUrl()}/forgot`),
+        ),
     },
     emailVerification: {
       sendOnSignUp: true,
       autoSignInAfterVerification: true,
       expiresIn: HOUR_S,
-      sendVerificationEmail: async ({ user, url }) => sendMailLater(verifyMessage(user.email, user.name, url)),
+      sendVerificationEmail: async ({ user, url }) =>
+        sendMailLater(verifyMessage(user.email, user.name, url)),
     },
     session: {
       expiresIn: 7 * DAY_S,
@@ -105,13 +109,22 @@ function createAuth(db: Database) {
         requireOneKnownRole(ctx.path, ctx.body);
         await limitAccount(ctx.path, ctx.body);
         if (!ctx.path.startsWith("/organization/") || !ctx.headers) return;
-        const found = await getSessionFromCtx<Record<string, unknown>, { activeOrganizationId?: string | null }>(ctx);
+        const found = await getSessionFromCtx<
+          Record<string, unknown>,
+          { activeOrganizationId?: string | null }
+        >(ctx);
         if (found)
-          await requireTeamRead(ctx.path, found.user.id, ctx.query, found.session.activeOrganizationId ?? null);
+          await requireTeamRead(
+            ctx.path,
+            found.user.id,
+            ctx.query,
+            found.session.activeOrganizationId ?? null,
+          );
       }),
       after: createAuthMiddleware(async (ctx) => {
         const email = emailOf(ctx.body);
-        if (ctx.path === "/sign-in/email" && email !== null && ctx.context.newSession) await forgiveSignIns(email);
+        if (ctx.path === "/sign-in/email" && email !== null && ctx.context.newSession)
+          await forgiveSignIns(email);
         const user = ctx.context.session?.user;
         if (user) await auditMemberChange(ctx.path, user, ctx.context.returned);
       }),

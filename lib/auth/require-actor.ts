@@ -24,7 +24,7 @@ export async function requireSigned(): Promise<Signed> {
  */
 export async function requireActor(permission?: Permission): Promise<UserActor> {
   const { actor } = await requireSigned();
-  if (!actor) redirect("/create-team" as Route);
+  if (!actor) redirect("/create-team");
   if (permission && !roleMay(actor.role, permission)) notFound();
   return actor;
 }

@@ -29,7 +29,10 @@ export class RequestError extends Error {
 }
 
 export function signedOut(): RequestError {
-  return new RequestError(401, { code: "signed-out", message: "You are signed out. Sign in, then try again." });
+  return new RequestError(401, {
+    code: "signed-out",
+    message: "You are signed out. Sign in, then try again.",
+  });
 }
 
 /** 400 with what is wrong per field, the first of it in the sentence. */
@@ -71,7 +74,10 @@ export function errorResponse(error: unknown, request: Request): Response {
 
 function unforeseen(error: unknown, request: Request): Response {
   const reference = randomUUID().slice(0, 8);
-  log().error({ err: error, reference, method: request.method, path: new URL(request.url).pathname }, "Unforeseen");
+  log().error(
+    { err: error, reference, method: request.method, path: new URL(request.url).pathname },
+    "Unforeseen",
+  );
   return answer(500, {
     code: "internal",
     message: `The server failed at this. Try again; if it fails once more, tell whoever runs it: reference ${reference}.`,

@@ -20,7 +20,8 @@ export function requireSameOrigin(request: Request): void {
   if (foreignSite || (origin !== null && !isOwnOrigin(origin, request)))
     throw new RequestError(403, {
       code: "foreign-origin",
-      message: "This request came from another site, so nothing was done. Open the page here and do it again.",
+      message:
+        "This request came from another site, so nothing was done. Open the page here and do it again.",
     });
 }
 
@@ -49,10 +50,17 @@ export function readQuery<T extends z.ZodType>(schema: T, request: Request): z.o
   return parsed.data;
 }
 
-export async function readJson<T extends z.ZodType>(schema: T, request: Request, maxBytes: number): Promise<z.output<T>> {
+export async function readJson<T extends z.ZodType>(
+  schema: T,
+  request: Request,
+  maxBytes: number,
+): Promise<z.output<T>> {
   const type = request.headers.get("content-type") ?? "";
   if (!/^application\/json\b/i.test(type))
-    throw new RequestError(415, { code: "not-json", message: "Send this as JSON (content-type application/json)." });
+    throw new RequestError(415, {
+      code: "not-json",
+      message: "Send this as JSON (content-type application/json).",
+    });
   const parsed = schema.safeParse(parseJson(await readBytes(request, maxBytes)));
   if (!parsed.success) throw invalidInput(parsed.error);
   return parsed.data;
@@ -90,12 +98,17 @@ function parseJson(bytes: Uint8Array): unknown {
   try {
     return JSON.parse(new TextDecoder("utf-8", { fatal: true }).decode(bytes));
   } catch {
-    throw new RequestError(400, { code: "invalid", message: "What was sent is not JSON in UTF-8.", fields: {} });
+    throw new RequestError(400, {
+      code: "invalid",
+      message: "What was sent is not JSON in UTF-8.",
+      fields: {},
+    });
   }
 }
 
 function tooLarge(maxBytes: number): RequestError {
-  const limit = maxBytes >= 1_048_576 ? `${Math.floor(maxBytes / 1_048_576)} MiB` : `${Math.floor(maxBytes / 1024)} KiB`;
+  const limit =
+    maxBytes >= 1_048_576 ? `${Math.floor(maxBytes / 1_048_576)} MiB` : `${Math.floor(maxBytes / 1024)} KiB`;
   return new RequestError(413, {
     code: "too-large",
     message: `This is more than the server takes at once (${limit}). Send it in parts.`,

@@ -12,7 +12,11 @@ const MAX_BODY_BYTES = 1_048_576;
 /** Anybody; anybody signed in, with or without a team; or roles that hold the permission (any one of a list). */
 export type Access = "public" | "session" | Permission | readonly Permission[];
 
-type ActorOf<A extends Access> = A extends "public" ? null : A extends "session" ? UserActor | null : UserActor;
+type ActorOf<A extends Access> = A extends "public"
+  ? null
+  : A extends "session"
+    ? UserActor | null
+    : UserActor;
 type PersonOf<A extends Access> = A extends "public" ? null : Person;
 type Parsed<S> = S extends z.ZodType ? z.output<S> : S extends "bytes" ? Uint8Array<ArrayBuffer> : undefined;
 
@@ -38,7 +42,10 @@ interface RouteOptions<A extends Access, P, Q, B> {
 }
 
 export interface RouteHandler {
-  (request: Request, context: { params: Promise<Record<string, string | string[] | undefined>> }): Promise<Response>;
+  (
+    request: Request,
+    context: { params: Promise<Record<string, string | string[] | undefined>> },
+  ): Promise<Response>;
   /** Read by the test that walks every route. */
   access: Access;
 }
@@ -75,14 +82,18 @@ export function route<
       return respond(await handler(input as RouteInput<A, P, Q, B>));
     } catch (error) {
       // Next's own signals, such as notFound(), are thrown past us.
-      if (error instanceof Error && "digest" in error && String(error.digest).startsWith("NEXT_")) throw error;
+      if (error instanceof Error && "digest" in error && String(error.digest).startsWith("NEXT_"))
+        throw error;
       return errorResponse(error, request);
     }
   };
   return Object.assign(handle, { access });
 }
 
-async function admit(access: Access, request: Request): Promise<{ actor: UserActor | null; person: Person | null }> {
+async function admit(
+  access: Access,
+  request: Request,
+): Promise<{ actor: UserActor | null; person: Person | null }> {
   if (access === "public") return { actor: null, person: null };
   const signed = await readSigned(request.headers);
   if (!signed) throw signedOut();

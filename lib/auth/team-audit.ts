@@ -50,7 +50,10 @@ const MEMBER_CHANGES: Readonly<Record<string, string>> = {
 const memberShape = z.object({ organizationId: z.string(), userId: z.string(), role: z.string() });
 
 function memberOf(returned: unknown): z.infer<typeof memberShape> | null {
-  return memberShape.or(z.object({ member: memberShape }).transform(({ member }) => member)).safeParse(returned).data ?? null;
+  return (
+    memberShape.or(z.object({ member: memberShape }).transform(({ member }) => member)).safeParse(returned)
+      .data ?? null
+  );
 }
 
 async function write(

@@ -14,7 +14,9 @@ export async function backupDatabase(url: string, file: string): Promise<void> {
   if (!url.startsWith("file:"))
     throw new Error("This database is on another server, which makes its own copies. Ask whoever runs it.");
   if (!existsSync(/* turbopackIgnore: true */ url.slice("file:".length)))
-    throw new Error(`There is no database at ${url.slice("file:".length)}. Set DATA_DIR or DATABASE_URL to it.`);
+    throw new Error(
+      `There is no database at ${url.slice("file:".length)}. Set DATA_DIR or DATABASE_URL to it.`,
+    );
   if (existsSync(/* turbopackIgnore: true */ file))
     throw new Error(`${file} is there already and is not overwritten. Choose another name.`);
   await mkdir(path.dirname(file), { recursive: true, mode: 0o700 });

@@ -31,7 +31,7 @@ export function openedDatabase(): Promise<OpenDatabase> {
 }
 
 /** Makes tests and scripts work on a database of their own; null goes back to the configured one. */
-export async function useDatabase(open: OpenDatabase | null): Promise<void> {
+export async function replaceDatabase(open: OpenDatabase | null): Promise<void> {
   if (open) shared.__ringfenceDatabase = Promise.resolve(open);
   else await closeDb();
 }
@@ -73,9 +73,10 @@ export interface PragmaHealth {
 
 /** What durability rests on, as the open connection answers it. */
 export async function readPragmas(client: Client): Promise<PragmaHealth> {
-  const first = async (sql: string) => Object.values((await client.execute(sql)).rows[0] ?? {})[0];
+  const first = async (sql: string) => (await client.execute(sql)).rows[0]?.[0];
+  const journalMode = await first("PRAGMA journal_mode");
   return {
-    journalMode: String(await first("PRAGMA journal_mode")),
+    journalMode: typeof journalMode === "string" ? journalMode : "unknown",
     foreignKeys: Number(await first("PRAGMA foreign_keys")) === 1,
     synchronousFull: Number(await first("PRAGMA synchronous")) >= 2,
   };

@@ -17,7 +17,9 @@ export async function databaseHealth(): Promise<DatabaseHealth> {
     if (!url.startsWith("file:")) return { ok: true, pragmas: null, faults: [] };
     const pragmas = await readPragmas(client);
     const faults = [
-      pragmas.journalMode === "wal" ? null : `The journal is '${pragmas.journalMode}', not a write-ahead log.`,
+      pragmas.journalMode === "wal"
+        ? null
+        : `The journal is '${pragmas.journalMode}', not a write-ahead log.`,
       pragmas.foreignKeys ? null : "Foreign keys are not enforced.",
       pragmas.synchronousFull ? null : "Commits are not flushed to the disk.",
     ].filter((fault) => fault !== null);

@@ -16,8 +16,8 @@ export async function findFaults(client: Client): Promise<string[]> {
   const faults: string[] = [];
   const integrity = await client.execute("PRAGMA integrity_check(20)");
   for (const row of integrity.rows) {
-    const said = String(Object.values(row)[0]);
-    if (said !== "ok") faults.push(`Integrity: ${said}.`);
+    const said = row[0];
+    if (said !== "ok") faults.push(`Integrity: ${typeof said === "string" ? said : "no answer"}.`);
   }
   const dangling = await client.execute("PRAGMA foreign_key_check");
   if (dangling.rows.length > 0) faults.push(`${dangling.rows.length} rows point at rows that are not there.`);

@@ -45,6 +45,9 @@ export async function rememberTeam(sessionId: string, teamId: string): Promise<v
 
 export async function findTeamIdBySlug(slug: string): Promise<string | null> {
   const db = await getDb();
-  const [row] = await db.select({ id: organization.id }).from(organization).where(eq(organization.slug, slug));
+  const [row] = await db
+    .select({ id: organization.id })
+    .from(organization)
+    .where(eq(organization.slug, slug));
   return row?.id ?? null;
 }

@@ -17,7 +17,8 @@ export async function restoreDatabase(
   url: string,
   { force = false }: { force?: boolean } = {},
 ): Promise<{ kept: string | null }> {
-  if (!url.startsWith("file:")) throw new Error("This database is on another server. Ask whoever runs it to restore it.");
+  if (!url.startsWith("file:"))
+    throw new Error("This database is on another server. Ask whoever runs it to restore it.");
   const target = path.resolve(url.slice("file:".length));
   if (!existsSync(/* turbopackIgnore: true */ file)) throw new Error(`There is no file ${file}.`);
   if (path.resolve(file) === target) throw new Error("The copy and the database are the same file.");

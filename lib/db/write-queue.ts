@@ -83,7 +83,10 @@ export function withWriteQueue(
 }
 
 function sqlOf(statement: unknown): string {
-  return typeof statement === "string" ? statement : String((statement as { sql?: unknown } | null)?.sql ?? "");
+  if (typeof statement === "string") return statement;
+  const named =
+    statement !== null && typeof statement === "object" && "sql" in statement ? statement.sql : "";
+  return typeof named === "string" ? named : "";
 }
 
 function refuse(message: string): Promise<never> {
@@ -91,7 +94,8 @@ function refuse(message: string): Promise<never> {
 }
 
 async function reconnect(client: Client): Promise<void> {
-  if ("reconnect" in client && typeof client.reconnect === "function") await client.reconnect();
+  // Its type says it returns nothing; for a file it returns a promise.
+  await Promise.resolve(client.reconnect());
 }
 
 /** Doubles up to a quarter of a second, with jitter so that two processes do not keep step. */

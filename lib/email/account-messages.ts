@@ -5,9 +5,14 @@ export function verifyMessage(to: string, name: string, url: string): Message {
   return writeMessage({
     to,
     subject: "Confirm your address",
-    lines: [`Hello ${name},`, "someone made an account with this address. If it was you, confirm that it is yours."],
+    lines: [
+      `Hello ${name},`,
+      "someone made an account with this address. If it was you, confirm that it is yours.",
+    ],
     link: { label: "Confirm this address", url },
-    after: ["The link holds for an hour. If it was not you, do nothing: the account cannot be used without it."],
+    after: [
+      "The link holds for an hour. If it was not you, do nothing: the account cannot be used without it.",
+    ],
   });
 }
 

@@ -20,7 +20,9 @@ export interface Letter {
 
 /** A message as text and as simple HTML that says the same; nothing in it is fetched from anywhere. */
 export function writeMessage({ to, subject, lines, link, after = [] }: Letter): Message {
-  const plain = [...lines, ...(link ? [`${link.label}:\n${link.url}`] : []), ...after, "Ringfence"].join("\n\n");
+  const plain = [...lines, ...(link ? [`${link.label}:\n${link.url}`] : []), ...after, "Ringfence"].join(
+    "\n\n",
+  );
   const paragraph = (text: string) => `<p style="margin:0 0 16px">${escapeHtml(text)}</p>`;
   const button = link
     ? `<p style="margin:0 0 16px"><a href="${escapeHtml(link.url)}">${escapeHtml(link.label)}</a></p>` +
@@ -40,6 +42,12 @@ function oneLine(text: string): string {
 }
 
 function escapeHtml(text: string): string {
-  const named: Record<string, string> = { "&": "&amp;", "<": "&lt;", ">": "&gt;", '"': "&quot;", "'": "&#39;" };
+  const named: Record<string, string> = {
+    "&": "&amp;",
+    "<": "&lt;",
+    ">": "&gt;",
+    '"': "&quot;",
+    "'": "&#39;",
+  };
   return text.replace(/[&<>"']/g, (character) => named[character] ?? character);
 }

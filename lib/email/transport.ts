@@ -4,7 +4,9 @@ import { log } from "@/lib/db/log";
 import { keepMessage } from "@/lib/db/outbox";
 import type { Message } from "./message";
 
-const holder = globalThis as typeof globalThis & { ringfenceMail?: { url: string; transporter: Transporter } };
+const holder = globalThis as typeof globalThis & {
+  ringfenceMail?: { url: string; transporter: Transporter };
+};
 
 /**
  * Sends a message over SMTP (SMTP_URL), or keeps it in the local outbox where none is configured.

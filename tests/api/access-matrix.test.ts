@@ -11,8 +11,14 @@ import { createTestDatabase, type TestDatabase } from "@/tests/support/database"
 import { setAuthEnvironment, signedIn, TEST_URL } from "@/tests/support/signed-in";
 
 // What is queued is tested elsewhere; here nobody works it.
-vi.mock("@/lib/jobs/import-worker", async (original) => ({ ...(await original<object>()), wakeImportWorker: () => undefined }));
-vi.mock("@/lib/jobs/run-worker", async (original) => ({ ...(await original<object>()), wakeRunWorker: () => undefined }));
+vi.mock("@/lib/jobs/import-worker", async (original) => ({
+  ...(await original<object>()),
+  wakeImportWorker: () => undefined,
+}));
+vi.mock("@/lib/jobs/run-worker", async (original) => ({
+  ...(await original<object>()),
+  wakeRunWorker: () => undefined,
+}));
 
 const METHODS = ["GET", "POST", "PUT", "PATCH", "DELETE"] as const;
 const ROOT = path.resolve("app/api/v1");
@@ -52,8 +58,11 @@ describe.each(endpoints.filter(({ name }) => accessFixtures[name]))("$name", (en
   const isPublic = access === "public";
 
   const admits = (actor: UserActor) =>
-    isLetIn(access, actor) && (actor.teamId === data.own.id || isPublic) && (fixture.belongsTo?.(actor, lasting) ?? true);
-  const worldFor = (changes: boolean) => (changes && endpoint.method !== "GET" ? makeWorld(data) : Promise.resolve(lasting));
+    isLetIn(access, actor) &&
+    (actor.teamId === data.own.id || isPublic) &&
+    (fixture.belongsTo?.(actor, lasting) ?? true);
+  const worldFor = (changes: boolean) =>
+    changes && endpoint.method !== "GET" ? makeWorld(data) : Promise.resolve(lasting);
 
   it("answers nobody, or anybody, as declared", async () => {
     const world = await worldFor(isPublic);
@@ -97,7 +106,12 @@ describe.each(endpoints.filter(({ name }) => accessFixtures[name]))("$name", (en
       const world = lasting;
       const before = await traces();
       const actor = data.own.actors.owner;
-      for (const foreign of [{ origin: "https://elsewhere.example" }, { origin: "null" }, { "sec-fetch-site": "cross-site" }]) {
+      const foreigners: Record<string, string>[] = [
+        { origin: "https://elsewhere.example" },
+        { origin: "null" },
+        { "sec-fetch-site": "cross-site" },
+      ];
+      for (const foreign of foreigners) {
         const answer = await call(endpoint, fixture, world, actor, actor, foreign);
         expect(answer.status).toBe(403);
       }
@@ -119,7 +133,9 @@ async function call(
   headers: Record<string, string> = {},
 ): Promise<Answer> {
   const { params = {}, query = {}, body, file } = await fixture.call(world, as ?? about);
-  const address = pattern.replace(/\[(\w+)\]/g, (_all, name: string) => encodeURIComponent(params[name] ?? ""));
+  const address = pattern.replace(/\[(\w+)\]/g, (_all, name: string) =>
+    encodeURIComponent(params[name] ?? ""),
+  );
   const url = new URL(`/api/v1${address}`, TEST_URL);
   for (const [name, value] of Object.entries(query)) url.searchParams.set(name, value);
   const request = new Request(url, {
@@ -136,7 +152,9 @@ async function call(
 }
 
 function isLetIn(access: Access, { role }: UserActor): boolean {
-  return access === "public" || access === "session" || permissionsOf(access).some((one) => roleMay(role, one));
+  return (
+    access === "public" || access === "session" || permissionsOf(access).some((one) => roleMay(role, one))
+  );
 }
 
 function expectAdmitted({ status, text }: Answer, { admitted }: AccessFixture): void {
@@ -162,13 +180,15 @@ async function traces(): Promise<unknown> {
 
 async function readEndpoints(): Promise<Endpoint[]> {
   if (!existsSync(ROOT)) return [];
-  const files = readdirSync(ROOT, { recursive: true, encoding: "utf8" }).filter((file) => /(^|\/)route\.ts$/.test(file));
+  const files = readdirSync(ROOT, { recursive: true, encoding: "utf8" }).filter((file) =>
+    /(^|\/)route\.ts$/.test(file),
+  );
   const found: Endpoint[] = [];
   for (const file of files.sort()) {
-    const module = (await import(path.join(ROOT, file))) as Record<string, RouteHandler | undefined>;
+    const exported = (await import(path.join(ROOT, file))) as Record<string, RouteHandler | undefined>;
     const pattern = `/${path.dirname(file)}`.replace(/\/\([^)]+\)/g, "");
     for (const method of METHODS) {
-      const handler = module[method];
+      const handler = exported[method];
       if (handler) found.push({ name: `${method} ${pattern}`, method, pattern, handler });
     }
   }

@@ -29,7 +29,12 @@ afterAll(async () => {
 
 async function signUp(email: string, password = PASSWORD): Promise<AuthClient> {
   const client = new AuthClient();
-  const answer = await client.post("/sign-up/email", { name: "Ada", email, password, callbackURL: "/projects" });
+  const answer = await client.post("/sign-up/email", {
+    name: "Ada",
+    email,
+    password,
+    callbackURL: "/projects",
+  });
   expect(answer.status).toBe(200);
   return client;
 }
@@ -82,7 +87,9 @@ describe("an account", () => {
     const replay = new AuthClient();
     await replay.open(link);
     expect(await readSigned(replay.headers)).toBeNull();
-    expect(await new AuthClient().post("/sign-in/email", { email, password: PASSWORD })).toMatchObject({ status: 200 });
+    expect(await new AuthClient().post("/sign-in/email", { email, password: PASSWORD })).toMatchObject({
+      status: 200,
+    });
   });
 
   it("is not confirmed by a link that was altered or is older than an hour", async () => {
@@ -100,10 +107,16 @@ describe("an account", () => {
   it("made a second time answers the same as the first, and tells only the address", async () => {
     const email = "twice@x.example";
     await signUpVerified(email);
-    const again = await new AuthClient().post("/sign-up/email", { name: "Eve", email, password: "another one entirely" });
+    const again = await new AuthClient().post("/sign-up/email", {
+      name: "Eve",
+      email,
+      password: "another one entirely",
+    });
     expect(again.status).toBe(200);
     expect((await mail.next(email)).subject).toBe("You have an account already");
-    expect(await new AuthClient().post("/sign-in/email", { email, password: "another one entirely" })).toMatchObject({
+    expect(
+      await new AuthClient().post("/sign-in/email", { email, password: "another one entirely" }),
+    ).toMatchObject({
       status: 401,
     });
   });
@@ -116,28 +129,46 @@ describe("an account", () => {
     const page = await new AuthClient().open(link);
     const token = new URL(page.location ?? "", "http://localhost:3000").searchParams.get("token");
     const newPassword = "quite another passphrase";
-    expect(await new AuthClient().post("/reset-password", { token, newPassword })).toMatchObject({ status: 200 });
+    expect(await new AuthClient().post("/reset-password", { token, newPassword })).toMatchObject({
+      status: 200,
+    });
     expect(await readSigned(client.headers)).toBeNull();
-    expect(await new AuthClient().post("/reset-password", { token, newPassword: PASSWORD })).toMatchObject({ status: 400 });
-    expect(await new AuthClient().post("/sign-in/email", { email, password: PASSWORD })).toMatchObject({ status: 401 });
-    expect(await new AuthClient().post("/sign-in/email", { email, password: newPassword })).toMatchObject({ status: 200 });
+    expect(await new AuthClient().post("/reset-password", { token, newPassword: PASSWORD })).toMatchObject({
+      status: 400,
+    });
+    expect(await new AuthClient().post("/sign-in/email", { email, password: PASSWORD })).toMatchObject({
+      status: 401,
+    });
+    expect(await new AuthClient().post("/sign-in/email", { email, password: newPassword })).toMatchObject({
+      status: 200,
+    });
   });
 
   it("keeps its password when the reset link is older than an hour", async () => {
     const email = "late-reset@x.example";
     await signUpVerified(email);
     await new AuthClient().post("/request-password-reset", { email, redirectTo: "/reset" });
-    const token = linkIn(await mail.next(email)).pathname.split("/").at(-1);
+    const token = linkIn(await mail.next(email))
+      .pathname.split("/")
+      .at(-1);
     const late = await later(HOUR_MS + 1000, () =>
       new AuthClient().post("/reset-password", { token, newPassword: "too late for this" }),
     );
     expect(late.status).toBe(400);
-    expect(await new AuthClient().post("/sign-in/email", { email, password: PASSWORD })).toMatchObject({ status: 200 });
+    expect(await new AuthClient().post("/sign-in/email", { email, password: PASSWORD })).toMatchObject({
+      status: 200,
+    });
   });
 
   it("that does not exist is answered like one that does, and gets no mail", async () => {
-    const known = await new AuthClient().post("/request-password-reset", { email: "twice@x.example", redirectTo: "/reset" });
-    const unknown = await new AuthClient().post("/request-password-reset", { email: "nobody@x.example", redirectTo: "/reset" });
+    const known = await new AuthClient().post("/request-password-reset", {
+      email: "twice@x.example",
+      redirectTo: "/reset",
+    });
+    const unknown = await new AuthClient().post("/request-password-reset", {
+      email: "nobody@x.example",
+      redirectTo: "/reset",
+    });
     expect(unknown).toEqual(known);
     expect(mail.waiting("nobody@x.example")).toBe(0);
   });
@@ -149,7 +180,11 @@ describe("an account", () => {
 
   it("takes no request of another site with its cookies", async () => {
     const client = await signUpVerified("forged@x.example");
-    const forged = await client.post("/update-user", { name: "Mallory" }, { origin: "https://elsewhere.example" });
+    const forged = await client.post(
+      "/update-user",
+      { name: "Mallory" },
+      { origin: "https://elsewhere.example" },
+    );
     expect(forged.status).toBe(403);
   });
 });
@@ -162,17 +197,31 @@ describe("a team", () => {
     const invitationId = await invite(owner, "new@team.example", "reviewer");
 
     const stranger = await signUpVerified("stranger@team.example");
-    expect(await stranger.post("/organization/accept-invitation", { invitationId })).toMatchObject({ status: 403 });
-    expect((await stranger.get(`/organization/get-invitation?id=${invitationId}`)).status).toBeGreaterThanOrEqual(400);
-    expect(await new AuthClient().post("/organization/accept-invitation", { invitationId })).toMatchObject({ status: 401 });
+    expect(await stranger.post("/organization/accept-invitation", { invitationId })).toMatchObject({
+      status: 403,
+    });
+    expect(
+      (await stranger.get(`/organization/get-invitation?id=${invitationId}`)).status,
+    ).toBeGreaterThanOrEqual(400);
+    expect(await new AuthClient().post("/organization/accept-invitation", { invitationId })).toMatchObject({
+      status: 401,
+    });
 
     const guest = await signUpVerified("new@team.example");
-    expect(await guest.post("/organization/accept-invitation", { invitationId })).toMatchObject({ status: 200 });
+    expect(await guest.post("/organization/accept-invitation", { invitationId })).toMatchObject({
+      status: 200,
+    });
     expect((await readSigned(guest.headers))?.actor).toMatchObject({ teamId, role: "reviewer" });
-    expect(await guest.post("/organization/accept-invitation", { invitationId })).toMatchObject({ status: 400 });
+    expect(await guest.post("/organization/accept-invitation", { invitationId })).toMatchObject({
+      status: 400,
+    });
 
     const log = await listAudit(systemActor(teamId));
-    expect(log.map(({ action }) => action)).toEqual(["invitation.accept", "invitation.create", "team.create"]);
+    expect(log.map(({ action }) => action)).toEqual([
+      "invitation.accept",
+      "invitation.create",
+      "team.create",
+    ]);
   });
 
   it("does not take in an address that is no longer confirmed", async () => {
@@ -180,7 +229,10 @@ describe("a team", () => {
     await makeTeam(owner, "unconfirmed");
     const invitationId = await invite(owner, "half@unconfirmed.example", "designer");
     const guest = await signUpVerified("half@unconfirmed.example");
-    await test.db.update(user).set({ emailVerified: false }).where(eq(user.email, "half@unconfirmed.example"));
+    await test.db
+      .update(user)
+      .set({ emailVerified: false })
+      .where(eq(user.email, "half@unconfirmed.example"));
     expect((await guest.post("/organization/accept-invitation", { invitationId })).status).toBe(403);
     expect(await readSigned(guest.headers)).toBeNull();
   });
@@ -190,14 +242,23 @@ describe("a team", () => {
     await makeTeam(owner, "late");
     const guest = await signUpVerified("guest@late.example");
     const old = await invite(owner, "guest@late.example", "designer");
-    await test.db.update(invitation).set({ expiresAt: new Date(Date.now() - 1000) }).where(eq(invitation.id, old));
-    expect(await guest.post("/organization/accept-invitation", { invitationId: old })).toMatchObject({ status: 400 });
+    await test.db
+      .update(invitation)
+      .set({ expiresAt: new Date(Date.now() - 1000) })
+      .where(eq(invitation.id, old));
+    expect(await guest.post("/organization/accept-invitation", { invitationId: old })).toMatchObject({
+      status: 400,
+    });
     const withdrawn = await invite(owner, "guest@late.example", "designer");
     await owner.post("/organization/cancel-invitation", { invitationId: withdrawn });
-    expect(await guest.post("/organization/accept-invitation", { invitationId: withdrawn })).toMatchObject({ status: 400 });
+    expect(await guest.post("/organization/accept-invitation", { invitationId: withdrawn })).toMatchObject({
+      status: 400,
+    });
     const declined = await invite(owner, "guest@late.example", "designer");
     await guest.post("/organization/reject-invitation", { invitationId: declined });
-    expect(await guest.post("/organization/accept-invitation", { invitationId: declined })).toMatchObject({ status: 400 });
+    expect(await guest.post("/organization/accept-invitation", { invitationId: declined })).toMatchObject({
+      status: 400,
+    });
     expect((await readSigned(guest.headers))?.actor).toBeNull();
   });
 
@@ -214,31 +275,56 @@ describe("a team", () => {
   ])("refuses a role that is %s: %j", async (_what, role) => {
     const owner = new AuthClient();
     const headers = await signedIn(test.own.actors.owner);
-    const invited = await owner.post("/organization/invite-member", { email: "role@x.example", role }, headers);
+    const invited = await owner.post(
+      "/organization/invite-member",
+      { email: "role@x.example", role },
+      headers,
+    );
     expect(invited.status).toBe(400);
-    const [reviewer] = await test.db.select().from(member).where(eq(member.userId, test.own.actors.reviewer.userId));
+    const [reviewer] = await test.db
+      .select()
+      .from(member)
+      .where(eq(member.userId, test.own.actors.reviewer.userId));
     const body = { memberId: reviewer?.id, role, organizationId: test.own.id };
     expect((await owner.post("/organization/update-member-role", body, headers)).status).toBe(400);
-    expect((await test.db.select().from(member).where(eq(member.id, reviewer?.id ?? "")))[0]?.role).toBe("reviewer");
+    expect(
+      (
+        await test.db
+          .select()
+          .from(member)
+          .where(eq(member.id, reviewer?.id ?? ""))
+      )[0]?.role,
+    ).toBe("reviewer");
   });
 
-  it.each(["designer", "reviewer", "manufacturer"] as const)("lets no %s invite, change roles, rename or remove", async (role) => {
-    const headers = await signedIn(test.own.actors[role]);
-    const client = new AuthClient();
-    const [target] = await test.db.select().from(member).where(eq(member.userId, test.own.actors.owner.userId));
-    const attempts: [string, unknown][] = [
-      ["/organization/invite-member", { email: "x@x.example", role: "owner" }],
-      ["/organization/update-member-role", { memberId: target?.id, role: "designer" }],
-      ["/organization/remove-member", { memberIdOrEmail: target?.id }],
-      ["/organization/update", { data: { name: "Taken over" } }],
-      ["/organization/delete", { organizationId: test.own.id }],
-    ];
-    for (const [path, body] of attempts) expect((await client.post(path, body, headers)).status, path).toBeGreaterThanOrEqual(400);
-  });
+  it.each(["designer", "reviewer", "manufacturer"] as const)(
+    "lets no %s invite, change roles, rename or remove",
+    async (role) => {
+      const headers = await signedIn(test.own.actors[role]);
+      const client = new AuthClient();
+      const [target] = await test.db
+        .select()
+        .from(member)
+        .where(eq(member.userId, test.own.actors.owner.userId));
+      const attempts: [string, unknown][] = [
+        ["/organization/invite-member", { email: "x@x.example", role: "owner" }],
+        ["/organization/update-member-role", { memberId: target?.id, role: "designer" }],
+        ["/organization/remove-member", { memberIdOrEmail: target?.id }],
+        ["/organization/update", { data: { name: "Taken over" } }],
+        ["/organization/delete", { organizationId: test.own.id }],
+      ];
+      for (const [path, body] of attempts)
+        expect((await client.post(path, body, headers)).status, path).toBeGreaterThanOrEqual(400);
+    },
+  );
 
   it("cannot be deleted, even by its owner: what was signed stays", async () => {
     const headers = await signedIn(test.own.actors.owner);
-    const answer = await new AuthClient().post("/organization/delete", { organizationId: test.own.id }, headers);
+    const answer = await new AuthClient().post(
+      "/organization/delete",
+      { organizationId: test.own.id },
+      headers,
+    );
     expect(answer.status).toBeGreaterThanOrEqual(400);
   });
 
@@ -260,7 +346,8 @@ describe("a team", () => {
     for (const path of paths) {
       expect((await see(test.own.actors.designer, path)).status, path).toBe(200);
       expect((await see(test.own.actors.manufacturer, path)).status, path).toBe(403);
-      if (path.includes("?")) expect((await see(test.other.actors.owner, path)).status, path).toBeGreaterThanOrEqual(400);
+      if (path.includes("?"))
+        expect((await see(test.other.actors.owner, path)).status, path).toBeGreaterThanOrEqual(400);
     }
   });
 
@@ -285,7 +372,9 @@ describe("a team", () => {
     const teamId = await makeTeam(owner, "alone");
     const userId = (await readSigned(owner.headers))?.person.userId ?? "";
     const [row] = await test.db.select().from(member).where(eq(member.userId, userId));
-    expect((await owner.post("/organization/update-member-role", { memberId: row?.id, role: "designer" })).status).toBe(400);
+    expect(
+      (await owner.post("/organization/update-member-role", { memberId: row?.id, role: "designer" })).status,
+    ).toBe(400);
     expect((await owner.post("/organization/leave", { organizationId: teamId })).status).toBe(400);
     expect((await owner.post("/organization/remove-member", { memberIdOrEmail: row?.id })).status).toBe(400);
   });

@@ -1,4 +1,4 @@
-import { getTableColumns } from "drizzle-orm";
+import { getTableColumns, type Column } from "drizzle-orm";
 import { getAuthTables } from "better-auth/db";
 import { afterAll, beforeAll, expect, it } from "vitest";
 import { getAuth } from "@/lib/auth/auth";
@@ -19,11 +19,12 @@ it("every table and column that the package asks for is in ours, required where 
     const table = Object.entries(tables).find(([name]) => name === model)?.[1];
     expect(table, model).toBeDefined();
     if (!table) continue;
-    const columns = Object.entries(getTableColumns(table));
+    const columns = Object.entries(getTableColumns(table) as Record<string, Column>);
     for (const [field, { required, unique }] of Object.entries(fields)) {
       const column = columns.find(([name]) => name === field)?.[1];
       expect(column, `${model}.${field}`).toBeDefined();
-      if (column && !required) expect(column.notNull && !column.hasDefault, `${model}.${field} may be left out`).toBe(false);
+      if (column && !required)
+        expect(column.notNull && !column.hasDefault, `${model}.${field} may be left out`).toBe(false);
       if (unique) expect(column?.isUnique, `${model}.${field} is unique`).toBe(true);
     }
   }
@@ -31,13 +32,17 @@ it("every table and column that the package asks for is in ours, required where 
 
 it("cookies are for this site alone, out of reach of scripts, and secure unless this computer is served", async () => {
   const context = await (await getAuth()).$context;
-  expect(context.authCookies.sessionToken.attributes).toMatchObject({ httpOnly: true, sameSite: "lax", secure: false });
+  expect(context.authCookies.sessionToken.attributes).toMatchObject({
+    httpOnly: true,
+    sameSite: "lax",
+    secure: false,
+  });
   process.env.BETTER_AUTH_URL = "https://board.example.org";
   const other = await createTestDatabase();
   const elsewhere = await (await getAuth()).$context;
   expect(elsewhere.authCookies.sessionToken.name).toMatch(/^__Secure-/);
   expect(elsewhere.authCookies.sessionToken.attributes.secure).toBe(true);
-  expect(elsewhere.sessionConfig.cookieCache?.enabled).toBeFalsy();
+  expect(elsewhere.options.session.cookieCache.enabled).toBeFalsy();
   await other.close();
   setAuthEnvironment();
 });

@@ -16,7 +16,10 @@ beforeAll(async () => {
 });
 beforeEach(async () => {
   setClock(() => 1_800_000_000_000 - (1_800_000_000_000 % QUARTER_MS));
-  await test.db.batch([test.db.run(sql`delete from account_attempt`), test.db.run(sql`delete from rate_limit`)]);
+  await test.db.batch([
+    test.db.run(sql`delete from account_attempt`),
+    test.db.run(sql`delete from rate_limit`),
+  ]);
 });
 afterAll(async () => {
   setClock(null);
@@ -30,7 +33,8 @@ const post = (path: string, body: unknown) =>
 
 it("stops guessing at one account after 10 tries in a quarter of an hour, whatever addresses they come from", async () => {
   const { email } = test.own.actors.owner;
-  for (let n = 0; n < 10; n++) expect((await post("/sign-in/email", { email, password: `guess ${n}` })).status).toBe(401);
+  for (let n = 0; n < 10; n++)
+    expect((await post("/sign-in/email", { email, password: `guess ${n}` })).status).toBe(401);
   expect(await post("/sign-in/email", { email: email.toUpperCase(), password: "guess" })).toMatchObject({
     status: 429,
     body: { code: "TOO_MANY_ATTEMPTS" },
@@ -52,7 +56,9 @@ it("stops one client address that tries many accounts", async () => {
   const statuses: number[] = [];
   for (let n = 0; n < 6; n++) {
     const body = { email: `someone${n}@x.example`, password: "guess" };
-    statuses.push((await new AuthClient().post("/sign-in/email", body, { "x-forwarded-for": "198.51.100.7" })).status);
+    statuses.push(
+      (await new AuthClient().post("/sign-in/email", body, { "x-forwarded-for": "198.51.100.7" })).status,
+    );
   }
   expect(statuses).toEqual([401, 401, 401, 429, 429, 429]);
 });

@@ -18,11 +18,21 @@ type Handler = ReturnType<typeof route>;
 async function send(
   handler: Handler,
   init: RequestInit & { path?: string; params?: Record<string, string>; duplex?: "half" } = {},
-): Promise<{ status: number; body: { error?: Record<string, unknown> } & Record<string, unknown>; headers: Headers }> {
+): Promise<{
+  status: number;
+  body: { error?: Record<string, unknown> } & Record<string, unknown>;
+  headers: Headers;
+}> {
   const { path = "/api/v1/x", params = {}, ...rest } = init;
-  const response = await handler(new Request(`${TEST_URL}${path}`, rest), { params: Promise.resolve(params) });
+  const response = await handler(new Request(`${TEST_URL}${path}`, rest), {
+    params: Promise.resolve(params),
+  });
   const text = await response.text();
-  return { status: response.status, body: text ? (JSON.parse(text) as Record<string, unknown>) : {}, headers: response.headers };
+  return {
+    status: response.status,
+    body: text ? (JSON.parse(text) as Record<string, unknown>) : {},
+    headers: response.headers,
+  };
 }
 
 const json = (body: unknown): RequestInit => ({
@@ -42,7 +52,10 @@ const throws = (error: unknown) =>
 describe("what comes in", () => {
   const form = route({
     access: "public",
-    body: z.object({ name: z.string().min(1, "Give it a name."), at: z.object({ n: z.number("Write a number.") }) }),
+    body: z.object({
+      name: z.string().min(1, "Give it a name."),
+      at: z.object({ n: z.number("Write a number.") }),
+    }),
     maxBodyBytes: 64,
     handler: ({ body }) => ({ name: body.name }),
   });
@@ -50,7 +63,10 @@ describe("what comes in", () => {
   it("is refused field by field", async () => {
     const { status, body } = await send(form, json({ name: "", at: { n: "x" } }));
     expect(status).toBe(400);
-    expect(body.error).toMatchObject({ code: "invalid", fields: { name: "Give it a name.", "at.n": "Write a number." } });
+    expect(body.error).toMatchObject({
+      code: "invalid",
+      fields: { name: "Give it a name.", "at.n": "Write a number." },
+    });
   });
 
   it("is refused where it is no JSON, or not said to be", async () => {
@@ -81,18 +97,27 @@ describe("what comes in", () => {
       handler: ({ query }) => query,
     });
     expect((await send(query, { path: "/api/v1/x?id=a&id=b" })).body).toEqual({ id: ["a", "b"], page: 1 });
-    expect((await send(query, { path: "/api/v1/x?id=a&id=b&page=0" })).body.error?.fields).toHaveProperty("page");
+    expect((await send(query, { path: "/api/v1/x?id=a&id=b&page=0" })).body.error?.fields).toHaveProperty(
+      "page",
+    );
   });
 
   it("is not found where its address holds no id", async () => {
-    const byId = route({ access: "public", params: z.object({ id: z.uuid() }), handler: ({ params }) => params });
+    const byId = route({
+      access: "public",
+      params: z.object({ id: z.uuid() }),
+      handler: ({ params }) => params,
+    });
     expect((await send(byId, { params: { id: "../1" } })).status).toBe(404);
   });
 });
 
 describe("who comes in", () => {
   const owners = route({ access: "team:manage", handler: ({ actor }) => ({ role: actor.role }) });
-  const either = route({ access: ["draft:edit", "limits:set"], handler: ({ actor }) => ({ role: actor.role }) });
+  const either = route({
+    access: ["draft:edit", "limits:set"],
+    handler: ({ actor }) => ({ role: actor.role }),
+  });
 
   it("is asked to sign in, with a session that was forged as with none", async () => {
     expect((await send(owners)).status).toBe(401);
@@ -117,10 +142,26 @@ describe("what goes out", () => {
   });
 
   it.each([
-    [404, new NotFoundError("The project"), { code: "not-found", message: "The project does not exist, or is not yours to see." }],
-    [409, new ConflictError("Changed.", { n: 2 }, ["n"]), { code: "conflict", current: { n: 2 }, changed: ["n"] }],
-    [422, new RefusedError("No.", "why", { f: "That." }), { code: "why", message: "No.", fields: { f: "That." } }],
-    [422, new DomainError("Too wide.", "width"), { code: "domain", message: "Too wide.", fields: { width: "Too wide." } }],
+    [
+      404,
+      new NotFoundError("The project"),
+      { code: "not-found", message: "The project does not exist, or is not yours to see." },
+    ],
+    [
+      409,
+      new ConflictError("Changed.", { n: 2 }, ["n"]),
+      { code: "conflict", current: { n: 2 }, changed: ["n"] },
+    ],
+    [
+      422,
+      new RefusedError("No.", "why", { f: "That." }),
+      { code: "why", message: "No.", fields: { f: "That." } },
+    ],
+    [
+      422,
+      new DomainError("Too wide.", "width"),
+      { code: "domain", message: "Too wide.", fields: { width: "Too wide." } },
+    ],
     [503, Object.assign(new Error("locked"), { code: "SQLITE_BUSY" }), { code: "busy" }],
   ])("says %i for what was foreseen: %s", async (status, error, said) => {
     const answer = await send(throws(error));
@@ -132,6 +173,9 @@ describe("what goes out", () => {
     const { status, body } = await send(throws(new Error("password=hunter2 in /some/place")));
     expect(status).toBe(500);
     expect(JSON.stringify(body)).not.toContain("hunter2");
-    expect(body.error).toMatchObject({ code: "internal", detail: { reference: expect.stringMatching(/^[0-9a-f]{8}$/) as string } });
+    expect(body.error).toMatchObject({
+      code: "internal",
+      detail: { reference: expect.stringMatching(/^[0-9a-f]{8}$/) as string },
+    });
   });
 });

@@ -24,7 +24,9 @@ async function teamNames(url: string): Promise<string[]> {
 }
 
 it("copies a database that is open and written to, and leaves nothing half-made", async () => {
-  const writing = Array.from({ length: 20 }, (_, n) => test.db.run(sql`update organization set name = ${`n${n}`}`));
+  const writing = Array.from({ length: 20 }, (_, n) =>
+    test.db.run(sql`update organization set name = ${`n${n}`}`),
+  );
   await Promise.all([...writing, backupDatabase(test.open.url, copy)]);
   expect(await teamNames(`file:${copy}`)).toHaveLength(2);
   expect((await readdir(path.dirname(copy))).filter((name) => name.includes("partial"))).toEqual([]);
@@ -63,7 +65,9 @@ it("restores what the copy holds and keeps what was there", async () => {
 it("refuses to lose later work unless forced, and keeps it even then", async () => {
   await backupDatabase(test.open.url, copy);
   const at = new Date(Date.now() + 60_000);
-  await test.db.insert(user).values({ id: "later", name: "L", email: "l@x.example", createdAt: at, updatedAt: at });
+  await test.db
+    .insert(user)
+    .values({ id: "later", name: "L", email: "l@x.example", createdAt: at, updatedAt: at });
   const stopped = await stopServing();
   await expect(restoreDatabase(copy, stopped)).rejects.toThrow("--force");
   const { kept } = await restoreDatabase(copy, stopped, { force: true });
@@ -82,7 +86,10 @@ it("restores where there is no database yet", async () => {
 it("refuses a file that is no database, is damaged, or is another program's, and leaves the database alone", async () => {
   await backupDatabase(test.open.url, copy);
   const text = path.join(test.folder, "text.db");
-  await writeFile(text, "This is not a database, though it is long enough to be looked at as one.".repeat(100));
+  await writeFile(
+    text,
+    "This is not a database, though it is long enough to be looked at as one.".repeat(100),
+  );
   await expect(restoreDatabase(text, test.open.url)).rejects.toThrow("not sound");
 
   const damaged = path.join(test.folder, "damaged.db");

@@ -29,7 +29,10 @@ it(
   async () => {
     const locks = await createLocks(url);
     let retries = 0;
-    const queue = withWriteQueue(locks.meetLockEvery(createClient({ url, timeout: 0 }), BUSY_EVERY), () => retries++);
+    const queue = withWriteQueue(
+      locks.meetLockEvery(createClient({ url, timeout: 0 }), BUSY_EVERY),
+      () => retries++,
+    );
 
     const acknowledged = new Set<string>();
     const clients = Array.from({ length: CLIENTS }, (_, client) => writeAll(queue, client, acknowledged));
@@ -62,7 +65,9 @@ it("gives up with the error of the lock, not silently, when it is never released
   const holder = createClient({ url });
   const lock = await holder.transaction("write");
   const queue = withWriteQueue(refuses, () => undefined, { attempts: 4 });
-  await expect(queue.execute("insert into written values (0, 0)")).rejects.toMatchObject({ code: "SQLITE_BUSY" });
+  await expect(queue.execute("insert into written values (0, 0)")).rejects.toMatchObject({
+    code: "SQLITE_BUSY",
+  });
   await lock.rollback();
   // What comes after is not held up by what failed.
   await queue.execute("insert into written values (0, 1)");
@@ -127,7 +132,8 @@ async function createLocks(at: string) {
       };
       return new Proxy(client, {
         get(target, property) {
-          if (property === "execute") return (one: InStatement) => guarded(one as object, 1, () => target.execute(one));
+          if (property === "execute")
+            return (one: InStatement) => guarded(one as object, 1, () => target.execute(one));
           if (property === "batch")
             return (unit: InStatement[]) => guarded(unit, unit.length, () => target.batch(unit, "write"));
           const value: unknown = Reflect.get(target, property, target);
@@ -138,13 +144,15 @@ async function createLocks(at: string) {
   };
 }
 
-async function readBack(at: string): Promise<{ rows: number; distinct: number; integrity: string }> {
+async function readBack(at: string): Promise<{ rows: number; distinct: number; integrity: unknown }> {
   const client = createClient({ url: at });
   const counts = (await client.execute("select count(*) as n from written")).rows[0];
-  const distinct = (await client.execute("select count(*) as n from (select distinct client, n from written)")).rows[0];
+  const distinct = (
+    await client.execute("select count(*) as n from (select distinct client, n from written)")
+  ).rows[0];
   const integrity = (await client.execute("pragma integrity_check")).rows[0];
   client.close();
-  return { rows: Number(counts?.n), distinct: Number(distinct?.n), integrity: String(integrity?.integrity_check) };
+  return { rows: Number(counts?.n), distinct: Number(distinct?.n), integrity: integrity?.[0] };
 }
 
 function runSecondWriter(at: string, writes: number): Promise<number | null> {

@@ -4,7 +4,7 @@ import path from "node:path";
 import { createClient } from "@libsql/client";
 import { sql } from "drizzle-orm";
 import { afterAll, beforeAll, describe, expect, it } from "vitest";
-import { openDatabase, useDatabase } from "@/lib/db/client";
+import { openDatabase, replaceDatabase } from "@/lib/db/client";
 import { databaseHealth } from "@/lib/db/health";
 import { member } from "@/lib/db/schema";
 import { createTestDatabase, type TestDatabase } from "@/tests/support/database";
@@ -25,13 +25,19 @@ describe("an opened database", () => {
   });
 
   it("keeps these on every connection of its pool and after a reconnect", async () => {
-    await test.open.client.reconnect();
+    await Promise.resolve(test.open.client.reconnect());
     const answers = await Promise.all(Array.from({ length: 8 }, () => databaseHealth()));
     expect(answers.every(({ ok }) => ok)).toBe(true);
   });
 
   it("refuses a row that points nowhere", async () => {
-    const orphan = { id: "m", organizationId: "nowhere", userId: "nobody", role: "owner", createdAt: new Date() };
+    const orphan = {
+      id: "m",
+      organizationId: "nowhere",
+      userId: "nobody",
+      role: "owner",
+      createdAt: new Date(),
+    };
     await expect(test.db.insert(member).values(orphan)).rejects.toThrow();
   });
 
@@ -77,7 +83,7 @@ describe("an opened database", () => {
   });
 
   it("says what is wrong when it cannot be opened, and opens again once it can", async () => {
-    await useDatabase(null);
+    await replaceDatabase(null);
     process.env.DATABASE_URL = `file:${test.file}/not-a-folder.db`;
     const health = await databaseHealth();
     expect(health.ok).toBe(false);

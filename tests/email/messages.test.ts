@@ -9,9 +9,27 @@ import { startMailServer } from "@/tests/support/mail-server";
 const URL = "http://localhost:3000/x?a=1&b=2";
 const NASTY = `<img src=x onerror=alert(1)> "A" & 'B'\r\nBcc: everybody@x.example`;
 const messages = {
-  invitation: invitationMessage("a@x.example", { inviterName: NASTY, teamName: NASTY, role: "designer", days: 7, url: URL }),
-  release: releaseMessage("a@x.example", { teamName: NASTY, projectName: NASTY, letter: "A", url: URL, expires: "1 May" }),
-  flag: flagAssignedMessage("a@x.example", { by: NASTY, projectName: NASTY, subject: NASTY, comment: NASTY, url: URL }),
+  invitation: invitationMessage("a@x.example", {
+    inviterName: NASTY,
+    teamName: NASTY,
+    role: "designer",
+    days: 7,
+    url: URL,
+  }),
+  release: releaseMessage("a@x.example", {
+    teamName: NASTY,
+    projectName: NASTY,
+    letter: "A",
+    url: URL,
+    expires: "1 May",
+  }),
+  flag: flagAssignedMessage("a@x.example", {
+    by: NASTY,
+    projectName: NASTY,
+    subject: NASTY,
+    comment: NASTY,
+    url: URL,
+  }),
 };
 
 let test: TestDatabase;
@@ -54,7 +72,10 @@ describe("the outbox", () => {
     await sendMail(messages.flag);
     expect(await readOutboxPage()).toBeNull();
     process.env.RINGFENCE_DEMO = "1";
-    expect((await readOutboxPage())?.map(({ subject }) => subject)).toEqual([messages.flag.subject, messages.release.subject]);
+    expect((await readOutboxPage())?.map(({ subject }) => subject)).toEqual([
+      messages.flag.subject,
+      messages.release.subject,
+    ]);
   });
 
   it("has no page where mail is sent", async () => {

@@ -11,7 +11,17 @@ import { raiseFlag } from "@/lib/db/review";
 import { findRevision } from "@/lib/db/revision";
 import { getRuleSet } from "@/lib/db/rule-set";
 import { createRun } from "@/lib/db/run";
-import { finding, noDataAcceptance, pathResult, problem, release, releaseRecipient, run, signOff, waiver } from "@/lib/db/schema";
+import {
+  finding,
+  noDataAcceptance,
+  pathResult,
+  problem,
+  release,
+  releaseRecipient,
+  run,
+  signOff,
+  waiver,
+} from "@/lib/db/schema";
 import { freezeInputs, readInputs } from "@/lib/db/snapshot";
 import { getStackup } from "@/lib/db/stackup";
 import { receiveList } from "@/lib/jobs/import-list";
@@ -34,11 +44,21 @@ let made = 0;
 export async function makeWorld(data: TestDatabase) {
   const { designer, reviewer, manufacturer } = data.own.actors;
   const at = Date.now();
-  const project = await createProject(designer, { name: `${SECRET} ${++made}`, description: "", unit: "mm", template: "6-layers" });
+  const project = await createProject(designer, {
+    name: `${SECRET} ${++made}`,
+    description: "",
+    unit: "mm",
+    template: "6-layers",
+  });
   const projectId = project.id;
   const netClass = await createNetClass(designer, projectId, aClass(`${SECRET} class`));
   const model = await createModel(designer, projectId, aModel(`${SECRET} driver`));
-  await applyLayoutLists(designer, projectId, { nets: [aNet(`${SECRET} net`)] }, { mode: "merge", summary: "1 net" });
+  await applyLayoutLists(
+    designer,
+    projectId,
+    { nets: [aNet(`${SECRET} net`)] },
+    { mode: "merge", summary: "1 net" },
+  );
   const draft = await findRevision(designer, projectId);
   const [net] = (await listNets(designer, draft)).nets;
   const stackup = await getStackup(designer, draft);
@@ -60,9 +80,21 @@ export async function makeWorld(data: TestDatabase) {
   });
   const own = { teamId: data.own.id, projectId, revisionId: draft.id, runId };
   const { db } = data;
-  const ids = { waiver: newId(), acceptance: newId(), signOff: newId(), release: newId(), recipient: newId() };
+  const ids = {
+    waiver: newId(),
+    acceptance: newId(),
+    signOff: newId(),
+    release: newId(),
+    recipient: newId(),
+  };
   const token = createHash("sha256").update(ids.recipient).digest("base64url");
-  const verdict = { mechanism: "mismatch", worstRule: "overshoot", worstMargin: -0.1, failsAt: 1, ofCorners: 1 };
+  const verdict = {
+    mechanism: "mismatch",
+    worstRule: "overshoot",
+    worstMargin: -0.1,
+    failsAt: 1,
+    ofCorners: 1,
+  };
   await db.batch([
     db.update(run).set({ state: "done", finishedAt: at, done: 1 }).where(eq(run.id, runId)),
     db.insert(pathResult).values({
@@ -164,7 +196,11 @@ export async function makeWorld(data: TestDatabase) {
     assigneeUserId: null,
   });
 
-  const list = { bytes: new TextEncoder().encode(NET_LIST), fileName: `${SECRET} nets.csv`, kind: "net list" as const };
+  const list = {
+    bytes: new TextEncoder().encode(NET_LIST),
+    fileName: `${SECRET} nets.csv`,
+    kind: "net list" as const,
+  };
   const { import: received } = await receiveList(designer, projectId, list);
 
   /** A signature is its signer's own to withdraw. */
@@ -174,7 +210,24 @@ export async function makeWorld(data: TestDatabase) {
     return id;
   };
 
-  return { data, projectId, draft, netClass, model, net, stackup, rules, bindings, runId, pathId, flagId, ids, token, received, signedBy };
+  return {
+    data,
+    projectId,
+    draft,
+    netClass,
+    model,
+    net,
+    stackup,
+    rules,
+    bindings,
+    runId,
+    pathId,
+    flagId,
+    ids,
+    token,
+    received,
+    signedBy,
+  };
 }
 
 export type AccessWorld = Awaited<ReturnType<typeof makeWorld>>;

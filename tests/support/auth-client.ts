@@ -30,7 +30,12 @@ export class AuthClient {
     return this.send("GET", link.href);
   }
 
-  private async send(method: string, url: string, body?: unknown, extra: Record<string, string> = {}): Promise<Answer> {
+  private async send(
+    method: string,
+    url: string,
+    body?: unknown,
+    extra: Record<string, string> = {},
+  ): Promise<Answer> {
     const headers = this.headers;
     if (body !== undefined) headers.set("content-type", "application/json");
     for (const [name, value] of Object.entries(extra)) headers.set(name, value);
@@ -48,7 +53,10 @@ export class AuthClient {
     return {
       status: response.status,
       location: response.headers.get("location"),
-      body: text.startsWith("{") || text.startsWith("[") || text === "null" ? (JSON.parse(text) as unknown) : text,
+      body:
+        text.startsWith("{") || text.startsWith("[") || text === "null"
+          ? (JSON.parse(text) as unknown)
+          : text,
     };
   }
 }

@@ -2,7 +2,7 @@ import { mkdtemp, rm } from "node:fs/promises";
 import { tmpdir } from "node:os";
 import path from "node:path";
 import { migrate } from "drizzle-orm/libsql/migrator";
-import { openDatabase, useDatabase, type Database, type OpenDatabase } from "@/lib/db/client";
+import { openDatabase, replaceDatabase, type Database, type OpenDatabase } from "@/lib/db/client";
 import { newId } from "@/lib/db/ids";
 import { member, organization, user } from "@/lib/db/schema";
 import type { UserActor } from "@/lib/schemas/actor";
@@ -38,7 +38,7 @@ export async function createTestDatabase(): Promise<TestDatabase> {
   const file = path.join(folder, "ringfence.db");
   const open = await openDatabase(`file:${file}`);
   await migrate(open.db, { migrationsFolder: path.resolve("drizzle") });
-  await useDatabase(open);
+  await replaceDatabase(open);
   const own = await makeTeam(open.db, "Saltmarsh");
   const other = await makeTeam(open.db, "Estuary");
   return {
@@ -50,7 +50,7 @@ export async function createTestDatabase(): Promise<TestDatabase> {
     other,
     teams: [own, other],
     close: async () => {
-      await useDatabase(null);
+      await replaceDatabase(null);
       await rm(folder, { recursive: true, force: true });
     },
   };
@@ -78,9 +78,11 @@ async function makeTeam(db: Database, name: string): Promise<TestTeam> {
         updatedAt: at,
       })),
     ),
-    db.insert(member).values(
-      people.map(({ userId, role }) => ({ id: newId(), organizationId: id, userId, role, createdAt: at })),
-    ),
+    db
+      .insert(member)
+      .values(
+        people.map(({ userId, role }) => ({ id: newId(), organizationId: id, userId, role, createdAt: at })),
+      ),
   ]);
   const actors = Object.fromEntries(
     people.map((person): [Role, UserActor] => [person.role, { kind: "user", teamId: id, ...person }]),

@@ -29,5 +29,8 @@ export async function signedIn(actor: UserActor): Promise<Record<string, string>
     updatedAt: at,
   });
   const signature = createHmac("sha256", TEST_SECRET).update(token).digest("base64");
-  return { cookie: `better-auth.session_token=${encodeURIComponent(`${token}.${signature}`)}`, origin: TEST_URL };
+  return {
+    cookie: `better-auth.session_token=${encodeURIComponent(`${token}.${signature}`)}`,
+    origin: TEST_URL,
+  };
 }

@@ -13,7 +13,10 @@ export default async function OutboxPage() {
   if (!messages) notFound();
   return (
     <main className="mx-auto w-full max-w-3xl px-6 py-10">
-      <PageHeader title="Outbox" description="No mail server is set, so messages are kept here. Newest first." />
+      <PageHeader
+        title="Outbox"
+        description="No mail server is set, so messages are kept here. Newest first."
+      />
       {messages.length === 0 ? <p className="text-ink-soft">No message yet.</p> : null}
       <ol className="flex flex-col gap-6">
         {messages.map((message) => (
