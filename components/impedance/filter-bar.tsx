@@ -16,7 +16,7 @@ export function FilterBar({ state, classes }: { state: ImpedanceState; classes: 
     <div className="mb-3 grid grid-cols-2 gap-3 sm:flex sm:flex-wrap print:hidden">
       <Select
         label="Class"
-        fieldClassName="sm:w-44"
+        fieldClassName="sm:w-36"
         value={state.class ?? ""}
         placeholder="all classes"
         options={classes.map(({ lineageId, name }) => ({ value: lineageId, label: name }))}
@@ -24,7 +24,7 @@ export function FilterBar({ state, classes }: { state: ImpedanceState; classes: 
       />
       <Select
         label="Layers"
-        fieldClassName="sm:w-44"
+        fieldClassName="sm:w-40"
         value={state.layers}
         options={layerChoices.map((value) => ({ value, label: LAYER_WORDS[value] }))}
         onChange={(event) =>
@@ -33,7 +33,7 @@ export function FilterBar({ state, classes }: { state: ImpedanceState; classes: 
       />
       <Select
         label="Rows"
-        fieldClassName="sm:w-36"
+        fieldClassName="sm:w-28"
         value={state.show}
         options={verdictChoices.map((value) => ({ value, label: SHOW_WORDS[value] }))}
         onChange={(event) =>
@@ -42,14 +42,14 @@ export function FilterBar({ state, classes }: { state: ImpedanceState; classes: 
       />
       <Select
         label="Grid of widths"
-        fieldClassName="sm:w-28"
+        fieldClassName="sm:w-[104px]"
         value={state.grid}
         options={gridNames.map((value) => ({ value, label: value }))}
         onChange={(event) => void set({ grid: event.target.value as GridName })}
       />
       <Select
         label="Unit"
-        fieldClassName="sm:w-20"
+        fieldClassName="sm:w-[76px]"
         value={state.unit}
         options={LENGTH_UNITS.map((value) => ({ value, label: value }))}
         onChange={(event) => void set({ unit: parseLengthUnit(event.target.value) })}

@@ -13,6 +13,13 @@ export function gridStep(grid: GridName): number {
   return toSi({ value, unit }, "length");
 }
 
+/** The same for a column of lengths: to the micrometre or the tenth of a mil, further only where there is more. */
+export function columnDigits(metres: number, unit: LengthUnit): string {
+  const digits = lengthDigits(metres, unit);
+  const least = unit === "mm" ? 3 : 1;
+  return (digits.split(".")[1]?.length ?? 0) < least ? Number(digits).toFixed(least) : digits;
+}
+
 /** A length as digits in a unit: as many as its grid needs, without zeros at the end. */
 export function lengthDigits(metres: number, unit: LengthUnit): string {
   const factor = unit === "mm" ? 1e-3 : 25.4e-6;

@@ -1,7 +1,7 @@
 import type { DataColumn } from "@/components/ui/data-table";
 import { VerdictMark } from "@/components/ui/verdict-mark";
 import type { LengthUnit } from "@/lib/client/preferences";
-import { lengthDigits } from "./grids";
+import { columnDigits } from "./grids";
 import type { ImpedanceRow } from "./impedance-rows";
 import { ohms, remarks, signedPercent } from "./row-words";
 
@@ -10,12 +10,12 @@ type Column = DataColumn<ImpedanceRow>;
 /** The columns; `narrow` leaves those that stand beside an open panel. */
 export function impedanceColumns(unit: LengthUnit, narrow: boolean): Column[] {
   const length = (metres: number | null | undefined) =>
-    metres === null || metres === undefined ? null : { text: lengthDigits(metres, unit), unit };
+    metres === null || metres === undefined ? null : { text: columnDigits(metres, unit), unit };
   const columns: (Column & { beside?: boolean })[] = [
     {
       id: "class",
       header: "Class",
-      width: 132,
+      width: 120,
       beside: true,
       cell: (row) => row.netClass.name,
       sortValue: (row) => row.netClass.name,
@@ -23,7 +23,7 @@ export function impedanceColumns(unit: LengthUnit, narrow: boolean): Column[] {
     {
       id: "layer",
       header: "Layer",
-      width: 96,
+      width: 88,
       beside: true,
       cell: (row) => <span className={row.allowed ? undefined : "text-ink-soft"}>{row.layer.name}</span>,
       sortValue: (row) => row.index,
@@ -31,19 +31,24 @@ export function impedanceColumns(unit: LengthUnit, narrow: boolean): Column[] {
     {
       id: "target",
       header: "Target",
-      width: 104,
+      width: 76,
       kind: "number",
-      number: (row) => ({
-        text: String(Number(row.target.toFixed(2))),
-        unit: `Ω ±\u2009${row.tolerance}\u2009%`,
-      }),
+      number: (row) => ({ text: String(Number(row.target.toFixed(2))), unit: "Ω" }),
       sortValue: (row) => row.target,
-      explanation: "Differential for a pair. Its tolerance is the class’s.",
+      explanation: "Of a pair: differential",
+    },
+    {
+      id: "tolerance",
+      header: "±",
+      width: 56,
+      kind: "number",
+      number: (row) => ({ text: String(row.tolerance), unit: "%" }),
+      explanation: "Tolerance of the class",
     },
     {
       id: "width",
       header: "Width",
-      width: 92,
+      width: 84,
       kind: "number",
       number: (row) => length(row.width),
       sortValue: (row) => row.width,
@@ -80,7 +85,7 @@ export function impedanceColumns(unit: LengthUnit, narrow: boolean): Column[] {
     {
       id: "verdict",
       header: "Centring",
-      width: 92,
+      width: 88,
       beside: true,
       cell: (row) => <VerdictMark verdict={row.verdict} />,
       sortValue: (row) => ["fail", "near", "no data", "pass"].indexOf(row.verdict),
@@ -88,13 +93,13 @@ export function impedanceColumns(unit: LengthUnit, narrow: boolean): Column[] {
     },
     {
       id: "meets",
-      header: "Width that meets",
-      width: 128,
+      header: "Meets target",
+      width: 108,
       beside: true,
       kind: "number",
       number: (row) => length(row.width0.ok ? row.width0.value.dimension : null),
       sortValue: (row) => (row.width0.ok ? row.width0.value.dimension : null),
-      explanation: "On the grid; the gap of a pair stays",
+      explanation: "Width that meets the target, on the grid; the gap of a pair stays",
     },
     {
       id: "there",

@@ -61,7 +61,10 @@ export function ImpedancePanel({ row, stackup, limit, unit, grid, onClose, onUse
   );
   // In steps, so that the curve's ends do not run away from the slider under one's hand.
   const end = Math.min(SOUGHT.max, Math.ceil(longest / 0.25e-3) * 0.25e-3);
-  const points = useMemo(() => widthCurve(stackup, index, gap, SOUGHT.min, end), [stackup, index, gap, end]);
+  const points = useMemo(
+    () => widthCurve(stackup, index, gap, { from: SOUGHT.min, to: end }, width),
+    [stackup, index, gap, end, width],
+  );
 
   const impedance = trial.facts.ok ? trial.facts.value.impedance : null;
   const verdict = verdictOf(netClass, layer, { target, impedance, width, gap, limit });

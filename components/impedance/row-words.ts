@@ -20,14 +20,14 @@ export function remarks(row: ImpedanceRow): string[] {
   if (!width0.ok)
     said.push(
       width0.reachable
-        ? `not reachable: ${ohms(width0.reachable.min)} to ${ohms(width0.reachable.max)}\u2009Ω`
+        ? `out of reach: ${ohms(width0.reachable.min)} to ${ohms(width0.reachable.max)}\u2009Ω`
         : width0.reason,
     );
   if (now && !now.ok && now.reason !== (width0.ok ? "" : width0.reason)) said.push(now.reason);
-  if (now?.ok && !now.value.inRange) said.push("outside the formula’s range");
-  else if (width0.ok && !width0.value.inRange) said.push("outside the formula’s range at that width");
-  if (row.width === null) said.push("no width in the class");
-  else if (row.gapAssumed) said.push("no gap in the class");
+  if (now?.ok && !now.value.inRange) said.push("beyond the formula’s range");
+  else if (width0.ok && !width0.value.inRange) said.push("beyond the formula’s range there");
+  if (row.width === null) said.push("no width yet");
+  else if (row.gapAssumed) said.push("no gap yet");
   if (row.gapAssumed && width0.ok) said.push("gap assumed");
   if (now?.ok && now.value.ignores.includes("solder mask")) said.push("mask not seen");
   return said;

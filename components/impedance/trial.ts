@@ -39,18 +39,19 @@ export function trialOf(
 
 const POINTS = 48;
 
-/** Impedance over a range of widths, for the chart; widths without a value are left out. */
+/** Impedance over a range of widths and at the chosen one, for the chart; widths without a value are left out. */
 export function widthCurve(
   stackup: Stackup,
   index: number,
   gap: number | null,
-  from: number,
-  to: number,
+  range: { from: number; to: number },
+  chosen: number,
 ): WidthPoint[] {
-  return Array.from({ length: POINTS }, (_, point) => from * (to / from) ** (point / (POINTS - 1))).flatMap(
-    (width) => {
-      const facts = lineFacts(stackup, index, { width, gap });
-      return facts.ok ? [{ width, impedance: facts.value.impedance }] : [];
-    },
-  );
+  const { from, to } = range;
+  const widths = Array.from({ length: POINTS }, (_, point) => from * (to / from) ** (point / (POINTS - 1)));
+  if (chosen > from && chosen < to) widths.push(chosen);
+  return widths.flatMap((width) => {
+    const facts = lineFacts(stackup, index, { width, gap });
+    return facts.ok ? [{ width, impedance: facts.value.impedance }] : [];
+  });
 }

@@ -6,7 +6,7 @@ import type { StackupLayerDoc } from "@/lib/schemas/stackup";
 import { builtThicknessExact, isCopper } from "@/lib/si/stackup";
 import { copperFoils, dielectricFamilies } from "@/lib/si/materials";
 import { type EditLayer, toDoc } from "./edit-layer";
-import { shownLength } from "./layer-field-text";
+import { columnLength } from "./layer-field-text";
 import { LayerText } from "./layer-text";
 import { FoilMenu, MaterialMenu } from "./material-menu";
 import { PliesEditor } from "./plies-editor";
@@ -169,10 +169,11 @@ function Finished({ editor, layer }: { editor: StackupEditor; layer: EditLayer }
           : "No data"}
       </span>
     );
+  const { text } = columnLength(built, reader);
   return (
     <span>
       {isCopper(layer) ? "Finished " : ""}
-      {shownLength(built, reader)}
+      {text} {reader}
     </span>
   );
 }

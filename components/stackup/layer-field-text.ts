@@ -1,4 +1,5 @@
 import { stackupLayer, type StackupLayerDoc } from "@/lib/schemas/stackup";
+import type { LengthUnit } from "@/lib/client/preferences";
 import { convert, Decimal, formatQuantity, parseQuantity, type Quantity } from "@/lib/si/units";
 
 export type LengthField = "thickness" | "baseFoil" | "plating" | "etch" | "roughness" | "maskOverTrace";
@@ -66,6 +67,13 @@ export function shownLength(value: Quantity, unit: string): string {
   const converted = convert(value, unit);
   const number = new Decimal(converted.value).toSignificantDigits(5).toString();
   return formatQuantity({ value: number, unit: converted.unit });
+}
+
+/** A thickness in a column: as many digits as its neighbours, and more only where it has them. */
+export function columnLength(value: Quantity, unit: LengthUnit): { text: string; unit: string } {
+  const [least, most] = unit === "mm" ? [3, 5] : [2, 3];
+  const number = new Decimal(convert(value, unit).value).toDecimalPlaces(most);
+  return { text: number.toFixed(Math.max(least, number.decimalPlaces())), unit };
 }
 
 function valueOf(field: LayerField, text: string, unit: string): unknown {

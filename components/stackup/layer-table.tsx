@@ -2,6 +2,7 @@
 
 import { type KeyboardEvent, useRef } from "react";
 import { cn } from "@/components/ui/class-names";
+import { NumberText } from "@/components/ui/number-text";
 import { VerdictShape } from "@/components/ui/verdict-mark";
 import type { LayerKind } from "@/lib/schemas/stackup";
 import { builtThicknessExact, isCopper } from "@/lib/si/stackup";
@@ -9,7 +10,7 @@ import { type EditLayer, toDoc } from "./edit-layer";
 import { moveLayer, withKind } from "./layer-edits";
 import { LayerText } from "./layer-text";
 import { KindSelect } from "./kind-select";
-import { shownLength } from "./layer-field-text";
+import { columnLength } from "./layer-field-text";
 import type { StackupWarning } from "@/lib/si/stackup";
 import type { StackupEditor } from "./use-stackup-editor";
 import { useStackupFields } from "./stackup-fields";
@@ -57,16 +58,16 @@ export function LayerTable({ editor, warnings, pointed, onPoint, onMoved, onRemo
   }
 
   return (
-    <div className="border-rule-line bg-sheet overflow-x-auto border-y">
+    <div className="border-rule-line bg-sheet relative overflow-x-auto border-y">
       <table
         aria-label="Layers, top to bottom"
-        className="w-full min-w-[620px] border-separate border-spacing-0 text-sm"
+        className="w-full min-w-[620px] table-fixed border-separate border-spacing-0 text-sm"
       >
         <thead>
           <tr className="text-ink-soft h-8 text-left">
             <Head className="w-8 text-right">#</Head>
             <Head>Layer</Head>
-            <Head className="w-[108px]">Kind</Head>
+            <Head className="w-[96px]">Kind</Head>
             <Head className="w-[112px] text-right" title="Dielectric and mask: thickness. Copper: base foil.">
               Typed
             </Head>
@@ -197,7 +198,7 @@ function LayerRow({ editor, layer, index, warnings, pointed, onPoint, onKeyDown 
         </td>
         <td className={cn(cell, "px-2 text-right whitespace-nowrap")}>
           {built ? (
-            <Built text={shownLength(built, reader)} />
+            <NumberText {...columnLength(built, reader)} />
           ) : (
             <span className="text-ink-soft">no data</span>
           )}
@@ -216,17 +217,6 @@ function LayerRow({ editor, layer, index, warnings, pointed, onPoint, onKeyDown 
           </td>
         </tr>
       ) : null}
-    </>
-  );
-}
-
-/** Number and unit apart, the unit in soft ink. */
-function Built({ text }: { text: string }) {
-  const at = text.lastIndexOf(" ");
-  return (
-    <>
-      {text.slice(0, at)}
-      <span className="text-ink-soft">{`\u2009${text.slice(at + 1)}`}</span>
     </>
   );
 }

@@ -75,7 +75,7 @@ export function LayerToolbar({ editor, onSaid, onRemove }: Props) {
         }}
       >
         <FlipVertical2 size={14} aria-hidden="true" />
-        Mirror upper half
+        Mirror
       </Button>
     </div>
   );

@@ -3,7 +3,7 @@
 import type { ReactNode } from "react";
 import { NumberText } from "@/components/ui/number-text";
 import { isCopper, isSignal, totalThickness } from "@/lib/si/stackup";
-import type { Quantity } from "@/lib/si/units";
+import { Decimal, type Quantity } from "@/lib/si/units";
 import { type EditStackup, toDoc } from "./edit-layer";
 import { useStackupUnits } from "./stackup-units";
 
@@ -43,8 +43,8 @@ function Fact({ name, children }: { name: string; children: ReactNode }) {
 }
 
 function Exact({ quantity }: { quantity: Quantity }) {
-  const long = (quantity.value.split(".")[1]?.length ?? 0) > 6;
-  const short = long ? `${Number(Number(quantity.value).toFixed(6))}` : quantity.value;
+  const long = (quantity.value.split(".")[1]?.length ?? 0) > 5;
+  const short = long ? new Decimal(quantity.value).toDecimalPlaces(4).toString() : quantity.value;
   return (
     <span title={long ? `${quantity.value} ${quantity.unit}` : undefined}>
       <NumberText text={short} unit={quantity.unit} />

@@ -31,7 +31,9 @@ export function TemplateDialog({ open, onOpenChange, present, onTake }: Props) {
       description="Symmetric builds in generic glass-epoxy. Every value is assumed until you say where it comes from."
       footer={
         <>
-          <Button onClick={() => onOpenChange(false)}>Keep the present one</Button>
+          <Button onClick={() => onOpenChange(false)}>
+            {present.layers.length > 0 ? "Keep the present one" : "Not now"}
+          </Button>
           <Button
             variant="primary"
             disabled={!template}

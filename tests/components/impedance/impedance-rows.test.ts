@@ -45,7 +45,7 @@ describe("rows of the impedance page", () => {
   it("says of a target that cannot be met which range can", () => {
     const [row] = rowsOf([aClassOn("Feed", { L1: [null, null] }, { targetImpedance: { value: "400", unit: "Ω" } })]);
     expect(row?.width0.ok).toBe(false);
-    expect(row && remarks(row)[0]).toMatch(/^not reachable: [\d.]+ to [\d.]+\u2009Ω$/);
+    expect(row && remarks(row)[0]).toMatch(/^out of reach: [\d.]+ to [\d.]+\u2009Ω$/);
   });
 
   it("finds for a pair both the width at its gap and the gap at its width", () => {
@@ -61,7 +61,7 @@ describe("rows of the impedance page", () => {
   it("marks a pair's gap that no class told as assumed", () => {
     const [row] = rowsOf([aClassOn("Link", { L1: [null, null] }, { kind: "differential" })]);
     expect(row?.gapAssumed).toBe(true);
-    expect(row && remarks(row)).toContain("no width in the class");
+    expect(row && remarks(row)).toContain("no width yet");
   });
 });
 
