@@ -1,5 +1,3 @@
-import { spawn } from "node:child_process";
-import path from "node:path";
 import { expect } from "vitest";
 import { beginImport, getImport } from "@/lib/db/import-batch";
 import { listNets } from "@/lib/db/net";
@@ -7,6 +5,7 @@ import { createProject } from "@/lib/db/project";
 import { findRevision } from "@/lib/db/revision";
 import { receiveList } from "@/lib/jobs/import-list";
 import { createTestDatabase } from "../support/database";
+import { workAndKill } from "../support/work-and-kill";
 
 const NETS = 4000;
 const HEADER = "net,from,to,layer,width_mm,length_mm\n";
@@ -41,7 +40,7 @@ export async function killDuringImport(waits: readonly number[]): Promise<number
 
     let early = 0;
     for (const wait of waits) {
-      await workAndKill(data.file, wait);
+      await workAndKill("import-child", data.file, wait);
       const [check] = (await data.open.client.execute("PRAGMA integrity_check")).rows;
       expect(check?.integrity_check).toBe("ok");
       const { total } = await listNets(designer, draft, { limit: 1 });
@@ -50,33 +49,11 @@ export async function killDuringImport(waits: readonly number[]): Promise<number
       if (state === "applied") break;
       early++;
     }
-    await workAndKill(data.file, null);
+    await workAndKill("import-child", data.file, null);
     expect((await getImport(designer, projectId, batch.id)).state).toBe("applied");
     expect((await listNets(designer, draft, { limit: 1 })).total).toBe(NETS);
     return early;
   } finally {
     await data.close();
   }
-}
-
-/** @param wait null: let it finish */
-function workAndKill(file: string, wait: number | null): Promise<void> {
-  return new Promise((resolve, reject) => {
-    const child = spawn(
-      process.execPath,
-      ["--conditions=react-server", "--import", "tsx", path.resolve("tests/support/import-child.ts")],
-      { env: { ...process.env, DATABASE_URL: `file:${file}` }, stdio: ["ignore", "pipe", "pipe"] },
-    );
-    let errors = "";
-    child.stderr.on("data", (chunk: Buffer) => (errors += chunk.toString()));
-    child.stdout.on("data", (chunk: Buffer) => {
-      if (wait !== null && chunk.toString().includes("working"))
-        setTimeout(() => child.kill("SIGKILL"), wait);
-    });
-    child.on("error", reject);
-    child.on("exit", (code, signal) => {
-      if (signal === "SIGKILL" || code === 0) resolve();
-      else reject(new Error(`The import process ended with ${code}: ${errors.slice(0, 800)}`));
-    });
-  });
 }

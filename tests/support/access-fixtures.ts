@@ -31,18 +31,27 @@ const withBody = (body: (world: AccessWorld) => unknown): AccessFixture => ({
 const inFlag = (body?: unknown): AccessFixture => ({
   call: (world) => ({ params: { ...project(world), flagId: world.flagId }, body }),
 });
-const inRelease: AccessFixture = { call: (world) => ({ params: { ...project(world), releaseId: world.ids.release } }) };
+const inRelease: AccessFixture = {
+  call: (world) => ({ params: { ...project(world), releaseId: world.ids.release } }),
+};
 const inRecipient: AccessFixture = {
-  call: (world) => ({ params: { ...project(world), releaseId: world.ids.release, recipientId: world.ids.recipient } }),
+  call: (world) => ({
+    params: { ...project(world), releaseId: world.ids.release, recipientId: world.ids.recipient },
+  }),
 };
 const sentNote = (body?: unknown): AccessFixture => ({
   call: (world) => ({ params: { releaseId: world.ids.release }, body }),
   belongsTo: (as, world) => as.userId === world.data.own.actors.manufacturer.userId,
 });
-const link = (body?: unknown): AccessFixture => ({ call: (world) => ({ params: { token: world.token }, body }) });
+const link = (body?: unknown): AccessFixture => ({
+  call: (world) => ({ params: { token: world.token }, body }),
+});
 
 const inImport = (body?: (received: AccessWorld["received"]) => unknown): AccessFixture => ({
-  call: (world) => ({ params: { ...project(world), importId: world.received.id }, body: body?.(world.received) }),
+  call: (world) => ({
+    params: { ...project(world), importId: world.received.id },
+    body: body?.(world.received),
+  }),
 });
 
 const tomorrow = () => Date.now() + 86_400_000;
@@ -63,7 +72,12 @@ export const accessFixtures: Record<string, AccessFixture> = {
   "GET /projects": { call: () => ({}) },
   "POST /projects": { call: () => ({ body: { name: `${SECRET} ${Math.random()}` } }) },
   "GET /projects/[projectId]": inProject,
-  "PATCH /projects/[projectId]": withBody(() => ({ version: 0, name: `${SECRET} ${Math.random()}`, description: "", unit: "mm" })),
+  "PATCH /projects/[projectId]": withBody(() => ({
+    version: 0,
+    name: `${SECRET} ${Math.random()}`,
+    description: "",
+    unit: "mm",
+  })),
   "DELETE /projects/[projectId]": inProject,
   "POST /projects/[projectId]/restore": inProject,
   "GET /projects/[projectId]/overview": inProject,
@@ -78,7 +92,10 @@ export const accessFixtures: Record<string, AccessFixture> = {
   "POST /projects/[projectId]/revisions": { ...inProject, admitted: 422 },
 
   "GET /projects/[projectId]/stackup": inProject,
-  "PUT /projects/[projectId]/stackup": withBody(({ stackup: { name, layers, version } }) => ({ version, stackup: { name, layers } })),
+  "PUT /projects/[projectId]/stackup": withBody(({ stackup: { name, layers, version } }) => ({
+    version,
+    stackup: { name, layers },
+  })),
   "GET /projects/[projectId]/classes": inProject,
   "POST /projects/[projectId]/classes": withBody(() => ({ netClass: aClass("Another") })),
   "PUT /projects/[projectId]/classes/[classId]": {
@@ -102,10 +119,17 @@ export const accessFixtures: Record<string, AccessFixture> = {
     }),
   },
   "DELETE /projects/[projectId]/models/[modelId]": {
-    call: (world) => ({ params: { ...project(world), modelId: world.model.id }, body: { version: world.model.version } }),
+    call: (world) => ({
+      params: { ...project(world), modelId: world.model.id },
+      body: { version: world.model.version },
+    }),
   },
   "GET /projects/[projectId]/bindings": inProject,
-  "PUT /projects/[projectId]/bindings": withBody(({ bindings }) => ({ version: bindings.version, bindings: [] })),
+  "GET /projects/[projectId]/bindings/matches": inProject,
+  "PUT /projects/[projectId]/bindings": withBody(({ bindings }) => ({
+    version: bindings.version,
+    bindings: [],
+  })),
   "GET /projects/[projectId]/rules": inProject,
   "PUT /projects/[projectId]/rules": withBody(({ rules: { version, ...ruleSet } }) => ({ version, ruleSet })),
   "GET /projects/[projectId]/nets": inProject,
