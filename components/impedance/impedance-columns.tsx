@@ -15,7 +15,7 @@ export function impedanceColumns(unit: LengthUnit, narrow: boolean): Column[] {
     {
       id: "class",
       header: "Class",
-      width: 120,
+      width: 116,
       beside: true,
       cell: (row) => row.netClass.name,
       sortValue: (row) => row.netClass.name,
@@ -104,7 +104,7 @@ export function impedanceColumns(unit: LengthUnit, narrow: boolean): Column[] {
     {
       id: "there",
       header: "There",
-      width: 80,
+      width: 72,
       kind: "number",
       number: (row) => (row.width0.ok ? { text: ohms(row.width0.value.impedance), unit: "Ω" } : null),
       explanation: "Impedance at that step of the grid",

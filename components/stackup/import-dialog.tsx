@@ -85,7 +85,7 @@ export function ImportDialog({ open, onOpenChange, present, onTake }: Props) {
         <input
           type="file"
           accept=".csv,.tsv,.txt,text/csv,text/tab-separated-values,text/plain"
-          className="text-sm font-normal"
+          className="file:border-field-line file:bg-sheet file:text-ink text-ink-soft text-sm font-normal file:mr-3 file:h-8 file:cursor-pointer file:rounded file:border file:border-solid file:px-3 file:text-sm file:font-medium"
           onChange={(event) => void takeFile(event.target.files?.[0])}
         />
       </label>

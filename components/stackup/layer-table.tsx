@@ -1,8 +1,8 @@
 "use client";
 
-import { type KeyboardEvent, useRef } from "react";
+import { type KeyboardEvent, useMemo, useRef } from "react";
 import { cn } from "@/components/ui/class-names";
-import { NumberText } from "@/components/ui/number-text";
+import { fractionDigits, NumberText } from "@/components/ui/number-text";
 import { VerdictShape } from "@/components/ui/verdict-mark";
 import type { LayerKind } from "@/lib/schemas/stackup";
 import { builtThicknessExact, isCopper } from "@/lib/si/stackup";
@@ -31,6 +31,15 @@ export function LayerTable({ editor, warnings, pointed, onPoint, onMoved, onRemo
   const { layers } = editor.stackup;
   const body = useRef<HTMLTableSectionElement>(null);
   const { readOnly } = useStackupFields();
+  const { reader } = useStackupUnits();
+  const built = useMemo(() => {
+    const { layers: docs } = toDoc(editor.stackup);
+    return docs.map((_, index) => {
+      const exact = builtThicknessExact(docs, index, reader);
+      return exact && columnLength(exact, reader);
+    });
+  }, [editor.stackup, reader]);
+  const fraction = Math.max(0, ...built.map((length) => fractionDigits(length?.text ?? "")));
 
   function onKeyDown(event: KeyboardEvent<HTMLTableRowElement>, layer: EditLayer, index: number): void {
     const step = event.key === "ArrowUp" ? -1 : event.key === "ArrowDown" ? 1 : 0;
@@ -67,13 +76,13 @@ export function LayerTable({ editor, warnings, pointed, onPoint, onMoved, onRemo
           <tr className="text-ink-soft h-8 text-left">
             <Head className="w-8 text-right">#</Head>
             <Head>Layer</Head>
-            <Head className="w-[96px]">Kind</Head>
-            <Head className="w-[112px] text-right" title="Dielectric and mask: thickness. Copper: base foil.">
+            <Head className="w-[88px]">Kind</Head>
+            <Head className="w-[104px] text-right" title="Dielectric and mask: thickness. Copper: base foil.">
               Typed
             </Head>
-            <Head className="w-16 text-right">Dk</Head>
-            <Head className="w-[72px] text-right">Df</Head>
-            <Head className="w-[104px] text-right" title="Copper with its plating, prepreg as pressed.">
+            <Head className="w-14 text-right">Dk</Head>
+            <Head className="w-16 text-right">Df</Head>
+            <Head className="w-[92px] text-right" title="Copper with its plating, prepreg as pressed.">
               As built
             </Head>
             <Head className="w-8">
@@ -85,6 +94,8 @@ export function LayerTable({ editor, warnings, pointed, onPoint, onMoved, onRemo
           {layers.map((layer, index) => (
             <LayerRow
               key={layer.key}
+              built={built[index] ?? null}
+              fraction={fraction}
               editor={editor}
               layer={layer}
               index={index}
@@ -121,6 +132,10 @@ function Head({
 }
 
 interface RowProps {
+  /** null where an input of it is missing */
+  built: { text: string; unit: string } | null;
+  /** Digits after the point that the column reserves. */
+  fraction: number;
   editor: StackupEditor;
   layer: EditLayer;
   index: number;
@@ -130,13 +145,21 @@ interface RowProps {
   onKeyDown: (event: KeyboardEvent<HTMLTableRowElement>) => void;
 }
 
-function LayerRow({ editor, layer, index, warnings, pointed, onPoint, onKeyDown }: RowProps) {
-  const { selected, changeLayer, select, stackup } = editor;
-  const { reader } = useStackupUnits();
+function LayerRow({
+  built,
+  fraction,
+  editor,
+  layer,
+  index,
+  warnings,
+  pointed,
+  onPoint,
+  onKeyDown,
+}: RowProps) {
+  const { selected, changeLayer, select } = editor;
   const active = selected === layer.key;
   const copper = isCopper(layer);
   const pressed = layer.thicknessMode === "pressed";
-  const built = builtThicknessExact(toDoc(stackup).layers, index, reader);
   const issues = editor.issues.filter((issue) => issue.layerKey === layer.key);
   const tone = cn(active ? "bg-copper/10" : pointed && "bg-rule-line/40");
   const cell = cn("border-rule-line/60 border-b p-0", issues.length > 0 && "border-b-0");
@@ -198,7 +221,7 @@ function LayerRow({ editor, layer, index, warnings, pointed, onPoint, onKeyDown 
         </td>
         <td className={cn(cell, "px-2 text-right whitespace-nowrap")}>
           {built ? (
-            <NumberText {...columnLength(built, reader)} />
+            <NumberText {...built} fraction={fraction} />
           ) : (
             <span className="text-ink-soft">no data</span>
           )}

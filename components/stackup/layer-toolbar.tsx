@@ -1,6 +1,6 @@
 "use client";
 
-import { ArrowDown, ArrowUp, ChevronDown, CopyPlus, FlipVertical2, Plus, Trash2 } from "lucide-react";
+import { ArrowDown, ArrowUp, ChevronDown, CopyPlus, FlipVertical2, Trash2 } from "lucide-react";
 import { Button } from "@/components/ui/button";
 import { Menu, MenuItem } from "@/components/ui/menu";
 import { type LayerKind, layerKinds } from "@/lib/schemas/stackup";
@@ -31,7 +31,7 @@ export function LayerToolbar({ editor, onSaid, onRemove }: Props) {
   }
 
   return (
-    <div role="toolbar" aria-label="Layers" className="flex flex-wrap gap-1 py-2">
+    <div role="toolbar" aria-label="Layers" className="flex flex-wrap gap-1 py-2 print:hidden">
       <AddMenu label="Add above" onPick={(kind) => add(kind, Math.max(at, 0))} />
       <AddMenu label="Add below" onPick={(kind) => add(kind, at < 0 ? layers.length : at + 1)} />
       <Button
@@ -86,7 +86,6 @@ function AddMenu({ label, onPick }: { label: string; onPick: (kind: LayerKind) =
     <Menu
       trigger={
         <Button>
-          <Plus size={14} aria-hidden="true" />
           {label}
           <ChevronDown size={14} aria-hidden="true" />
         </Button>

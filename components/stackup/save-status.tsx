@@ -47,12 +47,12 @@ export function SaveTrouble({ editor }: { editor: StackupEditor }) {
     >
       <div className="min-w-0 flex-1">
         <p>{errorMessage(error)}</p>
-        {error instanceof ApiError && error.changed.length > 0 ? (
+        {error instanceof ApiError && error.changed.length > 5 ? (
           <ul className="text-ink-soft mt-1 list-disc pl-5">
-            {error.changed.slice(0, 8).map((name) => (
+            {error.changed.slice(0, 12).map((name) => (
               <li key={name}>{name}</li>
             ))}
-            {error.changed.length > 8 ? <li>and {error.changed.length - 8} more</li> : null}
+            {error.changed.length > 12 ? <li>and {error.changed.length - 12} more</li> : null}
           </ul>
         ) : null}
       </div>

@@ -13,7 +13,7 @@ export function Toaster() {
         unstyled: true,
         classNames: {
           toast:
-            "flex w-full items-start gap-3 rounded border border-field-line bg-sheet px-4 py-3 text-sm text-ink",
+            "flex w-full items-start gap-3 font-sans rounded border border-field-line bg-sheet px-4 py-3 text-sm text-ink",
           description: "text-ink-soft",
           error: "border-fail",
           success: "border-pass",

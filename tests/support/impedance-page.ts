@@ -10,11 +10,13 @@ const uuid = (number: number) => `0198f000-0000-7000-8000-${String(number).padSt
 
 /** Four generic layers as stored: L1 and L4 carry traces, L2 and L3 are planes. */
 export function aBoard() {
-  const layers = (stackupTemplates.find(({ copperLayers }) => copperLayers === 4)?.layers ?? []).map((layer, index) => ({
-    ...layer,
-    id: uuid(index),
-    lineageId: uuid(100 + index),
-  }));
+  const layers = (stackupTemplates.find(({ copperLayers }) => copperLayers === 4)?.layers ?? []).map(
+    (layer, index) => ({
+      ...layer,
+      id: uuid(index),
+      lineageId: uuid(100 + index),
+    }),
+  );
   const stackup: StoredStackup = { name: "Four layers", version: 0, layers };
   return { stackup, si: stackupFromTyped(layers) };
 }

@@ -16,7 +16,10 @@ function rowsOf(classes: ReturnType<typeof aClassOn>[], grid: Parameters<typeof 
 
 describe("rows of the impedance page", () => {
   it("has one row for every class with a target on every signal layer", () => {
-    const rows = rowsOf([aClassOn("Bus", { L1: ["0.2", null] }), aClassOn("No target", {}, { targetImpedance: null })]);
+    const rows = rowsOf([
+      aClassOn("Bus", { L1: ["0.2", null] }),
+      aClassOn("No target", {}, { targetImpedance: null }),
+    ]);
     expect(rows.map(({ netClass, layer }) => `${netClass.name} ${layer.name}`)).toEqual(["Bus L1", "Bus L4"]);
     expect(rows.map(({ allowed }) => allowed)).toEqual([true, false]);
   });
@@ -43,14 +46,20 @@ describe("rows of the impedance page", () => {
   });
 
   it("says of a target that cannot be met which range can", () => {
-    const [row] = rowsOf([aClassOn("Feed", { L1: [null, null] }, { targetImpedance: { value: "400", unit: "Ω" } })]);
+    const [row] = rowsOf([
+      aClassOn("Feed", { L1: [null, null] }, { targetImpedance: { value: "400", unit: "Ω" } }),
+    ]);
     expect(row?.width0.ok).toBe(false);
     expect(row && remarks(row)[0]).toMatch(/^out of reach: [\d.]+ to [\d.]+\u2009Ω$/);
   });
 
   it("finds for a pair both the width at its gap and the gap at its width", () => {
     const [row] = rowsOf([
-      aClassOn("Link", { L1: ["0.15", "0.15"] }, { kind: "differential", targetImpedance: { value: "100", unit: "Ω" } }),
+      aClassOn(
+        "Link",
+        { L1: ["0.15", "0.15"] },
+        { kind: "differential", targetImpedance: { value: "100", unit: "Ω" } },
+      ),
     ]);
     expect(row?.now?.ok && row.now.value.impedance).toBeGreaterThan(60);
     expect(row?.width0.ok && Math.abs(row.width0.value.impedance - 100)).toBeLessThan(0.6);
@@ -68,7 +77,11 @@ describe("rows of the impedance page", () => {
 describe("the table for the layout program", () => {
   const classes = () => [
     aClassOn("=Bus", { L1: ["0.2", null] }),
-    aClassOn("Link", { L4: ["0.127", "0.1524"] }, { kind: "differential", targetImpedance: { value: "100", unit: "Ω" } }),
+    aClassOn(
+      "Link",
+      { L4: ["0.127", "0.1524"] },
+      { kind: "differential", targetImpedance: { value: "100", unit: "Ω" } },
+    ),
   ];
 
   it("is tab-separated, has widths as the classes have them in the unit, and no cell that is a formula", () => {
