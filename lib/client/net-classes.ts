@@ -1,6 +1,9 @@
 import { queryOptions } from "@tanstack/react-query";
 import type { NetClassDoc, StoredNetClass } from "@/lib/schemas/net-class";
-import { apiGet, apiPut } from "./api";
+import { apiDelete, apiGet, apiPost, apiPut } from "./api";
+
+/** A class with the number of its nets. */
+export type NetClassRow = StoredNetClass & { netCount: number };
 
 export const netClassesKey = (projectId: string, revision: string) =>
   ["project", projectId, "classes", revision] as const;
@@ -11,6 +14,15 @@ export const netClassesQuery = (projectId: string, revision: string) =>
     queryKey: netClassesKey(projectId, revision),
     queryFn: async ({ signal }) =>
       (await apiGet<{ classes: StoredNetClass[] }>(`/projects/${projectId}/classes`, { revision }, signal))
+        .classes,
+  });
+
+/** The same, each with the number of its nets. */
+export const netClassRowsQuery = (projectId: string, revision: string) =>
+  queryOptions({
+    queryKey: netClassesKey(projectId, revision),
+    queryFn: async ({ signal }) =>
+      (await apiGet<{ classes: NetClassRow[] }>(`/projects/${projectId}/classes`, { revision }, signal))
         .classes,
   });
 
@@ -25,3 +37,17 @@ export function putNetClass(
     netClass,
   });
 }
+
+export const createNetClass = (projectId: string, netClass: NetClassDoc) =>
+  apiPost<StoredNetClass>(`/projects/${projectId}/classes`, { netClass });
+
+/**
+ * Takes a class away.
+ * @param reassignTo  lineage of the class that takes its nets; null: none; undefined: it must have no nets
+ * @throws ApiError, `class-in-use` where nets are in it and nothing was said of them
+ */
+export const deleteNetClass = (
+  projectId: string,
+  { id, version }: Pick<StoredNetClass, "id" | "version">,
+  reassignTo?: string | null,
+) => apiDelete<undefined>(`/projects/${projectId}/classes/${id}`, { version, reassignTo });
