@@ -13,7 +13,7 @@ const VOLTS = /^[+-]?[pnv]?_?\d{1,3}(v\d{0,3}|\.\d{1,3}v|v)([_-].*|[a-z]{0,2})?$
 const SUPPLY =
   /^[+-]?(p?[adp]?v(cc|dd|ee|pp)|v(tt|ref|core|bat|batt|bus|in|out|sys|io|aux|int|main|logic|rtc|pll|mem)|vl|vm|pvin|avcc|avdd|dvdd|hv|hvdd|lvdd|ovdd|gvdd|xvdd|svdd)([\d_.-].*|[a-z]{0,4}\d{0,2}([_-].*)?)?$/i;
 const GROUND =
-  /^(([adpscei]|ana|dig|pwr|chassis|shield|earth|iso|sig)?[_-]?gnd([\d_.-].*|[a-z]{0,3})|v?ss[adioq]?\d{0,2}|vss([_-].*)?|0v|earth|chassis|shield|pe|com_gnd)$/i;
+  /^(([adpscei]|ana|dig|pwr|chassis|shield|earth|iso|sig)?[_-]?gnd([\d_.-].*|[a-z]{0,3})|vss[adioq]?\d{0,2}|vss([_-].*)?|0v|earth|chassis|shield|pe|com_gnd)$/i;
 const UNCONNECTED = /^(unused|nc|n\/c|no[_ -]?connect|unconnected|dnc)([\d_\-( ].*)?$/i;
 const TEST = /^(tp\d*|testpoint\d*|test|test[_-].*|.*[_-]tp\d*|.*(^|[_-])scan([_-].*)?)$/i;
 const STATIC = /^(.*[_-])?(strap|cfg|config|boot|bootsel|mode|addr_?sel|id_?sel|wp|pwrok)\d*([_-]?[nb])?$/i;
