@@ -15,7 +15,11 @@ export function PlaybackBar({ control }: { control: PlaybackControl }) {
   const share = whole > 0 ? (time - start) / whole : 0;
   const reading = quantityText(time, "s", { like: Math.max(Math.abs(end), Math.abs(start)) });
   return (
-    <div role="group" aria-label="Playback" className="flex items-center gap-2 text-sm print:hidden">
+    <div
+      role="group"
+      aria-label="Playback"
+      className="flex flex-wrap items-center gap-2 text-sm print:hidden"
+    >
       <Button
         variant="quiet"
         size="icon"

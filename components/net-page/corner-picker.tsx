@@ -23,9 +23,7 @@ const INK: Record<Verdict, string> = {
 export function CornerPicker({ verdicts, corner, of, onCorner }: Props) {
   return (
     <fieldset className="min-w-0 text-xs">
-      <legend className="text-ink-soft mb-1">
-        Corner <span className="sr-only">({of})</span>
-      </legend>
+      <legend className="text-ink-soft mb-1">Corner: {of.toLowerCase()}</legend>
       <div className="grid w-fit grid-cols-[auto_repeat(3,3.75rem)] gap-px">
         <span className="text-ink-soft self-end pr-2">
           driver ↓ <span className="sr-only">impedance across</span>

@@ -8,9 +8,10 @@ import type { PlaybackControl } from "@/components/charts/use-playback";
 import { WaveformChart } from "@/components/charts/waveform-chart";
 import { useLengthUnit } from "@/components/shell/length-unit";
 import type { PathPicture } from "@/lib/client/engine-jobs";
+import { quantityText } from "@/lib/drawings/number-text";
 import { alongDrawing, alongRows, bounceDrawing, bounceRows, waveDrawing, waveRows } from "./exports";
 import { DrawingPanel } from "./drawing-panel";
-import { emphasisOf, type PictureView, pictureView } from "./picture-view";
+import { bounceSpan, emphasisOf, type PictureView, pictureView } from "./picture-view";
 
 interface Props {
   picture: PathPicture | null;
@@ -58,6 +59,8 @@ export function Drawings({
   const [from, to] = view?.span ?? [0, 1];
   const span = useMemo((): [number, number] => [from, to], [from, to]);
   const cursor = control.time;
+  const [first, last] = view ? bounceSpan(view, cursor) : [0, 1];
+  const page = useMemo((): [number, number] => [first, last], [first, last]);
   if (error)
     return (
       <p role="alert" className="border-fail text-fail border p-4 text-sm">
@@ -65,7 +68,7 @@ export function Drawings({
       </p>
     );
   return (
-    <div className="grid gap-x-6 gap-y-4 xl:grid-cols-2">
+    <div className="grid gap-x-6 gap-y-4 xl:grid-cols-[minmax(0,7fr)_minmax(0,6fr)]">
       <div className="flex min-w-0 flex-col gap-4">
         <DrawingPanel
           title="Waveforms"
@@ -90,7 +93,7 @@ export function Drawings({
         <DrawingPanel
           title="Bounces"
           height={BOUNCES}
-          note={view?.leftOut}
+          note={[view && shownPart(page, span), view?.leftOut].filter(Boolean).join(" ")}
           actions={
             view?.row && <Export view={view} kind="bounces" {...{ fileName, pin, emphasis, unit, cursor }} />
           }
@@ -100,7 +103,7 @@ export function Drawings({
               row={view.row}
               rays={view.rays}
               voltages={view.voltages}
-              span={span}
+              span={page}
               unit={unit}
               height={BOUNCES}
               emphasis={emphasis}
@@ -135,6 +138,12 @@ export function Drawings({
       </div>
     </div>
   );
+}
+
+function shownPart([from, to]: [number, number], [, end]: [number, number]): string | null {
+  if (from === 0 && to >= end) return null;
+  const like = { like: end };
+  return `Shown: ${quantityText(from, "s", like)} to ${quantityText(to, "s", like)} of ${quantityText(end, "s", like)}; it turns the page with the cursor.`;
 }
 
 interface ExportProps {

@@ -5,7 +5,7 @@ import { type Drawing, emptyDrawing } from "@/lib/drawings/marks";
 import type { LengthUnit } from "@/lib/drawings/number-text";
 import { voltsAt } from "@/lib/drawings/wave-samples";
 import { waveformChart } from "@/lib/drawings/waveform-chart.geometry";
-import type { PictureView } from "./picture-view";
+import { bounceSpan, type PictureView } from "./picture-view";
 
 /** How a drawing looks on the page when it is saved. */
 export interface Look {
@@ -45,7 +45,7 @@ export function bounceDrawing(view: PictureView, look: Look): Drawing {
   return bounceDiagram(view.row, view.rays, view.voltages, {
     width: WIDTH,
     height: 640,
-    span: view.span,
+    span: bounceSpan(view, look.cursor),
     unit: look.unit,
     emphasis: look.emphasis,
   });

@@ -72,6 +72,7 @@ export function NetPage({ facts, mayEdit, engine = pageEngine() }: Props) {
     [changed, view.driver, result],
   );
   const rule = rules.find((entry) => entry.id === view.finding?.rule) ?? null;
+  const corners = useMemo(() => cornerVerdicts(result, rule?.id ?? null), [result, rule]);
   const start = useMemo(() => whatIfStart(path, view.driver), [path, view.driver]);
 
   return (
@@ -87,7 +88,12 @@ export function NetPage({ facts, mayEdit, engine = pageEngine() }: Props) {
       {blocked.length > 0 ? (
         <NoData projectId={facts.projectId} missing={blocked} mayEdit={mayEdit} />
       ) : (
-        <Why finding={view.finding} rule={rule} waived={waived.has(view.finding?.mechanism ?? "")} />
+        <Why
+          finding={view.finding}
+          rule={rule}
+          waived={waived.has(view.finding?.mechanism ?? "")}
+          trying={trying}
+        />
       )}
       <div className="flex flex-wrap items-start gap-x-6 gap-y-3">
         <div className="min-w-0 grow basis-96">
@@ -100,8 +106,8 @@ export function NetPage({ facts, mayEdit, engine = pageEngine() }: Props) {
         </div>
         {blocked.length > 0 ? null : (
           <CornerPicker
-            verdicts={cornerVerdicts(result, rule?.id ?? null)}
-            of={rule?.title ?? "every rule"}
+            verdicts={corners.verdicts}
+            of={corners.of === null ? "every rule" : (rule?.title ?? "every rule")}
             corner={view.corner}
             onCorner={(corner) => look({ corner })}
           />

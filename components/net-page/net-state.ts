@@ -60,11 +60,19 @@ export function whatIfOf(address: Address): WhatIf {
 
 const RANK: Record<Verdict, number> = { fail: 0, "no data": 1, near: 2, pass: 3 };
 
-/** Worst first, within a verdict as the rules are listed. */
+const WEIGHT: Record<Finding["severity"], number> = { error: 0, warning: 1, info: 2 };
+
+/** Worst first; of equally bad ones what counts more, then what happens on an edge, then what fails at more corners. */
 export function inOrder(findings: readonly Finding[]): Finding[] {
   return [...findings].sort(
     (a, b) =>
-      Number(!a.counts) - Number(!b.counts) || RANK[a.verdict] - RANK[b.verdict] || share(a) - share(b),
+      Number(!a.counts) - Number(!b.counts) ||
+      RANK[a.verdict] - RANK[b.verdict] ||
+      WEIGHT[a.severity] - WEIGHT[b.severity] ||
+      Number(a.edge === null) - Number(b.edge === null) ||
+      Number(a.time === null) - Number(b.time === null) ||
+      b.failsAt - a.failsAt ||
+      share(a) - share(b),
   );
 }
 
@@ -121,14 +129,18 @@ export function isAtFinding({ finding, corner, edge, driver, pin }: View): boole
   );
 }
 
-/** The worst verdict at each corner, of one rule or of all. */
-export function cornerVerdicts(result: PathResult, rule: string | null): Map<CornerName, Verdict> {
-  const worst = new Map<CornerName, Verdict>();
-  const selectors = new Set(result.findings.filter((entry) => !entry.counts).map((entry) => entry.rule));
-  for (const value of result.corners) {
-    if (rule === null ? selectors.has(value.rule) : value.rule !== rule) continue;
-    const held = worst.get(value.corner);
-    if (held === undefined || RANK[value.verdict] < RANK[held]) worst.set(value.corner, value.verdict);
+/** The worst verdict at each corner, of one rule or, where that is not judged corner by corner, of all that count. */
+export function cornerVerdicts(
+  result: PathResult,
+  rule: string | null,
+): { of: string | null; verdicts: Map<CornerName, Verdict> } {
+  const own = result.corners.filter((value) => value.rule === rule);
+  const counting = new Set(result.findings.filter((entry) => entry.counts).map((entry) => entry.rule));
+  const byCorner = own.length === CORNERS.length;
+  const verdicts = new Map<CornerName, Verdict>();
+  for (const value of byCorner ? own : result.corners.filter((entry) => counting.has(entry.rule))) {
+    const held = verdicts.get(value.corner);
+    if (held === undefined || RANK[value.verdict] < RANK[held]) verdicts.set(value.corner, value.verdict);
   }
-  return worst;
+  return { of: byCorner ? rule : null, verdicts };
 }

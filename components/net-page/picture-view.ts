@@ -65,6 +65,20 @@ export function pictureView(
   };
 }
 
+/** One-way trips of the row that the bounce diagram holds at a time: more of them are too flat to be read. */
+const TRIPS_SHOWN = 12;
+
+/** The page of the bounce diagram that holds the cursor: the whole time, cut where trips would be too flat. */
+export function bounceSpan(view: PictureView, cursor: number): [number, number] {
+  const delay = view.row?.sections.reduce((sum, section) => sum + section.delay, 0) ?? 0;
+  const end = view.span[1];
+  const length = Math.min(end, TRIPS_SHOWN * delay);
+  // A rest too short for a page of its own joins the page before.
+  if (!(length > 0) || end < 1.25 * length) return view.span;
+  const page = Math.min(Math.floor(cursor / length), Math.ceil(end / length) - 1);
+  return [page * length, (page + 1) * length];
+}
+
 function asBefore(waveforms: PathWaveforms | null, pin: string | null): WaveProbe[] {
   const probe = waveforms?.probes.find((entry) => entry.pin === pin);
   if (!waveforms || !probe) return [];

@@ -45,7 +45,7 @@ export function useCursor(
   useEffect(() => {
     if (playing || placed.current === null || end === 0) return;
     const picoseconds = Math.round(time * 1e12 * ADDRESS_DIGITS) / ADDRESS_DIGITS;
-    const isGoal = goal !== null && Math.abs(time - goal) < 1e-15;
+    const isGoal = goal === null ? time === 0 : Math.abs(time - goal) < 1e-15;
     const next = isGoal ? null : picoseconds;
     if (written.current === next) return;
     written.current = next;

@@ -3,7 +3,7 @@
 import { Button } from "@/components/ui/button";
 import { Select } from "@/components/ui/select";
 import { useLengthUnit } from "@/components/shell/length-unit";
-import { lengthText, ohmsText } from "@/lib/drawings/number-text";
+import { ohmsText } from "@/lib/drawings/number-text";
 import { impedanceOfWidth, type WidthPoint, widthOfImpedance } from "@/lib/resolve/width-points";
 import type { WhatIf, WhatIfStart } from "@/lib/resolve/what-if";
 import { eSeriesBetween } from "@/lib/si/units";
@@ -163,7 +163,7 @@ function LineField({ start, change, widths, onChange }: Part & Pick<Props, "widt
       steps={widths.map((point) => point.width)}
       least={first.width}
       most={last.width}
-      hint={`gives ${ohmsText(ohms)}, between ${lengthText(first.width, unit)} and ${lengthText(last.width, unit)}`}
+      hint={`gives ${ohmsText(ohms)}`}
       onChange={(to) => {
         const gives = to === null ? null : impedanceOfWidth(widths, to);
         onChange({ impedance: gives === null ? null : (gives / own) * start.impedance });

@@ -7,10 +7,12 @@ interface Props {
   finding: Finding | null;
   rule: RuleSummary | null;
   waived: boolean;
+  /** changes are on trial: this is what they make of it */
+  trying: boolean;
 }
 
 /** The finding that is looked at, in one line of numbers and one sentence of cause. */
-export function Why({ finding, rule, waived }: Props) {
+export function Why({ finding, rule, waived, trying }: Props) {
   if (!finding || !rule) return null;
   const limit = finding.limit === null ? null : `limit ${findingText(finding.limit, finding.unit)}`;
   const corner = finding.corner && finding.ofCorners > 1 ? `worst with ${cornerWords(finding.corner)}` : null;
@@ -20,7 +22,7 @@ export function Why({ finding, rule, waived }: Props) {
       <p className="flex flex-wrap items-baseline gap-x-3">
         <VerdictMark verdict={waived && finding.verdict === "fail" ? "waived" : finding.verdict} />
         <strong className="font-semibold">
-          {rule.title}
+          {trying ? `With the change: ${rule.title.toLowerCase()}` : rule.title}
           {finding.value === null ? null : ` ${findingText(finding.value, finding.unit)}`}
         </strong>
         <span className="text-ink-soft text-sm">{numbers.join(" · ")}</span>

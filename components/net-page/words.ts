@@ -13,6 +13,12 @@ const DECIMALS: Record<string, number> = {
   mm: 2,
 };
 
+/** As short as a column has room for; what the share is of, the rule's title says. */
+export function shortUnit(unit: string): string {
+  if (unit === "1") return "";
+  return unit.startsWith("%") ? "%" : unit;
+}
+
 /** A value of a rule, in the rule's unit. */
 export function findingNumber(value: number | null, unit: string, signed = false): string | null {
   if (value === null) return null;
@@ -22,7 +28,8 @@ export function findingNumber(value: number | null, unit: string, signed = false
 
 export function findingText(value: number | null, unit: string, signed = false): string {
   const number = findingNumber(value, unit, signed);
-  return number === null ? "no value" : withUnit(number, unit);
+  if (number === null) return "no value";
+  return unit === "1" ? number : withUnit(number, unit);
 }
 
 /** "fast driver, high impedance" */

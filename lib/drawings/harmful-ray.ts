@@ -44,5 +44,26 @@ export function harmfulRay(row: LineRow, rays: readonly BounceRay[], harm: Harm)
     (most, entry) => (Math.abs(entry.ray.amplitude) > Math.abs(most?.ray.amplitude ?? 0) ? entry : most),
     null,
   );
-  return strongest?.ray.id ?? null;
+  return strongest ? alongLongest(row, rays, strongest.ray).id : null;
+}
+
+/** The same wave where it can be seen: in the longest section that it came through. */
+function alongLongest(row: LineRow, rays: readonly BounceRay[], arriving: BounceRay): BounceRay {
+  let best = arriving;
+  let ray = arriving;
+  for (let section = arriving.section - 1; section >= 0; section--) {
+    const delay = row.sections[section]?.delay ?? 0;
+    const from = rays
+      .filter((entry) => entry.section === section && entry.outward)
+      .filter((entry) => Math.abs(entry.start + delay - ray.start) < 1e-6 * delay + HAIR)
+      .filter((entry) => Math.sign(entry.amplitude) === Math.sign(ray.amplitude))
+      .reduce<BounceRay | null>(
+        (most, entry) => (Math.abs(entry.amplitude) > Math.abs(most?.amplitude ?? 0) ? entry : most),
+        null,
+      );
+    if (!from) break;
+    ray = from;
+    if (delay > (row.sections[best.section]?.delay ?? 0)) best = from;
+  }
+  return best;
 }

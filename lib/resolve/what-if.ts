@@ -48,9 +48,9 @@ export interface WhatIfStart {
   farPin: string | null;
 }
 
-export const NEW_SERIES = "new series resistor";
-export const NEW_END = "new end resistor";
-const END_RAIL = "rail of the new end resistor";
+export const NEW_SERIES = "new R";
+export const NEW_END = "new end R";
+const END_RAIL = "rail of the new end R";
 
 export function isChanged(change: WhatIf): boolean {
   const { endTo: _to, ...values } = change;
