@@ -63,7 +63,7 @@ export function BindingsTab({ stored }: { stored: BindingList }) {
     },
   });
   const { doc, change, saving } = editor;
-  useEditorFlush(saving.flush);
+  useEditorFlush(saving);
   const { data: matches, isFetching } = useQuery(bindingMatchesQuery(projectId, revision));
   // Counts stand by position: they speak of this list only while it is the one that was counted.
   const counted = matches && saving.state === "saved" && !isFetching ? matches : null;

@@ -54,7 +54,7 @@ export function ClassPanel({ row, classes, onClose, onGone, onOpen }: Props) {
     },
   });
   const { doc, change, saving } = editor;
-  useEditorFlush(saving.flush);
+  useEditorFlush(saving);
   const [deleting, setDeleting] = useState(false);
 
   const duplicate = useMutation({

@@ -1,6 +1,7 @@
 "use client";
 
 import { createContext, type ReactNode, useContext, useEffect } from "react";
+import type { Autosave } from "@/components/stackup/use-autosave";
 import type { StoredModel } from "@/lib/schemas/model";
 import type { StoredRuleSet } from "@/lib/schemas/rule-set";
 import type { SignalLayer } from "./class-words";
@@ -26,6 +27,8 @@ export interface ClassesDesk {
   leave: (act: () => void) => void;
   /** Tells how the open editor is saved; null when it closes. */
   setFlush: (flush: (() => Promise<boolean>) | null) => void;
+  /** Tells whether the open editor holds what the server does not know yet. */
+  setUnsaved: (unsaved: boolean) => void;
   /** Takes back the last edit. */
   undo: () => void;
 }
@@ -43,10 +46,15 @@ export function useClassesDesk(): ClassesDesk {
 }
 
 /** Lets the page save this editor before it leaves it. */
-export function useEditorFlush(flush: () => Promise<boolean>): void {
-  const { setFlush } = useClassesDesk();
+export function useEditorFlush({ flush, state }: Pick<Autosave, "flush" | "state">): void {
+  const { setFlush, setUnsaved } = useClassesDesk();
   useEffect(() => {
     setFlush(flush);
     return () => setFlush(null);
   }, [flush, setFlush]);
+  const unsaved = state !== "saved";
+  useEffect(() => {
+    setUnsaved(unsaved);
+    return () => setUnsaved(false);
+  }, [unsaved, setUnsaved]);
 }

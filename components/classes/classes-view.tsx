@@ -66,11 +66,12 @@ export function ClassesView(props: ClassesViewProps) {
   const setFlush = useCallback((next: (() => Promise<boolean>) | null) => {
     flush.current = next;
   }, []);
-  const [saving, setSaving] = useState(false);
+  const [unsaved, setUnsaved] = useState(false);
 
+  const editable = readOnly === null || limitsReadOnly === null;
   const undo = useUndo({
     projectId,
-    enabled: readOnly === null || limitsReadOnly === null,
+    enabled: editable,
     flush: async () => (await flush.current?.()) ?? true,
     reload: async () => {
       await Promise.all(
@@ -88,15 +89,11 @@ export function ClassesView(props: ClassesViewProps) {
 
   const leave = useCallback((act: () => void) => {
     if (!flush.current) return act();
-    setSaving(true);
-    void flush
-      .current()
-      .then((saved) => {
-        if (saved) act();
-        else
-          toast.error("What is open is not saved yet. Mend it, or give it up with Esc, before you leave it.");
-      })
-      .finally(() => setSaving(false));
+    void flush.current().then((saved) => {
+      if (saved) act();
+      else
+        toast.error("What is open is not saved yet. Mend it, or give it up with Esc, before you leave it.");
+    });
   }, []);
 
   const desk = useMemo<ClassesDesk>(
@@ -113,6 +110,7 @@ export function ClassesView(props: ClassesViewProps) {
       epoch,
       leave,
       setFlush,
+      setUnsaved,
       undo: takeBack,
     }),
     [
@@ -145,7 +143,7 @@ export function ClassesView(props: ClassesViewProps) {
             readOnly ??
             `What a net must be: target, layers, driver, edge and end. Lengths without a unit are read as ${props.unit}.`
           }
-          actions={desk.mayEdit || desk.mayLimit ? <UndoButtons undo={undo} unsaved={saving} /> : null}
+          actions={editable ? <UndoButtons undo={undo} unsaved={unsaved} /> : null}
         />
         <Tabs
           label="Classes, models and bindings"

@@ -6,7 +6,7 @@ import { typedQuantity } from "./field-words";
 import { type ModelUse, NO_USE, wordsOfUse } from "./model-use";
 
 export function modelColumns(uses: ReadonlyMap<string, ModelUse>): DataColumn<StoredModel>[] {
-  const use = (row: StoredModel) => uses.get(row.lineageId) ?? NO_USE;
+  const usedBy = (row: StoredModel) => uses.get(row.lineageId) ?? NO_USE;
   return [
     {
       id: "name",
@@ -97,13 +97,13 @@ export function modelColumns(uses: ReadonlyMap<string, ModelUse>): DataColumn<St
       id: "use",
       header: "Used by",
       width: 150,
-      sortValue: (row) => use(row).classes.length + use(row).bindings,
+      sortValue: (row) => usedBy(row).classes.length + usedBy(row).bindings,
       cell: (row) => (
         <span
-          className={wordsOfUse(use(row)) === "nothing" ? "text-ink-soft" : undefined}
-          title={use(row).classes.join(", ")}
+          className={wordsOfUse(usedBy(row)) === "nothing" ? "text-ink-soft" : undefined}
+          title={usedBy(row).classes.join(", ")}
         >
-          {wordsOfUse(use(row))}
+          {wordsOfUse(usedBy(row))}
         </span>
       ),
     },

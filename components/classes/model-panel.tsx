@@ -57,7 +57,7 @@ export function ModelPanel({ model, use, onClose, onGone, onOpen }: Props) {
     },
   });
   const { doc, change, saving } = editor;
-  useEditorFlush(saving.flush);
+  useEditorFlush(saving);
   const checks = useMemo(() => checkModel(doc), [doc]);
   const whole = useMemo(() => modelDocOf(doc), [doc]);
 

@@ -43,11 +43,11 @@ function preset(id: string, title: string, technology: string, about: string, pa
 export const modelPresets: readonly ModelPreset[] = [
   preset("cmos-33", "3.3 V pin, medium drive", "3.3 V CMOS", "20 Ω, 1.2 ns; drives and receives", {
     driver: driver("3.3", ["28", "20", "14"], ["1.7", "1.2", "0.8"]),
-    receiver: receiver("3.3", "0.8", "2.0", "0.4"),
+    receiver: receiver("3.3", "0.8", "2", "0.4"),
   }),
   preset("cmos-33-low", "3.3 V pin, low drive", "3.3 V CMOS", "50 Ω, 3.5 ns; drives and receives", {
     driver: driver("3.3", ["70", "50", "38"], ["5", "3.5", "2.5"]),
-    receiver: receiver("3.3", "0.8", "2.0", "0.4"),
+    receiver: receiver("3.3", "0.8", "2", "0.4"),
   }),
   preset("cmos-25", "2.5 V pin", "2.5 V CMOS", "20 Ω, 1 ns; drives and receives", {
     driver: driver("2.5", ["28", "20", "14"], ["1.4", "1", "0.7"]),
@@ -61,6 +61,6 @@ export const modelPresets: readonly ModelPreset[] = [
     driver: driver("3.3", ["35", "25", "17"], ["2.2", "1.5", "1"]),
   }),
   preset("input-33", "3.3 V input", "3.3 V CMOS", "4 pF; receives", {
-    receiver: receiver("3.3", "0.8", "2.0", "0.4"),
+    receiver: receiver("3.3", "0.8", "2", "0.4"),
   }),
 ];
