@@ -134,13 +134,12 @@ function Key({ verdict }: { verdict: Counted }) {
 }
 
 function cellLabel(cell: MatrixCell): string {
-  return [
-    `${cell.className ?? NO_CLASS}, ${ruleTitle(cell.rule)}:`,
-    `${cell.fail} failing, ${cell.near} near, ${cell.noData} no data`,
+  const counts = `${cell.fail} failing, ${cell.near} near, ${cell.noData} no data`;
+  const worst =
     cell.worstMargin === null
       ? ""
-      : `, worst margin ${measureText(cell.worstMargin, cell.unit, { signed: true })}`,
-  ].join(" ");
+      : `, worst margin ${measureText(cell.worstMargin, cell.unit, { signed: true })}`;
+  return `${cell.className ?? NO_CLASS}, ${ruleTitle(cell.rule)}: ${counts}${worst}`;
 }
 
 function arrange(cells: readonly MatrixCell[]) {

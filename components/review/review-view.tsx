@@ -17,6 +17,7 @@ import { LiveRun } from "@/components/runs/live-run";
 import type { Rights } from "@/components/runs/rights";
 import { timeText } from "@/components/runs/run-words";
 import { runAddress } from "@/components/runs/runs-view";
+import { Scopes } from "@/components/runs/run-head";
 import { RunCounts } from "@/components/runs/verdict-counts";
 import { errorMessage } from "@/lib/client/api";
 import { flagsQuery, noDataQuery, waiversQuery } from "@/lib/client/review";
@@ -151,9 +152,12 @@ function Reviewed({ projectId, run, draft, rights }: ReviewedProps) {
           board as it was; waivers and signatures given now rest on those values.
         </Notice>
       ) : null}
-      <Sized initial={640} least={300}>
-        {(width) => <RunCounts counts={run.counts} width={Math.min(width, 760)} />}
-      </Sized>
+      <div className="flex flex-col gap-2">
+        <Sized initial={640} least={300}>
+          {(width) => <RunCounts counts={run.counts} width={Math.min(width, 960)} />}
+        </Sized>
+        <Scopes projectId={projectId} scopes={summary.data?.scopes} />
+      </div>
       <div className="grid gap-8 xl:grid-cols-[minmax(0,1fr)_300px]">
         <Tabs
           label="What to review"

@@ -38,25 +38,27 @@ export function LimitField({ rule, limit, disabled, onChange }: Props) {
         <span className="text-ink-soft w-3 text-right" aria-hidden="true">
           {rule.direction === "max" ? "≤" : "≥"}
         </span>
-        <input
-          aria-label={`Limit of ${rule.title}, ${rule.direction === "max" ? "at most" : "at least"}, in ${unitText(rule.unit)}`}
-          aria-invalid={wrong ? true : undefined}
-          aria-describedby={wrong ? `limit-${rule.id}` : undefined}
-          className={cn(controlClasses, "h-7 w-20 text-right tabular-nums")}
-          placeholder="none"
-          disabled={disabled}
-          value={text ?? limit ?? ""}
-          onFocus={(event) => event.currentTarget.select()}
-          onChange={(event) => setText(event.target.value)}
-          onBlur={settle}
-          onKeyDown={(event) => {
-            if (event.key === "Enter") settle();
-            if (event.key === "Escape") {
-              setText(null);
-              setWrong(null);
-            }
-          }}
-        />
+        <span className="w-20 shrink-0">
+          <input
+            aria-label={`Limit of ${rule.title}, ${rule.direction === "max" ? "at most" : "at least"}, in ${unitText(rule.unit)}`}
+            aria-invalid={wrong ? true : undefined}
+            aria-describedby={wrong ? `limit-${rule.id}` : undefined}
+            className={cn(controlClasses, "text-right tabular-nums")}
+            placeholder="none"
+            disabled={disabled}
+            value={text ?? limit ?? ""}
+            onFocus={(event) => event.currentTarget.select()}
+            onChange={(event) => setText(event.target.value)}
+            onBlur={settle}
+            onKeyDown={(event) => {
+              if (event.key === "Enter") settle();
+              if (event.key === "Escape") {
+                setText(null);
+                setWrong(null);
+              }
+            }}
+          />
+        </span>
         <span className="text-ink-soft whitespace-nowrap">{unitText(rule.unit)}</span>
       </span>
       {wrong ? (

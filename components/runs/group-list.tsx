@@ -23,13 +23,13 @@ export function GroupList({ groups, open, onOpen, onMember }: Props) {
   return (
     <ul
       aria-label="Groups of problems"
-      className="border-rule-line bg-sheet mb-4 max-h-80 overflow-y-auto border-y print:max-h-none"
+      className="border-rule-line bg-sheet mb-4 max-h-64 overflow-y-auto border-y print:max-h-none"
     >
       {groups.map((group) => (
         <li
           key={group.key}
           className={cn(
-            "border-rule-line/60 grid items-center gap-x-4 gap-y-1 border-b px-2 py-2 last:border-b-0 md:grid-cols-[minmax(0,1fr)_auto] xl:grid-cols-[minmax(0,1.3fr)_minmax(0,1fr)_220px]",
+            "border-rule-line/60 grid items-center gap-x-4 gap-y-1 border-b px-2 py-1.5 last:border-b-0 md:grid-cols-[minmax(0,1fr)_auto] xl:grid-cols-[minmax(0,1.3fr)_minmax(0,1fr)_220px]",
             group.key === open && "bg-copper/10",
           )}
         >
@@ -57,7 +57,7 @@ export function GroupList({ groups, open, onOpen, onMember }: Props) {
             <MarginHistogram
               margins={group.margins}
               width={220}
-              height={56}
+              height={52}
               unit="%"
               near={Number.POSITIVE_INFINITY}
               title={`Margins of ${group.title}, as a share of the limit`}
@@ -85,11 +85,11 @@ function Member({
       <button
         type="button"
         onClick={() => onMember(problem)}
-        className="text-ink min-w-0 truncate font-mono hover:underline"
+        className="text-ink max-w-36 shrink-0 truncate font-mono hover:underline"
       >
         {problem.path}
       </button>
-      <span className="shrink-0 whitespace-nowrap">
+      <span className="min-w-0 truncate">
         {measureText(problem.margin, problem.unit, { signed: true })} {ruleTitle(problem.rule).toLowerCase()}
       </span>
     </span>

@@ -128,13 +128,12 @@ export const problemColumns: readonly DataColumn<WorkedProblem>[] = [
 
 /** Beside an open panel, which tells the rest. */
 export const narrowColumns: readonly DataColumn<WorkedProblem>[] = [
-  verdict,
+  { ...verdict, width: 84 },
   path,
-  rule,
-  margin,
-  failsAt,
-  flag,
-  waiver,
+  { ...rule, width: 130 },
+  { ...margin, width: 132 },
+  { ...failsAt, width: 150 },
+  { ...flag, width: 100 },
 ];
 
 /** "fails at 3 of 9, corner only"; null where nothing was judged. */

@@ -1,6 +1,6 @@
 "use client";
 
-import { type RefObject, useMemo } from "react";
+import { type RefObject, useMemo, useState } from "react";
 import { Button } from "@/components/ui/button";
 import { Checkbox } from "@/components/ui/checkbox";
 import { Input } from "@/components/ui/input";
@@ -18,6 +18,8 @@ interface Props {
   setParams: Params["setParams"];
   searchRef: RefObject<HTMLInputElement | null>;
 }
+
+const RARE = ["severity", "nominal", "waived", "flagged", "mine"] as const;
 
 const plain = (values: readonly string[]) => values.map((value) => ({ value, label: value }));
 
@@ -38,6 +40,9 @@ export function ProblemFilters({ problems, params, setParams, searchRef }: Props
     const value = params[name as keyof typeof NO_FILTERS];
     return value !== null && value !== "" && value !== false;
   });
+  // Filters that are set are seen, opened or not.
+  const [opened, setOpened] = useState(false);
+  const more = opened || RARE.some((name) => params[name] !== null && params[name] !== false);
   const choose = (name: keyof typeof NO_FILTERS) => (event: { target: { value: string } }) =>
     void setParams({ [name]: event.target.value || null });
 
@@ -88,48 +93,56 @@ export function ProblemFilters({ problems, params, setParams, searchRef }: Props
         value={params.rule ?? ""}
         onChange={choose("rule")}
       />
-      <Select
-        label="Severity"
-        placeholder="any"
-        fieldClassName="w-24"
-        options={plain(["error", "warning", "info"])}
-        value={params.severity ?? ""}
-        onChange={choose("severity")}
-      />
-      <Select
-        label="Fails"
-        placeholder="anywhere"
-        fieldClassName="w-32"
-        options={[
-          { value: "nominal", label: "at nominal" },
-          { value: "corner", label: "corner only" },
-        ]}
-        value={params.nominal ?? ""}
-        onChange={choose("nominal")}
-      />
-      <Select
-        label="Excused"
-        placeholder="either"
-        fieldClassName="w-24"
-        options={plain(["yes", "no"])}
-        value={params.waived ?? ""}
-        onChange={choose("waived")}
-      />
-      <Select
-        label="Flagged"
-        placeholder="either"
-        fieldClassName="w-24"
-        options={plain(["yes", "no"])}
-        value={params.flagged ?? ""}
-        onChange={choose("flagged")}
-      />
-      <div className="flex h-8 items-center">
-        <Checkbox
-          label="Assigned to me"
-          checked={params.mine}
-          onCheckedChange={(mine) => void setParams({ mine: mine || null })}
-        />
-      </div>
+      {more ? (
+        <>
+          <Select
+            label="Severity"
+            placeholder="any"
+            fieldClassName="w-24"
+            options={plain(["error", "warning", "info"])}
+            value={params.severity ?? ""}
+            onChange={choose("severity")}
+          />
+          <Select
+            label="Fails"
+            placeholder="anywhere"
+            fieldClassName="w-32"
+            options={[
+              { value: "nominal", label: "at nominal" },
+              { value: "corner", label: "corner only" },
+            ]}
+            value={params.nominal ?? ""}
+            onChange={choose("nominal")}
+          />
+          <Select
+            label="Excused"
+            placeholder="either"
+            fieldClassName="w-24"
+            options={plain(["yes", "no"])}
+            value={params.waived ?? ""}
+            onChange={choose("waived")}
+          />
+          <Select
+            label="Flagged"
+            placeholder="either"
+            fieldClassName="w-24"
+            options={plain(["yes", "no"])}
+            value={params.flagged ?? ""}
+            onChange={choose("flagged")}
+          />
+          <div className="flex h-8 items-center">
+            <Checkbox
+              label="Assigned to me"
+              checked={params.mine}
+              onCheckedChange={(mine) => void setParams({ mine: mine || null })}
+            />
+          </div>
+        </>
+      ) : (
+        <Button variant="quiet" onClick={() => setOpened(true)}>
+          More filters
+        </Button>
+      )}
       {narrowed ? (
         <Button variant="quiet" onClick={() => void setParams(NO_FILTERS)}>
           Show all

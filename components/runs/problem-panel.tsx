@@ -2,6 +2,7 @@
 
 import { useQuery } from "@tanstack/react-query";
 import type { Route } from "next";
+import Link from "next/link";
 import { Button } from "@/components/ui/button";
 import { LinkButton } from "@/components/ui/link-button";
 import { Notice } from "@/components/ui/notice";
@@ -63,13 +64,12 @@ export function ProblemPanel({ projectId, runId, problem, rights, onClose, onFla
           <p>
             Flagged,{" "}
             {problem.flag.assigneeName ? `assigned to ${problem.flag.assigneeName}` : "assigned to nobody"}.{" "}
-            <LinkButton
-              variant="quiet"
-              className="h-auto px-0 underline"
+            <Link
+              className="text-violet hover:underline"
               href={`/projects/${projectId}/review?tab=flags&flag=${problem.flag.id}` as Route}
             >
               Read the discussion
-            </LinkButton>
+            </Link>
           </p>
         ) : null}
         {problem.waiver ? (

@@ -25,12 +25,12 @@ export function RunHead({ projectId, run, listed, draft, onVerdict }: Props) {
     <section aria-label="What this run judged" className="mb-6 flex flex-col gap-3">
       <RunState run={run} listed={listed} draft={draft} />
       {run.state === "done" ? (
-        <div className="grid items-start gap-x-8 gap-y-3 lg:grid-cols-[minmax(0,2fr)_minmax(0,1fr)]">
+        <>
           <Sized initial={560} least={300}>
             {(width) => (
               <VerdictBar
                 counts={verdictCounts(run.counts)}
-                width={Math.min(width, 720)}
+                width={Math.min(width, 960)}
                 noun="paths"
                 title="Paths by verdict"
                 onPick={(verdict) => {
@@ -40,7 +40,7 @@ export function RunHead({ projectId, run, listed, draft, onVerdict }: Props) {
             )}
           </Sized>
           <Scopes projectId={projectId} scopes={summary?.scopes} />
-        </div>
+        </>
       ) : null}
     </section>
   );
@@ -77,27 +77,32 @@ const SCOPES: readonly [scope: string, words: string][] = [
 ];
 
 /** The counts that stand beside the verdicts: what was not judged is not a pass. */
-function Scopes({ projectId, scopes }: { projectId: string; scopes: Record<string, number> | undefined }) {
-  const total = scopes ? Object.values(scopes).reduce((sum, count) => sum + count, 0) : null;
+export function Scopes({
+  projectId,
+  scopes,
+}: {
+  projectId: string;
+  scopes: Record<string, number> | undefined;
+}) {
+  const total = Object.values(scopes ?? {}).reduce((sum, count) => sum + count, 0);
   return (
-    <dl className="text-sm" aria-label="Nets by scope">
-      <div className="flex gap-2">
-        <dt className="text-ink-soft">Nets in all</dt>
-        <dd>{total?.toLocaleString("en") ?? "…"}</dd>
-      </div>
-      {SCOPES.map(([scope, words]) => (
-        <div key={scope} className="flex gap-2">
-          <dt className="text-ink-soft">{words}</dt>
-          <dd>
-            <Link
-              className="text-violet hover:underline"
-              href={`/projects/${projectId}/nets?scope=${scope}` as Route}
-            >
-              {scopes ? (scopes[scope] ?? 0).toLocaleString("en") : "…"}
-            </Link>
-          </dd>
-        </div>
-      ))}
-    </dl>
+    <p className="text-ink-soft min-h-5 text-sm">
+      {scopes ? `${counted(total, "net")}: ` : null}
+      {scopes
+        ? SCOPES.map(([scope, words], index) => (
+            <span key={scope}>
+              {index > 0 ? ", " : ""}
+              <Link
+                className="text-violet hover:underline"
+                href={`/projects/${projectId}/nets?scope=${scope}` as Route}
+              >
+                {(scopes[scope] ?? 0).toLocaleString("en")}
+              </Link>{" "}
+              {words}
+            </span>
+          ))
+        : null}
+      {scopes ? ". Paths of several nets are judged as one." : null}
+    </p>
   );
 }

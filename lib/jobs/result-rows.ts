@@ -1,6 +1,7 @@
 import "server-only";
 import { newId } from "@/lib/db/ids";
 import type { CheckedBatch, NewFinding, NewProblem } from "@/lib/db/run";
+import { ruleCatalogue } from "@/lib/si/rules";
 import type { Finding, Problem } from "@/lib/si/rules/types";
 import type { CheckedPath } from "./check-worker";
 
@@ -76,10 +77,20 @@ function findingRow(
   return { ...same, id: newId(), runId, teamId, pathId, verdict, limit, time_s: time };
 }
 
+/** A margin is near within a fifth of its limit, as a rule: a limit of zero is judged by its near band so. */
+const NEAR_BANDS_IN_LIMIT = 5;
+
 /** Margin as a share of the limit, so that rules of different units can be put in one order. */
 function share(finding: Finding): number | null {
   if (finding.margin === null) return null;
-  return finding.margin / Math.max(Math.abs(finding.limit ?? 0), 1e-12 + Math.abs(finding.value ?? 0), 1e-12);
+  return finding.margin / scaleOf(finding);
+}
+
+function scaleOf({ rule, limit, value }: Finding): number {
+  if (limit !== null && Math.abs(limit) > 1e-12) return Math.abs(limit);
+  const near = ruleCatalogue.find((definition) => definition.id === rule)?.near;
+  if (near && "absolute" in near) return NEAR_BANDS_IN_LIMIT * near.absolute;
+  return Math.max(Math.abs(value ?? 0), 1e-12);
 }
 
 /** What a simulation saw speaks before what a formula expects: a wrong resistor matters by what it does. */
