@@ -17,8 +17,14 @@ export function Sized({ initial = 880, least = 320, children }: Props) {
     debounceTime: 30,
     initialSize: { width: initial, height: 0 },
   });
+  // What scrolls must be reached by the keyboard.
+  const scrolls = width > 0 && width < least;
   return (
-    <div ref={parentRef} className="w-full overflow-x-auto print:overflow-visible">
+    <div
+      ref={parentRef}
+      {...(scrolls ? { tabIndex: 0, role: "region", "aria-label": "Drawing, scrolls sideways" } : {})}
+      className="w-full overflow-x-auto print:overflow-visible"
+    >
       {children(Math.max(Math.floor(width) || initial, least))}
     </div>
   );

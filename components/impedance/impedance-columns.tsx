@@ -32,6 +32,7 @@ export function impedanceColumns(unit: LengthUnit, narrow: boolean): Column[] {
       id: "target",
       header: "Target",
       width: 76,
+      beside: true,
       kind: "number",
       number: (row) => ({ text: String(Number(row.target.toFixed(2))), unit: "Ω" }),
       sortValue: (row) => row.target,

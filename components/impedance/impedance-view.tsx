@@ -11,6 +11,7 @@ import { WithSidePanel } from "@/components/ui/side-panel";
 import { UndoButtons } from "@/components/undo/undo-buttons";
 import { useUndo } from "@/components/undo/use-undo";
 import { netClassesQuery } from "@/lib/client/net-classes";
+import { stackupQuery } from "@/lib/client/stackup";
 import type { StoredNetClass } from "@/lib/schemas/net-class";
 import type { StoredStackup } from "@/lib/schemas/stackup";
 import type { ResolvedLimit } from "@/lib/si/path/types";
@@ -42,7 +43,6 @@ export function ImpedanceView({
   projectId,
   projectName,
   revision,
-  stackup,
   limits,
   readOnly,
   search,
@@ -54,11 +54,15 @@ export function ImpedanceView({
     ...netClassesQuery(projectId, revision),
     initialData: initial.classes,
   });
+  const { data: stackup, refetch: refetchStackup } = useQuery({
+    ...stackupQuery(projectId, revision),
+    initialData: initial.stackup,
+  });
   const undo = useUndo({
     projectId,
     enabled: readOnly === null,
     flush: () => Promise.resolve(true),
-    reload: refetch,
+    reload: () => Promise.all([refetch(), refetchStackup()]),
   });
   const use = useClassWidth(projectId, revision, unit, undo.undo);
 

@@ -11,7 +11,6 @@ import { EmptyState } from "@/components/ui/empty-state";
 import { PageHeader } from "@/components/ui/page-header";
 import { toast } from "@/components/ui/toast";
 import type { LengthUnit } from "@/lib/client/preferences";
-import { fetchStackup } from "@/lib/client/stackup";
 import { writeStackupList } from "@/lib/formats/stackup-list/write";
 import type { StackupLayerDoc, StoredStackup } from "@/lib/schemas/stackup";
 import { stackupFromTyped, stackupWarnings } from "@/lib/si/stackup";
@@ -34,6 +33,8 @@ import { WarningsList } from "./warnings-list";
 interface Props {
   projectId: string;
   projectName: string;
+  /** its letter */
+  revision: string;
   /** in which bare numbers are read */
   unit: LengthUnit;
   stackup: StoredStackup;
@@ -49,9 +50,9 @@ export function StackupEditor(props: Props) {
   );
 }
 
-function Editor({ projectId, projectName, stackup: stored, readOnly }: Props) {
+function Editor({ projectId, projectName, revision, stackup: stored, readOnly }: Props) {
   const { reader, project } = useStackupUnits();
-  const editor = useStackupEditor(projectId, stored, readOnly !== null);
+  const editor = useStackupEditor(projectId, revision, stored, readOnly !== null);
   const { stackup, selected, select, changeLayers } = editor;
   const [pointed, setPointed] = useState<string | null>(null);
   const [said, setSaid] = useState("");
@@ -60,7 +61,7 @@ function Editor({ projectId, projectName, stackup: stored, readOnly }: Props) {
     projectId,
     enabled: readOnly === null,
     flush: editor.flush,
-    reload: async () => editor.take(await fetchStackup(projectId)),
+    reload: editor.reload,
   });
 
   const drawn = useMemo(() => sectionLayers(stackup), [stackup]);

@@ -2,7 +2,7 @@
 
 import { useQueryClient } from "@tanstack/react-query";
 import { useCallback, useEffect, useMemo, useReducer, useRef } from "react";
-import { putStackup } from "@/lib/client/stackup";
+import { putStackup, stackupQuery } from "@/lib/client/stackup";
 import { undoKey } from "@/lib/client/undo";
 import type { StackupLayerDoc, StoredStackup } from "@/lib/schemas/stackup";
 import { adoptIds, contentOf, type EditStackup, toDoc, toEdit } from "./edit-layer";
@@ -20,7 +20,12 @@ type Action = (state: State) => State;
 export type StackupEditor = ReturnType<typeof useStackupEditor>;
 
 /** The stackup under edit: every change is on screen at once and saved a moment later, unless something is wrong. */
-export function useStackupEditor(projectId: string, stored: StoredStackup, readOnly: boolean) {
+export function useStackupEditor(
+  projectId: string,
+  revision: string,
+  stored: StoredStackup,
+  readOnly: boolean,
+) {
   const client = useQueryClient();
   const [state, dispatch] = useReducer(
     (present: State, act: Action) => act(present),
@@ -69,6 +74,31 @@ export function useStackupEditor(projectId: string, stored: StoredStackup, readO
     },
     [settle],
   );
+  /** Reads the stackup anew. */
+  const reload = useCallback(
+    async () => take(await client.fetchQuery(stackupQuery(projectId, revision))),
+    [client, take, projectId, revision],
+  );
+  const untouched = autosave.state === "saved";
+  const mayTake = useRef(untouched);
+  useEffect(() => {
+    mayTake.current = untouched;
+  });
+  // A page that one comes back to is the one that was left: what was saved since is taken while nothing is under edit.
+  useEffect(() => {
+    let here = true;
+    const catchUp = async () => {
+      const current = await client.fetchQuery(stackupQuery(projectId, revision)).catch(() => null);
+      if (here && current && current.version > version.current && mayTake.current) take(current);
+    };
+    void catchUp();
+    const onFocus = () => void catchUp();
+    window.addEventListener("focus", onFocus);
+    return () => {
+      here = false;
+      window.removeEventListener("focus", onFocus);
+    };
+  }, [client, projectId, revision, take]);
   /** Saves what is here over what somebody else saved meanwhile. */
   const keepMine = useCallback(
     (currentVersion: number) => {
@@ -134,6 +164,7 @@ export function useStackupEditor(projectId: string, stored: StoredStackup, readO
     saving: autosave,
     flush: autosave.flush,
     take,
+    reload,
     keepMine,
     changeLayers,
     changeLayer,

@@ -12,6 +12,8 @@ export const netClassesKey = (projectId: string, revision: string) =>
 export const netClassesQuery = (projectId: string, revision: string) =>
   queryOptions({
     queryKey: netClassesKey(projectId, revision),
+    // A page that is come back to may have been left long ago.
+    refetchOnMount: "always",
     queryFn: async ({ signal }) =>
       (await apiGet<{ classes: StoredNetClass[] }>(`/projects/${projectId}/classes`, { revision }, signal))
         .classes,
@@ -21,6 +23,8 @@ export const netClassesQuery = (projectId: string, revision: string) =>
 export const netClassRowsQuery = (projectId: string, revision: string) =>
   queryOptions({
     queryKey: netClassesKey(projectId, revision),
+    // A page that is come back to may have been left long ago.
+    refetchOnMount: "always",
     queryFn: async ({ signal }) =>
       (await apiGet<{ classes: NetClassRow[] }>(`/projects/${projectId}/classes`, { revision }, signal))
         .classes,

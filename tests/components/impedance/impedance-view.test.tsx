@@ -7,6 +7,7 @@ import { Tooltip } from "radix-ui";
 import { afterEach, beforeAll, beforeEach, describe, expect, it, vi } from "vitest";
 import { ImpedanceView } from "@/components/impedance/impedance-view";
 import { LengthUnitProvider } from "@/components/shell/length-unit";
+import type { StoredStackup } from "@/lib/schemas/stackup";
 import type { NetClassDoc, StoredNetClass } from "@/lib/schemas/net-class";
 import { aBoard, aClassOn, LIMIT } from "../../support/impedance-page";
 
@@ -21,6 +22,11 @@ const CLASSES = [
 
 let puts: { version: number; netClass: NetClassDoc }[] = [];
 let address = new URLSearchParams();
+/** What the server has. */
+let served: { stackup: StoredStackup; classes: StoredNetClass[] } = {
+  stackup: aBoard().stackup,
+  classes: CLASSES,
+};
 
 beforeAll(() => {
   Object.defineProperty(Element.prototype, "scrollIntoView", { value: () => undefined });
@@ -36,8 +42,12 @@ beforeEach(() => {
   vi.stubGlobal(
     "fetch",
     vi.fn(async (path: string, init?: RequestInit) => {
-      if (init?.method !== "PUT")
-        return Response.json(path.includes("classes") ? { classes: CLASSES } : { undo: null, redo: null });
+      if (init?.method !== "PUT") {
+        if (path.includes("/stackup")) return Response.json(served.stackup);
+        return Response.json(
+          path.includes("/classes") ? { classes: served.classes } : { undo: null, redo: null },
+        );
+      }
       const put = JSON.parse(String(init.body)) as (typeof puts)[number];
       puts.push(put);
       const present = CLASSES.find(({ id }) => path.endsWith(id));
@@ -54,7 +64,9 @@ function show(
   over: { classes?: StoredNetClass[]; empty?: boolean; readOnly?: string | null; search?: string } = {},
 ) {
   const { classes = CLASSES, empty = false, readOnly = null, search = "" } = over;
-  const { stackup } = aBoard();
+  const board = aBoard().stackup;
+  const stackup = empty ? { ...board, layers: [] } : board;
+  served = { stackup, classes };
   const onUrlUpdate: OnUrlUpdateFunction = ({ searchParams }) => {
     address = searchParams;
   };
@@ -69,7 +81,7 @@ function show(
               projectId="0198f000-0000-7000-8000-000000000001"
               projectName="Tide gauge controller"
               revision="A"
-              stackup={empty ? { ...stackup, layers: [] } : stackup}
+              stackup={stackup}
               classes={classes}
               limits={Object.fromEntries(classes.map(({ lineageId }) => [lineageId, LIMIT]))}
               readOnly={readOnly}

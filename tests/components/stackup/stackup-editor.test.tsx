@@ -27,6 +27,8 @@ interface Put {
   stackup: StackupDoc;
 }
 let puts: Put[] = [];
+/** What the server has. */
+let present = stored();
 let refuse: ((put: Put) => Response | null) | null = null;
 
 beforeAll(() => {
@@ -39,6 +41,7 @@ beforeAll(() => {
 });
 beforeEach(() => {
   puts = [];
+  present = stored();
   refuse = null;
   vi.stubGlobal(
     "fetch",
@@ -56,6 +59,7 @@ beforeEach(() => {
         }));
         return Response.json({ name: put.stackup.name, version: put.version + 1, layers });
       }
+      if (address.includes("/stackup")) return Response.json(present);
       return Response.json({ undo: null, redo: null });
     }),
   );
@@ -73,6 +77,7 @@ function show(stackup = stored(), readOnly: string | null = null) {
           <StackupEditor
             projectId={PROJECT}
             projectName="Tide gauge controller"
+            revision="A"
             unit="mm"
             stackup={stackup}
             readOnly={readOnly}
@@ -170,6 +175,13 @@ describe("stackup editor", () => {
     await user.click(screen.getByRole("button", { name: "Keep mine" }));
     await waitFor(() => expect(puts).toHaveLength(1));
     expect(puts[0]?.version).toBe(9);
+  });
+
+  it("takes what was saved since the page was left, as nothing is under edit", async () => {
+    present = { ...stored(6), version: 8, name: "Six layers" };
+    show();
+    await waitFor(() => expect(order()).toHaveLength(13));
+    expect(field("Name of the stackup").value).toBe("Six layers");
   });
 
   it("presses a prepreg from its plies, exactly", async () => {

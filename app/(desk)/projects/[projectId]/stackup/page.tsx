@@ -28,6 +28,7 @@ export default async function StackupPage({ params, searchParams }: Props) {
         key={revision.id}
         projectId={projectId}
         projectName={revision.projectName}
+        revision={revision.letter}
         unit={revision.projectUnit}
         stackup={stackup}
         readOnly={whyReadOnly(actor, revision)}
