@@ -1,5 +1,4 @@
 import type { Route } from "next";
-import Link from "next/link";
 import { BounceSketch } from "@/components/landing/bounce-sketch";
 import { Cautions } from "@/components/landing/cautions";
 import { Mark } from "@/components/shell/mark";
@@ -35,9 +34,6 @@ export default async function LandingPage() {
           Ringfence
         </span>
         <nav aria-label="Start" className="flex items-center gap-5 text-sm">
-          <Link className="prose-link" href={"/validation" as Route}>
-            Validation
-          </Link>
           {signedIn ? null : (
             <LinkButton variant="primary" href="/sign-in">
               Sign in

@@ -2,7 +2,6 @@ import {
   Activity,
   ClipboardCheck,
   FolderKanban,
-  Gauge,
   Layers,
   LayoutDashboard,
   ListChecks,
@@ -29,7 +28,6 @@ export function teamPlaces(mayReadAudit: boolean): readonly Place[] {
   return [
     { label: "Team", href: "/team", icon: Users },
     ...(mayReadAudit ? [{ label: "Audit", href: "/audit", icon: ScrollText }] : []),
-    { label: "Validation", href: "/validation", icon: Gauge },
   ];
 }
 
