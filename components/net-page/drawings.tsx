@@ -29,6 +29,7 @@ interface Props {
   right?: ReactNode;
 }
 
+const STEP_HEIGHTS = "Heights are those of a step; an edge longer than a trip smooths them.";
 const WAVES = 320;
 const BOUNCES = 400;
 const ALONG = 240;
@@ -93,7 +94,7 @@ export function Drawings({
         <DrawingPanel
           title="Bounces"
           height={BOUNCES}
-          note={[view && shownPart(page, span), view?.leftOut].filter(Boolean).join(" ")}
+          note={[view && shownPart(page, span), STEP_HEIGHTS, view?.leftOut].filter(Boolean).join(" ")}
           actions={
             view?.row && <Export view={view} kind="bounces" {...{ fileName, pin, emphasis, unit, cursor }} />
           }

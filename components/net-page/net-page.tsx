@@ -17,6 +17,7 @@ import { cornerVerdicts, inOrder, viewOf } from "./net-state";
 import { NoData } from "./no-data";
 import { ProblemList } from "./problem-list";
 import { useCursor } from "./use-cursor";
+import { useCursorKeys } from "./use-cursor-keys";
 import { useNetAddress } from "./use-net-address";
 import { usePictures } from "./use-pictures";
 import { ViewControls } from "./view-controls";
@@ -52,6 +53,8 @@ export function NetPage({ facts, mayEdit, engine = pageEngine() }: Props) {
   const view = viewOf(asked, result, drivers, listening);
   const receivers = listening.filter((pin) => pin !== view.driver);
   const { control, harmTime } = useCursor(pictures.picture, view, asked.t, look);
+
+  useCursorKeys(control);
 
   const waived = useMemo(
     () => new Set(facts.problems.filter((p) => p.waiver?.covers).map((p) => p.mechanism)),

@@ -25,6 +25,12 @@ const problem: ProblemFacts = {
   waiver: null,
 };
 
+/** What the first request carried. */
+function sentBy(fetching: ReturnType<typeof answer>): unknown {
+  const body = fetching.mock.calls[0]?.[1].body;
+  return typeof body === "string" ? JSON.parse(body) : null;
+}
+
 function answer(status: number, body: unknown) {
   const fetching = vi.fn(async (_url: string, _init: RequestInit) => Response.json(body, { status }));
   vi.stubGlobal("fetch", fetching);
@@ -46,8 +52,7 @@ describe("review dialogs", () => {
     expect(screen.getByLabelText("Reason")).toHaveProperty("value", "Measured on the bench, 3 boards.");
     expect(screen.getByLabelText("Holds until")).toHaveProperty("value", "2027-03-01");
     expect(close).not.toHaveBeenCalled();
-    const sent: unknown = JSON.parse(String(fetching.mock.calls[0]?.[1].body));
-    expect(sent).toMatchObject({
+    expect(sentBy(fetching)).toMatchObject({
       subject: { kind: "problem", lineageId: "net-1", mechanism: "driver mismatch" },
       expiresAt: Date.UTC(2027, 2, 1, 23, 59, 59),
     });
@@ -69,7 +74,7 @@ describe("review dialogs", () => {
     fireEvent.change(screen.getByLabelText("Assign to"), { target: { value: "u-1" } });
     fireEvent.click(screen.getByRole("button", { name: "Flag it" }));
     await vi.waitFor(() => expect(close).toHaveBeenCalled());
-    expect(JSON.parse(String(fetching.mock.calls[0]?.[1].body))).toEqual({
+    expect(sentBy(fetching)).toEqual({
       subject: { kind: "path", lineageId: "net-1", mechanism: null },
       comment: "Look at this.",
       assigneeUserId: "u-1",
