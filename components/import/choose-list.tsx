@@ -94,7 +94,7 @@ export function ChooseList({ busy, error, onList }: Props) {
             type="file"
             accept=".csv,.tsv,.txt,text/csv,text/tab-separated-values,text/plain"
             disabled={busy}
-            className="max-w-full text-sm"
+            className="file:border-field-line file:bg-sheet file:text-ink hover:file:border-ink max-w-full text-sm file:mr-3 file:h-8 file:cursor-pointer file:rounded file:border file:border-solid file:px-3 file:text-sm file:font-medium"
             onChange={(event) => {
               take(event.target.files?.[0]);
               // The same file, mended, can be chosen again.

@@ -19,6 +19,8 @@ export function ConfirmList({ preview, reading, busy, onConfirm, onDrop }: Props
   const [mode, setMode] = useState<ImportMode>("merge");
   const { good, badRows, total, missingFields, effect } = preview;
   const ready = good > 0 && missingFields.length === 0;
+  // Into an empty draft there is nothing to choose.
+  const mayReplace = effect.present + effect.absent > 0;
   const choices: { value: ImportMode; label: string; hint: string }[] = [
     {
       value: "merge",
@@ -43,24 +45,26 @@ export function ConfirmList({ preview, reading, busy, onConfirm, onDrop }: Props
         </h2>
         <p className="text-sm">{ready ? effectWords(effect) : "Choose the columns below, then import."}</p>
       </div>
-      <fieldset className="flex flex-col gap-2">
-        <legend className="sr-only">Add or replace</legend>
-        {choices.map(({ value, label, hint }) => (
-          <label key={value} className="flex items-start gap-2 text-sm">
-            <input
-              type="radio"
-              name="mode"
-              className="accent-copper mt-1"
-              checked={mode === value}
-              onChange={() => setMode(value)}
-            />
-            <span>
-              <span className="font-medium">{label}</span>
-              <span className="text-ink-soft block max-w-prose text-xs">{hint}</span>
-            </span>
-          </label>
-        ))}
-      </fieldset>
+      {mayReplace ? (
+        <fieldset className="flex flex-col gap-2">
+          <legend className="sr-only">Add or replace</legend>
+          {choices.map(({ value, label, hint }) => (
+            <label key={value} className="flex items-start gap-2 text-sm">
+              <input
+                type="radio"
+                name="mode"
+                className="accent-copper mt-1"
+                checked={mode === value}
+                onChange={() => setMode(value)}
+              />
+              <span>
+                <span className="font-medium">{label}</span>
+                <span className="text-ink-soft block max-w-prose text-xs">{hint}</span>
+              </span>
+            </label>
+          ))}
+        </fieldset>
+      ) : null}
       <div className="flex flex-wrap gap-2">
         <Button variant="primary" busy={busy || reading} disabled={!ready} onClick={() => onConfirm(mode)}>
           {badRows > 0

@@ -121,7 +121,7 @@ function OneImport({ projectId, importId, onAnother }: OneProps) {
   if (!preview)
     return (
       <div className="flex flex-col gap-8">
-        <ImportSteps current={view.state === "applying" ? "import" : "roles"} />
+        <ImportSteps current="import" />
         <ImportOutcome
           projectId={projectId}
           view={view}

@@ -11,7 +11,6 @@ const COLUMNS: readonly DataColumn<ImportView>[] = [
   {
     id: "name",
     header: "List",
-    width: 220,
     sortValue: (view) => view.fileName,
     cell: (view) => <span title={view.fileName}>{view.fileName}</span>,
   },

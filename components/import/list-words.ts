@@ -26,15 +26,17 @@ export const DELIMITER_WORDS = { ",": "Comma", ";": "Semicolon", "\t": "Tab" } a
 
 export const rows = (count: number) => `${count.toLocaleString("en")} row${count === 1 ? "" : "s"}`;
 
-/** "480 nets: 478 new, 2 there already; 430 incomplete routes." */
+/** "480 nets, 478 new, 2 there already; 430 incomplete routes, with the gap named." */
 export function effectWords({ things, added, present, incomplete }: ImportPreview["effect"]): string {
   const number = (count: number) => count.toLocaleString("en");
   const broken =
     incomplete > 0
       ? `; ${number(incomplete)} incomplete route${incomplete === 1 ? "" : "s"}, with the gap named`
       : "";
-  if (things === "neighbour rows") return `${number(added)} neighbour rows.`;
-  return `${number(added + present)} ${things}: ${number(added)} new, ${number(present)} there already${broken}.`;
+  if (things === "neighbour rows") return `${rows(added)} of neighbours.`;
+  const split = present > 0 ? `${number(added)} new, ${number(present)} there already` : "all new";
+  const total = added + present;
+  return `${number(total)} ${total === 1 ? things.replace(/s$/, "") : things}, ${split}${broken}.`;
 }
 
 /** What replacing would take away, or nothing. */

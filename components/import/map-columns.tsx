@@ -66,7 +66,7 @@ export function MapColumns({ mapping, preview, onChange }: Props) {
         </div>
       </div>
       <div
-        className="border-rule-line overflow-x-auto border-y"
+        className="border-rule-line relative overflow-x-auto border-y"
         role="region"
         aria-label="Columns and first rows"
         tabIndex={0}
@@ -138,7 +138,7 @@ function ColumnHead({ name, column, mapping, preview, onChange }: HeadProps) {
         />
         {field?.isLength ? (
           <Select
-            label={`Unit of ${field.label.toLowerCase()}`}
+            label={`Unit of column ${field.label.toLowerCase()}`}
             labelHidden
             fieldClassName="w-20"
             value={mapping.fields[chosen]?.unit ?? ""}

@@ -37,7 +37,6 @@ const COLUMNS: readonly DataColumn<ImportRemark & { id: string }>[] = [
   {
     id: "reason",
     header: "Reason",
-    width: 420,
     cell: (remark) => <span title={remark.reason}>{remark.reason}</span>,
   },
 ];

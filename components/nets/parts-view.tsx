@@ -52,7 +52,6 @@ const COLUMNS: readonly DataColumn<StoredPart>[] = [
   {
     id: "remark",
     header: "Remark",
-    width: 320,
     sortValue: (part) => valueWarning(part),
     cell: (part) => (
       <span className="text-near" title={valueWarning(part) ?? undefined}>

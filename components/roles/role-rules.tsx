@@ -30,7 +30,7 @@ export function RoleRules({ rows, result, onChange, onAdd }: Props) {
     <div className="flex flex-col items-start gap-2">
       {rows.length > 0 ? (
         <div
-          className="border-rule-line w-full overflow-x-auto border-y"
+          className="border-rule-line relative w-full overflow-x-auto border-y"
           role="region"
           aria-label="Role rules"
           tabIndex={0}

@@ -6,7 +6,6 @@ import { useRouter } from "next/navigation";
 import { useDeferredValue, useMemo, useState } from "react";
 import { ImportSteps } from "@/components/import/import-steps";
 import { Button } from "@/components/ui/button";
-import type { DataColumn } from "@/components/ui/data-table";
 import { EmptyState } from "@/components/ui/empty-state";
 import { LinkButton } from "@/components/ui/link-button";
 import { TableSkeleton } from "@/components/ui/skeleton";
@@ -18,20 +17,21 @@ import { assignRoles } from "@/lib/formats/pin-roles";
 import type { DraftProposals } from "@/lib/schemas/name-proposals";
 import { DriverPicker } from "./driver-picker";
 import { ProposalTable } from "./proposal-tables";
+import { BUSES, GROUPS, PAIRS, SCOPES } from "./proposal-columns";
 import { pinsOf, roleRow, ruleOf } from "./role-rows";
 import { RoleRules } from "./role-rules";
 import { confirmedWords, useProposals } from "./use-proposals";
 
 /** After an import: which pins drive, and what the names of nets suggest, each to be confirmed. */
 export function RolesView({ projectId }: { projectId: string }) {
-  const { data, error, isFetching } = useQuery(proposalsQuery(projectId));
+  const { data, error } = useQuery(proposalsQuery(projectId));
   if (error)
     return (
       <p role="alert" className="text-fail text-sm">
         {errorMessage(error)}
       </p>
     );
-  if (!data || isFetching) return <TableSkeleton label="Reading names" />;
+  if (!data) return <TableSkeleton label="Reading names" />;
   if (data.pins.nets.length === 0 && data.outOfScope.length === 0)
     return (
       <EmptyState
@@ -47,72 +47,6 @@ export function RolesView({ projectId }: { projectId: string }) {
     );
   return <Editor projectId={projectId} proposals={data} />;
 }
-
-type ScopeProposal = DraftProposals["outOfScope"][number];
-type PairProposal = DraftProposals["pairs"][number];
-
-const SCOPES: readonly DataColumn<ScopeProposal>[] = [
-  { id: "net", header: "Net", kind: "mono", width: 240, sortValue: (row) => row.net, cell: (row) => row.net },
-  { id: "kind", header: "Kind", width: 100, sortValue: (row) => row.kind, cell: (row) => row.kind },
-  { id: "reason", header: "Why", width: 260, sortValue: (row) => row.reason, cell: (row) => row.reason },
-];
-const PAIRS: readonly DataColumn<PairProposal>[] = [
-  {
-    id: "name",
-    header: "Pair",
-    kind: "mono",
-    width: 220,
-    sortValue: (row) => row.name,
-    cell: (row) => row.name,
-  },
-  {
-    id: "positive",
-    header: "Positive",
-    kind: "mono",
-    width: 220,
-    sortValue: (row) => row.positive.net,
-    cell: (row) => row.positive.net,
-  },
-  {
-    id: "negative",
-    header: "Negative",
-    kind: "mono",
-    width: 220,
-    sortValue: (row) => row.negative.net,
-    cell: (row) => row.negative.net,
-  },
-  { id: "how", header: "By", width: 90, cell: (row) => row.how },
-];
-const BUSES: readonly DataColumn<DraftProposals["buses"][number]>[] = [
-  {
-    id: "label",
-    header: "Bus",
-    kind: "mono",
-    width: 300,
-    sortValue: (row) => row.name,
-    cell: (row) => <span title={row.label}>{row.label}</span>,
-  },
-  {
-    id: "nets",
-    header: "Nets",
-    kind: "number",
-    width: 100,
-    sortValue: (row) => row.members.length,
-    number: (row) => ({ text: String(row.members.length) }),
-  },
-];
-const GROUPS: readonly DataColumn<DraftProposals["matchGroups"][number]>[] = [
-  { id: "name", header: "Match group", width: 220, sortValue: (row) => row.name, cell: (row) => row.name },
-  {
-    id: "nets",
-    header: "Nets",
-    kind: "number",
-    width: 100,
-    sortValue: (row) => row.ids.length,
-    number: (row) => ({ text: String(row.ids.length) }),
-  },
-  { id: "why", header: "Why", width: 320, cell: (row) => <span title={row.reason}>{row.reason}</span> },
-];
 
 function Editor({ projectId, proposals }: { projectId: string; proposals: DraftProposals }) {
   const router = useRouter();

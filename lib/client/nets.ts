@@ -74,8 +74,10 @@ export const proposalsQuery = (projectId: string) =>
     queryKey: [...netsKey(projectId), "proposals"],
     queryFn: ({ signal }) =>
       apiGet<DraftProposals>(`/projects/${projectId}/nets/proposals`, undefined, signal),
-    staleTime: 0,
+    // Read anew at each visit, and not while somebody is at work on it.
     gcTime: 0,
+    staleTime: Infinity,
+    refetchOnReconnect: false,
   });
 
 export const confirmProposals = (projectId: string, confirmed: ConfirmedProposals) =>

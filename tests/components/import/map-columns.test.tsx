@@ -62,7 +62,7 @@ describe("MapColumns", () => {
     const user = userEvent.setup();
     await user.selectOptions(screen.getByLabelText("What column len holds"), "Length *");
     expect(onChange).toHaveBeenLastCalledWith(withField(mapping, 2, "length"));
-    await user.selectOptions(screen.getByLabelText("Unit of width"), "mil");
+    await user.selectOptions(screen.getByLabelText("Unit of column width"), "mil");
     expect(onChange).toHaveBeenLastCalledWith(withUnit(mapping, "width", "mil"));
   });
 });
