@@ -40,7 +40,7 @@ export function Blockers({ projectId }: { projectId: string }) {
             <li key={blocker.kind} className="border-near border-l-2 pl-3">
               {blocker.text}{" "}
               <Link
-                className="text-violet whitespace-nowrap hover:underline"
+                className="prose-link whitespace-nowrap"
                 href={cureOf(projectId, blocker, data)}
               >
                 {CURES[blocker.kind]}

@@ -88,7 +88,7 @@ function Of({ run, projectId }: { run: ListedRun; projectId: string }) {
   return (
     <>
       Revision {run.letter},{" "}
-      <Link className="text-violet hover:underline" href={runAddress(projectId, run.id)}>
+      <Link className="prose-link" href={runAddress(projectId, run.id)}>
         run {run.number}
       </Link>{" "}
       of {timeText(run.createdAt)}

@@ -85,7 +85,7 @@ function Member({
       <button
         type="button"
         onClick={() => onMember(problem)}
-        className="text-ink max-w-36 shrink-0 truncate font-mono hover:underline"
+        className="text-ink min-h-6 max-w-36 shrink-0 truncate font-mono hover:underline"
       >
         {problem.path}
       </button>

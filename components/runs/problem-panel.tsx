@@ -65,7 +65,7 @@ export function ProblemPanel({ projectId, runId, problem, rights, onClose, onFla
             Flagged,{" "}
             {problem.flag.assigneeName ? `assigned to ${problem.flag.assigneeName}` : "assigned to nobody"}.{" "}
             <Link
-              className="text-violet hover:underline"
+              className="prose-link"
               href={`/projects/${projectId}/review?tab=flags&flag=${problem.flag.id}` as Route}
             >
               Read the discussion
