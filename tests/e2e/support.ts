@@ -1,30 +1,81 @@
 import AxeBuilder from "@axe-core/playwright";
-import { test as base, expect, type Page } from "@playwright/test";
+import {
+  test as base,
+  expect,
+  type Browser,
+  type BrowserContext,
+  type Page,
+  type Response,
+} from "@playwright/test";
+import { type DemoAccount, readAccount, type Role } from "./people";
 
-/** A page on which nothing may break the content policy, fail in the console, or throw. */
-export const test = base.extend<{ quietPage: Page }>({
+type SignedIn = Awaited<ReturnType<BrowserContext["storageState"]>>;
+
+interface Fixtures {
+  quietPage: Page;
+  /** A quiet page of somebody of the demo team, in a browser of their own. */
+  as: (role: Role) => Promise<Page>;
+}
+
+interface WorkerFixtures {
+  /** Signs a role in once a worker. */
+  signedIn: (role: Role, baseURL: string) => Promise<SignedIn>;
+}
+
+/** Pages on which nothing may break the content policy, fail in the console, or throw. */
+export const test = base.extend<Fixtures, WorkerFixtures>({
   quietPage: async ({ page }, hand) => {
-    const complaints: string[] = [];
-    page.on("pageerror", (error) => complaints.push(`threw: ${error.message}`));
-    page.on("console", (message) => {
-      if (message.type() === "error" && !isExpected(message.text()))
-        complaints.push(`said: ${message.text()}`);
-    });
-    await page.exposeFunction("reportPolicyViolation", (what: string) => complaints.push(`policy: ${what}`));
-    await page.addInitScript(() => {
-      document.addEventListener("securitypolicyviolation", (event) => {
-        const { reportPolicyViolation } = window as unknown as {
-          reportPolicyViolation: (what: string) => void;
-        };
-        reportPolicyViolation(`${event.effectiveDirective} ${event.blockedURI} ${event.sample}`);
-      });
-    });
+    const complaints = await listen(page);
     await hand(page);
     expect(complaints).toEqual([]);
   },
+
+  as: async ({ browser, baseURL, signedIn }, hand) => {
+    const opened: { page: Page; complaints: string[]; role: Role }[] = [];
+    await hand(async (role) => {
+      const context = await browser.newContext({
+        storageState: await signedIn(role, baseURL ?? ""),
+        permissions: ["clipboard-read", "clipboard-write"],
+      });
+      const page = await context.newPage();
+      opened.push({ page, role, complaints: await listen(page) });
+      return page;
+    });
+    const complaints = opened.flatMap((one) => one.complaints.map((said) => `${one.role}: ${said}`));
+    for (const { page } of opened) await page.context().close();
+    expect(complaints).toEqual([]);
+  },
+
+  signedIn: [
+    async ({ browser }, hand) => {
+      const states = new Map<Role, Promise<SignedIn>>();
+      await hand((role, baseURL) => {
+        const state = states.get(role) ?? signIn(browser, baseURL, readAccount(role));
+        states.set(role, state);
+        return state;
+      });
+    },
+    { scope: "worker" },
+  ],
 });
 
 export { expect };
+
+/** Opens a page and waits until it answers to keys and clicks, which a person would hardly be quicker than. */
+export async function visit(page: Page, path: string): Promise<Response | null> {
+  const answer = await page.goto(path);
+  await expect
+    .poll(
+      () =>
+        page.evaluate(() => {
+          const controls = [...document.querySelectorAll(":is(main, header) :is(button, input, select, a)")];
+          return controls.every((control) => Object.keys(control).some((key) => key.startsWith("__react")));
+        }),
+      { message: `${path} comes to life` },
+    )
+    .toBe(true);
+  return answer;
+}
 
 /** No serious finding of axe on what is shown now. */
 export async function expectAccessible(page: Page): Promise<void> {
@@ -43,6 +94,44 @@ export async function expectNoSidewaysScroll(page: Page): Promise<void> {
     () => document.documentElement.scrollWidth - document.documentElement.clientWidth,
   );
   expect(over).toBeLessThanOrEqual(0);
+}
+
+/** No number that is none reached the screen. */
+export async function expectSensibleText(page: Page): Promise<void> {
+  const text = await page.locator("body").innerText();
+  expect(text).not.toMatch(/\b(?:NaN|undefined|Infinity|\[object \w+\])/);
+}
+
+/** Collects what this page complains of: refusals of the content policy, console errors, exceptions. */
+export async function listen(page: Page): Promise<string[]> {
+  const complaints: string[] = [];
+  page.on("pageerror", (error) => complaints.push(`threw: ${error.message}`));
+  page.on("console", (message) => {
+    if (message.type() === "error" && !isExpected(message.text())) complaints.push(`said: ${message.text()}`);
+  });
+  await page.exposeFunction("reportPolicyViolation", (what: string) => complaints.push(`policy: ${what}`));
+  await page.addInitScript(() => {
+    document.addEventListener("securitypolicyviolation", (event) => {
+      const { reportPolicyViolation } = window as unknown as {
+        reportPolicyViolation: (what: string) => void;
+      };
+      reportPolicyViolation(`${event.effectiveDirective} ${event.blockedURI} ${event.sample}`);
+    });
+  });
+  return complaints;
+}
+
+async function signIn(browser: Browser, baseURL: string, account: DemoAccount): Promise<SignedIn> {
+  const context = await browser.newContext();
+  const { email, password } = account;
+  const answer = await context.request.post(`${baseURL}/api/auth/sign-in/email`, {
+    data: { email, password },
+    headers: { origin: baseURL },
+  });
+  expect(answer.status(), `${account.role} signs in`).toBe(200);
+  const state = await context.storageState();
+  await context.close();
+  return state;
 }
 
 /** The browser reports refusals (401, 404, 409 …) that a test provokes as errors of its own. */
