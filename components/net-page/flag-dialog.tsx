@@ -5,8 +5,8 @@ import { Button } from "@/components/ui/button";
 import { Dialog } from "@/components/ui/dialog";
 import { Select } from "@/components/ui/select";
 import { TextArea } from "@/components/ui/input";
-import { Notice } from "@/components/ui/notice";
 import type { NetFacts, ProblemFacts } from "./facts";
+import { Refusal } from "./refusal";
 import { useReview } from "./use-review";
 
 interface Props {
@@ -66,9 +66,4 @@ export function FlagDialog({ facts, problem, onClose }: Props) {
       <Refusal text={review.refusal} />
     </Dialog>
   );
-}
-
-/** What the server would not do, and why; the fields keep what was typed. */
-export function Refusal({ text }: { text: string | null }) {
-  return text ? <Notice tone="refusal">{text}</Notice> : null;
 }

@@ -6,7 +6,7 @@ import { Button } from "@/components/ui/button";
 import { TextArea } from "@/components/ui/input";
 import { Select } from "@/components/ui/select";
 import type { FlagFacts, NetFacts } from "./facts";
-import { Refusal } from "./flag-dialog";
+import { Refusal } from "./refusal";
 import { useReview } from "./use-review";
 import { dayText } from "./words";
 

@@ -1,5 +1,6 @@
 "use client";
 
+import dynamic from "next/dynamic";
 import { useCallback, useMemo } from "react";
 import { PlaybackBar } from "@/components/charts/playback-bar";
 import { TopologyStrip } from "@/components/charts/topology-strip";
@@ -21,8 +22,13 @@ import { useCursorKeys } from "./use-cursor-keys";
 import { useNetAddress } from "./use-net-address";
 import { usePictures } from "./use-pictures";
 import { ViewControls } from "./view-controls";
-import { WhatIfPanel } from "./what-if-panel";
 import { Why } from "./why";
+
+/** Comes after the drawings: it brings the units that people type in. Its place is kept. */
+const WhatIfPanel = dynamic(() => import("./what-if-panel").then((module) => module.WhatIfPanel), {
+  ssr: false,
+  loading: () => <div className="border-rule-line min-h-72 border-t" />,
+});
 
 interface Props {
   facts: NetFacts;

@@ -7,7 +7,7 @@ import { Badge } from "@/components/ui/badge";
 import { Button } from "@/components/ui/button";
 import { VerdictMark } from "@/components/ui/verdict-mark";
 import type { NetFacts, ProblemFacts, WaiverFacts } from "./facts";
-import { Refusal } from "./flag-dialog";
+import { Refusal } from "./refusal";
 import { FlagThread } from "./flag-thread";
 import { useReview } from "./use-review";
 import { dayText } from "./words";

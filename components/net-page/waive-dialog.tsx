@@ -5,7 +5,7 @@ import { Button } from "@/components/ui/button";
 import { Dialog } from "@/components/ui/dialog";
 import { Input, TextArea } from "@/components/ui/input";
 import type { NetFacts, ProblemFacts } from "./facts";
-import { Refusal } from "./flag-dialog";
+import { Refusal } from "./refusal";
 import { useReview } from "./use-review";
 
 interface Props {
