@@ -11,7 +11,7 @@ import {
   type StoredStackup,
   type StoredStackupLayer,
 } from "@/lib/schemas/stackup";
-import { layerThicknesses } from "@/lib/resolve/layer-thickness";
+import { layerThickness } from "@/lib/resolve/note-layers";
 import { within } from "./access";
 import { getDb, type Database } from "./client";
 import { changeThing, differingFields, type DraftThing, type Reading } from "./draft-thing";
@@ -134,7 +134,6 @@ export function layerStatements(
   layers: readonly StoredStackupLayer[],
 ): Statement[] {
   if (layers.length === 0) return [];
-  const thicknesses = layerThicknesses(layers);
   const rows = layers.map((layer, position) => {
     const { id: layerId, lineageId, ...doc } = layer;
     return {
@@ -146,7 +145,7 @@ export function layerStatements(
       kind: layer.kind,
       name: layer.name,
       doc,
-      thickness_m: thicknesses[position]?.toNumber() ?? null,
+      thickness_m: layerThickness(layers, position),
     };
   });
   return [db.insert(stackupLayer).values(rows)];
