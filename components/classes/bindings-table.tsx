@@ -70,8 +70,8 @@ export function BindingsTable({ lines, counts, selected, onSelect, onChange, onM
 
   return (
     <div>
-      <div className="border-rule-line bg-sheet overflow-x-auto border-y">
-        <table aria-label="Bindings" className="w-full min-w-[860px] table-fixed text-left text-sm">
+      <div className="border-rule-line bg-sheet relative overflow-x-auto border-y">
+        <table aria-label="Bindings" className="w-full min-w-[1060px] table-fixed text-left text-sm">
           <colgroup>
             <col className="w-10" />
             <col />
@@ -152,7 +152,7 @@ export function BindingsTable({ lines, counts, selected, onSelect, onChange, onM
                       <Select
                         label={`Role, ${which}`}
                         labelHidden
-                        className="h-7"
+                        className="hover:border-field-line focus:border-field-line h-7 border-transparent bg-transparent"
                         options={ROLE_OPTIONS}
                         value={line.role}
                         onChange={(event) =>
@@ -170,7 +170,7 @@ export function BindingsTable({ lines, counts, selected, onSelect, onChange, onM
                       <Select
                         label={`Model, ${which}`}
                         labelHidden
-                        className="h-7"
+                        className="hover:border-field-line focus:border-field-line h-7 border-transparent bg-transparent"
                         disabled={line.role === "passive"}
                         placeholder={line.role === "passive" ? "none needed" : "The class’s"}
                         options={modelOptions(models)}

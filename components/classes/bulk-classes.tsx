@@ -137,7 +137,7 @@ export function BulkClasses({ rows, busy, onApply, onClear }: Props) {
           {...register("resistor")}
         />
       ) : null}
-      <div className="flex gap-2 pt-6">
+      <div className="flex w-full gap-2">
         <Button type="submit" variant="primary" busy={busy} disabled={!formState.isDirty}>
           Change {counted(rows.length, "class", "classes")}
         </Button>

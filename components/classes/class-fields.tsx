@@ -1,23 +1,21 @@
 "use client";
 
-import { Select } from "@/components/ui/select";
 import { netClassDoc, type NetClassDoc } from "@/lib/schemas/net-class";
 import { KIND_OPTIONS, SIGNAL_OPTIONS } from "./class-words";
 import { useClassesDesk } from "./classes-desk";
-import { LineText, PercentText, QuantityText } from "./doc-fields";
+import { Choice, LineText, PercentText, QuantityText } from "./doc-fields";
 import { checked } from "./field-words";
 import { driverOptions, receiverOptions } from "./model-options";
 
 interface Props {
   doc: NetClassDoc;
   onChange: (change: Partial<NetClassDoc>) => void;
-  readOnly: boolean;
 }
 
 const { shape } = netClassDoc;
 
 /** What a class says apart from its layers, its termination and its limits. */
-export function ClassFields({ doc, onChange, readOnly }: Props) {
+export function ClassFields({ doc, onChange }: Props) {
   const { models } = useClassesDesk();
   const clock = doc.signal === "clock";
   return (
@@ -30,21 +28,17 @@ export function ClassFields({ doc, onChange, readOnly }: Props) {
         read={(text) => checked(shape.name, text)}
         onChange={(name) => onChange({ name })}
       />
-      <Select
+      <Choice
         label="Kind"
-        disabled={readOnly}
         options={KIND_OPTIONS}
         value={doc.kind}
-        onChange={(event) =>
-          onChange({ kind: event.target.value === "differential" ? "differential" : "single" })
-        }
+        onChange={(chosen) => onChange({ kind: chosen === "differential" ? "differential" : "single" })}
       />
-      <Select
+      <Choice
         label="Signal"
-        disabled={readOnly}
         options={SIGNAL_OPTIONS}
         value={doc.signal}
-        onChange={(event) => onChange({ signal: checked(shape.signal, event.target.value) })}
+        onChange={(chosen) => onChange({ signal: checked(shape.signal, chosen) })}
       />
       <QuantityText
         address="target"
@@ -62,26 +56,24 @@ export function ClassFields({ doc, onChange, readOnly }: Props) {
         schema={shape.tolerancePercent}
         onChange={(tolerancePercent) => onChange({ tolerancePercent })}
       />
-      <Select
+      <Choice
         label="Driver model"
-        disabled={readOnly}
         placeholder="As bound to the pin"
         options={driverOptions(models)}
         value={doc.driverModelLineageId ?? ""}
-        onChange={(event) => onChange({ driverModelLineageId: event.target.value || null })}
+        onChange={(chosen) => onChange({ driverModelLineageId: chosen || null })}
       />
-      <Select
+      <Choice
         label="Receiver model"
-        disabled={readOnly}
         placeholder="As bound to the pin"
         options={receiverOptions(models)}
         value={doc.receiverModelLineageId ?? ""}
-        onChange={(event) => onChange({ receiverModelLineageId: event.target.value || null })}
+        onChange={(chosen) => onChange({ receiverModelLineageId: chosen || null })}
       />
       <QuantityText
         address="edge"
         label="Edge, 10–90 %"
-        hint="Empty: the driver model’s. It applies to the driver model of this class, not to a bound one."
+        hint="Empty: the driver model’s. A model bound to the pin keeps its own."
         dimension="time"
         unit="ns"
         value={doc.edge}
@@ -91,7 +83,7 @@ export function ClassFields({ doc, onChange, readOnly }: Props) {
       <QuantityText
         address="rate"
         label={clock ? "Clock frequency" : "Bit rate"}
-        hint={clock ? undefined : "A bare number is Mb/s. Empty: no bit time, the edge alone is judged."}
+        hint={clock ? undefined : "A bare number is Mb/s. Empty: there is no bit time."}
         dimension="frequency"
         unit={clock ? "MHz" : "Mb/s"}
         value={doc.rate}

@@ -96,7 +96,7 @@ export function ClassLayers({ doc, onChange, onUntick, readOnly }: Props) {
                       </p>
                     ) : null}
                   </td>
-                  <td className="border-rule-line/60 border-b py-0.5">
+                  <td className={`border-rule-line/60 border-b ${readOnly ? "py-1.5" : "py-0.5"}`}>
                     {entry ? (
                       <QuantityText
                         inTable
@@ -112,7 +112,7 @@ export function ClassLayers({ doc, onChange, onUntick, readOnly }: Props) {
                     ) : null}
                   </td>
                   {pair ? (
-                    <td className="border-rule-line/60 border-b py-0.5">
+                    <td className={`border-rule-line/60 border-b ${readOnly ? "py-1.5" : "py-0.5"}`}>
                       {entry ? (
                         <QuantityText
                           inTable

@@ -90,7 +90,12 @@ export function ClassPanel({ row, classes, onClose, onGone, onOpen }: Props) {
   return (
     <SidePanel
       wide
-      title={doc.name}
+      title={
+        <span className="flex items-baseline gap-3">
+          <span className="truncate">{doc.name}</span>
+          {mayEdit || mayLimit ? <SaveStatus editor={editor} /> : null}
+        </span>
+      }
       onClose={onClose}
       footer={
         mayEdit ? (
@@ -107,8 +112,7 @@ export function ClassPanel({ row, classes, onClose, onGone, onOpen }: Props) {
         ) : null
       }
     >
-      <div className="flex flex-col gap-6">
-        {mayEdit || mayLimit ? <SaveStatus editor={editor} /> : null}
+      <div className="relative flex flex-col gap-6">
         <SaveTrouble editor={editor} />
         {warnings.length > 0 ? (
           <div className="flex flex-col gap-2">
@@ -120,7 +124,7 @@ export function ClassPanel({ row, classes, onClose, onGone, onOpen }: Props) {
           </div>
         ) : null}
         <StackupFields {...fields} readOnly={!mayEdit}>
-          <ClassFields doc={doc} onChange={change} readOnly={!mayEdit} />
+          <ClassFields doc={doc} onChange={change} />
           <ClassLayers
             doc={doc}
             onChange={changeLayers}

@@ -1,7 +1,6 @@
 "use client";
 
 import { Button } from "@/components/ui/button";
-import { Select } from "@/components/ui/select";
 import {
   netClassDoc,
   termination as terminationSchema,
@@ -10,7 +9,7 @@ import {
 } from "@/lib/schemas/net-class";
 import { FIELD_LABELS, SCHEME_OPTIONS } from "./class-words";
 import { useClassesDesk } from "./classes-desk";
-import { QuantityText } from "./doc-fields";
+import { Choice, QuantityText } from "./doc-fields";
 import { checked } from "./field-words";
 import { fieldsOf, suggestTermination, withScheme } from "./suggest-termination";
 
@@ -45,17 +44,13 @@ export function ClassTermination({ doc, onChange, readOnly }: Props) {
         Termination
       </h3>
       <div className="grid grid-cols-2 gap-x-4 gap-y-3">
-        <Select
+        <Choice
           label="Scheme"
-          disabled={readOnly}
           options={SCHEME_OPTIONS}
           value={scheme}
-          onChange={(event) =>
+          onChange={(chosen) =>
             onChange(
-              withScheme(
-                termination,
-                checked(netClassDoc.shape.termination.unwrap().shape.scheme, event.target.value),
-              ),
+              withScheme(termination, checked(netClassDoc.shape.termination.unwrap().shape.scheme, chosen)),
             )
           }
         />
@@ -76,7 +71,7 @@ export function ClassTermination({ doc, onChange, readOnly }: Props) {
           />
         ))}
       </div>
-      {suggestion ? (
+      {suggestion && (!readOnly || suggestion.values) ? (
         <p className="mt-2 flex flex-wrap items-center gap-x-3 gap-y-1 text-sm">
           <span className="text-ink-soft">{suggestion.words}</span>
           {suggestion.values && !readOnly && !taken ? (

@@ -55,7 +55,7 @@ export interface SignalLayer {
   name: string;
 }
 
-/** "L1 Top 0.28, L3 Inner 0.15 mm": widths, and gaps of a pair, in the reader's unit. */
+/** "L1 Top 0.28, L3 Inner 0.15": widths, and gaps of a pair, as numbers in the reader's unit. */
 export function layerWords(netClass: NetClassDoc, layers: readonly SignalLayer[], unit: string): string {
   const digits = (text: string) => text.replace(/\s\S+$/, "");
   const parts = ordered(netClass, layers).map(({ entry, name }) => {
@@ -66,7 +66,7 @@ export function layerWords(netClass: NetClassDoc, layers: readonly SignalLayer[]
         : "";
     return `${name} ${width}${gap}`;
   });
-  return parts.length === 0 ? "" : `${parts.join(", ")} ${unit}`;
+  return parts.join(", ");
 }
 
 /** The class's layers in the order of the stackup; those that left it come last. */

@@ -26,9 +26,12 @@ export function ClassesTab({ classes }: { classes: readonly NetClassRow[] }) {
   const [ticked, setTicked] = useState<RowSelectionState>({});
   const [making, setMaking] = useState(false);
   const change = useChangeClasses();
+  const open = classes.find(({ lineageId }) => lineageId === cursor.openId);
+  const beside = open !== undefined;
   const columns = useMemo(
     () =>
       classColumns({
+        beside,
         layers,
         models,
         unit,
@@ -41,9 +44,8 @@ export function ClassesTab({ classes }: { classes: readonly NetClassRow[] }) {
           return `/projects/${projectId}/nets?${query.toString()}`;
         },
       }),
-    [layers, models, unit, projectId, search],
+    [beside, layers, models, unit, projectId, search],
   );
-  const open = classes.find(({ lineageId }) => lineageId === cursor.openId);
   const chosen = classes.filter(({ lineageId }) => ticked[lineageId]);
 
   const make = mayEdit ? (

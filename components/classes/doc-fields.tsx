@@ -2,8 +2,9 @@
 
 import type { ReactNode } from "react";
 import type { ZodType } from "zod";
-import { FieldText } from "@/components/stackup/stackup-fields";
+import { FieldText, useStackupFields } from "@/components/stackup/stackup-fields";
 import { useStackupUnits } from "@/components/stackup/stackup-units";
+import { Select, type SelectOption } from "@/components/ui/select";
 import type { Dimension, Quantity } from "@/lib/si/units";
 import { readPercent, readQuantity, shownQuantity, typedQuantity } from "./field-words";
 
@@ -71,6 +72,38 @@ export function PercentText({ value, schema, onChange, ...look }: PercentProps) 
         if (read === "") throw new Error("Write a tolerance, such as 10 %.");
         onChange(read);
       }}
+    />
+  );
+}
+
+interface ChoiceProps {
+  label: string;
+  options: readonly SelectOption[];
+  value: string;
+  /** What an empty value means. */
+  placeholder?: string;
+  onChange: (value: string) => void;
+}
+
+/** One of a few; plain text where nothing is edited. */
+export function Choice({ label, options, value, placeholder, onChange }: ChoiceProps) {
+  const { readOnly } = useStackupFields();
+  if (readOnly)
+    return (
+      <div className="flex min-w-0 flex-col gap-1 text-sm">
+        <span className="font-medium">{label}</span>
+        <span className="text-ink-soft">
+          {options.find((option) => option.value === value)?.label ?? placeholder ?? "not given"}
+        </span>
+      </div>
+    );
+  return (
+    <Select
+      label={label}
+      options={options}
+      value={value}
+      placeholder={placeholder}
+      onChange={(event) => onChange(event.target.value)}
     />
   );
 }

@@ -5,9 +5,16 @@ import { type Dimension, type Quantity, toSi } from "@/lib/si/units";
 import { typedQuantity } from "./field-words";
 import { type ModelUse, NO_USE, wordsOfUse } from "./model-use";
 
-export function modelColumns(uses: ReadonlyMap<string, ModelUse>): DataColumn<StoredModel>[] {
+/** What is left beside an open panel, which shows all the rest. */
+const BESIDE = new Set(["name", "role", "resistance", "use"]);
+
+/** @param beside  a panel is open beside the table */
+export function modelColumns(
+  uses: ReadonlyMap<string, ModelUse>,
+  beside: boolean,
+): DataColumn<StoredModel>[] {
   const usedBy = (row: StoredModel) => uses.get(row.lineageId) ?? NO_USE;
-  return [
+  const columns: DataColumn<StoredModel>[] = [
     {
       id: "name",
       header: "Name",
@@ -108,6 +115,7 @@ export function modelColumns(uses: ReadonlyMap<string, ModelUse>): DataColumn<St
       ),
     },
   ];
+  return beside ? columns.filter(({ id }) => BESIDE.has(id)) : columns;
 }
 
 const none = <span className="text-ink-soft">–</span>;

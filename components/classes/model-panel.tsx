@@ -6,7 +6,6 @@ import { useMemo } from "react";
 import { StackupFields } from "@/components/stackup/stackup-fields";
 import { Button } from "@/components/ui/button";
 import { Notice } from "@/components/ui/notice";
-import { Select } from "@/components/ui/select";
 import { SidePanel } from "@/components/ui/side-panel";
 import { toast } from "@/components/ui/toast";
 import { ApiError, errorMessage } from "@/lib/client/api";
@@ -15,7 +14,7 @@ import { undoKey } from "@/lib/client/undo";
 import { origin as originSchema, origins } from "@/lib/schemas/common";
 import { modelDoc, type StoredModel } from "@/lib/schemas/model";
 import { useClassesDesk, useEditorFlush } from "./classes-desk";
-import { LineText } from "./doc-fields";
+import { Choice, LineText } from "./doc-fields";
 import { driverFields, type EditModel, editModelOf, modelDocOf, receiverFields } from "./edit-model";
 import { checked } from "./field-words";
 import { freeName } from "./free-name";
@@ -99,7 +98,12 @@ export function ModelPanel({ model, use, onClose, onGone, onOpen }: Props) {
   return (
     <SidePanel
       wide
-      title={doc.name}
+      title={
+        <span className="flex items-baseline gap-3">
+          <span className="truncate">{doc.name}</span>
+          {mayEdit ? <SaveStatus editor={editor} /> : null}
+        </span>
+      }
       onClose={onClose}
       footer={
         mayEdit ? (
@@ -122,8 +126,7 @@ export function ModelPanel({ model, use, onClose, onGone, onOpen }: Props) {
         accept={editor.accept}
         readOnly={!mayEdit}
       >
-        <div className="flex flex-col gap-6">
-          {mayEdit ? <SaveStatus editor={editor} /> : null}
+        <div className="relative flex flex-col gap-6">
           <SaveTrouble editor={editor} />
           {remove.error ? (
             <Notice tone="refusal" actions={<Button onClick={() => remove.reset()}>Keep it</Button>}>
@@ -168,15 +171,14 @@ export function ModelPanel({ model, use, onClose, onGone, onOpen }: Props) {
               read={(text) => checked(shape.technology, text)}
               onChange={(technology) => change({ technology })}
             />
-            <Select
+            <Choice
               label="Origin of the values"
-              disabled={!mayEdit}
               options={origins.map((value) => ({
                 value,
                 label: value.charAt(0).toUpperCase() + value.slice(1),
               }))}
               value={doc.origin}
-              onChange={(event) => change({ origin: checked(originSchema, event.target.value) })}
+              onChange={(chosen) => change({ origin: checked(originSchema, chosen) })}
             />
             <LineText
               className="col-span-2"

@@ -28,8 +28,9 @@ export function ModelsTab({ classes, bindings }: Props) {
   const cursor = useListCursor();
   const [dialog, setDialog] = useState<"new" | "paste" | null>(null);
   const uses = useMemo(() => modelUses(classes, bindings), [classes, bindings]);
-  const columns = useMemo(() => modelColumns(uses), [uses]);
   const open = models.find(({ lineageId }) => lineageId === cursor.openId);
+  const beside = open !== undefined;
+  const columns = useMemo(() => modelColumns(uses, beside), [uses, beside]);
 
   const acts = mayEdit ? (
     <div className="flex flex-wrap gap-2">

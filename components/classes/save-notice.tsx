@@ -25,7 +25,10 @@ export function SaveStatus<Doc extends object, Stored extends { version: number 
           : "Not saved";
   const wrong = state === "failed" || state === "blocked";
   return (
-    <span role="status" className={`text-sm ${wrong ? "text-fail" : "text-ink-soft"}`}>
+    <span
+      role="status"
+      className={`text-sm font-normal whitespace-nowrap ${wrong ? "text-fail" : "text-ink-soft"}`}
+    >
       {words}
     </span>
   );

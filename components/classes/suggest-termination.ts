@@ -30,7 +30,7 @@ export function suggestTermination(
   if (scheme === "series") {
     const model = models.find(({ lineageId }) => lineageId === subject.driverModelLineageId);
     if (!model?.driver)
-      return { values: null, words: "Choose a driver model to see the value that fits it." };
+      return { values: null, words: "Choose a driver model for this class to see the value that fits it." };
     const driver = toSi(model.driver.resistance.typical, "resistance");
     const r = formatSi(driver, "resistance", { digits: 3 });
     if (driver >= line)
