@@ -24,7 +24,7 @@ export function ClassMatrix({ projectId, runId, cells }: Props) {
       </p>
     );
   return (
-    <div className="border-rule-line bg-sheet overflow-x-auto border-y">
+    <div className="border-rule-line bg-sheet relative overflow-x-auto border-y">
       <table className="w-full border-separate border-spacing-0 text-sm" aria-label="Class by rule">
         <thead>
           <tr>

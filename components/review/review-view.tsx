@@ -158,7 +158,7 @@ function Reviewed({ projectId, run, draft, rights }: ReviewedProps) {
         </Sized>
         <Scopes projectId={projectId} scopes={summary.data?.scopes} />
       </div>
-      <div className="grid gap-8 xl:grid-cols-[minmax(0,1fr)_300px]">
+      <div className="grid grid-cols-[minmax(0,1fr)] gap-8 xl:grid-cols-[minmax(0,1fr)_300px]">
         <Tabs
           label="What to review"
           value={shown}

@@ -139,7 +139,7 @@ function Rest({
   return (
     <>
       <RulesTable doc={doc} readOnly={readOnly} onChange={onChange} />
-      <div className="mt-4 flex flex-wrap items-start gap-x-10 gap-y-4">
+      <div className="mt-4 flex items-start gap-x-10 gap-y-4 max-md:flex-col">
         <Select
           label="Receivers are judged at the"
           fieldClassName="w-44"
