@@ -189,7 +189,11 @@ describe("a class beside the table", () => {
     const user = show({}, `?at=${uuid(21)}`);
     expect(panel().getByText(/No layer is allowed yet/)).toBeTruthy();
     await user.click(panel().getByRole("checkbox", { name: "L3 Inner" }));
-    await user.type(panel().getByRole("textbox", { name: "Width on L3 Inner" }), "5 mil{Enter}");
+    const width = panel().getByRole("textbox", { name: "Width on L3 Inner" });
+    await user.click(width);
+    // A field selects its text in the frame after it is entered: typing begins once that is done.
+    await new Promise(requestAnimationFrame);
+    await user.type(width, "5 mil{Enter}", { skipClick: true });
     await waitFor(
       () =>
         expect(puts().at(-1)?.body.netClass.layers).toEqual([
