@@ -39,10 +39,7 @@ export function Blockers({ projectId }: { projectId: string }) {
           {data.blockers.map((blocker) => (
             <li key={blocker.kind} className="border-near border-l-2 pl-3">
               {blocker.text}{" "}
-              <Link
-                className="prose-link whitespace-nowrap"
-                href={cureOf(projectId, blocker, data)}
-              >
+              <Link className="prose-link whitespace-nowrap" href={cureOf(projectId, blocker, data)}>
                 {CURES[blocker.kind]}
               </Link>
             </li>
