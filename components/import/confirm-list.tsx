@@ -71,7 +71,7 @@ export function ConfirmList({ preview, reading, busy, onConfirm, onDrop }: Props
             ? `Import ${rows(good)}, leave out ${badRows.toLocaleString("en")}`
             : `Import ${rows(good)}`}
         </Button>
-        <Button onClick={onDrop} disabled={busy}>
+        <Button onClick={onDrop} disabled={busy || reading}>
           Drop this list
         </Button>
       </div>

@@ -32,7 +32,7 @@ export function netColumns(unit: LengthUnit, href: (net: NetRow) => string): Dat
     {
       id: "scope",
       header: "Scope",
-      width: 150,
+      width: 176,
       sortValue: (net) => scopeWords(net),
       cell: (net) => <ScopeMark net={net} />,
     },

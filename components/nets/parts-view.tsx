@@ -17,6 +17,16 @@ import { valueWarning } from "@/lib/formats/lists/parts-list";
 import { partKinds, type StoredPart } from "@/lib/schemas/net";
 import { NetPlaces } from "./net-places";
 
+const PART_KINDS: Record<StoredPart["kind"], string> = {
+  resistor: "Resistor",
+  capacitor: "Capacitor",
+  inductor: "Inductor",
+  ferrite: "Ferrite",
+  ic: "Circuit",
+  connector: "Connector",
+  other: "Other",
+};
+
 const COLUMNS: readonly DataColumn<StoredPart>[] = [
   {
     id: "reference",
@@ -26,7 +36,13 @@ const COLUMNS: readonly DataColumn<StoredPart>[] = [
     sortValue: (part) => part.reference,
     cell: (part) => part.reference,
   },
-  { id: "kind", header: "Kind", width: 120, sortValue: (part) => part.kind, cell: (part) => part.kind },
+  {
+    id: "kind",
+    header: "Kind",
+    width: 120,
+    sortValue: (part) => part.kind,
+    cell: (part) => PART_KINDS[part.kind],
+  },
   {
     id: "number",
     header: "Part number",
@@ -126,7 +142,7 @@ export function PartsView({ projectId, revision, mayImport }: Props) {
               label="Kind"
               fieldClassName="w-40"
               placeholder="All kinds"
-              options={partKinds.map((kind) => ({ value: kind, label: kind }))}
+              options={partKinds.map((kind) => ({ value: kind, label: PART_KINDS[kind] }))}
               value={filter.kind}
               onChange={(event) => void setFilter({ kind: event.target.value || null })}
             />

@@ -1,4 +1,5 @@
 import type { DataColumn } from "@/components/ui/data-table";
+import { KIND_WORDS } from "@/components/nets/net-words";
 import type { DraftProposals } from "@/lib/schemas/name-proposals";
 
 type ScopeProposal = DraftProposals["outOfScope"][number];
@@ -6,7 +7,13 @@ type PairProposal = DraftProposals["pairs"][number];
 
 export const SCOPES: readonly DataColumn<ScopeProposal>[] = [
   { id: "net", header: "Net", kind: "mono", width: 240, sortValue: (row) => row.net, cell: (row) => row.net },
-  { id: "kind", header: "Kind", width: 100, sortValue: (row) => row.kind, cell: (row) => row.kind },
+  {
+    id: "kind",
+    header: "Kind",
+    width: 100,
+    sortValue: (row) => row.kind,
+    cell: (row) => KIND_WORDS[row.kind] ?? row.kind,
+  },
   { id: "reason", header: "Why", sortValue: (row) => row.reason, cell: (row) => row.reason },
 ];
 export const PAIRS: readonly DataColumn<PairProposal>[] = [

@@ -16,7 +16,8 @@ import { keepPinRoles, readDraftContext, readList } from "./read-list";
 const shared = globalThis as typeof globalThis & {
   __ringfenceImports?: { active: Promise<void> | null; again: boolean; progress: Map<string, number> };
 };
-const loop = () => (shared.__ringfenceImports ??= { active: null, again: false, progress: new Map() });
+const loop = () =>
+  (shared.__ringfenceImports ??= { active: null, again: false, progress: new Map<string, number>() });
 
 /** Share of the whole that reading takes; the rest is checking and writing. */
 const READING = 0.3;

@@ -13,8 +13,8 @@ import { assignRoles } from "@/lib/formats/pin-roles";
 const file = fileURLToPath(new URL("../../../shared/reference/boards/outer-sections.csv", import.meta.url));
 const present = existsSync(file);
 if (!present)
-  console.info(
-    "Skipped: the real board's section list is not beside this repository (shared/reference/boards).",
+  process.stdout.write(
+    "Skipped: the real board's section list is not beside this repository (shared/reference/boards).\n",
   );
 
 describe.skipIf(!present)("the real board's section list", () => {

@@ -1,9 +1,9 @@
-import { partKinds, type PartDoc } from "@/lib/schemas/net";
+import type { PartDoc } from "@/lib/schemas/net";
 import { DomainError } from "@/lib/si/errors";
 import { parseQuantity, type Dimension } from "@/lib/si/units";
 import type { ListFormat } from "./list-field";
 
-type PartKind = (typeof partKinds)[number];
+type PartKind = PartDoc["kind"];
 
 const MAX_PINS = 3000;
 const DIMENSIONS: Partial<Record<PartKind, [Dimension, string]>> = {

@@ -14,7 +14,11 @@ const mapping: ListMapping = {
   delimiter: ",",
   decimalComma: false,
   headerRow: 1,
-  fields: { net: { column: 0, unit: null }, width: { column: 1, unit: "mm" }, length: { column: null, unit: "mm" } },
+  fields: {
+    net: { column: 0, unit: null },
+    width: { column: 1, unit: "mm" },
+    length: { column: null, unit: "mm" },
+  },
   layers: {},
 };
 const preview: ImportPreview = {
@@ -69,14 +73,22 @@ describe("MapColumns", () => {
 
 describe("ConfirmList", () => {
   it("does not import while a required column is missing", () => {
-    render(<ConfirmList preview={preview} reading={false} busy={false} onConfirm={vi.fn()} onDrop={vi.fn()} />);
-    expect((screen.getByRole("button", { name: /^Import/ }) as HTMLButtonElement).disabled).toBe(true);
+    render(
+      <ConfirmList preview={preview} reading={false} busy={false} onConfirm={vi.fn()} onDrop={vi.fn()} />,
+    );
+    expect(screen.getByRole<HTMLButtonElement>("button", { name: /^Import/ }).disabled).toBe(true);
   });
 
   it("says what comes in and what is left out, and replaces only where that is chosen", async () => {
     const onConfirm = vi.fn();
     render(
-      <ConfirmList preview={{ ...preview, missingFields: [] }} reading={false} busy={false} onConfirm={onConfirm} onDrop={vi.fn()} />,
+      <ConfirmList
+        preview={{ ...preview, missingFields: [] }}
+        reading={false}
+        busy={false}
+        onConfirm={onConfirm}
+        onDrop={vi.fn()}
+      />,
     );
     const user = userEvent.setup();
     const button = screen.getByRole("button", { name: "Import 8 rows, leave out 2" });

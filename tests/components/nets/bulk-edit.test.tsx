@@ -11,7 +11,13 @@ const nets = [{ id: "1" }, { id: "2" }] as NetRow[];
 function draw() {
   const onApply = vi.fn();
   render(
-    <BulkEdit nets={nets} classes={[{ lineageId: "c1", name: "Data" }]} busy={false} onApply={onApply} onClear={vi.fn()} />,
+    <BulkEdit
+      nets={nets}
+      classes={[{ lineageId: "c1", name: "Data" }]}
+      busy={false}
+      onApply={onApply}
+      onClear={vi.fn()}
+    />,
   );
   return { onApply, user: userEvent.setup() };
 }
@@ -19,7 +25,7 @@ function draw() {
 describe("BulkEdit", () => {
   it("sends only what was chosen", async () => {
     const { onApply, user } = draw();
-    expect((screen.getByRole("button", { name: "Change 2 nets" }) as HTMLButtonElement).disabled).toBe(true);
+    expect(screen.getByRole<HTMLButtonElement>("button", { name: "Change 2 nets" }).disabled).toBe(true);
     await user.selectOptions(screen.getByLabelText("Class"), "Data");
     await user.click(screen.getByRole("button", { name: "Change 2 nets" }));
     expect(onApply).toHaveBeenCalledWith({ classLineageId: "c1" });
@@ -41,6 +47,11 @@ describe("BulkEdit", () => {
     await user.selectOptions(screen.getByLabelText("Scope"), "In scope");
     await user.type(screen.getByLabelText("Match group"), "-");
     await user.click(screen.getByRole("button", { name: "Change 2 nets" }));
-    expect(onApply).toHaveBeenCalledWith({ scope: "in", scopeKind: "signal", scopeReason: "", matchGroup: null });
+    expect(onApply).toHaveBeenCalledWith({
+      scope: "in",
+      scopeKind: "signal",
+      scopeReason: "",
+      matchGroup: null,
+    });
   });
 });
