@@ -126,26 +126,31 @@ function show(over: Partial<ClassesViewProps> = {}, searchParams = "") {
 const panel = () => within(screen.getByRole("complementary"));
 const field = (name: RegExp) => panel().getByRole<HTMLInputElement>("textbox", { name });
 
+/** A field selects its text in the frame after it is entered: typing over it begins once that is done. */
+async function write(user: ReturnType<typeof show>, input: HTMLElement, text: string): Promise<void> {
+  await user.click(input);
+  await new Promise(requestAnimationFrame);
+  await user.clear(input);
+  await user.type(input, text, { skipClick: true });
+}
+
 describe("a class beside the table", () => {
   it("keeps a refused text with its reason and saves nothing until it is mended", async () => {
     const user = show({}, `?at=${uuid(21)}`);
-    await user.clear(field(/^Edge/));
-    await user.type(field(/^Edge/), "1..2 ns");
+    await write(user, field(/^Edge/), "1..2 ns");
     await user.tab();
     expect(field(/^Edge/).value).toBe("1..2 ns");
     expect(panel().getByRole("alert").textContent).toMatch(/is not a time/);
     expect(panel().getByRole("status").textContent).toMatch(/Not saved: 1 thing needs mending/);
 
-    await user.clear(field(/^Tolerance/));
-    await user.type(field(/^Tolerance/), "12");
+    await write(user, field(/^Tolerance/), "12");
     await user.tab();
     // Another class is not opened over what is not saved.
     await user.click(screen.getByText("Flash"));
     expect(await screen.findByDisplayValue("1..2 ns")).toBeTruthy();
     expect(puts()).toEqual([]);
 
-    await user.clear(field(/^Edge/));
-    await user.type(field(/^Edge/), "1.2{Enter}");
+    await write(user, field(/^Edge/), "1.2{Enter}");
     await waitFor(() => expect(puts()).toHaveLength(1), { timeout: 5000 });
     expect(puts()[0]?.body).toMatchObject({
       version: 4,
@@ -172,7 +177,7 @@ describe("a class beside the table", () => {
       );
     };
     const user = show({}, `?at=${uuid(21)}`);
-    await user.type(field(/^Edge/), "2 ns{Enter}");
+    await write(user, field(/^Edge/), "2 ns{Enter}");
     const alert = await panel().findByRole("alert", {}, { timeout: 5000 });
     expect(alert.textContent).toContain("Ada Reed");
     expect(within(alert).getByRole("listitem").textContent).toBe("spacing");
@@ -189,11 +194,7 @@ describe("a class beside the table", () => {
     const user = show({}, `?at=${uuid(21)}`);
     expect(panel().getByText(/No layer is allowed yet/)).toBeTruthy();
     await user.click(panel().getByRole("checkbox", { name: "L3 Inner" }));
-    const width = panel().getByRole("textbox", { name: "Width on L3 Inner" });
-    await user.click(width);
-    // A field selects its text in the frame after it is entered: typing begins once that is done.
-    await new Promise(requestAnimationFrame);
-    await user.type(width, "5 mil{Enter}", { skipClick: true });
+    await write(user, panel().getByRole("textbox", { name: "Width on L3 Inner" }), "5 mil{Enter}");
     await waitFor(
       () =>
         expect(puts().at(-1)?.body.netClass.layers).toEqual([
