@@ -68,7 +68,11 @@ beforeEach(() => {
         // Lists are fetched anew after a change: what they answer is not looked at here.
         return new Response("{}", { status: 500 });
       }
-      const call: Call = { method, address, body: JSON.parse(String(init?.body ?? "{}")) as Call["body"] };
+      const call: Call = {
+        method,
+        address,
+        body: JSON.parse((init?.body as string | undefined) ?? "{}") as Call["body"],
+      };
       const refused = answer?.(call);
       if (refused) return refused;
       calls.push(call);
