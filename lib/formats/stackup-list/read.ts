@@ -26,7 +26,7 @@ type Columns = Map<StackupColumn, { column: number; unit: string | null }>;
 export function readStackupList(text: string, name: string, defaultUnit: string): StackupListReading {
   const table = readTable(text);
   const [header, ...rows] = table.rows;
-  const columns: Columns = header ? findColumns(header) : new Map();
+  const columns: Columns = header ? findColumns(header) : new Map<never, never>();
   if (!header || !columns.has("kind") || !columns.has("name"))
     return {
       doc: null,
