@@ -56,8 +56,8 @@ export default {
     },
   },
   plugins: [
-    plugin(({ addBase }) => {
-      addBase({
+    plugin((api) => {
+      api.addBase({
         ":root": variables("light"),
         "@media (prefers-color-scheme: dark)": { ":root:not([data-theme='light'])": variables("dark") },
         ":root[data-theme='dark']": variables("dark"),

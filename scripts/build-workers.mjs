@@ -15,6 +15,8 @@ await build({
   format: "esm",
   sourcemap: "linked",
   alias: { "server-only": "./node_modules/server-only/empty.js", "@": root.replace(/[\\/]$/, "") },
-  banner: { js: 'import { createRequire as __createRequire } from "node:module"; const require = __createRequire(import.meta.url);' },
+  banner: {
+    js: 'import { createRequire as __createRequire } from "node:module"; const require = __createRequire(import.meta.url);',
+  },
   logLevel: "warning",
 });

@@ -9,23 +9,60 @@ import { type DataColumn, DataTable } from "@/components/ui/data-table";
 import { Input } from "@/components/ui/input";
 import { toast } from "@/components/ui/toast";
 import { errorMessage } from "@/lib/client/api";
-import { type AuditAnswer, type AuditEntry, auditQuery, type AuditSearch, fetchAllAudit } from "@/lib/client/audit";
+import {
+  type AuditAnswer,
+  type AuditEntry,
+  auditQuery,
+  type AuditSearch,
+  fetchAllAudit,
+} from "@/lib/client/audit";
 import { actionText, auditCsv, detailText } from "./audit-words";
 import { ChainMark } from "./chain-mark";
 
 const DAY_MS = 86_400_000;
 
 const COLUMNS: readonly DataColumn<AuditEntry>[] = [
-  { id: "seq", header: "No.", kind: "number", width: 80, sortValue: (entry) => entry.seq, number: (entry) => ({ text: String(entry.seq) }) },
-  { id: "at", header: "Time", width: 190, sortValue: (entry) => entry.at, cell: (entry) => <TimeText at={entry.at} /> },
-  { id: "person", header: "Person", width: 180, sortValue: (entry) => entry.actorName, cell: (entry) => entry.actorName },
-  { id: "action", header: "Action", width: 170, sortValue: (entry) => entry.action, cell: (entry) => actionText(entry.action) },
+  {
+    id: "seq",
+    header: "No.",
+    kind: "number",
+    width: 80,
+    sortValue: (entry) => entry.seq,
+    number: (entry) => ({ text: String(entry.seq) }),
+  },
+  {
+    id: "at",
+    header: "Time",
+    width: 190,
+    sortValue: (entry) => entry.at,
+    cell: (entry) => <TimeText at={entry.at} />,
+  },
+  {
+    id: "person",
+    header: "Person",
+    width: 180,
+    sortValue: (entry) => entry.actorName,
+    cell: (entry) => entry.actorName,
+  },
+  {
+    id: "action",
+    header: "Action",
+    width: 170,
+    sortValue: (entry) => entry.action,
+    cell: (entry) => actionText(entry.action),
+  },
   {
     id: "detail",
     header: "Detail",
     cell: (entry) => <span title={detailText(entry.detail)}>{detailText(entry.detail)}</span>,
   },
-  { id: "hash", header: "Hash", kind: "mono", width: 130, cell: (entry) => <span title={entry.hash}>{entry.hash.slice(0, 12)}</span> },
+  {
+    id: "hash",
+    header: "Hash",
+    kind: "mono",
+    width: 130,
+    cell: (entry) => <span title={entry.hash}>{entry.hash.slice(0, 12)}</span>,
+  },
 ];
 
 /** The log of a team: filtered by text and days, verified, exported. The address keeps the filter. */

@@ -7,8 +7,8 @@ export function ChainMark({ chain }: { chain: AuditAnswer["chain"] }) {
     return (
       <p role="alert" className="text-fail flex items-center gap-2 text-sm">
         <ShieldAlert size={16} aria-hidden="true" />
-        The chain breaks at entry {chain.brokenAt}: it, or one before it, was altered outside Ringfence. Compare with a
-        backup.
+        The chain breaks at entry {chain.brokenAt}: it, or one before it, was altered outside Ringfence.
+        Compare with a backup.
       </p>
     );
   return (

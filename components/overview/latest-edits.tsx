@@ -13,7 +13,10 @@ export function LatestEdits({ edits }: { edits: ProjectOverview["edits"] }) {
       ) : (
         <ol className="border-rule-line bg-sheet border-y text-sm">
           {edits.map((edit) => (
-            <li key={edit.id} className="border-rule-line/60 flex flex-col border-b px-3 py-2 last:border-b-0">
+            <li
+              key={edit.id}
+              className="border-rule-line/60 flex flex-col border-b px-3 py-2 last:border-b-0"
+            >
               <span className={edit.undone ? "text-ink-soft line-through" : undefined}>{edit.summary}</span>
               <span className="text-ink-soft text-xs">
                 {edit.actorName}, <TimeText at={edit.at} />

@@ -45,7 +45,9 @@ export function OverviewView({ initial, revision, mayEdit }: Props) {
         actions={
           <>
             {project.archived ? <Badge tone="near">archived</Badge> : null}
-            {project.draftLetter === null && mayEdit && !project.archived ? <StartDraft projectId={project.id} /> : null}
+            {project.draftLetter === null && mayEdit && !project.archived ? (
+              <StartDraft projectId={project.id} />
+            ) : null}
           </>
         }
       />

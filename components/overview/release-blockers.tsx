@@ -32,7 +32,8 @@ export function ReleaseBlockers({ blockers, letter, releasedAt, openFlags, base 
       </h2>
       {blockers === null ? (
         <p className="text-sm">
-          Revision {letter} is released{releasedAt === null ? "" : `, ${timeText(releasedAt)}`}, and stays as it is.{" "}
+          Revision {letter} is released{releasedAt === null ? "" : `, ${timeText(releasedAt)}`}, and stays as
+          it is.{" "}
           <Link href={`${base}/releases` as Route} className="text-violet underline underline-offset-2">
             See its note
           </Link>
@@ -61,7 +62,11 @@ export function ReleaseBlockers({ blockers, letter, releasedAt, openFlags, base 
       )}
       {blockers?.some((blocker) => blocker.kind === "flags") ? null : (
         <p className="text-ink-soft mt-2 text-sm">
-          {openFlags === 0 ? "No flag is open." : openFlags === 1 ? "1 flag is open." : `${openFlags} flags are open.`}
+          {openFlags === 0
+            ? "No flag is open."
+            : openFlags === 1
+              ? "1 flag is open."
+              : `${openFlags} flags are open.`}
         </p>
       )}
     </section>

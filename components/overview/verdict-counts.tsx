@@ -33,7 +33,9 @@ export function VerdictCounts({ run, waived, base }: Props) {
         ) : null}
         .{" "}
         {run.current ? null : (
-          <span className="text-near">The board was edited since: these verdicts are of its former state.</span>
+          <span className="text-near">
+            The board was edited since: these verdicts are of its former state.
+          </span>
         )}
       </p>
       <dl className="border-rule-line bg-sheet grid grid-cols-2 border-y sm:grid-cols-4">
@@ -49,7 +51,9 @@ export function VerdictCounts({ run, waived, base }: Props) {
       {waived > 0 ? (
         <p className="mt-2 text-sm">
           <VerdictMark verdict="waived" count={waived} />{" "}
-          <span className="text-ink-soft">{waived === 1 ? "problem, counted" : "problems, counted"} above by its verdict</span>
+          <span className="text-ink-soft">
+            {waived === 1 ? "problem, counted" : "problems, counted"} above by its verdict
+          </span>
         </p>
       ) : null}
     </section>

@@ -69,9 +69,24 @@ function CreateForm({ onClose }: { onClose: () => void }) {
 
   return (
     <form method="post" noValidate onSubmit={(event) => void submit(event)} className="flex flex-col gap-4">
-      <Input label="Name of the board" autoComplete="off" error={errors.name?.message} {...register("name")} />
-      <TextArea label="Description (may stay empty)" rows={2} error={errors.description?.message} {...register("description")} />
-      <Select label="Stackup to start from" options={TEMPLATES} error={errors.template?.message} {...register("template")} />
+      <Input
+        label="Name of the board"
+        autoComplete="off"
+        error={errors.name?.message}
+        {...register("name")}
+      />
+      <TextArea
+        label="Description (may stay empty)"
+        rows={2}
+        error={errors.description?.message}
+        {...register("description")}
+      />
+      <Select
+        label="Stackup to start from"
+        options={TEMPLATES}
+        error={errors.template?.message}
+        {...register("template")}
+      />
       <Select
         label="Unit of bare numbers"
         hint="12 without a unit is read in this one."

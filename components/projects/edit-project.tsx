@@ -45,9 +45,24 @@ export function EditProject({ project, onClose }: { project: ProjectSummary; onC
   return (
     <Dialog open onOpenChange={onClose} title={`Rename or describe ${name}`}>
       <form method="post" noValidate onSubmit={(event) => void submit(event)} className="flex flex-col gap-4">
-        <Input label="Name of the board" autoComplete="off" error={errors.name?.message} {...register("name")} />
-        <TextArea label="Description (may stay empty)" rows={2} error={errors.description?.message} {...register("description")} />
-        <Select label="Unit of bare numbers" options={UNITS} error={errors.unit?.message} {...register("unit")} />
+        <Input
+          label="Name of the board"
+          autoComplete="off"
+          error={errors.name?.message}
+          {...register("name")}
+        />
+        <TextArea
+          label="Description (may stay empty)"
+          rows={2}
+          error={errors.description?.message}
+          {...register("description")}
+        />
+        <Select
+          label="Unit of bare numbers"
+          options={UNITS}
+          error={errors.unit?.message}
+          {...register("unit")}
+        />
         {errors.root ? (
           <p role="alert" className="text-fail text-sm">
             {errors.root.message}

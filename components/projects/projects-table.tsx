@@ -32,7 +32,11 @@ export function ProjectsTable({ projects, archived, onOpen, onEdit, onArchive }:
           </Link>
         ),
       },
-      { id: "description", header: "Description", cell: (project) => <span title={project.description}>{project.description}</span> },
+      {
+        id: "description",
+        header: "Description",
+        cell: (project) => <span title={project.description}>{project.description}</span>,
+      },
       {
         id: "revision",
         header: "Revisions",

@@ -58,7 +58,9 @@ export function ProjectsView({ projects, archived, mayCreate, mayArchive }: Prop
     <>
       <PageHeader
         title={archived ? "Archived projects" : "Projects"}
-        description={archived ? "Put away: to be read, not changed, until restored." : "One project for each board."}
+        description={
+          archived ? "Put away: to be read, not changed, until restored." : "One project for each board."
+        }
         actions={
           <>
             <LinkButton variant="quiet" href={(archived ? "/projects" : "/projects?archived=true") as Route}>
@@ -74,10 +76,14 @@ export function ProjectsView({ projects, archived, mayCreate, mayArchive }: Prop
           archived={archived}
           onOpen={(project) => router.push(`/projects/${project.id}/overview` as Route)}
           onEdit={mayArchive && !archived ? setEditing : undefined}
-          onArchive={mayArchive ? (project) => void (archived ? restore(project) : archive(project)) : undefined}
+          onArchive={
+            mayArchive ? (project) => void (archived ? restore(project) : archive(project)) : undefined
+          }
         />
       ) : archived ? (
-        <EmptyState title="Nothing is archived">A project that is archived is kept here and can be restored.</EmptyState>
+        <EmptyState title="Nothing is archived">
+          A project that is archived is kept here and can be restored.
+        </EmptyState>
       ) : (
         <EmptyState title="No project yet" actions={create}>
           {mayCreate

@@ -1,4 +1,8 @@
-const INSTANT = new Intl.DateTimeFormat("en-GB", { dateStyle: "medium", timeStyle: "short", timeZone: "UTC" });
+const INSTANT = new Intl.DateTimeFormat("en-GB", {
+  dateStyle: "medium",
+  timeStyle: "short",
+  timeZone: "UTC",
+});
 
 /** An instant as everybody on the team reads it the same: date and time in UTC. */
 export function TimeText({ at }: { at: number }) {

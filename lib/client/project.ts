@@ -16,9 +16,11 @@ export const updateProject = (
   input: { version: number; name: string; description: string; unit: "mm" | "mil" },
 ) => apiPatch<ProjectSummary>(`/projects/${projectId}`, input);
 export const archiveProject = (projectId: string) => apiDelete<undefined>(`/projects/${projectId}`);
-export const restoreProject = (projectId: string) => apiPost<ProjectSummary>(`/projects/${projectId}/restore`);
+export const restoreProject = (projectId: string) =>
+  apiPost<ProjectSummary>(`/projects/${projectId}/restore`);
 /** Starts a new draft as a copy of the newest release. */
-export const startDraft = (projectId: string) => apiPost<{ letter: string }>(`/projects/${projectId}/revisions`);
+export const startDraft = (projectId: string) =>
+  apiPost<{ letter: string }>(`/projects/${projectId}/revisions`);
 
 export const overviewQuery = (projectId: string, revision: string | undefined) =>
   queryOptions({

@@ -23,8 +23,20 @@ export const CHAIN_START = "0".repeat(64);
 
 /** SHA-256 over the entry and the hash before it: whoever alters one entry must rewrite all that follow. */
 export function auditHash(entry: ChainedEntry): string {
-  const { id, teamId, seq, at, actorId, actorName, action, subjectKind, subjectId, projectId, detail, previousHash } =
-    entry;
+  const {
+    id,
+    teamId,
+    seq,
+    at,
+    actorId,
+    actorName,
+    action,
+    subjectKind,
+    subjectId,
+    projectId,
+    detail,
+    previousHash,
+  } = entry;
   return createHash("sha256")
     .update(
       canonicalJson({

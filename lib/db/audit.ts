@@ -40,7 +40,8 @@ export async function commitAudited(
       try {
         return await commitUnit([...statements, ...(await chainEntries(db, actor, entries))]);
       } catch (error) {
-        if (!isUniqueFailure(error, "audit_entry.team_id, audit_entry.seq") || attempt >= MAX_ATTEMPTS) throw error;
+        if (!isUniqueFailure(error, "audit_entry.team_id, audit_entry.seq") || attempt >= MAX_ATTEMPTS)
+          throw error;
       }
     }
   });
@@ -122,7 +123,11 @@ export async function verifyAuditChain(actor: Actor): Promise<ChainCheck> {
   }
 }
 
-async function chainEntries(db: Database, actor: Actor, entries: readonly AuditInput[]): Promise<Statement[]> {
+async function chainEntries(
+  db: Database,
+  actor: Actor,
+  entries: readonly AuditInput[],
+): Promise<Statement[]> {
   if (entries.length === 0) return [];
   const [end] = await db
     .select({ seq: auditEntry.seq, hash: auditEntry.hash })
@@ -159,9 +164,11 @@ const holder = globalThis as typeof globalThis & { ringfenceChains?: Map<string,
 function inTurn<T>(teamId: string, act: () => Promise<T>): Promise<T> {
   const chains = (holder.ringfenceChains ??= new Map<string, Promise<unknown>>());
   const result = (chains.get(teamId) ?? Promise.resolve()).then(act);
-  const settled = result.catch(() => undefined).then(() => {
-    if (chains.get(teamId) === settled) chains.delete(teamId);
-  });
+  const settled = result
+    .catch(() => undefined)
+    .then(() => {
+      if (chains.get(teamId) === settled) chains.delete(teamId);
+    });
   chains.set(teamId, settled);
   return result;
 }

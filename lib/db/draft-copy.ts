@@ -9,7 +9,18 @@ import { getDb, type Database } from "./client";
 import { now } from "./clock";
 import { newId } from "./ids";
 import { getRevision, listRevisions, type RevisionRef } from "./revision";
-import { binding, model, neighbour, net, netClass, part, revision, ruleSet, stackup, stackupLayer } from "./schema";
+import {
+  binding,
+  model,
+  neighbour,
+  net,
+  netClass,
+  part,
+  revision,
+  ruleSet,
+  stackup,
+  stackupLayer,
+} from "./schema";
 import { guard, GuardError, type Statement } from "./unit";
 
 /** What a revision holds, row by row; each row gets a new id and keeps its lineage. */
@@ -34,7 +45,10 @@ export async function startDraft(actor: Actor, projectId: string): Promise<Revis
     await commitAudited(
       actor,
       [
-        guard(db, sql`not exists (select 1 from ${revision} where ${revision.projectId} = ${projectId} and ${revision.state} = 'draft')`),
+        guard(
+          db,
+          sql`not exists (select 1 from ${revision} where ${revision.projectId} = ${projectId} and ${revision.state} = 'draft')`,
+        ),
         db.insert(revision).values({
           ...made,
           teamId: actor.teamId,
@@ -92,7 +106,12 @@ async function copyRows(
   ];
 }
 
-function copyHead(db: Database, table: typeof stackup | typeof ruleSet, from: RevisionRef, to: string): Statement {
+function copyHead(
+  db: Database,
+  table: typeof stackup | typeof ruleSet,
+  from: RevisionRef,
+  to: string,
+): Statement {
   const others = sql.raw(columnsOf(table, ["revision_id"]));
   return db.run(sql`
     insert into ${table} (revision_id, ${others})
@@ -108,5 +127,8 @@ function columnsOf(table: SQLiteTable, except: readonly string[]): string {
 }
 
 function draftExists(letter: string): RefusedError {
-  return new RefusedError(`Revision ${letter} is a draft already. Release it before you start another.`, "draft-exists");
+  return new RefusedError(
+    `Revision ${letter} is a draft already. Release it before you start another.`,
+    "draft-exists",
+  );
 }

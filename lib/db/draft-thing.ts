@@ -27,7 +27,12 @@ export interface DraftThing<State> {
   /** Checks what an edit had stored. */
   parse: (stored: unknown) => State | null;
   /** `like`: a state with the same members, where a thing is a set that its id does not tell. */
-  read: (actor: Actor, draft: RevisionRef, entityId: string | null, like: State | null) => Promise<Reading<State>>;
+  read: (
+    actor: Actor,
+    draft: RevisionRef,
+    entityId: string | null,
+    like: State | null,
+  ) => Promise<Reading<State>>;
   /** Statements that make it so; null takes it away. */
   write: (
     db: Database,

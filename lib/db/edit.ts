@@ -12,15 +12,7 @@ import { edit, project, revision, user } from "./schema";
 import { guard, GuardError, type Statement } from "./unit";
 
 export type EditEntity =
-  | "stackup"
-  | "class"
-  | "model"
-  | "bindings"
-  | "rules"
-  | "nets"
-  | "parts"
-  | "import"
-  | "neighbours";
+  "stackup" | "class" | "model" | "bindings" | "rules" | "nets" | "parts" | "import" | "neighbours";
 
 /** What the `before` and `after` of an edit hold: the thing's whole state, null where there was none. */
 export interface EditSide {
@@ -49,7 +41,11 @@ export interface DraftChange {
  * Writes a change of a draft as one unit: the change, the edit that records it, the draft's edit count, the
  * audit entry; all of it only while the revision is a draft and the thing is as it was read.
  */
-export async function commitDraftChange(actor: Actor, draft: RevisionRef, change: DraftChange): Promise<void> {
+export async function commitDraftChange(
+  actor: Actor,
+  draft: RevisionRef,
+  change: DraftChange,
+): Promise<void> {
   const db = await getDb();
   const at = now();
   const guards = [stillDraft(actor, draft.id), ...change.unchanged];
@@ -73,7 +69,12 @@ export async function commitDraftChange(actor: Actor, draft: RevisionRef, change
   try {
     await commitAudited(
       actor,
-      [...guards.map((condition) => guard(db, condition)), ...change.statements, record, ...touch(db, actor, draft, at)],
+      [
+        ...guards.map((condition) => guard(db, condition)),
+        ...change.statements,
+        record,
+        ...touch(db, actor, draft, at),
+      ],
       {
         action: change.moves ? (change.moves.undone ? "draft.undo" : "draft.redo") : "draft.edit",
         subjectKind: change.entity,
@@ -153,7 +154,11 @@ export async function hasEdited(actor: Actor, revisionId: string): Promise<boole
     .select({ id: edit.id })
     .from(edit)
     .where(
-      and(within(actor, "project:read", edit.teamId), eq(edit.revisionId, revisionId), eq(edit.actorId, actor.userId)),
+      and(
+        within(actor, "project:read", edit.teamId),
+        eq(edit.revisionId, revisionId),
+        eq(edit.actorId, actor.userId),
+      ),
     )
     .limit(1);
   return rows.length > 0;

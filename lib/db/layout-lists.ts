@@ -4,7 +4,14 @@ import { and, eq, sql } from "drizzle-orm";
 import { SiValues } from "@/lib/resolve/si-values";
 import type { Actor } from "@/lib/schemas/actor";
 import { RefusedError } from "@/lib/schemas/errors";
-import { neighbourDoc, netDoc, partDoc, type NeighbourDoc, type NetDoc, type PartDoc } from "@/lib/schemas/net";
+import {
+  neighbourDoc,
+  netDoc,
+  partDoc,
+  type NeighbourDoc,
+  type NetDoc,
+  type PartDoc,
+} from "@/lib/schemas/net";
 import { getDb, type Database } from "./client";
 import { commitDraftChange } from "./edit";
 import { newId } from "./ids";
@@ -48,9 +55,15 @@ export async function applyLayoutLists(
   const draft = await getDraft(actor, projectId);
   const db = await getDb();
   const replace = options.mode === "replace";
-  const total = Math.max(1, [lists.nets, lists.parts, lists.neighbours].reduce((sum, rows) => sum + (rows?.length ?? 0), 0));
+  const total = Math.max(
+    1,
+    [lists.nets, lists.parts, lists.neighbours].reduce((sum, rows) => sum + (rows?.length ?? 0), 0),
+  );
   let checked = 0;
-  const prepare = async <In, Out>(rows: readonly In[] | undefined, make: (row: In) => Out): Promise<Out[]> => {
+  const prepare = async <In, Out>(
+    rows: readonly In[] | undefined,
+    make: (row: In) => Out,
+  ): Promise<Out[]> => {
     const made: Out[] = [];
     for (const row of rows ?? []) {
       made.push(make(row));
@@ -63,7 +76,11 @@ export async function applyLayoutLists(
   };
   const si = new SiValues();
   const nets = await prepare(lists.nets, (row) => netRow(netDoc.parse(row), si));
-  const parts = await prepare(lists.parts, (row) => ({ id: newId(), lineageId: newId(), doc: partDoc.parse(row) }));
+  const parts = await prepare(lists.parts, (row) => ({
+    id: newId(),
+    lineageId: newId(),
+    doc: partDoc.parse(row),
+  }));
   const neighbours = await prepare(lists.neighbours, (row) => neighbourRow(neighbourDoc.parse(row), si));
 
   await commitDraftChange(actor, draft, {
@@ -73,17 +90,41 @@ export async function applyLayoutLists(
     before: null,
     after: null,
     statements: [
-      ...(lists.nets && replace ? [removeOthers(db, draft, net, "name", nets.map((row) => row.name))] : []),
+      ...(lists.nets && replace
+        ? [
+            removeOthers(
+              db,
+              draft,
+              net,
+              "name",
+              nets.map((row) => row.name),
+            ),
+          ]
+        : []),
       ...inSteps(nets).map((rows) => upsertNets(db, draft, rows)),
-      ...(lists.parts && replace ? [removeOthers(db, draft, part, "reference", parts.map((row) => row.doc.reference))] : []),
+      ...(lists.parts && replace
+        ? [
+            removeOthers(
+              db,
+              draft,
+              part,
+              "reference",
+              parts.map((row) => row.doc.reference),
+            ),
+          ]
+        : []),
       ...inSteps(parts).map((rows) => upsertParts(db, draft, rows)),
-      ...(lists.neighbours ? [removeNeighbours(db, draft, replace ? null : neighbours.map((row) => row.net))] : []),
+      ...(lists.neighbours
+        ? [removeNeighbours(db, draft, replace ? null : neighbours.map((row) => row.net))]
+        : []),
       ...inSteps(neighbours).map((rows) => insertNeighbours(db, draft, rows)),
       ...(options.also ?? []),
     ],
     unchanged: [],
     stale: () =>
-      Promise.resolve(new RefusedError("The draft changed while this list was read in. Import it again.", "stale-import")),
+      Promise.resolve(
+        new RefusedError("The draft changed while this list was read in. Import it again.", "stale-import"),
+      ),
   });
   options.onProgress?.(1);
 }
@@ -184,7 +225,9 @@ function removeNeighbours(db: Database, draft: RevisionRef, nets: readonly strin
       and(
         eq(neighbour.teamId, draft.teamId),
         eq(neighbour.revisionId, draft.id),
-        nets ? sql`${neighbour.net} in (select value from json_each(${JSON.stringify([...new Set(nets)])}))` : undefined,
+        nets
+          ? sql`${neighbour.net} in (select value from json_each(${JSON.stringify([...new Set(nets)])}))`
+          : undefined,
       ),
     );
 }

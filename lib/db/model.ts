@@ -125,7 +125,11 @@ export const modelThing: DraftThing<ModelState> = {
       .select()
       .from(model)
       .where(
-        and(eq(model.teamId, draft.teamId), eq(model.revisionId, draft.id), eq(model.lineageId, entityId ?? "")),
+        and(
+          eq(model.teamId, draft.teamId),
+          eq(model.revisionId, draft.id),
+          eq(model.lineageId, entityId ?? ""),
+        ),
       );
     const here = sql`select 1 from ${model} where ${model.revisionId} = ${draft.id} and ${model.lineageId} = ${entityId}`;
     if (!row) return { state: null, version: -1, unchanged: [sql`not exists (${here})`] };

@@ -24,7 +24,14 @@ export async function listNeighbours(
         netName === undefined ? undefined : eq(neighbour.net, netName),
       ),
     )
-    .orderBy(asc(neighbour.net), asc(neighbour.neighbour), asc(neighbour.layer), asc(neighbour.gap_m), asc(neighbour.parallel_m), asc(neighbour.id));
+    .orderBy(
+      asc(neighbour.net),
+      asc(neighbour.neighbour),
+      asc(neighbour.layer),
+      asc(neighbour.gap_m),
+      asc(neighbour.parallel_m),
+      asc(neighbour.id),
+    );
   return rows.map((row) => ({
     net: row.net,
     neighbour: row.neighbour,

@@ -20,7 +20,10 @@ type ClassState = Omit<StoredNetClass, "version">;
 export type NetClassView = StoredNetClass & { netCount: number };
 
 /** The classes of a revision by name, each with the number of its nets. */
-export async function listNetClasses(actor: Actor, revision: Pick<RevisionRef, "id">): Promise<NetClassView[]> {
+export async function listNetClasses(
+  actor: Actor,
+  revision: Pick<RevisionRef, "id">,
+): Promise<NetClassView[]> {
   const db = await getDb();
   const [rows, counts] = await Promise.all([
     db
@@ -59,7 +62,11 @@ export async function getNetClass(
   return stored(row);
 }
 
-export async function createNetClass(actor: Actor, projectId: string, input: NetClassDoc): Promise<StoredNetClass> {
+export async function createNetClass(
+  actor: Actor,
+  projectId: string,
+  input: NetClassDoc,
+): Promise<StoredNetClass> {
   const draft = await getDraft(actor, projectId);
   const doc = netClassDoc.parse(input);
   const after = { ...doc, id: newId(), lineageId: newId() };
@@ -123,15 +130,25 @@ export async function deleteNetClass(
     .select({ id: net.id, version: net.version })
     .from(net)
     .where(
-      and(eq(net.teamId, actor.teamId), eq(net.revisionId, draft.id), eq(net.classLineageId, present.lineageId)),
+      and(
+        eq(net.teamId, actor.teamId),
+        eq(net.revisionId, draft.id),
+        eq(net.classLineageId, present.lineageId),
+      ),
     );
   if (members.length > 0) {
     if (reassignTo === undefined) throw inUse(present.name, members.length);
     if (present.version !== readVersion)
-      throw new ConflictError(`Class ${present.name} was changed after you opened it. Look at it again.`, present);
+      throw new ConflictError(
+        `Class ${present.name} was changed after you opened it. Look at it again.`,
+        present,
+      );
     const target = reassignTo === null ? null : await getNetClass(actor, draft, reassignTo);
     if (target?.lineageId === present.lineageId)
-      throw new RefusedError("Its nets cannot go to the class that is taken away. Choose another.", "same-class");
+      throw new RefusedError(
+        "Its nets cannot go to the class that is taken away. Choose another.",
+        "same-class",
+      );
     await patchNets(
       actor,
       projectId,
@@ -217,7 +234,9 @@ export const netClassThing: DraftThing<ClassState> = {
   describe: (before, after) => {
     if (!before) return ["made"];
     if (!after) return ["taken away"];
-    return differingFields(before, after).map((field) => field.replace(/[A-Z]/g, (letter) => ` ${letter.toLowerCase()}`));
+    return differingFields(before, after).map((field) =>
+      field.replace(/[A-Z]/g, (letter) => ` ${letter.toLowerCase()}`),
+    );
   },
 };
 

@@ -55,8 +55,16 @@ export async function patchNets(
   summary: string,
 ): Promise<number> {
   const draft = await getDraft(actor, projectId, "project:read");
-  const before = new Map((await readNets(draft, patches.map((patch) => patch.id))).map((row) => [row.id, row]));
-  if (before.size < new Set(patches.map((patch) => patch.id)).size) throw new NotFoundError("One of these nets");
+  const before = new Map(
+    (
+      await readNets(
+        draft,
+        patches.map((patch) => patch.id),
+      )
+    ).map((row) => [row.id, row]),
+  );
+  if (before.size < new Set(patches.map((patch) => patch.id)).size)
+    throw new NotFoundError("One of these nets");
   await assertClasses(draft, patches);
   const changed: NetsState = [];
   const stale: NetRow[] = [];
@@ -179,7 +187,10 @@ async function staleNets(actor: Actor, draft: RevisionRef, stale: readonly NetRo
       and(
         eq(net.teamId, actor.teamId),
         eq(net.revisionId, draft.id),
-        inArray(net.id, stale.slice(0, 5).map((row) => row.id)),
+        inArray(
+          net.id,
+          stale.slice(0, 5).map((row) => row.id),
+        ),
       ),
     )
     .orderBy(net.name);

@@ -84,7 +84,10 @@ export async function listNets(
         version: net.version,
       })
       .from(net)
-      .leftJoin(netClass, and(eq(netClass.revisionId, net.revisionId), eq(netClass.lineageId, net.classLineageId)))
+      .leftJoin(
+        netClass,
+        and(eq(netClass.revisionId, net.revisionId), eq(netClass.lineageId, net.classLineageId)),
+      )
       .where(where)
       .orderBy(filter.descending ? desc(order) : asc(order), asc(net.name))
       .limit(Math.min(filter.limit ?? MOST, MOST))
@@ -95,7 +98,11 @@ export async function listNets(
 }
 
 /** A whole net, by its id or its lineage. @throws NotFoundError */
-export async function getNet(actor: Actor, revision: Pick<RevisionRef, "id">, netId: string): Promise<StoredNet> {
+export async function getNet(
+  actor: Actor,
+  revision: Pick<RevisionRef, "id">,
+  netId: string,
+): Promise<StoredNet> {
   const db = await getDb();
   const [row] = await db
     .select()

@@ -14,8 +14,15 @@ import { coveredProblems } from "./waiver";
 const EDITS_SHOWN = 8;
 
 /** What one sees first of a project: what was judged and how, what was not, and what keeps it from release. */
-export async function readOverview(actor: Actor, projectId: string, letter?: string): Promise<ProjectOverview> {
-  const [project, revision] = await Promise.all([getProject(actor, projectId), findRevision(actor, projectId, letter)]);
+export async function readOverview(
+  actor: Actor,
+  projectId: string,
+  letter?: string,
+): Promise<ProjectOverview> {
+  const [project, revision] = await Promise.all([
+    getProject(actor, projectId),
+    findRevision(actor, projectId, letter),
+  ]);
   const [scopes, openFlags, newest, judged, edits, inputHash] = await Promise.all([
     countScopes(actor, revision),
     countOpenFlags(actor, projectId),
@@ -43,11 +50,24 @@ export async function readOverview(actor: Actor, projectId: string, letter?: str
     },
     scopes,
     openFlags,
-    running: newest && (newest.state === "queued" || newest.state === "running") ? runFacts(newest, inputHash) : null,
+    running:
+      newest && (newest.state === "queued" || newest.state === "running")
+        ? runFacts(newest, inputHash)
+        : null,
     run: judged ? runFacts(judged, inputHash) : null,
-    waived: readiness ? readiness.waived : judged ? (await coveredProblems(actor, projectId, judged)).size : 0,
+    waived: readiness
+      ? readiness.waived
+      : judged
+        ? (await coveredProblems(actor, projectId, judged)).size
+        : 0,
     blockers: readiness?.blockers ?? null,
-    edits: edits.map(({ id, at, actorName, summary, undoneAt }) => ({ id, at, actorName, summary, undone: undoneAt !== null })),
+    edits: edits.map(({ id, at, actorName, summary, undoneAt }) => ({
+      id,
+      at,
+      actorName,
+      summary,
+      undone: undoneAt !== null,
+    })),
   };
 }
 

@@ -104,7 +104,11 @@ export async function createProject(actor: Actor, input: ProjectInput): Promise<
 }
 
 /** @throws ConflictError */
-export async function updateProject(actor: Actor, projectId: string, input: ProjectUpdate): Promise<ProjectRow> {
+export async function updateProject(
+  actor: Actor,
+  projectId: string,
+  input: ProjectUpdate,
+): Promise<ProjectRow> {
   requirePermission(actor, "project:update", "This project");
   const { version, ...fields } = projectUpdate.parse(input);
   const present = await getProject(actor, projectId);
@@ -163,7 +167,9 @@ async function writeProject(
     throw new ConflictError(
       `${current.name} was changed after you opened it. Take the present one, or save yours over it.`,
       current,
-      (["name", "description", "unit"] as const).filter((field) => field in columns && current[field] !== columns[field]),
+      (["name", "description", "unit"] as const).filter(
+        (field) => field in columns && current[field] !== columns[field],
+      ),
     );
   }
 }

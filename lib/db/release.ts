@@ -31,7 +31,12 @@ export interface Readiness {
 }
 
 /** What stands between the draft and its release, judged on its newest run. */
-export async function releaseReadiness(actor: Actor, projectId: string, draftId: string, draftInputHash: string): Promise<Readiness> {
+export async function releaseReadiness(
+  actor: Actor,
+  projectId: string,
+  draftId: string,
+  draftInputHash: string,
+): Promise<Readiness> {
   const row = await latestRun(actor, draftId);
   const flags = await countOpenFlags(actor, projectId);
   if (!row || row.state !== "done") {
@@ -51,7 +56,9 @@ export async function releaseReadiness(actor: Actor, projectId: string, draftId:
   const open = failing.filter((problem) => !covered.has(`${problem.pathId} ${problem.mechanism}`));
   const accepted = new Set((await listAcceptances(actor, row.revisionId)).map((entry) => entry.missing));
   const missing = (await missingInputs(actor, row)).filter((entry) => !accepted.has(entry.missing));
-  const signature = (await listSignatures(actor, row.revisionId)).find((entry) => entry.inputHash === row.inputHash && entry.runId === row.id);
+  const signature = (await listSignatures(actor, row.revisionId)).find(
+    (entry) => entry.inputHash === row.inputHash && entry.runId === row.id,
+  );
   const blockers = releaseBlockers({
     run: row,
     draftInputHash,
@@ -84,7 +91,10 @@ export async function createRelease(
   frozen: { inputHash: string; editCount: number },
   note: (heading: { releasedAt: number; signedBy: string; team: string }) => ImpedanceNote,
   noteHash: (note: ImpedanceNote) => string,
-): Promise<{ releaseId: string; links: { email: string; name: string; token: string; expiresAt: number }[] }> {
+): Promise<{
+  releaseId: string;
+  links: { email: string; name: string; token: string; expiresAt: number }[];
+}> {
   if (!can(actor, "release:create")) throw new NotFoundError("The project");
   const draft = await getDraft(actor, projectId, "release:create");
   const row = await getRun(actor, projectId, input.runId);
@@ -92,18 +102,28 @@ export async function createRelease(
   if (readiness.run?.id !== row.id)
     throw new RefusedError("A newer run exists. Look at it, then release with that one.", "stale-run");
   if (readiness.blockers.length > 0)
-    throw new RefusedError(readiness.blockers.map((blocker) => blocker.text).join(" "), "blocked", {}, readiness.blockers);
+    throw new RefusedError(
+      readiness.blockers.map((blocker) => blocker.text).join(" "),
+      "blocked",
+      {},
+      readiness.blockers,
+    );
   const signature = (await listSignatures(actor, draft.id)).find((entry) => entry.runId === row.id);
   if (!signature) throw new RefusedError("Nobody has signed off this run.", "blocked");
   const db = await getDb();
-  const [team] = await db.select({ name: organization.name }).from(organization).where(eq(organization.id, actor.teamId));
+  const [team] = await db
+    .select({ name: organization.name })
+    .from(organization)
+    .where(eq(organization.id, actor.teamId));
   const releasedAt = now();
   const id = newId();
   const written = note({ releasedAt, signedBy: signature.signerName ?? "", team: team?.name ?? "" });
   const links = input.recipients.map((recipient) => ({ ...recipient, ...newLink(releasedAt) }));
   const emails = new Set(links.map((link) => link.email.toLowerCase()));
   if (emails.size < links.length)
-    throw new RefusedError("A recipient is named twice. Name each address once.", "recipients", { recipients: "Name each address once." });
+    throw new RefusedError("A recipient is named twice. Name each address once.", "recipients", {
+      recipients: "Name each address once.",
+    });
   await commitAudited(
     actor,
     [
@@ -115,7 +135,9 @@ export async function createRelease(
       db
         .update(revision)
         .set({ state: "released", releasedAt, snapshotHash: row.inputHash })
-        .where(and(eq(revision.id, draft.id), eq(revision.teamId, actor.teamId), eq(revision.state, "draft"))),
+        .where(
+          and(eq(revision.id, draft.id), eq(revision.teamId, actor.teamId), eq(revision.state, "draft")),
+        ),
       db.insert(release).values({
         id,
         teamId: actor.teamId,
@@ -158,7 +180,10 @@ export async function createRelease(
       throw new RefusedError("The draft was edited or released a moment ago. Look at it again.", "stale-run");
     throw error;
   });
-  return { releaseId: id, links: links.map(({ email, name, token, expiresAt }) => ({ email, name, token, expiresAt })) };
+  return {
+    releaseId: id,
+    links: links.map(({ email, name, token, expiresAt }) => ({ email, name, token, expiresAt })),
+  };
 }
 
 /** Newest first. */
@@ -180,14 +205,20 @@ export async function listReleases(actor: Actor, projectId: string) {
     .orderBy(desc(release.releasedAt));
 }
 
-export async function getRelease(actor: Actor, projectId: string, releaseId: string): Promise<{ release: ReleaseRow; recipients: RecipientRow[] }> {
+export async function getRelease(
+  actor: Actor,
+  projectId: string,
+  releaseId: string,
+): Promise<{ release: ReleaseRow; recipients: RecipientRow[] }> {
   if (!can(actor, "release:read")) throw new NotFoundError("The release");
   const db = await getDb();
   const [[row], recipients] = await db.batch([
     db
       .select()
       .from(release)
-      .where(and(eq(release.id, releaseId), eq(release.projectId, projectId), eq(release.teamId, actor.teamId))),
+      .where(
+        and(eq(release.id, releaseId), eq(release.projectId, projectId), eq(release.teamId, actor.teamId)),
+      ),
     db
       .select()
       .from(releaseRecipient)
@@ -210,16 +241,39 @@ export async function renewLink(actor: Actor, projectId: string, releaseId: stri
     [
       db
         .update(releaseRecipient)
-        .set({ tokenHash: hashToken(link.token), tokenExpiresAt: link.expiresAt, revokedAt: null, sends: sql`${releaseRecipient.sends} + 1` })
+        .set({
+          tokenHash: hashToken(link.token),
+          tokenExpiresAt: link.expiresAt,
+          revokedAt: null,
+          sends: sql`${releaseRecipient.sends} + 1`,
+        })
         .where(and(eq(releaseRecipient.id, recipientId), eq(releaseRecipient.teamId, actor.teamId))),
     ],
-    { action: "release.link", subjectKind: "release", subjectId: releaseId, projectId, detail: { email: recipient.email } },
+    {
+      action: "release.link",
+      subjectKind: "release",
+      subjectId: releaseId,
+      projectId,
+      detail: { email: recipient.email },
+    },
   );
-  return { ...link, email: recipient.email, name: recipient.name, letter: row.letter, board: row.note.project, team: row.note.team };
+  return {
+    ...link,
+    email: recipient.email,
+    name: recipient.name,
+    letter: row.letter,
+    board: row.note.project,
+    team: row.note.team,
+  };
 }
 
 /** Ends a recipient's access, by link and by account. */
-export async function revokeRecipient(actor: Actor, projectId: string, releaseId: string, recipientId: string): Promise<void> {
+export async function revokeRecipient(
+  actor: Actor,
+  projectId: string,
+  releaseId: string,
+  recipientId: string,
+): Promise<void> {
   if (!can(actor, "release:create")) throw new NotFoundError("The recipient");
   const { recipients } = await getRelease(actor, projectId, releaseId);
   const recipient = recipients.find((entry) => entry.id === recipientId);
@@ -233,7 +287,13 @@ export async function revokeRecipient(actor: Actor, projectId: string, releaseId
         .set({ revokedAt: now() })
         .where(and(eq(releaseRecipient.id, recipientId), eq(releaseRecipient.teamId, actor.teamId))),
     ],
-    { action: "release.revoke", subjectKind: "release", subjectId: releaseId, projectId, detail: { email: recipient.email } },
+    {
+      action: "release.revoke",
+      subjectKind: "release",
+      subjectId: releaseId,
+      projectId,
+      detail: { email: recipient.email },
+    },
   );
 }
 
@@ -303,15 +363,30 @@ export async function acknowledge(sent: SentNote, by: string, words: string): Pr
   const changed = await db
     .update(releaseRecipient)
     .set({ acknowledgedAt: now(), acknowledgedBy: by, acknowledgement: words })
-    .where(and(eq(releaseRecipient.id, sent.recipientId), isNull(releaseRecipient.acknowledgedAt), isNull(releaseRecipient.revokedAt)))
+    .where(
+      and(
+        eq(releaseRecipient.id, sent.recipientId),
+        isNull(releaseRecipient.acknowledgedAt),
+        isNull(releaseRecipient.revokedAt),
+      ),
+    )
     .returning({ teamId: releaseRecipient.teamId });
   const [row] = changed;
   if (!row) throw new RefusedError("This note was acknowledged already.", "acknowledged");
-  const [found] = await db.select({ projectId: release.projectId }).from(release).where(eq(release.id, sent.releaseId));
+  const [found] = await db
+    .select({ projectId: release.projectId })
+    .from(release)
+    .where(eq(release.id, sent.releaseId));
   await commitAudited(
     { kind: "system", userId: "system", teamId: row.teamId, role: "owner", email: "", name: "Ringfence" },
     [],
-    { action: "note.acknowledge", subjectKind: "release", subjectId: sent.releaseId, projectId: found?.projectId ?? null, detail: { by } },
+    {
+      action: "note.acknowledge",
+      subjectKind: "release",
+      subjectId: sent.releaseId,
+      projectId: found?.projectId ?? null,
+      detail: { by },
+    },
   );
 }
 

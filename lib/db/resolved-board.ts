@@ -16,7 +16,10 @@ const KEPT = 3;
 const holder = globalThis as typeof globalThis & { ringfenceBoards?: Map<string, Promise<BoardOfInputs>> };
 
 /** What a run saw. The run is in hand only after the actor's team and role were checked. */
-export function boardOfRun(actor: Actor, run: Pick<RunRow, "inputHash" | "inputChunks">): Promise<BoardOfInputs> {
+export function boardOfRun(
+  actor: Actor,
+  run: Pick<RunRow, "inputHash" | "inputChunks">,
+): Promise<BoardOfInputs> {
   return remembered(`${actor.teamId} ${run.inputHash}`, () => thawInputs(actor, run.inputChunks));
 }
 

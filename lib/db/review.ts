@@ -42,7 +42,11 @@ export async function listFlags(actor: Actor, projectId: string): Promise<FlagVi
   return rows.map(({ flag: row, ...names }) => ({ ...row, ...names }));
 }
 
-export async function getFlag(actor: Actor, projectId: string, flagId: string): Promise<{ flag: FlagView; entries: FlagEntryView[] }> {
+export async function getFlag(
+  actor: Actor,
+  projectId: string,
+  flagId: string,
+): Promise<{ flag: FlagView; entries: FlagEntryView[] }> {
   const found = (await listFlags(actor, projectId)).find((row) => row.id === flagId);
   if (!found) throw new NotFoundError("The flag");
   const db = await getDb();
@@ -86,7 +90,16 @@ export async function raiseFlag(
       createdBy: actor.userId,
       createdAt: at,
     }),
-    db.insert(flagEntry).values({ id: newId(), teamId: actor.teamId, flagId: id, authorId: actor.userId, at, comment: input.comment }),
+    db
+      .insert(flagEntry)
+      .values({
+        id: newId(),
+        teamId: actor.teamId,
+        flagId: id,
+        authorId: actor.userId,
+        at,
+        comment: input.comment,
+      }),
   ];
   await commitAudited(actor, statements, {
     action: "flag.raise",
@@ -98,7 +111,12 @@ export async function raiseFlag(
   return id;
 }
 
-export async function commentOnFlag(actor: Actor, projectId: string, flagId: string, comment: string): Promise<void> {
+export async function commentOnFlag(
+  actor: Actor,
+  projectId: string,
+  flagId: string,
+  comment: string,
+): Promise<void> {
   if (!can(actor, "review:comment")) throw new NotFoundError("The flag");
   await getFlag(actor, projectId, flagId);
   const db = await getDb();
@@ -121,13 +139,30 @@ export async function updateFlag(
   const [changed] = await db
     .update(flag)
     .set({
-      ...(change.state ? { state: change.state, resolvedAt: resolved ? now() : null, resolvedBy: resolved ? actor.userId : null } : {}),
+      ...(change.state
+        ? {
+            state: change.state,
+            resolvedAt: resolved ? now() : null,
+            resolvedBy: resolved ? actor.userId : null,
+          }
+        : {}),
       ...(change.assigneeUserId !== undefined ? { assigneeUserId: change.assigneeUserId } : {}),
       version: sql`${flag.version} + 1`,
     })
-    .where(and(eq(flag.id, flagId), eq(flag.teamId, actor.teamId), eq(flag.projectId, projectId), eq(flag.version, change.version)))
+    .where(
+      and(
+        eq(flag.id, flagId),
+        eq(flag.teamId, actor.teamId),
+        eq(flag.projectId, projectId),
+        eq(flag.version, change.version),
+      ),
+    )
     .returning({ id: flag.id });
-  if (!changed) throw new ConflictError("Somebody changed this flag meanwhile. Look at it again.", current, ["state", "assignee"]);
+  if (!changed)
+    throw new ConflictError("Somebody changed this flag meanwhile. Look at it again.", current, [
+      "state",
+      "assignee",
+    ]);
   if (change.state)
     await recordAudit(actor, {
       action: change.state === "resolved" ? "flag.resolve" : "flag.reopen",
@@ -149,7 +184,11 @@ export async function countOpenFlags(actor: Actor, projectId: string): Promise<n
 }
 
 /** What a subject is called, from the newest run that knows it. */
-export async function subjectTitle(actor: Actor, projectId: string, subject: Subject): Promise<string | null> {
+export async function subjectTitle(
+  actor: Actor,
+  projectId: string,
+  subject: Subject,
+): Promise<string | null> {
   if (subject.kind === "layer") return null;
   const db = await getDb();
   if (subject.kind === "problem" && subject.mechanism) {
@@ -157,7 +196,14 @@ export async function subjectTitle(actor: Actor, projectId: string, subject: Sub
       .select({ title: problem.title, name: problem.pathName })
       .from(problem)
       .innerJoin(run, eq(run.id, problem.runId))
-      .where(and(eq(run.projectId, projectId), eq(problem.teamId, actor.teamId), eq(problem.pathId, subject.lineageId), eq(problem.mechanism, subject.mechanism)))
+      .where(
+        and(
+          eq(run.projectId, projectId),
+          eq(problem.teamId, actor.teamId),
+          eq(problem.pathId, subject.lineageId),
+          eq(problem.mechanism, subject.mechanism),
+        ),
+      )
       .orderBy(desc(run.number))
       .limit(1);
     return row ? `${row.name}: ${row.title}` : null;
@@ -166,7 +212,13 @@ export async function subjectTitle(actor: Actor, projectId: string, subject: Sub
     .select({ name: pathResult.name })
     .from(pathResult)
     .innerJoin(run, eq(run.id, pathResult.runId))
-    .where(and(eq(run.projectId, projectId), eq(pathResult.teamId, actor.teamId), eq(pathResult.pathId, subject.lineageId)))
+    .where(
+      and(
+        eq(run.projectId, projectId),
+        eq(pathResult.teamId, actor.teamId),
+        eq(pathResult.pathId, subject.lineageId),
+      ),
+    )
     .orderBy(desc(run.number))
     .limit(1);
   return row?.name ?? null;
@@ -192,13 +244,20 @@ async function requireAssignee(actor: Actor, projectId: string, userId: string |
   if (userId === null) return;
   const people = await listAssignees(actor, projectId);
   if (!people.some((person) => person.userId === userId))
-    throw new RefusedError("That person is not in this team, or cannot see the board. Choose another.", "assignee", {
-      assigneeUserId: "Choose somebody of the team.",
-    });
+    throw new RefusedError(
+      "That person is not in this team, or cannot see the board. Choose another.",
+      "assignee",
+      {
+        assigneeUserId: "Choose somebody of the team.",
+      },
+    );
 }
 
 /** Name and address of somebody of the team, for a message. */
-export async function findColleague(actor: Actor, userId: string): Promise<{ name: string; email: string } | null> {
+export async function findColleague(
+  actor: Actor,
+  userId: string,
+): Promise<{ name: string; email: string } | null> {
   const db = await getDb();
   const [row] = await db
     .select({ name: user.name, email: user.email })

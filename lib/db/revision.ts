@@ -33,7 +33,11 @@ export async function listRevisions(actor: Actor, projectId: string): Promise<Re
  * The revision of this letter; without one the draft, or the newest release where there is no draft.
  * @throws NotFoundError
  */
-export async function findRevision(actor: Actor, projectId: string, letter?: string | null): Promise<RevisionRef> {
+export async function findRevision(
+  actor: Actor,
+  projectId: string,
+  letter?: string | null,
+): Promise<RevisionRef> {
   const rows = await listRevisions(actor, projectId);
   const found = letter
     ? rows.find((row) => row.letter === letter)

@@ -69,7 +69,9 @@ export const ruleSetThing: DraftThing<RuleSetDoc> = {
     if (!can(actor, "limits:set")) throw new NotFoundError("This rule set");
   },
   describe: (before, after) => {
-    const changed = differingFields(before?.rules ?? null, after?.rules ?? null).map((rule) => rule.replaceAll("-", " "));
+    const changed = differingFields(before?.rules ?? null, after?.rules ?? null).map((rule) =>
+      rule.replaceAll("-", " "),
+    );
     if (before?.judgedAt !== after?.judgedAt) changed.push("where receivers are judged");
     return changed;
   },

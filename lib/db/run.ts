@@ -7,7 +7,7 @@ import { recordAudit } from "./audit";
 import { getDb } from "./client";
 import { now } from "./clock";
 import { newId } from "./ids";
-import { finding, net, pathResult, problem, project, revision, run, user } from "./schema";
+import { finding, net, pathResult, problem, project, release, revision, run, user } from "./schema";
 
 /** How long a process may be silent before another takes its run over. */
 export const LEASE_MS = 15_000;
@@ -53,7 +53,13 @@ export async function createRun(actor: Actor, input: NewRun): Promise<RunRow> {
     RETURNING id`);
   if (inserted.length === 0) throw new NotFoundError("The draft");
   const row = await getRun(actor, input.projectId, id);
-  await recordAudit(actor, { action: "run.start", subjectKind: "run", subjectId: id, projectId: input.projectId, detail: { number: row.number } });
+  await recordAudit(actor, {
+    action: "run.start",
+    subjectKind: "run",
+    subjectId: id,
+    projectId: input.projectId,
+    detail: { number: row.number },
+  });
   return row;
 }
 
@@ -123,8 +129,15 @@ export async function cancelRun(actor: Actor, projectId: string, runId: string):
     .set({ state: "cancelled", finishedAt: now(), leaseUntil: null })
     .where(and(eq(run.id, runId), eq(run.teamId, actor.teamId), inArray(run.state, ["queued", "running"])))
     .returning({ id: run.id });
-  if (changed.length === 0) throw new RefusedError(`Run ${current.number} is ${current.state} already.`, "run-ended");
-  await recordAudit(actor, { action: "run.cancel", subjectKind: "run", subjectId: runId, projectId, detail: { number: current.number } });
+  if (changed.length === 0)
+    throw new RefusedError(`Run ${current.number} is ${current.state} already.`, "run-ended");
+  await recordAudit(actor, {
+    action: "run.cancel",
+    subjectKind: "run",
+    subjectId: runId,
+    projectId,
+    detail: { number: current.number },
+  });
 }
 
 /** Takes the oldest run that waits, or whose worker fell silent; null when there is none. Atomic. */
@@ -163,7 +176,10 @@ export async function expireLeases(): Promise<number> {
 /** Path ids that a run has results for; a resumed run leaves them out. */
 export async function checkedPathIds(runId: string): Promise<Set<string>> {
   const db = await getDb();
-  const rows = await db.select({ pathId: pathResult.pathId }).from(pathResult).where(eq(pathResult.runId, runId));
+  const rows = await db
+    .select({ pathId: pathResult.pathId })
+    .from(pathResult)
+    .where(eq(pathResult.runId, runId));
   return new Set(rows.map((row) => row.pathId));
 }
 
@@ -199,7 +215,11 @@ export async function saveBatch(runId: string, batch: CheckedBatch): Promise<boo
     ...slices(batch.problems, 200).map((rows) => db.insert(problem).values(rows).onConflictDoNothing()),
     ...slices(batch.findings, 200).map((rows) => db.insert(finding).values(rows)),
   ];
-  const answers = await db.batch([progress, ...inserts, progress] as [typeof progress, ...typeof inserts, typeof progress]);
+  const answers = await db.batch([progress, ...inserts, progress] as [
+    typeof progress,
+    ...typeof inserts,
+    typeof progress,
+  ]);
   return (answers[0] as unknown[]).length > 0;
 }
 
@@ -218,12 +238,6 @@ export async function failRun(runId: string, message: string): Promise<void> {
     .update(run)
     .set({ state: "failed", finishedAt: now(), leaseUntil: null, error: message })
     .where(and(eq(run.id, runId), inArray(run.state, ["queued", "running"])));
-}
-
-export async function runState(runId: string): Promise<RunRow["state"] | null> {
-  const db = await getDb();
-  const [row] = await db.select({ state: run.state }).from(run).where(eq(run.id, runId));
-  return row?.state ?? null;
 }
 
 /** Paths by verdict, counted in the database. */
@@ -249,7 +263,10 @@ export async function listProblems(actor: Actor, projectId: string, runId: strin
 }
 
 /** The failing problems of a run, by the keys that waivers carry. */
-export async function listFailing(actor: Actor, runId: string): Promise<{ pathId: string; mechanism: string }[]> {
+export async function listFailing(
+  actor: Actor,
+  runId: string,
+): Promise<{ pathId: string; mechanism: string }[]> {
   if (!can(actor, "project:read")) throw new NotFoundError("The run");
   const db = await getDb();
   return db
@@ -259,7 +276,11 @@ export async function listFailing(actor: Actor, runId: string): Promise<{ pathId
 }
 
 /** What the table of problems shows of one: with its path's driver and layers, and the worst finding's numbers. */
-export async function listProblemRows(actor: Actor, projectId: string, runId: string): Promise<ProblemEntry[]> {
+export async function listProblemRows(
+  actor: Actor,
+  projectId: string,
+  runId: string,
+): Promise<ProblemEntry[]> {
   await getRun(actor, projectId, runId);
   const db = await getDb();
   return db
@@ -303,7 +324,11 @@ export async function listProblemRows(actor: Actor, projectId: string, runId: st
 }
 
 /** Findings of selectors, which choose what to look at and count for nothing once simulation has judged the path. */
-export async function listSelectorRows(actor: Actor, projectId: string, runId: string): Promise<SelectorEntry[]> {
+export async function listSelectorRows(
+  actor: Actor,
+  projectId: string,
+  runId: string,
+): Promise<SelectorEntry[]> {
   await getRun(actor, projectId, runId);
   const db = await getDb();
   return db
@@ -331,31 +356,63 @@ export interface RunPath {
   findings: FindingRow[];
 }
 
-export async function getRunPath(actor: Actor, projectId: string, runId: string, pathId: string): Promise<RunPath> {
+export async function getRunPath(
+  actor: Actor,
+  projectId: string,
+  runId: string,
+  pathId: string,
+): Promise<RunPath> {
   await getRun(actor, projectId, runId);
   const db = await getDb();
-  const mine = { result: and(eq(pathResult.runId, runId), eq(pathResult.pathId, pathId), eq(pathResult.teamId, actor.teamId)) };
+  const mine = {
+    result: and(
+      eq(pathResult.runId, runId),
+      eq(pathResult.pathId, pathId),
+      eq(pathResult.teamId, actor.teamId),
+    ),
+  };
   const [[result], problems, findings] = await db.batch([
     db.select().from(pathResult).where(mine.result),
-    db.select().from(problem).where(and(eq(problem.runId, runId), eq(problem.pathId, pathId), eq(problem.teamId, actor.teamId))),
-    db.select().from(finding).where(and(eq(finding.runId, runId), eq(finding.pathId, pathId), eq(finding.teamId, actor.teamId))),
+    db
+      .select()
+      .from(problem)
+      .where(and(eq(problem.runId, runId), eq(problem.pathId, pathId), eq(problem.teamId, actor.teamId))),
+    db
+      .select()
+      .from(finding)
+      .where(and(eq(finding.runId, runId), eq(finding.pathId, pathId), eq(finding.teamId, actor.teamId))),
   ]);
   if (!result) throw new NotFoundError("The path");
   return { result, problems, findings };
 }
 
 /** Findings of a run, all of them or of one rule. */
-export async function listFindings(actor: Actor, projectId: string, runId: string, rule?: string): Promise<FindingRow[]> {
+export async function listFindings(
+  actor: Actor,
+  projectId: string,
+  runId: string,
+  rule?: string,
+): Promise<FindingRow[]> {
   await getRun(actor, projectId, runId);
   const db = await getDb();
   return db
     .select()
     .from(finding)
-    .where(and(eq(finding.runId, runId), eq(finding.teamId, actor.teamId), rule ? eq(finding.rule, rule) : undefined))
+    .where(
+      and(
+        eq(finding.runId, runId),
+        eq(finding.teamId, actor.teamId),
+        rule ? eq(finding.rule, rule) : undefined,
+      ),
+    )
     .orderBy(asc(finding.pathId), asc(finding.rule));
 }
 
-export async function listPathResults(actor: Actor, projectId: string, runId: string): Promise<Omit<PathResultRow, "detail">[]> {
+export async function listPathResults(
+  actor: Actor,
+  projectId: string,
+  runId: string,
+): Promise<Omit<PathResultRow, "detail">[]> {
   await getRun(actor, projectId, runId);
   const db = await getDb();
   const { detail: _detail, ...columns } = pathResultColumns;
@@ -418,15 +475,12 @@ export async function countScopes(actor: Actor, revisionId: string): Promise<Rec
   return Object.fromEntries(rows.map((row) => [row.scope, row.count]));
 }
 
-/** Corner values are kept for the last three runs and for released ones: older detail is thinned to its hash. */
-export async function thinOldRuns(projectId: string, keep: string[]): Promise<void> {
+/** Corner values are kept for the last three runs and for released ones; of older runs only what was found stays. */
+export async function thinOldRuns(projectId: string): Promise<void> {
   const db = await getDb();
-  const recent = db
-    .select({ id: run.id })
-    .from(run)
-    .where(eq(run.projectId, projectId))
-    .orderBy(desc(run.number))
-    .limit(3);
+  const runs = db.select({ id: run.id }).from(run).where(eq(run.projectId, projectId));
+  const recent = runs.orderBy(desc(run.number)).limit(3);
+  const released = db.select({ id: release.runId }).from(release).where(eq(release.projectId, projectId));
   await db
     .update(pathResult)
     .set({ detail: Buffer.alloc(0) })
@@ -434,7 +488,8 @@ export async function thinOldRuns(projectId: string, keep: string[]): Promise<vo
       and(
         inArray(pathResult.runId, db.select({ id: run.id }).from(run).where(eq(run.projectId, projectId))),
         notInArray(pathResult.runId, recent),
-        keep.length > 0 ? notInArray(pathResult.runId, keep) : undefined,
+        notInArray(pathResult.runId, released),
+        sql`length(${pathResult.detail}) > 0`,
       ),
     );
 }

@@ -51,7 +51,10 @@ export async function readInputs(actor: Actor, revisionId: string): Promise<Revi
     const after = await getRevision(actor, revisionId);
     if (before.editCount === after.editCount && before.projectVersion === after.projectVersion) return inputs;
   }
-  throw new RefusedError("The draft is being edited without a pause. Wait until the edits are done, then try again.", "busy-draft");
+  throw new RefusedError(
+    "The draft is being edited without a pause. Wait until the edits are done, then try again.",
+    "busy-draft",
+  );
 }
 
 /** Writes the chunks of these inputs that are not there yet and names them all. */
@@ -141,7 +144,9 @@ export async function readChunk(actor: Actor, sha256: string): Promise<string> {
   if (!row) throw new NotFoundError("This part of a snapshot");
   const text = (await unzip(row.content)).toString("utf8");
   if (sha256Of(text) !== sha256)
-    throw new Error(`The stored snapshot part ${sha256.slice(0, 12)} is damaged: its content is not what its name says.`);
+    throw new Error(
+      `The stored snapshot part ${sha256.slice(0, 12)} is damaged: its content is not what its name says.`,
+    );
   return text;
 }
 
@@ -161,7 +166,8 @@ async function readOnce(actor: Actor, revisionId: string): Promise<RevisionInput
     listNeighbours(actor, revision),
   ]);
   const nets: RevisionInputs["nets"] = [];
-  for await (const some of readNetChunks(actor, revision, NETS_A_CHUNK)) for (const net of some) nets.push(timeless(net));
+  for await (const some of readNetChunks(actor, revision, NETS_A_CHUNK))
+    for (const net of some) nets.push(timeless(net));
   return {
     schema: 1,
     project: { name: revision.projectName, unit: revision.projectUnit },
@@ -169,7 +175,10 @@ async function readOnce(actor: Actor, revisionId: string): Promise<RevisionInput
     stackup: {
       name: stackup.name,
       version: 0,
-      layers: stackup.layers.map(({ thickness_m: _derived, ...layer }) => ({ ...layer, id: layer.lineageId })),
+      layers: stackup.layers.map(({ thickness_m: _derived, ...layer }) => ({
+        ...layer,
+        id: layer.lineageId,
+      })),
     },
     classes: classes.map(({ netCount: _derived, ...netClass }) => timeless(netClass)),
     models: models.map(timeless),

@@ -52,7 +52,12 @@ export async function getStackup(actor: Actor, revision: Pick<RevisionRef, "id">
   return {
     name: head.name,
     version: head.version,
-    layers: rows.map((row) => ({ ...row.doc, id: row.id, lineageId: row.lineageId, thickness_m: row.thickness_m })),
+    layers: rows.map((row) => ({
+      ...row.doc,
+      id: row.id,
+      lineageId: row.lineageId,
+      thickness_m: row.thickness_m,
+    })),
   };
 }
 

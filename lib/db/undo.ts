@@ -29,7 +29,11 @@ export interface Moved {
 export async function undo(actor: Actor, projectId: string): Promise<Moved> {
   const draft = await getDraft(actor, projectId, "project:read");
   const last = await lastEdit(actor, draft);
-  if (!last) throw new RefusedError("You have made no edit of this draft that could be taken back.", "nothing-to-undo");
+  if (!last)
+    throw new RefusedError(
+      "You have made no edit of this draft that could be taken back.",
+      "nothing-to-undo",
+    );
   if (!last.before || !last.after)
     throw new RefusedError(
       `The last edit, "${last.summary}", is an import and is not taken back. Import the former list again instead.`,
@@ -42,7 +46,8 @@ export async function undo(actor: Actor, projectId: string): Promise<Moved> {
 export async function redo(actor: Actor, projectId: string): Promise<Moved> {
   const draft = await getDraft(actor, projectId, "project:read");
   const last = await lastUndone(actor, draft);
-  if (!last?.before || !last.after) throw new RefusedError("There is no edit to bring back.", "nothing-to-redo");
+  if (!last?.before || !last.after)
+    throw new RefusedError("There is no edit to bring back.", "nothing-to-redo");
   return move(actor, draft, last, false);
 }
 
@@ -83,7 +88,10 @@ async function moveThing<State>(
   undone: boolean,
   thing: DraftThing<State>,
 ): Promise<Moved> {
-  const [from, to] = (undone ? [stored.after, stored.before] : [stored.before, stored.after]) as [EditSide, EditSide];
+  const [from, to] = (undone ? [stored.after, stored.before] : [stored.before, stored.after]) as [
+    EditSide,
+    EditSide,
+  ];
   const expected = thing.parse(from.state);
   const wanted = thing.parse(to.state);
   const reading = await thing.read(actor, draft, stored.entityId, expected ?? wanted);

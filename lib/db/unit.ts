@@ -39,7 +39,8 @@ export async function commitUnit(statements: readonly Statement[]): Promise<void
   try {
     await db.batch([first, ...rest]);
   } catch (error) {
-    if (error instanceof Error && error.message.includes(GUARD_FAILED)) throw new GuardError(failedAt(error), error);
+    if (error instanceof Error && error.message.includes(GUARD_FAILED))
+      throw new GuardError(failedAt(error), error);
     throw error;
   }
 }

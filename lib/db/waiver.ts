@@ -36,22 +36,40 @@ export async function grantWaiver(
   const row = await getRun(actor, projectId, input.runId);
   await requireNotEditor(actor, row, "waive a problem of it");
   const at = now();
-  if (input.expiresAt <= at) throw new RefusedError("The waiver would already have expired. Choose a later day.", "expiry", { expiresAt: "Choose a later day." });
+  if (input.expiresAt <= at)
+    throw new RefusedError("The waiver would already have expired. Choose a later day.", "expiry", {
+      expiresAt: "Choose a later day.",
+    });
   if (input.expiresAt > at + maxWaiverMs)
-    throw new RefusedError("A waiver lasts two years at most. Choose an earlier day.", "expiry", { expiresAt: "Two years at most." });
+    throw new RefusedError("A waiver lasts two years at most. Choose an earlier day.", "expiry", {
+      expiresAt: "Two years at most.",
+    });
   const { findings, problems } = await getRunPath(actor, projectId, input.runId, input.pathId);
   const found = problems.find((entry) => entry.mechanism === input.mechanism);
   if (!found) throw new NotFoundError("The problem");
   if (found.verdict === "no data")
-    throw new RefusedError("There is no value to waive: the problem has no data. Accept the missing input with a reason instead.", "no-data");
+    throw new RefusedError(
+      "There is no value to waive: the problem has no data. Accept the missing input with a reason instead.",
+      "no-data",
+    );
   const waived = findings
     .filter((entry) => entry.mechanism === input.mechanism && entry.verdict === "fail")
     .flatMap((entry) =>
       entry.value === null || entry.limit === null || entry.margin === null
         ? []
-        : [{ rule: entry.rule, value: entry.value, limit: entry.limit, unit: entry.unit, margin: entry.margin, corner: entry.corner }],
+        : [
+            {
+              rule: entry.rule,
+              value: entry.value,
+              limit: entry.limit,
+              unit: entry.unit,
+              margin: entry.margin,
+              corner: entry.corner,
+            },
+          ],
     );
-  if (waived.length === 0) throw new RefusedError("Nothing of this problem fails, so there is nothing to waive.", "nothing-fails");
+  if (waived.length === 0)
+    throw new RefusedError("Nothing of this problem fails, so there is nothing to waive.", "nothing-fails");
   const db = await getDb();
   const id = newId();
   await commitAudited(
@@ -78,7 +96,12 @@ export async function grantWaiver(
       subjectKind: "waiver",
       subjectId: id,
       projectId,
-      detail: { path: found.pathName, problem: found.title, reason: input.reason, expiresAt: input.expiresAt },
+      detail: {
+        path: found.pathName,
+        problem: found.title,
+        reason: input.reason,
+        expiresAt: input.expiresAt,
+      },
     },
   );
   return id;
@@ -101,24 +124,45 @@ export async function revokeWaiver(actor: Actor, projectId: string, waiverId: st
         .set({ revokedAt: now(), revokedBy: actor.userId })
         .where(and(eq(waiver.id, waiverId), eq(waiver.teamId, actor.teamId), isNull(waiver.revokedAt))),
     ],
-    { action: "waiver.revoke", subjectKind: "waiver", subjectId: waiverId, projectId, detail: { path: current.pathName } },
+    {
+      action: "waiver.revoke",
+      subjectKind: "waiver",
+      subjectId: waiverId,
+      projectId,
+      detail: { path: current.pathName },
+    },
   );
 }
 
 /** Every waiver of the project, newest first, held against a run; without a run against itself. */
-export async function listWaivers(actor: Actor, projectId: string, row: RunRow | null): Promise<WaiverView[]> {
+export async function listWaivers(
+  actor: Actor,
+  projectId: string,
+  row: RunRow | null,
+): Promise<WaiverView[]> {
   if (!can(actor, "project:read")) throw new NotFoundError("The project");
   const db = await getDb();
   const rows = await db
-    .select({ waiver, authorName: sql<string | null>`(SELECT name FROM ${user} WHERE id = ${waiver.createdBy})` })
+    .select({
+      waiver,
+      authorName: sql<string | null>`(SELECT name FROM ${user} WHERE id = ${waiver.createdBy})`,
+    })
     .from(waiver)
     .where(and(eq(waiver.projectId, projectId), eq(waiver.teamId, actor.teamId)))
     .orderBy(desc(waiver.createdAt));
   const at = now();
-  const found = row ? await valuesNow(actor, row.id, rows.map((entry) => entry.waiver)) : null;
+  const found = row
+    ? await valuesNow(
+        actor,
+        row.id,
+        rows.map((entry) => entry.waiver),
+      )
+    : null;
   return rows.map(({ waiver: granted, authorName }) => {
     const current = found?.findings.get(`${granted.pathLineageId} ${granted.mechanism}`) ?? [];
-    const sameInputs = !found || found.hash(granted.runId, granted.pathLineageId) === found.hash(row?.id ?? "", granted.pathLineageId);
+    const sameInputs =
+      !found ||
+      found.hash(granted.runId, granted.pathLineageId) === found.hash(row?.id ?? "", granted.pathLineageId);
     return { ...granted, authorName, judged: judgeWaiver(granted, current, sameInputs, at), current };
   });
 }
@@ -147,11 +191,24 @@ async function valuesNow(actor: Actor, runId: string, granted: readonly WaiverRo
           margin: finding.margin,
         })
         .from(finding)
-        .where(and(eq(finding.runId, runId), inArray(finding.pathId, slice), eq(finding.counts, true), eq(finding.teamId, actor.teamId))),
+        .where(
+          and(
+            eq(finding.runId, runId),
+            inArray(finding.pathId, slice),
+            eq(finding.counts, true),
+            eq(finding.teamId, actor.teamId),
+          ),
+        ),
       db
         .select({ runId: pathResult.runId, pathId: pathResult.pathId, inputHash: pathResult.inputHash })
         .from(pathResult)
-        .where(and(inArray(pathResult.runId, runs), inArray(pathResult.pathId, slice), eq(pathResult.teamId, actor.teamId))),
+        .where(
+          and(
+            inArray(pathResult.runId, runs),
+            inArray(pathResult.pathId, slice),
+            eq(pathResult.teamId, actor.teamId),
+          ),
+        ),
     ]);
     for (const { pathId, mechanism, ...values } of found) {
       const key = `${pathId} ${mechanism}`;
@@ -163,7 +220,11 @@ async function valuesNow(actor: Actor, runId: string, granted: readonly WaiverRo
 }
 
 /** Keys of problems whose failures a waiver covers in this run: path lineage and mechanism. */
-export async function coveredProblems(actor: Actor, projectId: string, row: RunRow): Promise<Map<string, WaiverView>> {
+export async function coveredProblems(
+  actor: Actor,
+  projectId: string,
+  row: RunRow,
+): Promise<Map<string, WaiverView>> {
   const covered = new Map<string, WaiverView>();
   for (const view of await listWaivers(actor, projectId, row))
     if (view.judged.covers) covered.set(`${view.pathLineageId} ${view.mechanism}`, view);
@@ -199,12 +260,22 @@ export async function acceptNoData(
         createdAt: now(),
       }),
     ],
-    { action: "no-data.accept", subjectKind: "run", subjectId: row.id, projectId, detail: { missing: input.missing, reason: input.reason } },
+    {
+      action: "no-data.accept",
+      subjectKind: "run",
+      subjectId: row.id,
+      projectId,
+      detail: { missing: input.missing, reason: input.reason },
+    },
   );
   return id;
 }
 
-export async function withdrawAcceptance(actor: Actor, projectId: string, acceptanceId: string): Promise<void> {
+export async function withdrawAcceptance(
+  actor: Actor,
+  projectId: string,
+  acceptanceId: string,
+): Promise<void> {
   if (!can(actor, "review:waive")) throw new NotFoundError("The acceptance");
   const db = await getDb();
   const [current] = await db
@@ -227,7 +298,13 @@ export async function withdrawAcceptance(actor: Actor, projectId: string, accept
         .set({ revokedAt: now() })
         .where(and(eq(noDataAcceptance.id, acceptanceId), eq(noDataAcceptance.teamId, actor.teamId))),
     ],
-    { action: "no-data.withdraw", subjectKind: "revision", subjectId: current.revisionId, projectId, detail: { missing: current.missing } },
+    {
+      action: "no-data.withdraw",
+      subjectKind: "revision",
+      subjectId: current.revisionId,
+      projectId,
+      detail: { missing: current.missing },
+    },
   );
 }
 
@@ -244,27 +321,53 @@ export async function listAcceptances(actor: Actor, revisionId: string) {
     })
     .from(noDataAcceptance)
     .where(
-      and(eq(noDataAcceptance.revisionId, revisionId), eq(noDataAcceptance.teamId, actor.teamId), isNull(noDataAcceptance.revokedAt)),
+      and(
+        eq(noDataAcceptance.revisionId, revisionId),
+        eq(noDataAcceptance.teamId, actor.teamId),
+        isNull(noDataAcceptance.revokedAt),
+      ),
     );
 }
 
 /** What is missing in a run, by the input that would fill it, with the paths that filling it would free. */
-export async function missingInputs(actor: Actor, row: RunRow): Promise<{ missing: string; paths: number }[]> {
+export async function missingInputs(
+  actor: Actor,
+  row: RunRow,
+): Promise<{ missing: string; paths: number }[]> {
   if (!can(actor, "project:read")) throw new NotFoundError("The run");
   const db = await getDb();
   return db
-    .select({ missing: sql<string>`${problem.missing}`, paths: sql<number>`count(DISTINCT ${problem.pathId})` })
+    .select({
+      missing: sql<string>`${problem.missing}`,
+      paths: sql<number>`count(DISTINCT ${problem.pathId})`,
+    })
     .from(problem)
-    .where(and(eq(problem.runId, row.id), eq(problem.teamId, actor.teamId), eq(problem.verdict, "no data"), sql`${problem.missing} IS NOT NULL`))
+    .where(
+      and(
+        eq(problem.runId, row.id),
+        eq(problem.teamId, actor.teamId),
+        eq(problem.verdict, "no data"),
+        sql`${problem.missing} IS NOT NULL`,
+      ),
+    )
     .groupBy(problem.missing)
     .orderBy(sql`2 DESC`, problem.missing);
 }
 
 /** A reviewer's signature on a finished run of the draft; not by somebody who edited it. */
-export async function signRun(actor: Actor, projectId: string, runId: string, remark: string): Promise<string> {
+export async function signRun(
+  actor: Actor,
+  projectId: string,
+  runId: string,
+  remark: string,
+): Promise<string> {
   if (!can(actor, "review:sign")) throw new NotFoundError("The run");
   const row = await getRun(actor, projectId, runId);
-  if (row.state !== "done") throw new RefusedError(`Run ${row.number} is ${row.state}. Only a finished run can be signed.`, "unfinished");
+  if (row.state !== "done")
+    throw new RefusedError(
+      `Run ${row.number} is ${row.state}. Only a finished run can be signed.`,
+      "unfinished",
+    );
   await requireNotEditor(actor, row, "sign it off");
   const db = await getDb();
   const id = newId();
@@ -283,7 +386,13 @@ export async function signRun(actor: Actor, projectId: string, runId: string, re
         remark,
       }),
     ],
-    { action: "run.sign", subjectKind: "run", subjectId: runId, projectId, detail: { number: row.number, remark } },
+    {
+      action: "run.sign",
+      subjectKind: "run",
+      subjectId: runId,
+      projectId,
+      detail: { number: row.number, remark },
+    },
   );
   return id;
 }
@@ -295,12 +404,23 @@ export async function withdrawSignature(actor: Actor, projectId: string, signOff
     .select()
     .from(signOff)
     .where(
-      and(eq(signOff.id, signOffId), eq(signOff.projectId, projectId), eq(signOff.teamId, actor.teamId), eq(signOff.signedBy, actor.userId), isNull(signOff.withdrawnAt)),
+      and(
+        eq(signOff.id, signOffId),
+        eq(signOff.projectId, projectId),
+        eq(signOff.teamId, actor.teamId),
+        eq(signOff.signedBy, actor.userId),
+        isNull(signOff.withdrawnAt),
+      ),
     );
   if (!current) throw new NotFoundError("The signature");
   await commitAudited(
     actor,
-    [db.update(signOff).set({ withdrawnAt: now() }).where(and(eq(signOff.id, signOffId), eq(signOff.teamId, actor.teamId)))],
+    [
+      db
+        .update(signOff)
+        .set({ withdrawnAt: now() })
+        .where(and(eq(signOff.id, signOffId), eq(signOff.teamId, actor.teamId))),
+    ],
     { action: "run.unsign", subjectKind: "run", subjectId: current.runId, projectId },
   );
 }
@@ -321,12 +441,13 @@ export async function listSignatures(actor: Actor, revisionId: string) {
     })
     .from(signOff)
     .innerJoin(run, eq(run.id, signOff.runId))
-    .where(and(eq(signOff.revisionId, revisionId), eq(signOff.teamId, actor.teamId), isNull(signOff.withdrawnAt)))
+    .where(
+      and(eq(signOff.revisionId, revisionId), eq(signOff.teamId, actor.teamId), isNull(signOff.withdrawnAt)),
+    )
     .orderBy(desc(signOff.signedAt));
 }
 
 async function requireNotEditor(actor: Actor, row: RunRow, act: string): Promise<void> {
   if (await hasEdited(actor, row.revisionId))
-
     throw new RefusedError(`You edited this draft, so another reviewer must ${act}.`, "editor");
 }

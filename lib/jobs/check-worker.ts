@@ -11,7 +11,7 @@ import type { Corner, PathResult } from "@/lib/si/rules/types";
 
 export interface CheckBatch {
   paths: ResolvedPath[];
-  corners: Corner[];
+  corners: readonly Corner[];
 }
 
 export interface CheckedPath {
@@ -45,7 +45,7 @@ export default function checkBatch({ paths, corners }: CheckBatch): CheckedPath[
 }
 
 /** SHA-256 over the resolved path with its limits, the corners and the engine's version. */
-export function pathInputHash(path: ResolvedPath, corners: Corner[]): string {
+export function pathInputHash(path: ResolvedPath, corners: readonly Corner[]): string {
   return createHash("sha256")
     .update(canonicalJson({ engine: engineVersion, corners, path }))
     .digest("hex");

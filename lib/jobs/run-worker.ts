@@ -6,6 +6,7 @@ import {
   countVerdicts,
   failRun,
   finishRun,
+  thinOldRuns,
   saveBatch,
   type RunRow,
 } from "@/lib/db/run";
@@ -21,10 +22,16 @@ import { resultRows } from "./result-rows";
 /** Paths a worker judges before its results are written: small enough for a lively bar, large enough to pay. */
 const BATCH = 40;
 
+interface RunLoop {
+  active: Promise<void> | null;
+  again: boolean;
+  aborts: Map<string, AbortController>;
+}
+
 const shared = globalThis as typeof globalThis & {
-  __ringfenceRunLoop?: { active: Promise<void> | null; again: boolean; aborts: Map<string, AbortController> };
+  __ringfenceRunLoop?: RunLoop;
 };
-const loop = () => (shared.__ringfenceRunLoop ??= { active: null, again: false, aborts: new Map() });
+const loop = (): RunLoop => (shared.__ringfenceRunLoop ??= { active: null, again: false, aborts: new Map() });
 
 /** Works queued runs, one after the other, until none is left. Called after a run is queued and at start. */
 export function wakeRunWorker(): void {
@@ -77,7 +84,9 @@ async function workRun(row: RunRow): Promise<void> {
     };
     // One feeder more than threads keeps every thread busy while a batch is being written.
     await Promise.all(Array.from({ length: checkThreads() + 1 }, feed));
-    if (running) await finishRun(row.id, await countVerdicts(row.id));
+    if (!running) return;
+    await finishRun(row.id, await countVerdicts(row.id));
+    await thinOldRuns(row.projectId);
   } catch (error) {
     if (abort.signal.aborted) return;
     await failRun(row.id, error instanceof Error ? error.message : "It stopped for an unknown reason.");

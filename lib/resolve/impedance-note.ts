@@ -53,7 +53,13 @@ function noteLines(inputs: RevisionInputs): NoteLine[] {
       if (!layer || !entry.width || (netClass.kind === "differential" && !entry.gap)) continue;
       const width = toSi(entry.width, "length");
       const gap = entry.gap && netClass.kind === "differential" ? toSi(entry.gap, "length") : null;
-      const key = [index, width.toExponential(9), gap?.toExponential(9), targetOhms, netClass.tolerancePercent].join(" ");
+      const key = [
+        index,
+        width.toExponential(9),
+        gap?.toExponential(9),
+        targetOhms,
+        netClass.tolerancePercent,
+      ].join(" ");
       const routed = countNets(inputs, netClass, entry.layerLineageId, width);
       const existing = rows.get(key);
       if (existing) {
@@ -87,7 +93,12 @@ function noteLines(inputs: RevisionInputs): NoteLine[] {
     .map((row, index) => ({ ...row, line: index + 1 }));
 }
 
-function predict(stackup: Stackup, index: number, width: number, gap: number | null): Pick<NoteLine, "predictedOhms" | "method" | "references"> {
+function predict(
+  stackup: Stackup,
+  index: number,
+  width: number,
+  gap: number | null,
+): Pick<NoteLine, "predictedOhms" | "method" | "references"> {
   try {
     const { line, built } = lineOnLayer(stackup, index, gap === null ? { width } : { width, gap });
     const planes = [built.references.above, built.references.below].flatMap((plane) =>
@@ -99,16 +110,27 @@ function predict(stackup: Stackup, index: number, width: number, gap: number | n
       references: planes.join(" and "),
     };
   } catch (error) {
-    return { predictedOhms: null, method: error instanceof Error ? error.message : "no prediction", references: "" };
+    return {
+      predictedOhms: null,
+      method: error instanceof Error ? error.message : "no prediction",
+      references: "",
+    };
   }
 }
 
-function countNets(inputs: RevisionInputs, netClass: StoredNetClass, layerLineageId: string, width: number): number {
+function countNets(
+  inputs: RevisionInputs,
+  netClass: StoredNetClass,
+  layerLineageId: string,
+  width: number,
+): number {
   return inputs.nets.filter(
     (net) =>
       net.classLineageId === netClass.lineageId &&
       net.topology.sections.some(
-        (section) => section.layerLineageId === layerLineageId && Math.abs(toSi(section.width, "length") - width) < SAME_WIDTH_M,
+        (section) =>
+          section.layerLineageId === layerLineageId &&
+          Math.abs(toSi(section.width, "length") - width) < SAME_WIDTH_M,
       ),
   ).length;
 }

@@ -2,7 +2,7 @@ import { builtThicknessExact, formatQuantity, toSi } from "@/lib/si";
 import type { StoredStackupLayer } from "@/lib/schemas/stackup";
 
 /** Thickness of a layer as built [m]; null where an input of it is missing. */
-export function layerThickness(layers: StoredStackupLayer[], index: number): number | null {
+export function layerThickness(layers: readonly StoredStackupLayer[], index: number): number | null {
   const exact = builtThicknessExact(layers, index, "m");
   return exact ? toSi(exact, "length") : null;
 }

@@ -19,10 +19,20 @@ export function releaseBlockers(facts: ReleaseReadiness): ReleaseBlocker[] {
   const { run } = facts;
   if (!run) return [{ kind: "no run", text: "The draft has not been checked. Start a run.", count: null }];
   if (run.state !== "done")
-    return [{ kind: "unfinished run", text: `Run ${run.number} is ${run.state}. Let it finish or start another.`, count: null }];
+    return [
+      {
+        kind: "unfinished run",
+        text: `Run ${run.number} is ${run.state}. Let it finish or start another.`,
+        count: null,
+      },
+    ];
   const blockers: ReleaseBlocker[] = [];
   if (run.inputHash !== facts.draftInputHash)
-    blockers.push({ kind: "stale run", text: `The draft was edited after run ${run.number}. Run the check again.`, count: null });
+    blockers.push({
+      kind: "stale run",
+      text: `The draft was edited after run ${run.number}. Run the check again.`,
+      count: null,
+    });
   if (facts.failuresNotWaived > 0)
     blockers.push({
       kind: "failures",

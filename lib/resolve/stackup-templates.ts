@@ -20,8 +20,20 @@ const RECIPES: readonly Recipe[] = [
   recipe(2, "1.6", "SG", ["1.5"], "Signals above, ground below."),
   recipe(4, "1.6", "SGPS", ["0.2", "1.08"], "Signals outside, ground and supply inside."),
   recipe(6, "1.6", "SGSSGS", ["0.11", "0.2", "0.75"], "Four signal layers, each beside a ground plane."),
-  recipe(8, "1.6", "SGSPGSGS", ["0.11", "0.13", "0.2", "0.52"], "Four signal layers, three grounds, one supply."),
-  recipe(10, "1.6", "SGSSPGSSGS", ["0.1", "0.13", "0.13", "0.13", "0.4"], "Six signal layers, three grounds, one supply."),
+  recipe(
+    8,
+    "1.6",
+    "SGSPGSGS",
+    ["0.11", "0.13", "0.2", "0.52"],
+    "Four signal layers, three grounds, one supply.",
+  ),
+  recipe(
+    10,
+    "1.6",
+    "SGSSPGSSGS",
+    ["0.1", "0.13", "0.13", "0.13", "0.4"],
+    "Six signal layers, three grounds, one supply.",
+  ),
   recipe(
     12,
     "1.6",
@@ -39,12 +51,14 @@ const RECIPES: readonly Recipe[] = [
 ];
 
 /** What a new project's stackup can start from. */
-export const stackupTemplates: readonly StackupTemplate[] = RECIPES.map(({ id, title, copperLayers, description }) => ({
-  id,
-  title,
-  copperLayers,
-  description,
-}));
+export const stackupTemplates: readonly StackupTemplate[] = RECIPES.map(
+  ({ id, title, copperLayers, description }) => ({
+    id,
+    title,
+    copperLayers,
+    description,
+  }),
+);
 
 /** The stackup of a template, or null where there is none of this name. */
 export function stackupFromTemplate(templateId: string): StackupDoc | null {

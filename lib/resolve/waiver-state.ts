@@ -46,14 +46,24 @@ const LOOK_AGAIN_VOLTS = 0.005;
  * @param sameInputs whether the path's input hash is the one it was granted on
  * @param now     ms UTC
  */
-export function judgeWaiver(waiver: WaiverRecord, current: CurrentValue[], sameInputs: boolean, now: number): JudgedWaiver {
+export function judgeWaiver(
+  waiver: WaiverRecord,
+  current: CurrentValue[],
+  sameInputs: boolean,
+  now: number,
+): JudgedWaiver {
   if (waiver.revokedAt !== null) return { state: "revoked", covers: false, reason: "It was revoked." };
   if (now >= waiver.expiresAt) return { state: "expired", covers: false, reason: "It has expired." };
   const failing = current.filter((finding) => finding.verdict === "fail");
   let lookAgain: string | null = null;
   for (const finding of failing) {
     const granted = waiver.waived.find((value) => value.rule === finding.rule);
-    if (!granted) return { state: "void", covers: false, reason: `It never covered the rule "${finding.rule}", which fails now.` };
+    if (!granted)
+      return {
+        state: "void",
+        covers: false,
+        reason: `It never covered the rule "${finding.rule}", which fails now.`,
+      };
     if (finding.margin === null) continue;
     const worse = granted.margin - finding.margin;
     if (worse <= 0) continue;
@@ -61,7 +71,8 @@ export function judgeWaiver(waiver: WaiverRecord, current: CurrentValue[], sameI
       Math.abs(granted.limit) * LOOK_AGAIN_SHARE,
       granted.unit === "V" ? LOOK_AGAIN_VOLTS : granted.unit === "mV" ? LOOK_AGAIN_VOLTS * 1000 : 0,
     );
-    if (worse > allowance) return { state: "void", covers: false, reason: `"${finding.rule}" is worse than what was waived.` };
+    if (worse > allowance)
+      return { state: "void", covers: false, reason: `"${finding.rule}" is worse than what was waived.` };
     lookAgain = `"${finding.rule}" is slightly worse than what was waived.`;
   }
   if (lookAgain) return { state: "look again", covers: false, reason: lookAgain };

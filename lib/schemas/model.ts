@@ -39,7 +39,10 @@ export const modelDoc = z
     origin: origin.default("assumed"),
     note: z.string().trim().max(500).default(""),
   })
-  .refine((m) => m.driver !== null || m.receiver !== null, "A model drives, receives, or both: fill one part.");
+  .refine(
+    (m) => m.driver !== null || m.receiver !== null,
+    "A model drives, receives, or both: fill one part.",
+  );
 export type ModelDoc = z.infer<typeof modelDoc>;
 export type StoredModel = ModelDoc & { id: string; lineageId: string; version: number };
 export const modelUpdate = z.object({ version, model: modelDoc });

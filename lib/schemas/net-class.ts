@@ -1,6 +1,16 @@
 import { z } from "zod";
 import { id, nameText, version } from "./common";
-import { capacitance, decimalText, frequency, length, positiveLength, quantity, resistance, time, voltage } from "./quantity";
+import {
+  capacitance,
+  decimalText,
+  frequency,
+  length,
+  positiveLength,
+  quantity,
+  resistance,
+  time,
+  voltage,
+} from "./quantity";
 
 export const signalKinds = ["data", "clock", "strobe", "slow"] as const;
 
@@ -36,7 +46,9 @@ export const netClassDoc = z.object({
   name: nameText(60),
   kind: z.enum(["single", "differential"]),
   targetImpedance: quantity("resistance", { positive: true, max: 1000 }).nullable().default(null),
-  tolerancePercent: decimalText.refine((t) => Number(t) > 0 && Number(t) <= 50, "Write 0 to 50 %.").default("10"),
+  tolerancePercent: decimalText
+    .refine((t) => Number(t) > 0 && Number(t) <= 50, "Write 0 to 50 %.")
+    .default("10"),
   layers: z.array(classLayer).max(60).default([]),
   driverModelLineageId: id.nullable().default(null),
   receiverModelLineageId: id.nullable().default(null),

@@ -21,7 +21,11 @@ export const netSection = z.object({
   width: positiveLength,
   length: length,
   /** Start and end, when known. */
-  at: z.object({ x1: coordinate, y1: coordinate, x2: coordinate, y2: coordinate }).partial().nullable().default(null),
+  at: z
+    .object({ x1: coordinate, y1: coordinate, x2: coordinate, y2: coordinate })
+    .partial()
+    .nullable()
+    .default(null),
 });
 export type NetSectionDoc = z.infer<typeof netSection>;
 
@@ -59,15 +63,31 @@ export const netDoc = z.object({
   source: z.enum(["net list", "section list", "manual"]),
   topology: netTopology,
   gaps: z.array(routeGap).max(50).default([]),
-  pair: z.object({ partner: z.string().max(120), polarity: z.enum(["P", "N"]) }).nullable().default(null),
-  bus: z.object({ name: z.string().max(120), index: z.number().int() }).nullable().default(null),
+  pair: z
+    .object({ partner: z.string().max(120), polarity: z.enum(["P", "N"]) })
+    .nullable()
+    .default(null),
+  bus: z
+    .object({ name: z.string().max(120), index: z.number().int() })
+    .nullable()
+    .default(null),
   matchGroup: z.string().max(120).nullable().default(null),
-  limits: z.record(z.string(), z.object({ enabled: z.boolean(), limit: z.string().nullable(), note: z.string() })).default({}),
+  limits: z
+    .record(z.string(), z.object({ enabled: z.boolean(), limit: z.string().nullable(), note: z.string() }))
+    .default({}),
 });
 export type NetDoc = z.infer<typeof netDoc>;
 export type StoredNet = NetDoc & { id: string; lineageId: string; version: number };
 
-export const partKinds = ["resistor", "capacitor", "inductor", "ferrite", "ic", "connector", "other"] as const;
+export const partKinds = [
+  "resistor",
+  "capacitor",
+  "inductor",
+  "ferrite",
+  "ic",
+  "connector",
+  "other",
+] as const;
 export const partDoc = z.object({
   reference: z.string().trim().min(1).max(40),
   partNumber: z.string().trim().max(80).default(""),

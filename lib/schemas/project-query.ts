@@ -37,7 +37,14 @@ export const netsQuery = revisionQuery.extend({
 export const netsPatch = z.object({
   nets: z.array(z.object({ id, version })).min(1, "Tick at least one net.").max(25_000),
   change: netDoc
-    .pick({ classLineageId: true, scope: true, scopeKind: true, scopeReason: true, matchGroup: true, limits: true })
+    .pick({
+      classLineageId: true,
+      scope: true,
+      scopeKind: true,
+      scopeReason: true,
+      matchGroup: true,
+      limits: true,
+    })
     .partial(),
 });
 

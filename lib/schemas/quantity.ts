@@ -27,7 +27,8 @@ export function quantity(dimension: Dimension, bounds: Bounds = {}) {
       return;
     }
     const said = `${q.value} ${q.unit}`;
-    if (bounds.positive && !(si > 0)) ctx.addIssue({ code: "custom", message: `${said} must be above zero.` });
+    if (bounds.positive && !(si > 0))
+      ctx.addIssue({ code: "custom", message: `${said} must be above zero.` });
     if (bounds.min !== undefined && si < bounds.min)
       ctx.addIssue({ code: "custom", message: `${said} is below the smallest value allowed here.` });
     if (bounds.max !== undefined && si > bounds.max)

@@ -66,7 +66,11 @@ export const stackupDoc = z.object({
         seen.set(key, index);
         const dielectric = layer.kind === "core" || layer.kind === "prepreg";
         if (dielectric && layer.thicknessMode === "typed" && !layer.thickness)
-          ctx.addIssue({ code: "custom", path: [index, "thickness"], message: `${layer.name} has no thickness.` });
+          ctx.addIssue({
+            code: "custom",
+            path: [index, "thickness"],
+            message: `${layer.name} has no thickness.`,
+          });
         if (layer.thicknessMode === "pressed" && (layer.kind !== "prepreg" || layer.plies.length === 0))
           ctx.addIssue({
             code: "custom",

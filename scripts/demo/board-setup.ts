@@ -56,7 +56,7 @@ const CLASSES: DemoClass[] = [
   },
   {
     name: "Memory address",
-    patterns: ["SD_*", "MEMORYADDRESS_*"],
+    patterns: ["SD_A*", "SD_RAS*", "SD_CAS*", "SD_WE*", "SD_CS*", "MEMORYADDRESS_*"],
     ohms: "50",
     signal: "data",
     rate: { value: "66", unit: "MHz" },
@@ -92,7 +92,14 @@ const CLASSES: DemoClass[] = [
     signal: "data",
     rate: { value: "1", unit: "MHz" },
   },
-  { name: "Control", patterns: ["*"], ohms: "55", tolerance: "15", signal: "slow", rate: null },
+  {
+    name: "Control",
+    patterns: ["*_RST", "SD_CKE", "PUMP_EN", "LED_*", "WAKE", "BUS_*", "VALVE_*", "TIDE_SYNC", "CONTROL_*"],
+    ohms: "55",
+    tolerance: "15",
+    signal: "slow",
+    rate: null,
+  },
 ];
 
 const MODELS: ModelDoc[] = [

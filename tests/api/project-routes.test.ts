@@ -28,7 +28,13 @@ beforeAll(async () => {
   setAuthEnvironment();
   data = await createTestDatabase();
   ({ designer } = data.own.actors);
-  const made = await call(projectsRoutes.POST, designer, "POST", {}, { name: "Tide gauge controller", template: "6-layers" });
+  const made = await call(
+    projectsRoutes.POST,
+    designer,
+    "POST",
+    {},
+    { name: "Tide gauge controller", template: "6-layers" },
+  );
   project = made.body as ProjectSummary;
 });
 afterAll(() => data.close());
@@ -41,7 +47,10 @@ async function call(
   body?: unknown,
   search = "",
 ) {
-  const headers = { ...(actor ? await signedIn(actor) : {}), ...(body ? { "content-type": "application/json" } : {}) };
+  const headers = {
+    ...(actor ? await signedIn(actor) : {}),
+    ...(body ? { "content-type": "application/json" } : {}),
+  };
   const request = new Request(`${TEST_URL}/api/v1/x${search}`, {
     method,
     headers,
@@ -56,7 +65,12 @@ const here = () => ({ projectId: project.id });
 
 describe("the API of a project", () => {
   it("makes a project with draft A from a template and lists it", async () => {
-    expect(project).toMatchObject({ name: "Tide gauge controller", draftLetter: "A", releasedLetter: null, netCount: 0 });
+    expect(project).toMatchObject({
+      name: "Tide gauge controller",
+      draftLetter: "A",
+      releasedLetter: null,
+      netCount: 0,
+    });
     const list = await call(projectsRoutes.GET, designer, "GET");
     expect(list.body).toMatchObject({ projects: [{ id: project.id }] });
     const stackup = await call(stackupRoutes.GET, designer, "GET", here());
@@ -67,7 +81,13 @@ describe("the API of a project", () => {
     const twice = await call(projectsRoutes.POST, designer, "POST", {}, { name: "Tide gauge controller" });
     expect(twice).toMatchObject({ status: 422, body: { error: { code: "name-taken" } } });
     expect((twice.body as ErrorAnswer).error.fields?.name).toContain("already");
-    const odd = await call(projectsRoutes.POST, designer, "POST", {}, { name: "Other", template: "7-layers" });
+    const odd = await call(
+      projectsRoutes.POST,
+      designer,
+      "POST",
+      {},
+      { name: "Other", template: "7-layers" },
+    );
     expect(odd).toMatchObject({ status: 422, body: { error: { code: "unknown-template" } } });
   });
 
@@ -75,12 +95,17 @@ describe("the API of a project", () => {
     const { body } = await call(stackupRoutes.GET, designer, "GET", here());
     const { version, name, layers } = body as StackupView;
     const stackup = { name, layers };
-    const first = await call(stackupRoutes.PUT, designer, "PUT", here(), { version, stackup: { ...stackup, name: "First" } });
+    const first = await call(stackupRoutes.PUT, designer, "PUT", here(), {
+      version,
+      stackup: { ...stackup, name: "First" },
+    });
     expect(first.status).toBe(200);
     const second = await call(stackupRoutes.PUT, data.own.actors.owner, "PUT", here(), { version, stackup });
     expect(second).toMatchObject({
       status: 409,
-      body: { error: { code: "conflict", current: { name: "First", version: version + 1 }, changed: ["name"] } },
+      body: {
+        error: { code: "conflict", current: { name: "First", version: version + 1 }, changed: ["name"] },
+      },
     });
     expect((await call(undoRoutes.POST, designer, "POST", here())).status).toBe(200);
     const again = await call(stackupRoutes.GET, designer, "GET", here());
@@ -102,16 +127,29 @@ describe("the API of a project", () => {
     await applyLayoutLists(designer, project.id, { nets }, { mode: "merge", summary: "1 net" });
     const at = { ...here(), classId: id };
     const refused = await call(classRoutes.DELETE, designer, "DELETE", at, { version: 0 });
-    expect(refused).toMatchObject({ status: 422, body: { error: { code: "class-in-use", detail: { nets: 1 } } } });
-    expect((await call(classRoutes.DELETE, designer, "DELETE", at, { version: 0, reassignTo: null })).status).toBe(204);
+    expect(refused).toMatchObject({
+      status: 422,
+      body: { error: { code: "class-in-use", detail: { nets: 1 } } },
+    });
+    expect(
+      (await call(classRoutes.DELETE, designer, "DELETE", at, { version: 0, reassignTo: null })).status,
+    ).toBe(204);
   });
 
   it("edits nets in bulk and filters them by the query", async () => {
     const list = await call(netsRoutes.GET, designer, "GET", here(), undefined, "?class=none");
     const [net] = (list.body as { nets: { id: string; version: number }[] }).nets;
-    const patch = { nets: [{ id: net?.id, version: net?.version }], change: { scope: "out", scopeKind: "test" } };
-    expect(await call(netsRoutes.PATCH, designer, "PATCH", here(), patch)).toEqual({ status: 200, body: { changed: 1 } });
-    expect((await call(netsRoutes.PATCH, designer, "PATCH", here(), { ...patch, change: { scope: "in" } })).status).toBe(409);
+    const patch = {
+      nets: [{ id: net?.id, version: net?.version }],
+      change: { scope: "out", scopeKind: "test" },
+    };
+    expect(await call(netsRoutes.PATCH, designer, "PATCH", here(), patch)).toEqual({
+      status: 200,
+      body: { changed: 1 },
+    });
+    expect(
+      (await call(netsRoutes.PATCH, designer, "PATCH", here(), { ...patch, change: { scope: "in" } })).status,
+    ).toBe(409);
     const out = await call(netsRoutes.GET, designer, "GET", here(), undefined, "?scope=out&search=D");
     expect(out.body).toMatchObject({ total: 1 });
   });

@@ -10,6 +10,8 @@ for (const section of sections) {
   print(`\n${section.title}`);
   for (const { what, value, unit, goal, note } of section.run()) {
     const text = value >= 100 ? value.toFixed(0) : value.toPrecision(3);
-    print(`  ${what.padEnd(58)} ${text.padStart(9)} ${unit.padEnd(3)}${goal === undefined ? "" : ` goal ${goal}`}${note ? `  ${note}` : ""}`);
+    print(
+      `  ${what.padEnd(58)} ${text.padStart(9)} ${unit.padEnd(3)}${goal === undefined ? "" : ` goal ${goal}`}${note ? `  ${note}` : ""}`,
+    );
   }
 }

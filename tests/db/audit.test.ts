@@ -22,7 +22,11 @@ it("200 entries of two teams at one moment make two whole chains, none lost or d
     ),
   );
   for (const team of [data.own, data.other]) {
-    expect(await verifyAuditChain(team.actors.owner)).toMatchObject({ entries: 100, intact: true, brokenAt: null });
+    expect(await verifyAuditChain(team.actors.owner)).toMatchObject({
+      entries: 100,
+      intact: true,
+      brokenAt: null,
+    });
     const seqs = (await listAudit(team.actors.owner)).map((entry) => entry.seq);
     expect(seqs).toEqual(Array.from({ length: 100 }, (_, index) => 100 - index));
   }

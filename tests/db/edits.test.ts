@@ -55,7 +55,9 @@ describe("two people and one thing", () => {
     const first = await withThickness("0.15");
     const second = await withThickness("0.18");
     await putStackup(owner, projectId, first.version, first.doc);
-    const refusal = await putStackup(designer, projectId, second.version, second.doc).catch((error: unknown) => error);
+    const refusal = await putStackup(designer, projectId, second.version, second.doc).catch(
+      (error: unknown) => error,
+    );
     expect(refusal).toBeInstanceOf(ConflictError);
     expect((refusal as ConflictError).message).toContain("Saltmarsh owner");
     expect((refusal as ConflictError).changed).toEqual(["Prepreg 1-2 thickness"]);
@@ -91,7 +93,12 @@ describe("two people and one thing", () => {
     const [net] = (await listNets(designer, draft)).nets;
     await patchNets(owner, projectId, [{ id: net?.id ?? "", version: 0, fields: { scope: "out" } }], "out");
     await expect(
-      patchNets(designer, projectId, [{ id: net?.id ?? "", version: 0, fields: { matchGroup: "A" } }], "group"),
+      patchNets(
+        designer,
+        projectId,
+        [{ id: net?.id ?? "", version: 0, fields: { matchGroup: "A" } }],
+        "group",
+      ),
     ).rejects.toMatchObject({ name: "ConflictError", changed: ["D0"] });
   });
 });
@@ -133,7 +140,11 @@ describe("undo and redo", () => {
 
   it("bulk edits of nets go back to what each net had", async () => {
     const made = await createNetClass(designer, projectId, aClass("Data"));
-    const nets = [aNet("D0"), aNet("D1", { scope: "out", scopeKind: "test" }), aNet("D2", { matchGroup: "G" })];
+    const nets = [
+      aNet("D0"),
+      aNet("D1", { scope: "out", scopeKind: "test" }),
+      aNet("D2", { matchGroup: "G" }),
+    ];
     await applyLayoutLists(designer, projectId, { nets }, { mode: "merge", summary: "3 nets" });
     const read = async () =>
       Promise.all((await listNets(designer, draft)).nets.map(({ id }) => getNet(designer, draft, id)));
@@ -141,7 +152,11 @@ describe("undo and redo", () => {
     const changed = await patchNets(
       designer,
       projectId,
-      before.map(({ id, version }) => ({ id, version, fields: { classLineageId: made.lineageId, scope: "in" } })),
+      before.map(({ id, version }) => ({
+        id,
+        version,
+        fields: { classLineageId: made.lineageId, scope: "in" },
+      })),
       "3 nets to Data",
     );
     expect(changed).toBe(3);
@@ -186,7 +201,10 @@ describe("what others rest on", () => {
   it("a class with nets is not taken away until they are moved", async () => {
     const made = await createNetClass(designer, projectId, aClass("Data"));
     const other = await createNetClass(designer, projectId, aClass("Other"));
-    const nets = [aNet("D0", { classLineageId: made.lineageId }), aNet("D1", { classLineageId: made.lineageId })];
+    const nets = [
+      aNet("D0", { classLineageId: made.lineageId }),
+      aNet("D1", { classLineageId: made.lineageId }),
+    ];
     await applyLayoutLists(designer, projectId, { nets }, { mode: "merge", summary: "2 nets" });
     await expect(deleteNetClass(designer, projectId, made.id, 0)).rejects.toMatchObject({
       code: "class-in-use",
@@ -210,7 +228,9 @@ describe("what others rest on", () => {
 
   it("two classes of one name are refused at the field", async () => {
     await createNetClass(designer, projectId, aClass("Data"));
-    const refusal = await createNetClass(designer, projectId, aClass("Data")).catch((error: unknown) => error);
+    const refusal = await createNetClass(designer, projectId, aClass("Data")).catch(
+      (error: unknown) => error,
+    );
     expect(refusal).toBeInstanceOf(RefusedError);
     expect((refusal as RefusedError).fields.name).toContain("Data");
   });

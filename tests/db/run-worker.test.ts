@@ -155,7 +155,7 @@ describe("a run over the demo board, through real worker threads", () => {
 
   it("packs its list and unpacks it to the same rows, numbers to six digits", async () => {
     const rows = await listProblemRows(data.own.actors.reviewer, projectId, whole.id);
-    const back = unpackRows<(typeof rows)[number]>(JSON.parse(JSON.stringify(packRows(rows))));
+    const back = unpackRows<(typeof rows)[number]>(structuredClone(packRows(rows)));
     const round = (value: unknown): unknown =>
       typeof value === "number" ? Number(value.toPrecision(6)) : value;
     expect(back).toEqual(

@@ -36,12 +36,16 @@ beforeAll(async () => {
   const netClass = await createNetClass(owner, projectId, aClass("Data"));
   classId = netClass.id;
   const model = await createModel(owner, projectId, aModel("Port"));
-  await putBindings(owner, projectId, 0, [bindingDoc.parse({ role: "driver", modelLineageId: model.lineageId })]);
+  await putBindings(owner, projectId, 0, [
+    bindingDoc.parse({ role: "driver", modelLineageId: model.lineageId }),
+  ]);
   await applyLayoutLists(
     owner,
     projectId,
     {
-      nets: Array.from({ length: NETS }, (_, index) => aNet(`N${index}`, { classLineageId: netClass.lineageId })),
+      nets: Array.from({ length: NETS }, (_, index) =>
+        aNet(`N${index}`, { classLineageId: netClass.lineageId }),
+      ),
       parts: [{ reference: "U1", partNumber: "P-1", value: "", kind: "ic", pins: ["1"] }],
       neighbours: [
         {
@@ -63,9 +67,17 @@ describe("a board of 10,000 nets", () => {
     const { total, nets } = await listNets(owner, draft);
     expect(total).toBe(NETS);
     expect(nets).toHaveLength(NETS);
-    expect(nets[0]).toMatchObject({ name: "N0", className: "Data", pinCount: 2, sectionCount: 1, length_m: 0.0254 });
+    expect(nets[0]).toMatchObject({
+      name: "N0",
+      className: "Data",
+      pinCount: 2,
+      sectionCount: 1,
+      length_m: 0.0254,
+    });
     expect(await countScopes(owner, draft)).toEqual({ in: NETS, out: 0, incomplete: 0 });
-    expect((await listNets(owner, draft, { search: "N999", limit: 3, sort: "length", descending: true })).total).toBe(11);
+    expect(
+      (await listNets(owner, draft, { search: "N999", limit: 3, sort: "length", descending: true })).total,
+    ).toBe(11);
   });
 
   it("freezes and thaws to the same inputs and the same hash, each part once", async () => {
@@ -126,10 +138,22 @@ describe("an import that comes again", () => {
     const lists = { nets: [aNet("A"), aNet("B"), aNet("C", { matchGroup: "G" })] };
     await applyLayoutLists(owner, board, lists, { mode: "merge", summary: "first" });
     const first = (await listNets(owner, itsDraft)).nets;
-    await patchNets(owner, board, [{ id: first[0]?.id ?? "", fields: { scope: "out", scopeKind: "test" } }], "out");
-    await applyLayoutLists(owner, board, { nets: [aNet("A"), aNet("C")] }, { mode: "replace", summary: "second" });
+    await patchNets(
+      owner,
+      board,
+      [{ id: first[0]?.id ?? "", fields: { scope: "out", scopeKind: "test" } }],
+      "out",
+    );
+    await applyLayoutLists(
+      owner,
+      board,
+      { nets: [aNet("A"), aNet("C")] },
+      { mode: "replace", summary: "second" },
+    );
     const second = (await listNets(owner, itsDraft)).nets;
-    expect(second.map(({ name, lineageId, scope, matchGroup }) => ({ name, lineageId, scope, matchGroup }))).toEqual([
+    expect(
+      second.map(({ name, lineageId, scope, matchGroup }) => ({ name, lineageId, scope, matchGroup })),
+    ).toEqual([
       { name: "A", lineageId: first[0]?.lineageId, scope: "out", matchGroup: null },
       { name: "C", lineageId: first[2]?.lineageId, scope: "in", matchGroup: "G" },
     ]);
@@ -139,7 +163,10 @@ describe("an import that comes again", () => {
 describe("a released revision", () => {
   it("is changed by nothing, and its copy keeps every lineage", async () => {
     await expect(startDraft(owner, projectId)).rejects.toThrow(/is a draft already/);
-    await data.open.db.update(revision).set({ state: "released", releasedAt: 1 }).where(eq(revision.id, draft.id));
+    await data.open.db
+      .update(revision)
+      .set({ state: "released", releasedAt: 1 })
+      .where(eq(revision.id, draft.id));
     const { nets } = await listNets(owner, draft);
     const stackup = await getStackup(owner, draft);
     const { editCount } = await getRevision(owner, draft.id);
@@ -172,7 +199,10 @@ describe("a released revision", () => {
     const board = (await createProject(owner, { name: "Raced", template: "4-layers" })).id;
     const itsDraft = await findRevision(owner, board);
     const write = createNetClass(owner, board, aClass("Late"));
-    const release = data.open.db.update(revision).set({ state: "released" }).where(eq(revision.id, itsDraft.id));
+    const release = data.open.db
+      .update(revision)
+      .set({ state: "released" })
+      .where(eq(revision.id, itsDraft.id));
     const [written] = await Promise.allSettled([write, release]);
     const after = await readInputs(owner, itsDraft.id);
     expect(after.classes).toHaveLength(written.status === "fulfilled" ? 1 : 0);

@@ -69,7 +69,8 @@ const lists: Record<string, (actor: UserActor) => Promise<unknown[]>> = {
 };
 
 const writes: Record<string, Act> = {
-  updateProject: (actor) => updateProject(actor, projectId, { version: 0, name: "Theirs", description: "", unit: "mm" }),
+  updateProject: (actor) =>
+    updateProject(actor, projectId, { version: 0, name: "Theirs", description: "", unit: "mm" }),
   archiveProject: (actor) => archiveProject(actor, projectId),
   putStackup: (actor) => putStackup(actor, projectId, 0, { name: "Theirs", layers: [] }),
   createNetClass: (actor) => createNetClass(actor, projectId, aClass("Theirs")),
@@ -107,7 +108,9 @@ describe("another team", () => {
 
 describe("a manufacturer of the same team", () => {
   it.each(Object.keys({ ...reads, ...writes }))("%s answers as if it did not exist", async (name) => {
-    await expect((reads[name] ?? writes[name])?.(data.own.actors.manufacturer)).rejects.toThrow(/does not exist/);
+    await expect((reads[name] ?? writes[name])?.(data.own.actors.manufacturer)).rejects.toThrow(
+      /does not exist/,
+    );
   });
   it.each(Object.keys(lists))("%s is empty", async (name) => {
     expect(await lists[name]?.(data.own.actors.manufacturer)).toEqual([]);
@@ -141,7 +144,10 @@ describe("a reviewer of the same team", () => {
     await expect(
       putNetClass(reviewer, projectId, ids.classId, netClass.version, { ...aClass("Other"), limits }),
     ).rejects.toThrow(/limits; the rest/);
-    const changed = await putNetClass(reviewer, projectId, ids.classId, netClass.version, { ...aClass("Data"), limits });
+    const changed = await putNetClass(reviewer, projectId, ids.classId, netClass.version, {
+      ...aClass("Data"),
+      limits,
+    });
     expect(changed.limits).toEqual(limits);
     await expect(
       putNetClass(designer, projectId, ids.classId, changed.version, aClass("Data")),

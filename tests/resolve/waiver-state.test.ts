@@ -19,13 +19,22 @@ describe("judgeWaiver", () => {
     expect(judgeWaiver(waiver, [], false, 1000)).toMatchObject({ state: "carried", covers: true });
   });
   it("asks for another look when it is worse by at most 2 % of the limit or 5 mV, and does not cover", () => {
-    expect(judgeWaiver(waiver, failing(-0.2059), false, 1000)).toMatchObject({ state: "look again", covers: false });
+    expect(judgeWaiver(waiver, failing(-0.2059), false, 1000)).toMatchObject({
+      state: "look again",
+      covers: false,
+    });
   });
   it("is void beyond that", () => {
-    expect(judgeWaiver(waiver, failing(-0.2061), false, 1000)).toMatchObject({ state: "void", covers: false });
+    expect(judgeWaiver(waiver, failing(-0.2061), false, 1000)).toMatchObject({
+      state: "void",
+      covers: false,
+    });
   });
   it("never covers a rule that it did not waive", () => {
-    expect(judgeWaiver(waiver, failing(-0.01, "ringback"), true, 1000)).toMatchObject({ state: "void", covers: false });
+    expect(judgeWaiver(waiver, failing(-0.01, "ringback"), true, 1000)).toMatchObject({
+      state: "void",
+      covers: false,
+    });
   });
   it("ends at its expiry and when revoked", () => {
     expect(judgeWaiver(waiver, failing(-0.2), true, 2000).state).toBe("expired");

@@ -4,7 +4,15 @@ const same = <T>(value: T) => ({ slow: value, typical: value, fast: value });
 
 /** A driver alike at all speeds; `ramp` is its 0–100 % time [s]. */
 export function driverModel(resistance: number, ramp: number, over: Partial<DriverModel> = {}): DriverModel {
-  return { name: `D${resistance}`, vdd: 3.3, resistance: same(resistance), riseTime: same(0.8 * ramp), capacitance: null, assumed: false, ...over };
+  return {
+    name: `D${resistance}`,
+    vdd: 3.3,
+    resistance: same(resistance),
+    riseTime: same(0.8 * ramp),
+    capacitance: null,
+    assumed: false,
+    ...over,
+  };
 }
 
 export function receiverModel(over: Partial<ReceiverModel> = {}): ReceiverModel {
@@ -24,7 +32,13 @@ export function receiverModel(over: Partial<ReceiverModel> = {}): ReceiverModel 
   };
 }
 
-export function section(a: string, b: string, ohms: number, delay: number, over: Partial<PathSection> = {}): PathSection {
+export function section(
+  a: string,
+  b: string,
+  ohms: number,
+  delay: number,
+  over: Partial<PathSection> = {},
+): PathSection {
   return {
     id: `${a}-${b}`,
     net: "NET",
@@ -42,7 +56,13 @@ export function section(a: string, b: string, ohms: number, delay: number, over:
 }
 
 /** One driver U1.1, one line, one receiver U2.1. */
-export function pointToPoint(driver: DriverModel, ohms: number, delay: number, over: Partial<ResolvedPath> = {}, receiver = receiverModel()): ResolvedPath {
+export function pointToPoint(
+  driver: DriverModel,
+  ohms: number,
+  delay: number,
+  over: Partial<ResolvedPath> = {},
+  receiver = receiverModel(),
+): ResolvedPath {
   return {
     id: "net-1",
     name: "NET",

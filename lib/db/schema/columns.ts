@@ -1,4 +1,4 @@
-import { index, integer, text } from "drizzle-orm/sqlite-core";
+import { integer, text } from "drizzle-orm/sqlite-core";
 
 /** UUIDv7 text. */
 export const idColumn = () => text("id").primaryKey();
@@ -7,4 +7,3 @@ export const teamColumn = () => text("team_id").notNull();
 /** Integer milliseconds UTC. */
 export const atColumn = (name: string) => integer(name, { mode: "number" });
 export const versionColumn = () => integer("version").notNull().default(0);
-export { index };

@@ -9,7 +9,9 @@ export const net = sqliteTable(
     id: idColumn(),
     lineageId: text("lineage_id").notNull(),
     teamId: teamColumn(),
-    revisionId: text("revision_id").notNull().references(() => revision.id, { onDelete: "cascade" }),
+    revisionId: text("revision_id")
+      .notNull()
+      .references(() => revision.id, { onDelete: "cascade" }),
     name: text("name").notNull(),
     classLineageId: text("class_lineage_id"),
     scope: text("scope", { enum: ["in", "out", "incomplete"] }).notNull(),
@@ -36,7 +38,9 @@ export const part = sqliteTable(
     id: idColumn(),
     lineageId: text("lineage_id").notNull(),
     teamId: teamColumn(),
-    revisionId: text("revision_id").notNull().references(() => revision.id, { onDelete: "cascade" }),
+    revisionId: text("revision_id")
+      .notNull()
+      .references(() => revision.id, { onDelete: "cascade" }),
     reference: text("reference").notNull(),
     partNumber: text("part_number").notNull().default(""),
     kind: text("kind").notNull(),
@@ -50,7 +54,9 @@ export const neighbour = sqliteTable(
   {
     id: idColumn(),
     teamId: teamColumn(),
-    revisionId: text("revision_id").notNull().references(() => revision.id, { onDelete: "cascade" }),
+    revisionId: text("revision_id")
+      .notNull()
+      .references(() => revision.id, { onDelete: "cascade" }),
     net: text("net").notNull(),
     neighbour: text("neighbour").notNull(),
     layer: text("layer").notNull(),
@@ -70,7 +76,9 @@ export const importBatch = sqliteTable(
   {
     id: idColumn(),
     teamId: teamColumn(),
-    revisionId: text("revision_id").notNull().references(() => revision.id, { onDelete: "cascade" }),
+    revisionId: text("revision_id")
+      .notNull()
+      .references(() => revision.id, { onDelete: "cascade" }),
     kind: text("kind", { enum: ["net list", "section list", "parts list", "neighbour list"] }).notNull(),
     fileName: text("file_name").notNull(),
     state: text("state", { enum: ["parsed", "applying", "applied", "cancelled", "failed"] }).notNull(),

@@ -24,8 +24,12 @@ export const auditEntry = sqliteTable(
 
 export const userPreference = sqliteTable("user_preference", {
   userId: text("user_id").primaryKey(),
-  lengthUnit: text("length_unit", { enum: ["mm", "mil"] }).notNull().default("mm"),
-  theme: text("theme", { enum: ["system", "light", "dark"] }).notNull().default("system"),
+  lengthUnit: text("length_unit", { enum: ["mm", "mil"] })
+    .notNull()
+    .default("mm"),
+  theme: text("theme", { enum: ["system", "light", "dark"] })
+    .notNull()
+    .default("system"),
 });
 
 /** Attempts per account, so that a forged client address gains nothing. */

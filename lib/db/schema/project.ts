@@ -9,7 +9,9 @@ export const project = sqliteTable(
     teamId: teamColumn(),
     name: text("name").notNull(),
     description: text("description").notNull().default(""),
-    unit: text("unit", { enum: ["mm", "mil"] }).notNull().default("mm"),
+    unit: text("unit", { enum: ["mm", "mil"] })
+      .notNull()
+      .default("mm"),
     version: versionColumn(),
     createdAt: atColumn("created_at").notNull(),
     createdBy: text("created_by").notNull(),
@@ -24,7 +26,9 @@ export const revision = sqliteTable(
   {
     id: idColumn(),
     teamId: teamColumn(),
-    projectId: text("project_id").notNull().references(() => project.id, { onDelete: "cascade" }),
+    projectId: text("project_id")
+      .notNull()
+      .references(() => project.id, { onDelete: "cascade" }),
     letter: text("letter").notNull(),
     state: text("state", { enum: ["draft", "released"] }).notNull(),
     parentRevisionId: text("parent_revision_id"),
@@ -36,11 +40,16 @@ export const revision = sqliteTable(
     createdBy: text("created_by").notNull(),
     releasedAt: atColumn("released_at"),
   },
-  (t) => [uniqueIndex("revision_project_letter").on(t.projectId, t.letter), index("revision_team").on(t.teamId)],
+  (t) => [
+    uniqueIndex("revision_project_letter").on(t.projectId, t.letter),
+    index("revision_team").on(t.teamId),
+  ],
 );
 
 export const stackup = sqliteTable("stackup", {
-  revisionId: text("revision_id").primaryKey().references(() => revision.id, { onDelete: "cascade" }),
+  revisionId: text("revision_id")
+    .primaryKey()
+    .references(() => revision.id, { onDelete: "cascade" }),
   teamId: teamColumn(),
   name: text("name").notNull(),
   version: versionColumn(),
@@ -52,7 +61,9 @@ export const stackupLayer = sqliteTable(
     id: idColumn(),
     lineageId: text("lineage_id").notNull(),
     teamId: teamColumn(),
-    revisionId: text("revision_id").notNull().references(() => revision.id, { onDelete: "cascade" }),
+    revisionId: text("revision_id")
+      .notNull()
+      .references(() => revision.id, { onDelete: "cascade" }),
     position: integer("position").notNull(),
     kind: text("kind").notNull(),
     name: text("name").notNull(),
@@ -61,7 +72,10 @@ export const stackupLayer = sqliteTable(
     /** derived from doc: finished thickness */
     thickness_m: real("thickness_m"),
   },
-  (t) => [uniqueIndex("stackup_layer_position").on(t.revisionId, t.position), index("stackup_layer_team").on(t.teamId)],
+  (t) => [
+    uniqueIndex("stackup_layer_position").on(t.revisionId, t.position),
+    index("stackup_layer_team").on(t.teamId),
+  ],
 );
 
 export const netClass = sqliteTable(
@@ -70,13 +84,18 @@ export const netClass = sqliteTable(
     id: idColumn(),
     lineageId: text("lineage_id").notNull(),
     teamId: teamColumn(),
-    revisionId: text("revision_id").notNull().references(() => revision.id, { onDelete: "cascade" }),
+    revisionId: text("revision_id")
+      .notNull()
+      .references(() => revision.id, { onDelete: "cascade" }),
     name: text("name").notNull(),
     doc: text("doc", { mode: "json" }).$type<NetClassDoc>().notNull(),
     targetImpedance_ohm: real("target_impedance_ohm"),
     version: versionColumn(),
   },
-  (t) => [uniqueIndex("net_class_lineage").on(t.revisionId, t.lineageId), uniqueIndex("net_class_name").on(t.revisionId, t.name)],
+  (t) => [
+    uniqueIndex("net_class_lineage").on(t.revisionId, t.lineageId),
+    uniqueIndex("net_class_name").on(t.revisionId, t.name),
+  ],
 );
 
 export const model = sqliteTable(
@@ -85,12 +104,17 @@ export const model = sqliteTable(
     id: idColumn(),
     lineageId: text("lineage_id").notNull(),
     teamId: teamColumn(),
-    revisionId: text("revision_id").notNull().references(() => revision.id, { onDelete: "cascade" }),
+    revisionId: text("revision_id")
+      .notNull()
+      .references(() => revision.id, { onDelete: "cascade" }),
     name: text("name").notNull(),
     doc: text("doc", { mode: "json" }).$type<ModelDoc>().notNull(),
     version: versionColumn(),
   },
-  (t) => [uniqueIndex("model_lineage").on(t.revisionId, t.lineageId), uniqueIndex("model_name").on(t.revisionId, t.name)],
+  (t) => [
+    uniqueIndex("model_lineage").on(t.revisionId, t.lineageId),
+    uniqueIndex("model_name").on(t.revisionId, t.name),
+  ],
 );
 
 /** Bindings are edited as one ordered list. */
@@ -99,7 +123,9 @@ export const binding = sqliteTable(
   {
     id: idColumn(),
     teamId: teamColumn(),
-    revisionId: text("revision_id").notNull().references(() => revision.id, { onDelete: "cascade" }),
+    revisionId: text("revision_id")
+      .notNull()
+      .references(() => revision.id, { onDelete: "cascade" }),
     position: integer("position").notNull(),
     referencePattern: text("reference_pattern").notNull(),
     partNumberPattern: text("part_number_pattern").notNull(),
@@ -112,7 +138,9 @@ export const binding = sqliteTable(
 );
 
 export const ruleSet = sqliteTable("rule_set", {
-  revisionId: text("revision_id").primaryKey().references(() => revision.id, { onDelete: "cascade" }),
+  revisionId: text("revision_id")
+    .primaryKey()
+    .references(() => revision.id, { onDelete: "cascade" }),
   teamId: teamColumn(),
   doc: text("doc", { mode: "json" }).$type<RuleSetDoc>().notNull(),
   bindingsVersion: integer("bindings_version").notNull().default(0),
@@ -125,7 +153,9 @@ export const edit = sqliteTable(
   {
     id: idColumn(),
     teamId: teamColumn(),
-    revisionId: text("revision_id").notNull().references(() => revision.id, { onDelete: "cascade" }),
+    revisionId: text("revision_id")
+      .notNull()
+      .references(() => revision.id, { onDelete: "cascade" }),
     actorId: text("actor_id").notNull(),
     at: atColumn("at").notNull(),
     /** stackup, class, model, bindings, rules, nets, parts, import, neighbours */

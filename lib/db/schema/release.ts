@@ -9,13 +9,21 @@ export const release = sqliteTable(
   {
     id: idColumn(),
     teamId: teamColumn(),
-    projectId: text("project_id").notNull().references(() => project.id, { onDelete: "cascade" }),
-    revisionId: text("revision_id").notNull().references(() => revision.id),
-    runId: text("run_id").notNull().references(() => run.id),
+    projectId: text("project_id")
+      .notNull()
+      .references(() => project.id, { onDelete: "cascade" }),
+    revisionId: text("revision_id")
+      .notNull()
+      .references(() => revision.id),
+    runId: text("run_id")
+      .notNull()
+      .references(() => run.id),
     letter: text("letter").notNull(),
     title: text("title").notNull(),
     /** chunks of the frozen snapshot, in order; released pages read only these */
-    snapshotChunks: text("snapshot_chunks", { mode: "json" }).$type<{ name: string; sha256: string }[]>().notNull(),
+    snapshotChunks: text("snapshot_chunks", { mode: "json" })
+      .$type<{ name: string; sha256: string }[]>()
+      .notNull(),
     snapshotHash: text("snapshot_hash").notNull(),
     note: text("note", { mode: "json" }).$type<ImpedanceNote>().notNull(),
     noteHash: text("note_hash").notNull(),
@@ -31,7 +39,9 @@ export const releaseRecipient = sqliteTable(
   {
     id: idColumn(),
     teamId: teamColumn(),
-    releaseId: text("release_id").notNull().references(() => release.id, { onDelete: "cascade" }),
+    releaseId: text("release_id")
+      .notNull()
+      .references(() => release.id, { onDelete: "cascade" }),
     name: text("name").notNull(),
     email: text("email").notNull(),
     company: text("company").notNull().default(""),

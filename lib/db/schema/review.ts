@@ -8,7 +8,9 @@ export const flag = sqliteTable(
   {
     id: idColumn(),
     teamId: teamColumn(),
-    projectId: text("project_id").notNull().references(() => project.id, { onDelete: "cascade" }),
+    projectId: text("project_id")
+      .notNull()
+      .references(() => project.id, { onDelete: "cascade" }),
     subjectKind: text("subject_kind", { enum: ["problem", "path", "layer"] }).notNull(),
     subjectLineageId: text("subject_lineage_id").notNull(),
     mechanism: text("mechanism"),
@@ -21,7 +23,10 @@ export const flag = sqliteTable(
     resolvedBy: text("resolved_by"),
     version: versionColumn(),
   },
-  (t) => [index("flag_project").on(t.projectId, t.state), index("flag_subject").on(t.projectId, t.subjectLineageId)],
+  (t) => [
+    index("flag_project").on(t.projectId, t.state),
+    index("flag_subject").on(t.projectId, t.subjectLineageId),
+  ],
 );
 
 export const flagEntry = sqliteTable(
@@ -29,7 +34,9 @@ export const flagEntry = sqliteTable(
   {
     id: idColumn(),
     teamId: teamColumn(),
-    flagId: text("flag_id").notNull().references(() => flag.id, { onDelete: "cascade" }),
+    flagId: text("flag_id")
+      .notNull()
+      .references(() => flag.id, { onDelete: "cascade" }),
     authorId: text("author_id").notNull(),
     at: atColumn("at").notNull(),
     comment: text("comment").notNull(),
@@ -43,14 +50,20 @@ export const waiver = sqliteTable(
   {
     id: idColumn(),
     teamId: teamColumn(),
-    projectId: text("project_id").notNull().references(() => project.id, { onDelete: "cascade" }),
+    projectId: text("project_id")
+      .notNull()
+      .references(() => project.id, { onDelete: "cascade" }),
     pathLineageId: text("path_lineage_id").notNull(),
     pathName: text("path_name").notNull(),
     mechanism: text("mechanism").notNull(),
     /** the run it was granted on, and what it waived: rule, value, limit, unit, margin, corner */
-    runId: text("run_id").notNull().references(() => run.id),
+    runId: text("run_id")
+      .notNull()
+      .references(() => run.id),
     waived: text("waived", { mode: "json" })
-      .$type<{ rule: string; value: number; limit: number; unit: string; margin: number; corner: string | null }[]>()
+      .$type<
+        { rule: string; value: number; limit: number; unit: string; margin: number; corner: string | null }[]
+      >()
       .notNull(),
     worstMargin: real("worst_margin"),
     reason: text("reason").notNull(),
@@ -68,8 +81,12 @@ export const noDataAcceptance = sqliteTable(
   {
     id: idColumn(),
     teamId: teamColumn(),
-    projectId: text("project_id").notNull().references(() => project.id, { onDelete: "cascade" }),
-    revisionId: text("revision_id").notNull().references(() => revision.id, { onDelete: "cascade" }),
+    projectId: text("project_id")
+      .notNull()
+      .references(() => project.id, { onDelete: "cascade" }),
+    revisionId: text("revision_id")
+      .notNull()
+      .references(() => revision.id, { onDelete: "cascade" }),
     missing: text("missing").notNull(),
     reason: text("reason").notNull(),
     createdBy: text("created_by").notNull(),
@@ -85,9 +102,15 @@ export const signOff = sqliteTable(
   {
     id: idColumn(),
     teamId: teamColumn(),
-    projectId: text("project_id").notNull().references(() => project.id, { onDelete: "cascade" }),
-    revisionId: text("revision_id").notNull().references(() => revision.id, { onDelete: "cascade" }),
-    runId: text("run_id").notNull().references(() => run.id),
+    projectId: text("project_id")
+      .notNull()
+      .references(() => project.id, { onDelete: "cascade" }),
+    revisionId: text("revision_id")
+      .notNull()
+      .references(() => revision.id, { onDelete: "cascade" }),
+    runId: text("run_id")
+      .notNull()
+      .references(() => run.id),
     inputHash: text("input_hash").notNull(),
     signedBy: text("signed_by").notNull(),
     signedAt: atColumn("signed_at").notNull(),

@@ -1,4 +1,13 @@
-import { blob, index, integer, primaryKey, real, sqliteTable, text, uniqueIndex } from "drizzle-orm/sqlite-core";
+import {
+  blob,
+  index,
+  integer,
+  primaryKey,
+  real,
+  sqliteTable,
+  text,
+  uniqueIndex,
+} from "drizzle-orm/sqlite-core";
 import { atColumn, idColumn, teamColumn } from "./columns";
 import { project, revision } from "./project";
 
@@ -19,8 +28,12 @@ export const run = sqliteTable(
   {
     id: idColumn(),
     teamId: teamColumn(),
-    projectId: text("project_id").notNull().references(() => project.id, { onDelete: "cascade" }),
-    revisionId: text("revision_id").notNull().references(() => revision.id, { onDelete: "cascade" }),
+    projectId: text("project_id")
+      .notNull()
+      .references(() => project.id, { onDelete: "cascade" }),
+    revisionId: text("revision_id")
+      .notNull()
+      .references(() => revision.id, { onDelete: "cascade" }),
     number: integer("number").notNull(),
     state: text("state", { enum: ["queued", "running", "done", "cancelled", "failed"] }).notNull(),
     /** SHA-256 over the snapshot's chunk list */
@@ -41,13 +54,19 @@ export const run = sqliteTable(
     leaseUntil: atColumn("lease_until"),
     error: text("error"),
   },
-  (t) => [uniqueIndex("run_project_number").on(t.projectId, t.number), index("run_team").on(t.teamId), index("run_state").on(t.state)],
+  (t) => [
+    uniqueIndex("run_project_number").on(t.projectId, t.number),
+    index("run_team").on(t.teamId),
+    index("run_state").on(t.state),
+  ],
 );
 
 export const pathResult = sqliteTable(
   "path_result",
   {
-    runId: text("run_id").notNull().references(() => run.id, { onDelete: "cascade" }),
+    runId: text("run_id")
+      .notNull()
+      .references(() => run.id, { onDelete: "cascade" }),
     teamId: teamColumn(),
     pathId: text("path_id").notNull(),
     name: text("name").notNull(),
@@ -70,7 +89,9 @@ export const problem = sqliteTable(
   "problem",
   {
     id: idColumn(),
-    runId: text("run_id").notNull().references(() => run.id, { onDelete: "cascade" }),
+    runId: text("run_id")
+      .notNull()
+      .references(() => run.id, { onDelete: "cascade" }),
     teamId: teamColumn(),
     pathId: text("path_id").notNull(),
     pathName: text("path_name").notNull(),
@@ -91,14 +112,19 @@ export const problem = sqliteTable(
     cause: text("cause"),
     restsOnAssumed: integer("rests_on_assumed", { mode: "boolean" }).notNull(),
   },
-  (t) => [uniqueIndex("problem_path_mechanism").on(t.runId, t.pathId, t.mechanism), index("problem_team").on(t.teamId)],
+  (t) => [
+    uniqueIndex("problem_path_mechanism").on(t.runId, t.pathId, t.mechanism),
+    index("problem_team").on(t.teamId),
+  ],
 );
 
 export const finding = sqliteTable(
   "finding",
   {
     id: idColumn(),
-    runId: text("run_id").notNull().references(() => run.id, { onDelete: "cascade" }),
+    runId: text("run_id")
+      .notNull()
+      .references(() => run.id, { onDelete: "cascade" }),
     teamId: teamColumn(),
     pathId: text("path_id").notNull(),
     mechanism: text("mechanism").notNull(),

@@ -90,5 +90,5 @@ export interface RuleDefinition {
 
 export interface CheckContext {
   path: ResolvedPath;
-  corners: Corner[];
+  corners: readonly Corner[];
 }

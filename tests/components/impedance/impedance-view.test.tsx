@@ -48,7 +48,7 @@ beforeEach(() => {
           path.includes("/classes") ? { classes: served.classes } : { undo: null, redo: null },
         );
       }
-      const put = JSON.parse(String(init.body)) as (typeof puts)[number];
+      const put = JSON.parse(init.body as string) as (typeof puts)[number];
       puts.push(put);
       const present = CLASSES.find(({ id }) => path.endsWith(id));
       return Response.json({ ...present, ...put.netClass, version: put.version + 1 });

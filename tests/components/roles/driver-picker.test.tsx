@@ -52,7 +52,10 @@ describe("DriverPicker", () => {
 });
 
 it("orders parts by pins and moves rules by one place", () => {
-  expect(activeParts(pins).map(({ reference, pins: count }) => [reference, count])).toEqual([["U1", 2], ["U2", 1]]);
+  expect(activeParts(pins).map(({ reference, pins: count }) => [reference, count])).toEqual([
+    ["U1", 2],
+    ["U2", 1],
+  ]);
   const rows = [roleRow({ role: "driver" }), roleRow({ role: "receiver" })];
   expect(moved(rows, 0, 1)).toEqual([rows[1], rows[0]]);
 });

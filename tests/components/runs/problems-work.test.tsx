@@ -44,7 +44,7 @@ beforeEach(() => {
   problems = [aProblem("a", { path: "SD_CLK" }), aProblem("b", { path: "SD_D1", share: -0.1 })];
   vi.stubGlobal("fetch", (url: string, init?: RequestInit) => {
     if (init?.method && init.method !== "GET") {
-      posts.push({ url, body: JSON.parse(String(init.body)) });
+      posts.push({ url, body: JSON.parse(init.body as string) });
       return Promise.resolve(
         refusal
           ? Response.json({ error: refusal }, { status: refusal.status })

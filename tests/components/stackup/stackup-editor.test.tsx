@@ -47,7 +47,7 @@ beforeEach(() => {
     "fetch",
     vi.fn(async (address: string, init?: RequestInit) => {
       if (init?.method === "PUT" && address.endsWith("/stackup")) {
-        const put = JSON.parse(String(init.body)) as Put;
+        const put = JSON.parse(init.body as string) as Put;
         const refused = refuse?.(put);
         if (refused) return refused;
         stackupDoc.parse(put.stackup);

@@ -1,5 +1,5 @@
 import { readdirSync, readFileSync } from "node:fs";
-import type { Network, Section } from "@/lib/si";
+import type { LineSection, Network, Section } from "@/lib/si";
 
 /** A case of tests/reference/network; its README says what the fields mean. Its units are ps, ohm, pF, nH. */
 export interface ReferenceCase {
@@ -40,8 +40,40 @@ export type EdgeMetrics = Record<string, number | boolean | null> & {
   ill_conditioned: string[];
 };
 
-// Fields differ from item to item; the README of the cases defines them.
-type Raw = Record<string, never>;
+type Wave = { t_ps: number[]; v: number[] };
+type Weight = { t_ps: number[]; k: number[] };
+
+/** An item as the file has it; which of the fields it has follows from its kind (README of the cases, section 1). */
+interface Raw extends Record<Names, string>, Record<Numbers, number>, Record<Tables, [number, number][]> {
+  name?: string;
+  wave: Wave;
+  k_pu: Weight;
+  k_pd: Weight;
+}
+type Names = "kind" | "node" | "a" | "b" | "a1" | "a2" | "b1" | "b2";
+type Tables = "pullup" | "pulldown" | "points";
+type Numbers =
+  | "v"
+  | "r_ohm"
+  | "vdd"
+  | "is_a"
+  | "n"
+  | "vt_v"
+  | "rs_ohm"
+  | "pf"
+  | "nh"
+  | "ohm"
+  | "z0_ohm"
+  | "td_ps"
+  | "z_even_ohm"
+  | "z_odd_ohm"
+  | "td_even_ps"
+  | "td_odd_ps"
+  | "l_nh_per_m"
+  | "c_pf_per_m"
+  | "r_ohm_per_m"
+  | "length_m"
+  | "skin_A_sqrt_ps";
 
 const folder = new URL("../../reference/network/", import.meta.url);
 const PS = 1e-12;
@@ -54,12 +86,12 @@ export function referenceCases(group: string): ReferenceCase[] {
 
 export function networkOf({ circuit }: ReferenceCase): Network {
   const pwl = (t: number[], value: number[]) => ({ kind: "pwl" as const, time: t.map((x) => x * PS), value });
-  const named = (raw: Raw, i: number, kind: string) => (raw.name as string | undefined) ?? `${kind}${i + 1}`;
+  const named = (raw: Raw, i: number, kind: string) => raw.name ?? `${kind}${i + 1}`;
   return {
-    rails: circuit.rails.map((r) => ({ name: r.name, node: r.node, volts: r.v })),
+    rails: circuit.rails.map((r) => ({ name: r.name ?? r.node, node: r.node, volts: r.v })),
     drivers: circuit.drivers.map((d, i) => {
-      const { t_ps, v } = d.wave as { t_ps: number[]; v: number[] };
-      if ((d.kind as string) === "thevenin")
+      const { t_ps, v } = d.wave;
+      if (d.kind === "thevenin")
         return {
           name: named(d, i, "driver"),
           kind: "thevenin",
@@ -81,9 +113,9 @@ export function networkOf({ circuit }: ReferenceCase): Network {
     }),
     sections: circuit.sections.map((s, i) => sectionOf(s, named(s, i, "section"))),
     parts: circuit.parts.map((p, i) => {
-      const { a, b } = p as { a: string; b: string };
+      const { a, b } = p;
       const name = named(p, i, "part");
-      const kind = p.kind as string;
+      const kind = p.kind;
       if (kind === "D")
         return {
           name,
@@ -96,8 +128,8 @@ export function networkOf({ circuit }: ReferenceCase): Network {
           seriesResistance: p.rs_ohm,
         };
       if (kind === "IV") return { name, kind: "iv", a, b, points: p.points };
-      if (kind === "C") return { name, kind, a, b, value: (p.pf as number) * PS };
-      if (kind === "L") return { name, kind, a, b, value: (p.nh as number) * 1e-9 };
+      if (kind === "C") return { name, kind, a, b, value: p.pf * PS };
+      if (kind === "L") return { name, kind, a, b, value: p.nh * 1e-9 };
       return { name, kind: "R", a, b, value: p.ohm };
     }),
     probes: circuit.receivers.map(({ name, node }) => ({ name, node })),
@@ -105,7 +137,7 @@ export function networkOf({ circuit }: ReferenceCase): Network {
 }
 
 function sectionOf(s: Raw, name: string): Section {
-  const kind = s.kind as string;
+  const kind = s.kind;
   if (kind === "coupled_pair") {
     const mode = (z: number, td: number) => ({ impedance: z, delay: td * PS });
     return {
@@ -125,20 +157,20 @@ function sectionOf(s: Raw, name: string): Section {
       kind: "rlc",
       a: s.a,
       b: s.b,
-      l: (s.l_nh_per_m as number) * 1e-9,
-      c: (s.c_pf_per_m as number) * PS,
+      l: s.l_nh_per_m * 1e-9,
+      c: s.c_pf_per_m * PS,
       r: s.r_ohm_per_m,
       length: s.length_m,
     };
-  const line: Section = {
+  const line: LineSection = {
     name,
     kind: "line",
     a: s.a,
     b: s.b,
     impedance: s.z0_ohm,
-    delay: (s.td_ps as number) * PS,
+    delay: s.td_ps * PS,
   };
-  if (kind === "skin_line") line.skin = (s.skin_A_sqrt_ps as number) * Math.sqrt(PS);
+  if (kind === "skin_line") line.skin = s.skin_A_sqrt_ps * Math.sqrt(PS);
   return line;
 }
 
@@ -180,8 +212,5 @@ function reader(time: Float64Array, value: Float64Array): (t: number) => number 
 
 /** Peak to peak of all sources [V]. */
 export function sourceSwing({ circuit }: ReferenceCase): number {
-  return circuit.drivers.reduce(
-    (sum, d) => sum + Math.max(...(d.wave as { v: number[] }).v) - Math.min(...(d.wave as { v: number[] }).v),
-    0,
-  );
+  return circuit.drivers.reduce((sum, d) => sum + Math.max(...d.wave.v) - Math.min(...d.wave.v), 0);
 }

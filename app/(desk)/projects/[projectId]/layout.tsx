@@ -24,7 +24,9 @@ export default async function ProjectLayout({ children, params }: Props) {
         name={name}
         revisions={revisions.map(({ letter, state }) => ({ letter, state }))}
         blockers={
-          revisions.some(({ state }) => state === "draft") ? <BlockerCount projectId={projectId} /> : undefined
+          revisions.some(({ state }) => state === "draft") ? (
+            <BlockerCount projectId={projectId} />
+          ) : undefined
         }
       />
       {children}

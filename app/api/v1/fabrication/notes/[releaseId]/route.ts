@@ -9,6 +9,11 @@ export const GET = route({
   handler: async ({ person, params }) => {
     const sent = await getSentNote(person.email, params.releaseId);
     await markSeen(sent.recipientId, "viewedAt");
-    return { note: sent.note, noteHash: sent.noteHash, acknowledgedAt: sent.acknowledgedAt, acknowledgedBy: sent.acknowledgedBy };
+    return {
+      note: sent.note,
+      noteHash: sent.noteHash,
+      acknowledgedAt: sent.acknowledgedAt,
+      acknowledgedBy: sent.acknowledgedBy,
+    };
   },
 });

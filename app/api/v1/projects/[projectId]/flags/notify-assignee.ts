@@ -12,7 +12,10 @@ export async function notifyAssignee(
   flag: { id: string; assigneeUserId: string; title: string; comment: string },
 ): Promise<void> {
   if (flag.assigneeUserId === actor.userId) return;
-  const [person, project] = await Promise.all([findColleague(actor, flag.assigneeUserId), getProject(actor, projectId)]);
+  const [person, project] = await Promise.all([
+    findColleague(actor, flag.assigneeUserId),
+    getProject(actor, projectId),
+  ]);
   if (!person) return;
   sendMailLater(
     flagAssignedMessage(person.email, {

@@ -22,7 +22,12 @@ export const POST = route({
     const title = (await subjectTitle(actor, params.projectId, body.subject)) ?? "a layer of the stackup";
     const id = await raiseFlag(actor, params.projectId, { ...body, title });
     if (body.assigneeUserId)
-      await notifyAssignee(actor, params.projectId, { id, assigneeUserId: body.assigneeUserId, title, comment: body.comment });
+      await notifyAssignee(actor, params.projectId, {
+        id,
+        assigneeUserId: body.assigneeUserId,
+        title,
+        comment: body.comment,
+      });
     return Response.json({ id }, { status: 201 });
   },
 });

@@ -22,7 +22,10 @@ export const POST = route({
   body: "bytes",
   maxBodyBytes: 52_428_800,
   handler: async ({ actor, params, query, body }) =>
-    Response.json(await receiveList(actor, params.projectId, { bytes: body, fileName: query.name, kind: query.kind }), {
-      status: 201,
-    }),
+    Response.json(
+      await receiveList(actor, params.projectId, { bytes: body, fileName: query.name, kind: query.kind }),
+      {
+        status: 201,
+      },
+    ),
 });

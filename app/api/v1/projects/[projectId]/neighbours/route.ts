@@ -10,6 +10,10 @@ export const GET = route({
   params: projectParams,
   query: revisionQuery.extend({ net: z.string().max(120).optional() }),
   handler: async ({ actor, params, query }) => ({
-    neighbours: await listNeighbours(actor, await findRevision(actor, params.projectId, query.revision), query.net),
+    neighbours: await listNeighbours(
+      actor,
+      await findRevision(actor, params.projectId, query.revision),
+      query.net,
+    ),
   }),
 });

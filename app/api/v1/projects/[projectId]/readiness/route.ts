@@ -10,8 +10,18 @@ export const GET = route({
   params: projectParams,
   handler: async ({ actor, params }) => {
     const draft = await getDraft(actor, params.projectId, "project:read");
-    const readiness = await releaseReadiness(actor, params.projectId, draft.id, await currentInputHash(actor, draft.id));
-    const run = readiness.run && { id: readiness.run.id, number: readiness.run.number, state: readiness.run.state, counts: readiness.run.counts };
+    const readiness = await releaseReadiness(
+      actor,
+      params.projectId,
+      draft.id,
+      await currentInputHash(actor, draft.id),
+    );
+    const run = readiness.run && {
+      id: readiness.run.id,
+      number: readiness.run.number,
+      state: readiness.run.state,
+      counts: readiness.run.counts,
+    };
     return { draft: { id: draft.id, letter: draft.letter }, ...readiness, run };
   },
 });

@@ -7,7 +7,8 @@ import { projectParams } from "@/lib/schemas/route-params";
 export const GET = route({
   access: "project:read",
   params: projectParams,
-  handler: async ({ actor, params }) => undoState(actor, await getDraft(actor, params.projectId, "project:read")),
+  handler: async ({ actor, params }) =>
+    undoState(actor, await getDraft(actor, params.projectId, "project:read")),
 });
 
 export const POST = route({

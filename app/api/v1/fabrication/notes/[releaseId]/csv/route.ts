@@ -12,7 +12,10 @@ export const GET = route({
     const sent = await getSentNote(person.email, params.releaseId);
     await markSeen(sent.recipientId, "downloadedAt");
     return new Response(noteCsv(sent.note), {
-      headers: downloadHeaders("text/csv; charset=utf-8", `${sent.note.project} ${sent.note.revision} impedance note.csv`),
+      headers: downloadHeaders(
+        "text/csv; charset=utf-8",
+        `${sent.note.project} ${sent.note.revision} impedance note.csv`,
+      ),
     });
   },
 });

@@ -7,7 +7,8 @@ export const PUT = route({
   access: "draft:edit",
   params: modelParams,
   body: modelUpdate,
-  handler: ({ actor, params, body }) => putModel(actor, params.projectId, params.modelId, body.version, body.model),
+  handler: ({ actor, params, body }) =>
+    putModel(actor, params.projectId, params.modelId, body.version, body.model),
 });
 
 export const DELETE = route({

@@ -15,5 +15,7 @@ export const POST = route({
   params: projectParams,
   body: confirmedProposals,
   maxBodyBytes: 8_388_608,
-  handler: async ({ actor, params, body }) => ({ changed: await confirmProposals(actor, params.projectId, body) }),
+  handler: async ({ actor, params, body }) => ({
+    changed: await confirmProposals(actor, params.projectId, body),
+  }),
 });

@@ -7,6 +7,5 @@ export const POST = route({
   access: "review:comment",
   params: flagParams,
   body: flagComment,
-  handler: ({ actor, params, body }) =>
-    commentOnFlag(actor, params.projectId, params.flagId, body.comment),
+  handler: ({ actor, params, body }) => commentOnFlag(actor, params.projectId, params.flagId, body.comment),
 });

@@ -8,5 +8,8 @@ export const POST = route({
   params: importParams,
   body: importConfirm,
   handler: async ({ actor, params, body }) =>
-    Response.json({ import: await confirmImport(actor, params.projectId, params.importId, body.mode) }, { status: 202 }),
+    Response.json(
+      { import: await confirmImport(actor, params.projectId, params.importId, body.mode) },
+      { status: 202 },
+    ),
 });

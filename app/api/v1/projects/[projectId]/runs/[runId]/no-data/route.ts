@@ -9,7 +9,10 @@ export const GET = route({
   params: runParams,
   handler: async ({ actor, params }) => {
     const run = await getRun(actor, params.projectId, params.runId);
-    const [missing, accepted] = await Promise.all([missingInputs(actor, run), listAcceptances(actor, run.revisionId)]);
+    const [missing, accepted] = await Promise.all([
+      missingInputs(actor, run),
+      listAcceptances(actor, run.revisionId),
+    ]);
     return { missing, accepted };
   },
 });
@@ -19,5 +22,8 @@ export const POST = route({
   params: runParams,
   body: noDataAcceptanceInput,
   handler: async ({ actor, params, body }) =>
-    Response.json({ id: await acceptNoData(actor, params.projectId, { runId: params.runId, ...body }) }, { status: 201 }),
+    Response.json(
+      { id: await acceptNoData(actor, params.projectId, { runId: params.runId, ...body }) },
+      { status: 201 },
+    ),
 });

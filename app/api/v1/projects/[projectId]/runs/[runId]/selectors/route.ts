@@ -7,5 +7,6 @@ import { runParams } from "@/lib/schemas/route-params";
 export const GET = route({
   access: "project:read",
   params: runParams,
-  handler: async ({ actor, params }) => packRows(await listSelectorRows(actor, params.projectId, params.runId)),
+  handler: async ({ actor, params }) =>
+    packRows(await listSelectorRows(actor, params.projectId, params.runId)),
 });

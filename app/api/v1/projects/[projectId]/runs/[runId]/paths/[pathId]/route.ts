@@ -10,11 +10,22 @@ export const GET = route({
   params: runPathParams,
   handler: async ({ actor, params }) => {
     const run = await getRun(actor, params.projectId, params.runId);
-    const { result, problems, findings } = await getRunPath(actor, params.projectId, params.runId, params.pathId);
+    const { result, problems, findings } = await getRunPath(
+      actor,
+      params.projectId,
+      params.runId,
+      params.pathId,
+    );
     const inputs = await thawInputs(actor, run.inputChunks);
     // A controlled line has a result but no path to draw.
     const path = resolvePaths(inputs).paths.find((entry) => entry.id === params.pathId) ?? null;
     const { detail: _detail, ...row } = result;
-    return { run: { id: run.id, number: run.number, corners: run.corners }, result: row, problems, findings, path };
+    return {
+      run: { id: run.id, number: run.number, corners: run.corners },
+      result: row,
+      problems,
+      findings,
+      path,
+    };
   },
 });
