@@ -17,7 +17,7 @@ export function Toaster() {
           description: "text-ink-soft",
           error: "border-fail",
           success: "border-pass",
-          actionButton: "ml-auto shrink-0 font-medium text-violet underline underline-offset-2",
+          actionButton: "ml-auto min-h-6 shrink-0 font-medium text-violet underline underline-offset-2",
           closeButton: "text-ink-soft",
         },
       }}
