@@ -3,7 +3,7 @@ import type { Page } from "@playwright/test";
 import { BOARDS, draftRun, projectId, read } from "./boards";
 import { linkFromMail } from "./mail";
 import type { DemoAccount } from "./people";
-import { expect, expectAccessible, test, visit } from "./support";
+import { expect, expectAccessible, test, visit, write } from "./support";
 
 const NETS = [
   "net\tfrom\tto\tlayer\twidth_mm\tlength_mm",
@@ -46,26 +46,22 @@ test("fields read 5 mil, 0,127mm and 1/2 oz; what cannot be read stays with its 
     ["120um", "0.12 mm"],
     ["0.2", "0.2 mm"],
   ] as const) {
-    await thickness.fill(typed);
-    await thickness.press("Enter");
+    await write(thickness, typed);
     await prepreg.getByLabel("Dk").focus();
     await expect(thickness, typed).toHaveValue(shown);
   }
   const foil = page.getByRole("row", { name: "4, L2 GND" }).getByLabel("Base foil");
-  await foil.fill("1/2 oz");
-  await foil.press("Enter");
+  await write(foil, "1/2 oz");
   await expectSaved(page);
 
-  await thickness.fill("5 parsecs");
-  await thickness.press("Enter");
+  await write(thickness, "5 parsecs");
   await prepreg.getByLabel("Dk").focus();
   await expect(thickness).toHaveValue("5 parsecs");
   await expect(page.getByText(/5 parsecs.*Write/).first()).toBeVisible();
   await expect(
     page.getByRole("status").filter({ hasText: "Not saved: 1 thing needs mending" }),
   ).toBeVisible();
-  await thickness.fill("0.11");
-  await thickness.press("Enter");
+  await write(thickness, "0.11");
   await expectSaved(page);
   await page.reload();
   await expect(thickness).toHaveValue("0.11 mm");
@@ -202,12 +198,10 @@ test("two people edit one class: the second is told what changed and chooses", a
       .click();
   }
   const panel = (page: Page) => page.getByRole("complementary", { name });
-  await panel(one).getByLabel("Target impedance").fill("55");
-  await panel(one).getByLabel("Target impedance").press("Enter");
+  await write(panel(one).getByLabel("Target impedance"), "55");
   await expect(panel(one).getByRole("status")).toHaveText("Saved");
 
-  await panel(two).getByLabel("Tolerance ±").fill("7 %");
-  await panel(two).getByLabel("Tolerance ±").press("Enter");
+  await write(panel(two).getByLabel("Tolerance ±"), "7 %");
   const conflict = panel(two).getByRole("alert");
   await expect(conflict).toContainText(/changed/i);
   await expect(conflict).toContainText(/impedance|target/i);

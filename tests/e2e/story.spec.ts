@@ -6,7 +6,7 @@ import { createHash } from "node:crypto";
 import type { Locator, Page } from "@playwright/test";
 import { linkFromMail } from "./mail";
 import { readAccount } from "./people";
-import { expect, expectAccessible, test, visit } from "./support";
+import { expect, expectAccessible, test, visit, write } from "./support";
 import { unzip } from "./unzip";
 
 test.describe.configure({ mode: "serial", timeout: 180_000 });
@@ -53,8 +53,7 @@ test("a designer starts a board from six layers and edits its stackup; drawing a
   const drawnBefore = await section.locator("desc").textContent();
 
   const prepreg = page.getByRole("row", { name: "3, Prepreg 1-2" });
-  await prepreg.getByLabel("Thickness").fill("5 mil");
-  await prepreg.getByLabel("Thickness").press("Enter");
+  await write(prepreg.getByLabel("Thickness"), "5 mil");
   await expect(total).not.toHaveText(before);
   await expect(section.locator("desc")).not.toHaveText(drawnBefore ?? "");
   await expect(page.getByRole("status").filter({ hasText: /^Saved$/ })).toBeVisible();
@@ -88,10 +87,9 @@ test("a model and two classes come from presets; the impedance page finds their 
     await dialog.getByLabel("Name").fill(name);
     await dialog.getByRole("button", { name: "Make the class" }).click();
     const panel = page.getByRole("complementary", { name });
-    await panel.getByLabel("Driver model").selectOption({ label: "Gate pin" });
-    await panel.getByLabel("Receiver model").selectOption({ label: "Gate pin" });
-    await panel.getByLabel("Net names").fill(patterns);
-    await panel.getByLabel("Net names").press("Enter");
+    await panel.getByLabel("Driver model").selectOption({ label: "Gate pin (20 Ω)" });
+    await panel.getByLabel("Receiver model").selectOption({ label: "Gate pin (4 pF)" });
+    await write(panel.getByLabel("Net names"), patterns);
     await panel.getByRole("checkbox", { name: "L1 Top" }).check();
     await expect(panel.getByRole("status")).toHaveText("Saved");
   }
@@ -156,8 +154,7 @@ test("the owner sets a rule; the designer runs the check to its end", async ({ a
   const owner = await as("owner");
   await visit(owner, `/projects/${project}/rules`);
   const limit = owner.getByRole("textbox", { name: /^Limit of Overshoot, relative/ });
-  await limit.fill("22");
-  await limit.press("Enter");
+  await write(limit, "22");
   await expect(owner.getByRole("status").filter({ hasText: /^Saved$/ })).toBeVisible();
 
   const designer = await as("designer");

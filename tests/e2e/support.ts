@@ -77,6 +77,13 @@ export async function visit(page: Page, path: string): Promise<Response | null> 
   return answer;
 }
 
+/** Types into a field that shows its value otherwise while nobody is in it, and settles it with Enter. */
+export async function write(field: Locator, text: string): Promise<void> {
+  await field.focus();
+  await field.fill(text);
+  await field.press("Enter");
+}
+
 /** No serious finding of axe on what is shown now. */
 export async function expectAccessible(page: Page): Promise<void> {
   const { violations } = await new AxeBuilder({ page })
