@@ -35,8 +35,3 @@ export async function readSigned(headers: Headers): Promise<Signed | null> {
   if (team.teamId !== active) await rememberTeam(found.session.id, team.teamId);
   return { person, teams, actor: { kind: "user", ...person, teamId: team.teamId, role: team.role } };
 }
-
-/** The actor of a request; null where nobody is signed in or they belong to no team. */
-export async function actorFromRequest(request: Request): Promise<UserActor | null> {
-  return (await readSigned(request.headers))?.actor ?? null;
-}

@@ -1,5 +1,4 @@
 import { line, type Mark, polygon, text } from "./marks";
-import { textWidth } from "./text-width";
 
 const ARROW = 7;
 const HALF = 2.4;
@@ -86,9 +85,4 @@ export function arrow(x: number, y: number, to: "left" | "right" | "up" | "down"
     ],
     { fill: "ink-soft" },
   );
-}
-
-/** Room a dimension's label takes across [px]. */
-export function dimensionLabelWidth(label: string): number {
-  return textWidth(label, SIZE);
 }

@@ -14,16 +14,3 @@ export function badRowsCsv(preview: Pick<ListPreview<unknown>, "problems" | "dup
     ]),
   ]);
 }
-
-/** A problem as one sentence: "Row 14, column length: '12..7' is not a length. Write 12.7 mm or 500 mil." */
-export function problemSentence({
-  row,
-  column,
-  reason,
-}: {
-  row: number;
-  column: string;
-  reason: string;
-}): string {
-  return `Row ${row}, column ${column}: ${reason}`;
-}

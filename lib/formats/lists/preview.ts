@@ -1,5 +1,5 @@
 import type { ListKind, ListMapping } from "@/lib/schemas/import-list";
-import { readTable, type DelimitedTable, type TableRow } from "../delimited/table";
+import type { DelimitedTable, TableRow } from "../delimited/table";
 import type { GoodRow, ListField, ListFormat, RowProblem } from "./list-field";
 import { listFormats, type ListRows } from "./list-formats";
 import { MappedRow } from "./row-cells";
@@ -27,13 +27,6 @@ export interface ListPreview<T> {
 }
 
 /** Reads a whole list under a mapping: good rows, and every bad one by row, column, value and reason. */
-export function previewImport<K extends ListKind>(
-  text: string,
-  mapping: ListMapping & { kind: K },
-): ListPreview<ListRows[K]> {
-  return previewTable(readTable(text, { delimiter: mapping.delimiter }), mapping);
-}
-
 export function previewTable<K extends ListKind>(
   table: DelimitedTable,
   mapping: ListMapping & { kind: K },
