@@ -272,7 +272,7 @@ test("long work shows how far it is and can be stopped", async ({ as }) => {
   const page = await as("designer");
   const project = await projectId(page, BOARDS.large);
   await visit(page, `/projects/${project}/runs`);
-  await page.getByRole("button", { name: "Run the check" }).click();
+  await page.getByRole("button", { name: "Run the check" }).first().click();
   await expect(page.getByRole("progressbar").first()).toBeVisible();
   await page.getByRole("button", { name: "Cancel" }).first().click();
   const newest = page.getByRole("table", { name: "Runs, newest first" });
