@@ -9,6 +9,8 @@ export function Toaster() {
   return (
     <Sonner
       position="bottom-right"
+      // Each stands free of the others, so that its button can be reached.
+      expand
       toastOptions={{
         unstyled: true,
         classNames: {
