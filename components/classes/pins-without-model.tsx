@@ -45,7 +45,12 @@ export function PinsWithoutModel({ matches, projectId, search }: Props) {
             {counted(pinsWithoutModel, "pin")} of nets in scope, in {counted(withoutModel.length, "group")}.
             Their paths are no data until a row above or their class gives what is missing.
           </p>
-          <div className="border-rule-line bg-sheet mt-2 max-h-80 overflow-auto border-y">
+          <div
+            className="border-rule-line bg-sheet mt-2 max-h-80 overflow-auto border-y"
+            tabIndex={0}
+            role="region"
+            aria-label="Pins without a model"
+          >
             <table aria-label="Pins without a model" className="w-full min-w-[560px] text-left text-sm">
               <thead>
                 <tr className="text-ink-soft h-8">

@@ -26,7 +26,12 @@ const CELL = "border-rule-line/60 border-b px-2 py-1.5 align-top";
 export function RulesTable({ doc, readOnly, onChange }: Props) {
   const set = (id: string, setting: Setting) => onChange({ ...doc, rules: { ...doc.rules, [id]: setting } });
   return (
-    <div className="border-rule-line bg-sheet relative overflow-x-auto border-y">
+    <div
+      className="border-rule-line bg-sheet relative overflow-x-auto border-y"
+      tabIndex={0}
+      role="region"
+      aria-label="Rules and their limits"
+    >
       <table aria-label="Rules" className="w-full min-w-[860px] border-separate border-spacing-0 text-sm">
         <thead>
           <tr>

@@ -92,10 +92,7 @@ export function Scopes({
         ? SCOPES.map(([scope, words], index) => (
             <span key={scope}>
               {index > 0 ? ", " : ""}
-              <Link
-                className="text-violet hover:underline"
-                href={`/projects/${projectId}/nets?scope=${scope}` as Route}
-              >
+              <Link className="prose-link" href={`/projects/${projectId}/nets?scope=${scope}` as Route}>
                 {(scopes[scope] ?? 0).toLocaleString("en")}
               </Link>{" "}
               {words}
