@@ -5,6 +5,8 @@ import { linkFromMail } from "./mail";
 import type { DemoAccount } from "./people";
 import { expect, expectAccessible, test, visit, write } from "./support";
 
+test.describe.configure({ mode: "parallel" });
+
 const NETS = [
   "net\tfrom\tto\tlayer\twidth_mm\tlength_mm",
   "SLUICE_A\tU1.1\tU2.1\tL1 Top\t0.2\t12",

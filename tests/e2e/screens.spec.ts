@@ -9,6 +9,8 @@ import { BOARDS, draftRun, type ListedNet, listNets, projectId, read } from "./b
 import type { Role } from "./people";
 import { expect, expectAccessible, expectNoSidewaysScroll, expectSensibleText, test, visit } from "./support";
 
+test.describe.configure({ mode: "parallel" });
+
 type Board = keyof typeof BOARDS;
 
 interface Place {

@@ -3,7 +3,7 @@
  * the words they would use. The steps build on one another.
  */
 import { createHash } from "node:crypto";
-import type { Locator, Page } from "@playwright/test";
+import type { Download, Locator, Page } from "@playwright/test";
 import { linkFromMail } from "./mail";
 import { readAccount } from "./people";
 import { expect, expectAccessible, test, visit, write } from "./support";
@@ -426,9 +426,6 @@ async function waive(page: Page, reason: string, { open = false } = {}): Promise
   await dialog.getByLabel("Valid until").fill(`${new Date().getUTCFullYear() + 1}-02-01`);
   await dialog.getByRole("button", { name: "Waive", exact: true }).click();
 }
-
-type Download = Awaited<ReturnType<typeof waitForDownload>>;
-const waitForDownload = (page: Page) => page.waitForEvent("download");
 
 async function bytesOf(download: Download): Promise<Buffer> {
   const parts: Buffer[] = [];
