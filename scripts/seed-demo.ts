@@ -110,7 +110,7 @@ async function check(actor: UserActor, projectId: string): Promise<string> {
   await runWorkerIdle();
   const run = await getRun(actor, projectId, id);
   if (run.state !== "done")
-    throw new Error(`The demo's run ended as ${run.state}: ${run.error ?? "no reason"}.`);
+    throw new Error(`The demo's run ended as ${run.state}: ${run.error ?? "no reason given."}`);
   return id;
 }
 

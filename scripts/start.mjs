@@ -7,7 +7,7 @@
  */
 import { existsSync, rmSync, writeFileSync } from "node:fs";
 import path from "node:path";
-import { ensureBuild } from "./setup/build.mjs";
+import { buildWorkers, ensureBuild } from "./setup/build.mjs";
 import { makeDemoAccounts, readDemoAccounts } from "./setup/demo-accounts.mjs";
 import { checkNode, ensurePackages } from "./setup/packages.mjs";
 import { must, runScript, SetupError } from "./setup/run.mjs";
@@ -56,11 +56,14 @@ async function seedDemo(settings) {
   const script = "scripts/seed-demo.ts";
   if (!settings.fresh || !settings.demoWanted || !existsSync(script)) return;
   console.log("Making the demo team …");
+  const env = childEnvironment(settings, { demo: true });
+  // The demo's runs are worked by the same threads as everybody's.
+  await buildWorkers({ env });
   writeFileSync(settings.seedingMark, "");
   makeDemoAccounts(settings.demoFile);
   await must(
     "The demo data could not be made; the reason stands above. Start with DEMO=0 to do without.",
-    runScript(script, { env: childEnvironment(settings, { demo: true }), quiet: true }),
+    runScript(script, { env, quiet: true }),
   );
   rmSync(settings.seedingMark);
 }

@@ -5,6 +5,7 @@ import {
   type Browser,
   type BrowserContext,
   type Locator,
+  type Locator,
   type Page,
   type Response,
 } from "@playwright/test";
