@@ -5,7 +5,6 @@ import {
   type Browser,
   type BrowserContext,
   type Locator,
-  type Locator,
   type Page,
   type Response,
 } from "@playwright/test";
