@@ -102,16 +102,14 @@ export const bindingsThing: DraftThing<StoredBinding[]> = {
     db.delete(binding).where(and(eq(binding.revisionId, draft.id), eq(binding.teamId, draft.teamId))),
     ...(state && state.length > 0
       ? [
-          db
-            .insert(binding)
-            .values(
-              state.map((line, position) => ({
-                ...line,
-                position,
-                teamId: draft.teamId,
-                revisionId: draft.id,
-              })),
-            ),
+          db.insert(binding).values(
+            state.map((line, position) => ({
+              ...line,
+              position,
+              teamId: draft.teamId,
+              revisionId: draft.id,
+            })),
+          ),
         ]
       : []),
   ],

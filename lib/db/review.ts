@@ -90,16 +90,14 @@ export async function raiseFlag(
       createdBy: actor.userId,
       createdAt: at,
     }),
-    db
-      .insert(flagEntry)
-      .values({
-        id: newId(),
-        teamId: actor.teamId,
-        flagId: id,
-        authorId: actor.userId,
-        at,
-        comment: input.comment,
-      }),
+    db.insert(flagEntry).values({
+      id: newId(),
+      teamId: actor.teamId,
+      flagId: id,
+      authorId: actor.userId,
+      at,
+      comment: input.comment,
+    }),
   ];
   await commitAudited(actor, statements, {
     action: "flag.raise",
