@@ -1,4 +1,3 @@
-import type { Route } from "next";
 import { BounceSketch } from "@/components/landing/bounce-sketch";
 import { Cautions } from "@/components/landing/cautions";
 import { Mark } from "@/components/shell/mark";
@@ -51,7 +50,7 @@ export default async function LandingPage() {
           </p>
           <div className="flex flex-wrap gap-3">
             {signedIn ? (
-              <LinkButton size="md" variant="primary" href={"/projects" as Route}>
+              <LinkButton size="md" variant="primary" href={"/projects"}>
                 Open your projects
               </LinkButton>
             ) : (

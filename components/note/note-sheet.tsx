@@ -32,7 +32,7 @@ export function NoteSheet({ note, noteHash, actions }: Props) {
           <time dateTime={new Date(note.releasedAt).toISOString()}>{day(note.releasedAt)}</time>
         </Fact>
         <Fact term="Signed off by">{note.signedBy}</Fact>
-        <Fact term="Total thickness">
+        <Fact term="Thickness over mask">
           {thickness.text} <span className="text-ink-soft">{thickness.unit}</span>
         </Fact>
       </dl>
@@ -52,7 +52,9 @@ export function NoteSheet({ note, noteHash, actions }: Props) {
                 <Head end>Target</Head>
                 <Head end>Tolerance</Head>
                 <Head end>Predicted</Head>
-                <Head>References</Head>
+                <th scope="col" className="py-1.5 pl-3 font-medium">
+                  References
+                </th>
               </tr>
             </thead>
             <tbody>

@@ -63,7 +63,7 @@ export function ProjectsView({ projects, archived, mayCreate, mayArchive }: Prop
         }
         actions={
           <>
-            <LinkButton variant="quiet" href={(archived ? "/projects" : "/projects?archived=true") as Route}>
+            <LinkButton variant="quiet" href={archived ? "/projects" : "/projects?archived=true"}>
               {archived ? "Show the projects in work" : "Show archived"}
             </LinkButton>
             {archived ? null : create}

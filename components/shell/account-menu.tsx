@@ -5,7 +5,6 @@ import { useRouter } from "next/navigation";
 import { useState } from "react";
 import { Button } from "@/components/ui/button";
 import { Menu, MenuChoice, MenuItem, MenuSeparator } from "@/components/ui/menu";
-import { authClient } from "@/lib/client/auth";
 import { parseTheme, type Theme, THEME_COOKIE, writePreference } from "@/lib/client/preferences";
 import type { ShellUser } from "./types";
 
@@ -29,6 +28,8 @@ export function AccountMenu({ user, role }: { user: ShellUser; role: string | nu
   }
 
   async function signOut() {
+    // Loaded when it is needed: few leave on the page that they opened.
+    const { authClient } = await import("@/lib/client/auth");
     await authClient.signOut();
     router.push("/");
     router.refresh();

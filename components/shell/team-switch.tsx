@@ -5,7 +5,6 @@ import Link from "next/link";
 import { Button } from "@/components/ui/button";
 import { Menu, MenuChoice, MenuItem, MenuSeparator } from "@/components/ui/menu";
 import { toast } from "@/components/ui/toast";
-import { authClient } from "@/lib/client/auth";
 import { authMessage } from "@/lib/client/auth-messages";
 import { startAnew } from "@/lib/client/start-anew";
 import type { ShellTeam } from "./types";
@@ -13,6 +12,8 @@ import type { ShellTeam } from "./types";
 /** The team one works in, and the others one belongs to. */
 export function TeamSwitch({ teams, active }: { teams: readonly ShellTeam[]; active: ShellTeam | null }) {
   async function go(organizationId: string) {
+    // Loaded when it is needed: few change teams on the page that they opened.
+    const { authClient } = await import("@/lib/client/auth");
     const { error } = await authClient.organization.setActive({ organizationId });
     if (error) return void toast.error(authMessage(error));
     // Whatever is on screen belongs to the other team: begin anew.
