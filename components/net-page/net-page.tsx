@@ -10,7 +10,6 @@ import type { ShownVerdict } from "@/lib/drawings/verdict-mark";
 import { applyWhatIf, isChanged, whatIfStart } from "@/lib/resolve/what-if";
 import type { Finding } from "@/lib/si/rules/types";
 import { CornerPicker } from "./corner-picker";
-import { Drawings } from "./drawings";
 import type { NetFacts } from "./facts";
 import { FindingsTable } from "./findings-table";
 import { NetHead } from "./net-head";
@@ -23,6 +22,12 @@ import { useNetAddress } from "./use-net-address";
 import { usePictures } from "./use-pictures";
 import { ViewControls } from "./view-controls";
 import { Why } from "./why";
+
+/** Comes with the first picture that the engine's thread has made; its place is kept. */
+const Drawings = dynamic(() => import("./drawings").then((module) => module.Drawings), {
+  ssr: false,
+  loading: () => <div className="border-rule-line min-h-[48rem] border-t" />,
+});
 
 /** Comes after the drawings: it brings the units that people type in. Its place is kept. */
 const WhatIfPanel = dynamic(() => import("./what-if-panel").then((module) => module.WhatIfPanel), {
