@@ -81,8 +81,7 @@ export function NetPage({ facts, mayEdit, engine = pageEngine() }: Props) {
   );
   const topology = useMemo(
     () => topologyFromPath(changed, view.driver, pinVerdicts(result.findings, receivers)),
-    // The receivers follow from path and driver.
-    // eslint-disable-next-line react-hooks/exhaustive-deps
+    // eslint-disable-next-line react-hooks/exhaustive-deps -- the receivers follow from path and driver
     [changed, view.driver, result],
   );
   const rule = rules.find((entry) => entry.id === view.finding?.rule) ?? null;
