@@ -3,7 +3,6 @@
 import dynamic from "next/dynamic";
 import { useCallback, useMemo } from "react";
 import { PlaybackBar } from "@/components/charts/playback-bar";
-import { TopologyStrip } from "@/components/charts/topology-strip";
 import { type Engine, pageEngine } from "@/lib/client/engine";
 import { topologyFromPath } from "@/lib/drawings/topology-from-path";
 import type { ShownVerdict } from "@/lib/drawings/verdict-mark";
@@ -22,6 +21,12 @@ import { useNetAddress } from "./use-net-address";
 import { usePictures } from "./use-pictures";
 import { ViewControls } from "./view-controls";
 import { Why } from "./why";
+
+/** Drawn once its width is known; the cause above it is there at once. */
+const TopologyStrip = dynamic(
+  () => import("@/components/charts/topology-strip").then((module) => module.TopologyStrip),
+  { ssr: false, loading: () => <div className="min-h-32" /> },
+);
 
 /** Comes with the first picture that the engine's thread has made; its place is kept. */
 const Drawings = dynamic(() => import("./drawings").then((module) => module.Drawings), {

@@ -156,7 +156,11 @@ test("lists are walked by keyboard: j, k, Home, End, Enter, Esc, x, /, ?", async
   const problems = page.getByRole("table", { name: "Problems, worst first" });
   await expect(problems).toBeVisible();
   const current = problems.locator("tr[aria-current=true]");
-  await page.keyboard.press("j");
+  // The table stands before its keys do, by as long as the page takes to wake.
+  await expect(async () => {
+    await page.keyboard.press("j");
+    await expect(current).toHaveCount(1, { timeout: 500 });
+  }).toPass();
   const first = await current.getAttribute("data-row-id");
   await page.keyboard.press("j");
   await expect(current).not.toHaveAttribute("data-row-id", first ?? "");
