@@ -149,8 +149,8 @@ test("an address restores filters, sorting and the row on which one stood", asyn
 });
 
 test("lists are walked by keyboard: j, k, Home, End, Enter, Esc, x, /, ?", async ({ as, viewport }) => {
-  // The narrow project is a touch screen without a keyboard; the wide one walks the lists.
-  test.skip((viewport?.width ?? 0) < 600, "no keyboard on a narrow touch screen");
+  // Fails at 390 px for a reason not found yet: after j no row is current. A known fault, not a decision.
+  test.skip((viewport?.width ?? 0) < 600, "known fault: j finds no row on the narrow run page");
   const page = await as("reviewer");
   const project = await projectId(page, BOARDS.small);
   const run = await draftRun(page, project);
