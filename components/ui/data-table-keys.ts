@@ -22,15 +22,28 @@ type Key = Pick<
 
 const PAGE = 15;
 
+interface RowKeys {
+  onKeyDown: (event: KeyboardEvent) => void;
+  /** A row was given the focus: by the person (it becomes the current one), or back by this table (it does not). */
+  focused: (id: string) => void;
+}
+
 /** Moves through rows: j or down, k or up, Home, End, page keys; Enter opens, Space ticks. */
-export function useRowKeys(options: Options): (event: KeyboardEvent) => void {
+export function useRowKeys(options: Options): RowKeys {
   const latest = useRef(options);
   /** The row that the focus is on its way to: it may only be drawn after a scroll. */
   const pending = useRef<string | null>(null);
+  const returning = useRef(false);
   useEffect(() => {
+    const was = latest.current.activeId;
     latest.current = options;
-    if (pending.current !== null && focusRow(options.scroller.current, pending.current))
-      pending.current = null;
+    // A panel that stood in the table's place took the focus with it when it closed.
+    if (was !== null && options.activeId === null && document.activeElement === document.body)
+      pending.current = was;
+    if (pending.current === null) return;
+    returning.current = true;
+    if (focusRow(options.scroller.current, pending.current)) pending.current = null;
+    returning.current = false;
   });
 
   function handle(event: Key): void {
@@ -72,8 +85,13 @@ export function useRowKeys(options: Options): (event: KeyboardEvent) => void {
     return () => document.removeEventListener("keydown", listen);
   }, [everywhere]);
 
-  return (event) => {
-    if (!everywhere) handle(event);
+  return {
+    onKeyDown: (event) => {
+      if (!everywhere) handle(event);
+    },
+    focused: (id) => {
+      if (!returning.current && id !== options.activeId) options.setActive(id);
+    },
   };
 }
 
@@ -104,7 +122,8 @@ function focusRow(scroller: HTMLElement | null, id: string): boolean {
   const row = [...rows].find((candidate) => candidate.dataset.rowId === id);
   row?.focus({ preventScroll: true });
   row?.scrollIntoView({ block: "nearest" });
-  return row !== undefined;
+  // A row that is not displayed cannot take it; it gets its turn once it is.
+  return row !== undefined && document.activeElement === row;
 }
 
 function isTyping(target: EventTarget | null): boolean {

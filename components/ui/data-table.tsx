@@ -125,7 +125,7 @@ export function DataTable<Row extends RowData>(props: Props<Row>) {
   const tickActive = selection
     ? (id: string) => sorted.find((row) => row.id === id)?.toggleSelected()
     : undefined;
-  const onKeyDown = useRowKeys({
+  const rowKeys = useRowKeys({
     ids: useMemo(() => sorted.map((row) => row.id), [sorted]),
     activeId,
     setActive,
@@ -149,7 +149,7 @@ export function DataTable<Row extends RowData>(props: Props<Row>) {
       ref={scroller}
       className="border-rule-line bg-sheet relative overflow-auto border-y print:overflow-visible"
       style={{ maxHeight: height }}
-      onKeyDown={onKeyDown}
+      onKeyDown={rowKeys.onKeyDown}
     >
       <table
         aria-label={props.label}
@@ -205,7 +205,7 @@ export function DataTable<Row extends RowData>(props: Props<Row>) {
               aria-current={row.id === activeId ? "true" : undefined}
               tabIndex={row.id === tabStop ? 0 : -1}
               onFocus={(event) => {
-                if (event.target === event.currentTarget && row.id !== activeId) setActive(row.id);
+                if (event.target === event.currentTarget) rowKeys.focused(row.id);
               }}
               onClick={(event) => {
                 if (isOwnControl(event.target, event.currentTarget)) return;

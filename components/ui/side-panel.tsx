@@ -4,6 +4,9 @@ import { X } from "lucide-react";
 import { type ReactNode, useEffect, useId, useRef } from "react";
 import { Button } from "./button";
 
+/** From this width on a panel stands beside the sheet: Tailwind's lg, as the classes below have it. */
+const BESIDE = "(min-width: 64rem)";
+
 interface LayoutProps {
   /** The sheet that stays in view. */
   children: ReactNode;
@@ -26,7 +29,7 @@ interface Props {
   onClose: () => void;
   children: ReactNode;
   footer?: ReactNode;
-  /** Moves the focus into the panel when it opens. Leave off where j/k in the list must keep working. */
+  /** Moves the focus into the panel when it opens beside the sheet. Leave off where the list keeps the focus. */
   takeFocus?: boolean;
   /** Room for a drawing of a trace. */
   wide?: boolean;
@@ -37,7 +40,8 @@ export function SidePanel({ title, onClose, children, footer, takeFocus = false,
   const id = useId();
   const ref = useRef<HTMLElement>(null);
   useEffect(() => {
-    if (takeFocus) ref.current?.focus();
+    // Alone on a narrow screen it has hidden what had the focus.
+    if (takeFocus || !matchMedia(BESIDE).matches) ref.current?.focus({ preventScroll: true });
   }, [takeFocus]);
   return (
     <aside
