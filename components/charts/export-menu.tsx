@@ -2,7 +2,7 @@
 
 import { Download } from "lucide-react";
 import { DropdownMenu } from "radix-ui";
-import { toast } from "sonner";
+import { toast } from "@/components/ui/toast";
 import { buttonClasses } from "@/components/ui/button";
 import { csvText } from "@/lib/drawings/csv-rows";
 import type { Drawing } from "@/lib/drawings/marks";

@@ -2,7 +2,7 @@
 
 import { useRouter } from "next/navigation";
 import { useState } from "react";
-import { toast } from "sonner";
+import { toast } from "@/components/ui/toast";
 import { api, ApiError, errorMessage } from "@/lib/client/api";
 
 interface Outcome {

@@ -1,28 +1,25 @@
 "use client";
 
-import { Toaster as Sonner } from "sonner";
+import dynamic from "next/dynamic";
+import type { toast as sonner } from "sonner";
 
-export { toast } from "sonner";
+type Say = (...message: Parameters<typeof sonner.success>) => void;
 
-/** Where messages appear; one per app, placed by the providers. Say with `toast.success(…)`, `toast.error(…)`. */
+const Messages = dynamic(() => import("./toaster"), { ssr: false });
+
+let begin: () => void;
+/** What is said before the messages' chunk has come waits for it. */
+const ready = new Promise<void>((resolve) => (begin = resolve));
+const onReady = () => begin();
+
+/** Where messages appear; one per app, placed by the providers. Say with `toast(…)`, `toast.success(…)`, `toast.error(…)`. */
 export function Toaster() {
-  return (
-    <Sonner
-      position="bottom-right"
-      // Each stands free of the others, so that its button can be reached.
-      expand
-      toastOptions={{
-        unstyled: true,
-        classNames: {
-          toast:
-            "flex w-full items-start gap-3 font-sans rounded border border-field-line bg-sheet px-4 py-3 text-sm text-ink",
-          description: "text-ink-soft",
-          error: "border-fail",
-          success: "border-pass",
-          actionButton: "ml-auto min-h-6 shrink-0 font-medium text-violet underline underline-offset-2",
-          closeButton: "text-ink-soft",
-        },
-      }}
-    />
-  );
+  return <Messages onReady={onReady} />;
 }
+
+const say =
+  (tone: "message" | "success" | "error"): Say =>
+  (...message) =>
+    void ready.then(() => import("sonner")).then(({ toast }) => toast[tone](...message));
+
+export const toast = Object.assign(say("message"), { success: say("success"), error: say("error") });
