@@ -84,11 +84,11 @@ export function waveformChart(
       Math.max(range.high, ...sound.map((l) => l.volts)),
       0.1,
     );
-  const names = Math.max(...probes.map((p) => textWidth(p.label, LABEL, true)), 40);
+  const endRoom = Math.max(...probes.map((p) => textWidth(p.label, LABEL, true)), 40);
   const box: PlotBox = {
     left: 62,
     top: 12,
-    right: width - Math.min(names + 20, width * 0.3),
+    right: width - Math.min(endRoom + 20, width * 0.3),
     bottom: height - 30,
   };
   const x = linear(span, [box.left, box.right]);
@@ -96,6 +96,7 @@ export function waveformChart(
   const focus = probes.find((p) => p.id === options.focus)?.id ?? probes[0]?.id ?? "";
   const violations = findViolations(probes, sound, span);
 
+  const names = limitNames(sound, violations, x, y, box);
   const inside = { x: box.left, y: box.top, width: box.right - box.left, height: box.bottom - box.top };
   const marks: Mark[] = [
     ...leftAxis(y, ticksFor(volts, (box.bottom - box.top) / 44, "V").ticks, box),
@@ -111,8 +112,8 @@ export function waveformChart(
       ],
       { clip: inside },
     ),
-    ...limitNames(sound, violations, x, y, box),
-    ...worstNotes(violations, x, y, box),
+    ...names,
+    ...worstNotes(violations, x, y, box, names),
     ...endNames(probes, focus, span, y, box),
   ];
   return {

@@ -10,6 +10,8 @@ import type { Violation } from "./waveform-violations";
 
 export const LABEL = 12;
 const ROW = 15;
+/** How far a note may stand from its point. */
+const AWAY = [0, ROW, 2 * ROW, 3 * ROW, 4 * ROW, 5 * ROW];
 
 /** Each limit's name on its outer side, at the left, where waves have not yet started to ring. */
 export function limitNames(
@@ -32,34 +34,72 @@ export function limitNames(
   });
 }
 
-/** How far past the limit, at the worst point of each limit. */
-export function worstNotes(violations: readonly Violation[], x: Scale, y: Scale, box: PlotBox): Mark[] {
+/** How far past the limit, at the worst point of each limit, clear of the names already placed. */
+export function worstNotes(
+  violations: readonly Violation[],
+  x: Scale,
+  y: Scale,
+  box: PlotBox,
+  names: readonly Mark[],
+): Mark[] {
   const worst = new Map<string, Violation>();
   for (const v of violations) {
     const known = worst.get(v.limit);
     if (!known || v.worst.past > known.worst.past) worst.set(v.limit, v);
   }
+  const taken = names.flatMap(roomOf);
   return [...worst.values()].flatMap((v) => {
     const [cx, cy] = [x(v.worst.time), y(v.worst.volts)];
-    const words = `${voltsText(v.worst.past)} past`;
-    const room = textWidth(words, LABEL, true) + 12;
-    const leftward = cx + room > box.right;
-    return [
-      circle(cx, cy, 3, { fill: "fail" }),
-      text(
-        leftward ? cx - 8 : cx + 8,
-        Math.min(Math.max(v.side === "max" ? cy - 7 : cy + 17, box.top + 11), box.bottom - 4),
-        words,
-        {
-          ink: "fail",
-          weight: 650,
-          anchor: leftward ? "end" : "start",
-          halo: true,
-        },
-      ),
-    ];
+    const note = placed(`${voltsText(v.worst.past)} past`, cx, cy, v.side === "max", box, taken);
+    taken.push(...roomOf(note));
+    return [circle(cx, cy, 3, { fill: "fail" }), note];
   });
 }
+
+/** The first place by the point where the note fits the plot and covers nothing; the outer side is tried first. */
+function placed(
+  words: string,
+  cx: number,
+  cy: number,
+  above: boolean,
+  box: PlotBox,
+  taken: readonly Room[],
+): Mark {
+  const outward = above ? -1 : 1;
+  const outer = above ? cy - 7 : cy + 17;
+  const inner = above ? cy + 17 : cy - 7;
+  const rows = AWAY.flatMap((away) => [outer + outward * away, inner - outward * away]);
+  const at = (row: number, anchor: "start" | "end") =>
+    text(cx + (anchor === "start" ? 8 : -8), Math.min(Math.max(row, box.top + 11), box.bottom - 4), words, {
+      ink: "fail",
+      weight: 650,
+      anchor,
+      halo: true,
+    });
+  const notes = rows.flatMap((row) => [at(row, "start"), at(row, "end")]);
+  const fits = (note: Mark) =>
+    roomOf(note).every(
+      (room) => room.left >= box.left && room.right <= box.right && !taken.some((other) => meet(room, other)),
+    );
+  return notes.find(fits) ?? at(outer, cx > (box.left + box.right) / 2 ? "end" : "start");
+}
+
+interface Room {
+  left: number;
+  right: number;
+  top: number;
+  bottom: number;
+}
+
+function roomOf(mark: Mark): Room[] {
+  if (mark.kind !== "text") return [];
+  const width = textWidth(mark.spans.map((span) => span.text).join(""), LABEL, (mark.weight ?? 400) > 500);
+  const left = mark.anchor === "end" ? mark.x - width : mark.x;
+  return [{ left, right: left + width, top: mark.y - LABEL, bottom: mark.y + 3 }];
+}
+
+const meet = (a: Room, b: Room) =>
+  a.left < b.right && b.left < a.right && a.top < b.bottom && b.top < a.bottom;
 
 /** The name of each wave at its end, moved apart where ends meet. */
 export function endNames(

@@ -8,6 +8,7 @@ import {
   waveformCursor,
   type WaveProbe,
 } from "@/lib/drawings/waveform-chart.geometry";
+import { textWidth } from "@/lib/drawings/text-width";
 import { textMarks, texts } from "./texts";
 
 const ns = 1e-9;
@@ -92,6 +93,35 @@ describe("waveformChart", () => {
       ]),
     );
   });
+
+  it.each([330, 500, 800])(
+    "keeps how far a limit is passed clear of every limit's name, %i px wide",
+    (width) => {
+      const settled = (volts: number, side: "max" | "min"): LimitLine => ({
+        id: side,
+        label: "Settled by then",
+        volts,
+        side,
+        from: 1.8 * ns,
+      });
+      const crowded = waveformChart([ringing], [above, back, settled(3.2, "max"), settled(2.9, "min")], {
+        width,
+      });
+      const rooms = textMarks(crowded)
+        .filter((mark) => mark.halo)
+        .map((mark) => {
+          const words = mark.spans.map((span) => span.text).join("");
+          const left = mark.anchor === "end" ? mark.x - textWidth(words, 12) : mark.x;
+          return { words, left, right: left + textWidth(words, 12), y: mark.y };
+        });
+      const notes = rooms.filter(({ words }) => words.endsWith("past"));
+      expect(notes).toHaveLength(4);
+      for (const note of notes)
+        for (const other of rooms)
+          if (other !== note && other.left < note.right && note.left < other.right)
+            expect(Math.abs(other.y - note.y), `${note.words} on ${other.words}`).toBeGreaterThanOrEqual(12);
+    },
+  );
 
   it("tells the same in words", () => {
     expect(drawing.description).toContain(
