@@ -12,8 +12,8 @@ import { Input, TextArea } from "@/components/ui/input";
 import { Select } from "@/components/ui/select";
 import { ApiError, errorMessage } from "@/lib/client/api";
 import { createProject } from "@/lib/client/project";
-import { stackupTemplates } from "@/lib/resolve/stackup-templates";
 import { projectInput } from "@/lib/schemas/project";
+import { stackupTemplates } from "@/lib/si/stackup";
 
 /** A select has no null: the empty choice stands for it. */
 const form = projectInput.extend({ template: z.string() });

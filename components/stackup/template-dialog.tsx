@@ -69,6 +69,7 @@ export function TemplateDialog({ open, onOpenChange, present, onTake }: Props) {
             />
             <span className="min-w-0 flex-1">
               <span className="font-medium">{entry.title}</span>
+              <span className="text-ink-soft block text-xs">{entry.description}</span>
               <span className="text-ink-soft block text-xs">
                 {shownLength(rounded(totalThickness(entry.layers, reader).withoutMask), reader)} over copper
               </span>

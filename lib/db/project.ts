@@ -1,7 +1,7 @@
 import "server-only";
 import { and, asc, desc, eq, isNotNull, isNull, sql } from "drizzle-orm";
 import type { z } from "zod";
-import { stackupFromTemplate, stackupTemplates } from "@/lib/resolve/stackup-templates";
+import { stackupTemplates } from "@/lib/si/stackup";
 import type { Actor } from "@/lib/schemas/actor";
 import { ConflictError, NotFoundError, RefusedError } from "@/lib/schemas/errors";
 import { projectInput, projectUpdate, type ProjectSummary } from "@/lib/schemas/project";
@@ -54,14 +54,17 @@ export async function getProject(actor: Actor, projectId: string): Promise<Proje
 export async function createProject(actor: Actor, input: ProjectInput): Promise<ProjectRow> {
   requirePermission(actor, "project:create", "The list of projects");
   const { template, ...fields } = projectInput.parse(input);
-  const from = template === null ? { name: "Stackup", layers: [] } : stackupFromTemplate(template);
+  const from =
+    template === null
+      ? { title: "Stackup", layers: [] }
+      : stackupTemplates.find((entry) => entry.id === template);
   if (!from)
     throw new RefusedError(
       `There is no template "${template}". Choose one of: ${stackupTemplates.map((entry) => entry.id).join(", ")}.`,
       "unknown-template",
       { template: "Choose one of the templates." },
     );
-  const doc = stackupDoc.parse(from);
+  const doc = stackupDoc.parse({ name: from.title, layers: from.layers });
   const db = await getDb();
   const at = now();
   const id = newId();

@@ -43,12 +43,12 @@ beforeEach(async () => {
 async function withThickness(value: string) {
   const stackup = await getStackup(designer, draft);
   const layers = stackup.layers.map((layer) =>
-    layer.name === "Prepreg 1-2" ? { ...layer, thickness: { value, unit: "mm" } } : layer,
+    layer.name === "Core 2-3" ? { ...layer, thickness: { value, unit: "mm" } } : layer,
   );
   return { version: stackup.version, doc: { name: stackup.name, layers } };
 }
 const prepreg = async () =>
-  (await getStackup(designer, draft)).layers.find((layer) => layer.name === "Prepreg 1-2")?.thickness_m;
+  (await getStackup(designer, draft)).layers.find((layer) => layer.name === "Core 2-3")?.thickness_m;
 
 describe("two people and one thing", () => {
   it("the second write of a stackup is turned back, naming who changed what", async () => {
@@ -60,7 +60,7 @@ describe("two people and one thing", () => {
     );
     expect(refusal).toBeInstanceOf(ConflictError);
     expect((refusal as ConflictError).message).toContain("Saltmarsh owner");
-    expect((refusal as ConflictError).changed).toEqual(["Prepreg 1-2 thickness"]);
+    expect((refusal as ConflictError).changed).toEqual(["Core 2-3 thickness"]);
     expect((refusal as ConflictError).current).toMatchObject({ version: 1 });
     expect(await prepreg()).toBe(0.15e-3);
   });
@@ -109,10 +109,10 @@ describe("undo and redo", () => {
     const { version, doc } = await withThickness("0.15");
     await putStackup(designer, projectId, version, doc);
     const after = (await getStackup(designer, draft)).layers;
-    expect(await undoState(designer, draft)).toEqual({ undo: "Stackup: Prepreg 1-2 thickness", redo: null });
+    expect(await undoState(designer, draft)).toEqual({ undo: "Stackup: Core 2-3 thickness", redo: null });
     await undo(designer, projectId);
     expect((await getStackup(designer, draft)).layers).toEqual(before);
-    expect(await undoState(designer, draft)).toEqual({ undo: null, redo: "Stackup: Prepreg 1-2 thickness" });
+    expect(await undoState(designer, draft)).toEqual({ undo: null, redo: "Stackup: Core 2-3 thickness" });
     await redo(designer, projectId);
     expect((await getStackup(designer, draft)).layers).toEqual(after);
   });
@@ -175,7 +175,7 @@ describe("undo and redo", () => {
     await putStackup(owner, projectId, second.version, second.doc);
     await expect(undo(designer, projectId)).rejects.toMatchObject({
       name: "ConflictError",
-      changed: ["Prepreg 1-2 thickness"],
+      changed: ["Core 2-3 thickness"],
     });
     expect(await prepreg()).toBe(0.16e-3);
   });

@@ -40,8 +40,8 @@ test("fields read 5 mil, 0,127mm and 1/2 oz; what cannot be read stays with its 
   const page = await as("designer");
   const project = await newBoard(page);
   await visit(page, `/projects/${project}/stackup`);
-  const prepreg = page.getByRole("row", { name: "3, Prepreg 1-2" });
-  const thickness = prepreg.getByLabel("Thickness");
+  const core = page.getByRole("row", { name: "5, Core 2-3" });
+  const thickness = core.getByLabel("Thickness");
   for (const [typed, shown] of [
     ["5 mil", "0.127 mm"],
     ["0,15mm", "0.15 mm"],
@@ -49,7 +49,7 @@ test("fields read 5 mil, 0,127mm and 1/2 oz; what cannot be read stays with its 
     ["0.2", "0.2 mm"],
   ] as const) {
     await write(thickness, typed);
-    await prepreg.getByLabel("Dk").focus();
+    await core.getByLabel("Dk").focus();
     await expect(thickness, typed).toHaveValue(shown);
   }
   const foil = page.getByRole("row", { name: "4, L2 GND" }).getByLabel("Base foil");
@@ -57,7 +57,7 @@ test("fields read 5 mil, 0,127mm and 1/2 oz; what cannot be read stays with its 
   await expectSaved(page);
 
   await write(thickness, "5 parsecs");
-  await prepreg.getByLabel("Dk").focus();
+  await core.getByLabel("Dk").focus();
   await expect(thickness).toHaveValue("5 parsecs");
   await expect(page.getByText(/5 parsecs.*Write/).first()).toBeVisible();
   await expect(

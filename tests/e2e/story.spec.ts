@@ -52,8 +52,8 @@ test("a designer starts a board from six layers and edits its stackup; drawing a
   const before = await total.innerText();
   const drawnBefore = await section.locator("desc").textContent();
 
-  const prepreg = page.getByRole("row", { name: "3, Prepreg 1-2" });
-  await write(prepreg.getByLabel("Thickness"), "5 mil");
+  const core = page.getByRole("row", { name: "5, Core 2-3" });
+  await write(core.getByLabel("Thickness"), "5 mil");
   await expect(total).not.toHaveText(before);
   await expect(section.locator("desc")).not.toHaveText(drawnBefore ?? "");
   await expect(page.getByRole("status").filter({ hasText: /^Saved$/ })).toBeVisible();

@@ -13,6 +13,7 @@ export function aBoard() {
   const layers = (stackupTemplates.find(({ copperLayers }) => copperLayers === 4)?.layers ?? []).map(
     (layer, index) => ({
       ...layer,
+      name: layer.name.replace(/^(L\d+) .*/, "$1"),
       id: uuid(index),
       lineageId: uuid(100 + index),
     }),

@@ -125,7 +125,7 @@ describe("stackup editor", () => {
     expect(field("Dk of Core 2-3").value).toBe("0.2");
     expect(screen.getByText("Core 2-3, Dk: Dk is at least 1 (air).")).toBeTruthy();
     expect(screen.getByRole("status").textContent).toContain("Not saved");
-    await user.click(field("Name of L1"));
+    await user.click(field("Name of L1 Top"));
     expect(field("Dk of Core 2-3").value).toBe("0.2");
     await retype(user, field("Dk of Core 2-3"), "4.5");
     await waitFor(() => expect(puts).toHaveLength(1), { timeout: 3000 });
@@ -134,8 +134,8 @@ describe("stackup editor", () => {
 
   it("does not save two layers of one name, and says which", async () => {
     const user = show();
-    await retype(user, field("Name of L2"), "L1");
-    expect(screen.getByText(/both named "L1"/)).toBeTruthy();
+    await retype(user, field("Name of L2 GND"), "L1 Top");
+    expect(screen.getByText(/both named "L1 Top"/)).toBeTruthy();
     expect(screen.getByRole("status").textContent).toContain("Not saved");
     expect(puts).toHaveLength(0);
   });

@@ -15,6 +15,24 @@ describe("stackup templates", () => {
     expect(stackupTemplates.map((template) => template.copperLayers)).toEqual([2, 4, 6, 8, 10, 12, 18]);
   });
 
+  it("name their layers by place and net, as layouts do", () => {
+    const names = (id: string) =>
+      stackupTemplates
+        .find((template) => template.id === id)
+        ?.layers.filter(isCopper)
+        .map(({ name, planeNet }) => (planeNet ? `${name} (${planeNet})` : name));
+    expect(names("2-layers")).toEqual(["L1 Top", "L2 GND (GND)"]);
+    expect(names("6-layers")).toEqual([
+      "L1 Top",
+      "L2 GND (GND)",
+      "L3 Inner",
+      "L4 Inner",
+      "L5 GND (GND)",
+      "L6 Bottom",
+    ]);
+    expect(names("4-layers")?.[2]).toBe("L3 PWR (PWR)");
+  });
+
   for (const template of stackupTemplates) {
     const stackup = stackupFromTyped(template.layers);
 
