@@ -4,6 +4,7 @@ export * from "./network";
 export * from "./formulas";
 export * from "./cross-section";
 export * from "./physical-constants";
+export * from "./field";
 export * from "./line";
 export * from "./stackup";
 export * from "./materials";

@@ -1,0 +1,51 @@
+export type Accuracy = "live" | "standard" | "reference";
+
+/** How finely surfaces are cut into panels. Found by trial against tests/reference/impedance. */
+export interface Fineness {
+  /** Gauss nodes of a panel on copper, and on an interface */
+  copperNodes: number;
+  interfaceNodes: number;
+  /** length of the panel at a vertex, as a share of the distance to the nearest other vertex: copper, dielectric */
+  copperShare: number;
+  interfaceShare: number;
+  /** panel length over its distance to the nearest vertex, in logarithmic measure: the ratio of neighbours is e^growth */
+  growth: number;
+  outerGrowth: number;
+  /** a vertex facing a segment at distance d refines it to facing·d */
+  facing: number;
+  /** panels nearer than this many half-lengths are integrated in closed form */
+  near: number;
+}
+
+export const FINENESS: Record<Accuracy, Fineness> = {
+  live: {
+    copperNodes: 3,
+    interfaceNodes: 2,
+    copperShare: 0.5,
+    interfaceShare: 0.6,
+    growth: 1.4,
+    outerGrowth: 1.6,
+    facing: 1,
+    near: 2.5,
+  },
+  standard: {
+    copperNodes: 3,
+    interfaceNodes: 3,
+    copperShare: 0.4,
+    interfaceShare: 0.5,
+    growth: 1.1,
+    outerGrowth: 1.4,
+    facing: 0.7,
+    near: 3,
+  },
+  reference: {
+    copperNodes: 5,
+    interfaceNodes: 5,
+    copperShare: 0.3,
+    interfaceShare: 0.3,
+    growth: 0.9,
+    outerGrowth: 1.1,
+    facing: 0.5,
+    near: 3.5,
+  },
+};

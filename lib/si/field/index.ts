@@ -1,0 +1,1 @@
+export { solveCrossSection } from "./solve-cross-section";
