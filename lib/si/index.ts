@@ -5,6 +5,7 @@ export * from "./formulas";
 export * from "./cross-section";
 export * from "./physical-constants";
 export * from "./field";
+export * from "./frequency";
 export * from "./line";
 export * from "./stackup";
 export * from "./materials";

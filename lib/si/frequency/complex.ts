@@ -1,0 +1,5 @@
+/** A complex number of a phasor e^{jωt}. */
+export interface Complex {
+  re: number;
+  im: number;
+}

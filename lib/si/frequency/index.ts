@@ -1,0 +1,17 @@
+export type { Complex } from "./complex";
+export { wideBandDebye, type WideBandDebye, type WideBandDebyeInput } from "./wide-band-debye";
+export { COPPER_CONDUCTIVITY, skinDepth, surfaceImpedance, surfaceResistance } from "./skin-effect";
+export {
+  cannonballRoughness,
+  hammerstadRoughness,
+  hurayRoughness,
+  roughnessFactor,
+  type Roughness,
+} from "./roughness";
+export { hammerstadJensenDispersion, hammerstadJensenDispersionNote } from "./hammerstad-jensen-dispersion";
+export {
+  kirschningJansenDispersion,
+  kirschningJansenDispersionNote,
+  type DispersedLine,
+} from "./kirschning-jansen-1982";
+export { kirschningJansenPairDispersion, kirschningJansenPairDispersionNote } from "./kirschning-jansen-1984";
