@@ -1,3 +1,4 @@
+import Link from "next/link";
 import { BounceSketch } from "@/components/landing/bounce-sketch";
 import { Cautions } from "@/components/landing/cautions";
 import { Mark } from "@/components/shell/mark";
@@ -33,6 +34,9 @@ export default async function LandingPage() {
           Ringfence
         </span>
         <nav aria-label="Start" className="flex items-center gap-5 text-sm">
+          <Link className="prose-link" href="/validation">
+            Validation
+          </Link>
           {signedIn ? null : (
             <LinkButton variant="primary" href="/sign-in">
               Sign in

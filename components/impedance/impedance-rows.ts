@@ -2,6 +2,7 @@ import type { NetClassDoc, StoredNetClass } from "@/lib/schemas/net-class";
 import type { StoredStackupLayer } from "@/lib/schemas/stackup";
 import type { ResolvedLimit } from "@/lib/si/path/types";
 import { checkImpedance } from "@/lib/si/rules/check-impedance";
+import { impedanceCentring } from "@/lib/si/rules/impedance-centring";
 import { isSignal, type Stackup } from "@/lib/si/stackup";
 import { toSi } from "@/lib/si/units";
 import { gapFor, lineFacts, type FoundDimension, type LineFacts, type Outcome, widthFor } from "./solve-line";
@@ -135,8 +136,11 @@ export function verdictOf(
       target: line.target,
       nominal: line.impedance,
       method: null,
+      tolerance: 0,
+      closedForm: null,
+      spread: null,
       missing: null,
-      limit: line.limit,
+      limits: { [impedanceCentring.id]: line.limit },
     },
   ]);
   const verdict = judged?.result.verdict;

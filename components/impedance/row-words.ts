@@ -29,6 +29,5 @@ export function remarks(row: ImpedanceRow): string[] {
   if (row.width === null) said.push("no width yet");
   else if (row.gapAssumed) said.push("no gap yet");
   if (row.gapAssumed && width0.ok) said.push("gap assumed");
-  if (now?.ok && now.value.ignores.includes("solder mask")) said.push("mask not seen");
   return said;
 }

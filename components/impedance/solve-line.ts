@@ -1,6 +1,6 @@
 import { EngineError, UnreachableTargetError } from "@/lib/si/errors";
 import { impedanceOf } from "@/lib/si/line";
-import { lineOnLayer, type Stackup, widthOnLayer } from "@/lib/si/stackup";
+import { FIELD_METHOD, lineOnLayer, type Stackup, widthOnLayer } from "@/lib/si/stackup";
 
 export type LineKind = "single" | "differential";
 
@@ -16,9 +16,6 @@ export interface LineFacts {
   effectivePermittivity: number;
   title: string;
   inRange: boolean;
-  range: string;
-  source: string;
-  ignores: string[];
 }
 
 export type Outcome<T> =
@@ -33,7 +30,7 @@ export interface FoundDimension {
   title: string;
 }
 
-/** Impedance and delay of a trace or pair by the closed form in use, or why there is none. */
+/** Impedance and delay of a trace or pair by the field solver, or why there is none. */
 export function lineFacts(
   stackup: Stackup,
   index: number,
@@ -45,17 +42,13 @@ export function lineFacts(
       index,
       shape.gap === null ? { width: shape.width } : { width: shape.width, gap: shape.gap },
     );
-    const { form } = line;
     const mode = line.single ?? line.pair?.odd;
     return {
       impedance: impedanceOf(line, shape.gap === null ? "single" : "differential"),
       delay: mode?.delay ?? 0,
       effectivePermittivity: mode?.effectivePermittivity ?? 0,
-      title: form.title,
-      inRange: form.inRange,
-      range: form.range,
-      source: form.source,
-      ignores: form.ignores,
+      title: FIELD_METHOD,
+      inRange: true,
     };
   });
 }
@@ -84,8 +77,7 @@ function found(
 ): Outcome<FoundDimension> {
   return attempt(() => {
     const result = widthOnLayer({ stackup, index, target: { kind, ohms }, grid, ...SOUGHT, ...how });
-    const { inRange, title } = result.line.form;
-    return { dimension: result.value, impedance: result.impedance, inRange, title };
+    return { dimension: result.value, impedance: result.impedance, inRange: true, title: FIELD_METHOD };
   });
 }
 

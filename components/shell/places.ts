@@ -8,6 +8,7 @@ import {
   type LucideIcon,
   PackageCheck,
   Ruler,
+  Scale,
   ScrollText,
   Shapes,
   Spline,
@@ -28,6 +29,7 @@ export function teamPlaces(mayReadAudit: boolean): readonly Place[] {
   return [
     { label: "Team", href: "/team", icon: Users },
     ...(mayReadAudit ? [{ label: "Audit", href: "/audit", icon: ScrollText }] : []),
+    { label: "Validation", href: "/validation", icon: Scale },
   ];
 }
 

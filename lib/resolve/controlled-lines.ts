@@ -13,9 +13,9 @@ export function controlledLines(inputs: RevisionInputs): ControlledLine[] {
   const lines: ControlledLine[] = [];
   for (const netClass of inputs.classes) {
     if (!netClass.targetImpedance) continue;
-    const limit = limits.of([], netClass, null)["impedance-centring"];
+    const ofClass = limits.of([], netClass, null);
     for (const entry of netClass.layers) {
-      if (!entry.width || !limit) continue;
+      if (!entry.width) continue;
       const width = si.of(entry.width, "length");
       const gap = netClass.kind === "differential" ? si.orNull(entry.gap, "length") : null;
       const layer = names.get(entry.layerLineageId) ?? "a removed layer";
@@ -31,12 +31,15 @@ export function controlledLines(inputs: RevisionInputs): ControlledLine[] {
         width,
         gap,
         target: si.of(netClass.targetImpedance, "resistance"),
+        tolerance: Number(netClass.tolerancePercent) / 100,
         nominal: noGap ? null : line.impedance,
         method: line.method,
+        closedForm: noGap ? null : line.closedForm,
+        spread: null,
         missing: noGap
           ? { input: `gap of ${netClass.name} on ${layer}`, detail: "A pair's impedance needs its gap." }
           : line.missing,
-        limit,
+        limits: ofClass,
       });
     }
   }

@@ -1,4 +1,5 @@
-import { lineOnLayer, stackupFromTyped, toSi, type Stackup } from "@/lib/si";
+import { FIELD_METHOD, lineOnLayer, stackupFromTyped, toSi, type Stackup } from "@/lib/si";
+import { closedFormOf } from "./line-table";
 import { finishedCopperText, layerThickness } from "./note-layers";
 import type { StoredNetClass } from "@/lib/schemas/net-class";
 import type { ImpedanceNote, NoteLine } from "@/lib/schemas/release";
@@ -13,7 +14,7 @@ export interface NoteHeading {
 }
 
 export const CAUTION =
-  "Predicted values are engineering estimates by closed forms. The fabricator's process, the laminate's data sheet and measurement on coupons decide; no result here replaces the review of a qualified engineer or a standard that the design must meet.";
+  "Predicted values are engineering estimates by a two-dimensional field solution. The fabricator's process, the laminate's data sheet and measurement on coupons decide; no result here replaces the review of a qualified engineer or a standard that the design must meet.";
 
 /** Widths this close are one width: CAM tells lines apart from 2.5 µm. */
 const SAME_WIDTH_M = 1.25e-6;
@@ -98,7 +99,7 @@ function predict(
   index: number,
   width: number,
   gap: number | null,
-): Pick<NoteLine, "predictedOhms" | "method" | "references"> {
+): Pick<NoteLine, "predictedOhms" | "method" | "closedForm" | "references"> {
   try {
     const { line, built } = lineOnLayer(stackup, index, gap === null ? { width } : { width, gap });
     const planes = [built.references.above, built.references.below].flatMap((plane) =>
@@ -106,13 +107,15 @@ function predict(
     );
     return {
       predictedOhms: line.pair?.differential ?? line.single?.impedance ?? null,
-      method: `${line.form.title}${line.form.inRange ? "" : " (outside its stated range)"}`,
+      method: FIELD_METHOD,
+      closedForm: closedFormOf(line),
       references: planes.join(" and "),
     };
   } catch (error) {
     return {
       predictedOhms: null,
       method: error instanceof Error ? error.message : "no prediction",
+      closedForm: null,
       references: "",
     };
   }

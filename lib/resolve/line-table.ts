@@ -1,22 +1,38 @@
 import { EngineError } from "@/lib/si/errors";
-import { isSignal, lineOnLayer, type Stackup } from "@/lib/si/stackup";
+import {
+  buildCrossSection,
+  FIELD_METHOD,
+  isSignal,
+  lineOnLayer,
+  type LayerLine,
+  type Stackup,
+} from "@/lib/si/stackup";
 import type { StoredStackup } from "@/lib/schemas/stackup";
 import type { MissingInput } from "./path-pins";
 import { stackupToSi } from "./stackup-to-si";
 
 export interface LineOnLayer {
   layerName: string;
-  /** nominal by the closed form [Ω], of a pair its differential; null with `missing` */
+  /** nominal by the field solver [Ω], of a pair its differential; null with `missing` */
   impedance: number | null;
   /** [s/m] */
   delayPerMeter: number | null;
-  /** the formula's title */
+  /** "2-D field solution" */
   method: string | null;
+  /** the published formula's value beside it; null where none fits */
+  closedForm: { ohms: number; title: string; inRange: boolean } | null;
   missing: MissingInput | null;
 }
 
 /** A width that no etch takes away, to ask a layer for its height over the plane. */
 const PROBE_WIDTH_M = 1e-3;
+
+/** What the formula beside a field solution says, for tables and sentences. */
+export function closedFormOf({ closedForm }: LayerLine): LineOnLayer["closedForm"] {
+  const ohms = closedForm?.pair?.differential ?? closedForm?.single?.impedance;
+  if (!closedForm || ohms === undefined) return null;
+  return { ohms, title: closedForm.form.title, inRange: closedForm.form.inRange };
+}
 
 /** Impedance and delay of traces by layer and width, each computed once. */
 export class LineTable {
@@ -62,6 +78,7 @@ export class LineTable {
       impedance: null,
       delayPerMeter: null,
       method: null,
+      closedForm: null,
       missing: { input, detail },
     });
     if (index === undefined || !layer)
@@ -76,19 +93,19 @@ export class LineTable {
       );
     try {
       const { line } = lineOnLayer(this.stackup, index, gap === null ? { width } : { width, gap });
-      const method = line.form.inRange ? line.form.title : `${line.form.title} (outside its published range)`;
       const mode =
         line.single ?? (line.pair && { impedance: line.pair.differential, delay: line.pair.odd.delay });
       if (!mode || !(mode.impedance > 0) || !Number.isFinite(mode.impedance))
         return without(
           `impedance of ${layer.name}`,
-          `No formula gives the impedance of this line on ${layer.name}.`,
+          `Nothing gives the impedance of this line on ${layer.name}.`,
         );
       return {
         layerName: layer.name,
         impedance: mode.impedance,
         delayPerMeter: mode.delay,
-        method,
+        method: FIELD_METHOD,
+        closedForm: closedFormOf(line),
         missing: null,
       };
     } catch (error) {
@@ -99,7 +116,7 @@ export class LineTable {
 
   private computeHeight(index: number): number | null {
     try {
-      const { section } = lineOnLayer(this.stackup, index, { width: PROBE_WIDTH_M }).built;
+      const { section } = buildCrossSection(this.stackup, index, { width: PROBE_WIDTH_M });
       const [trace] = section.traces;
       if (!trace) return null;
       const total = section.layers.reduce((sum, slab) => sum + slab.thickness, 0);

@@ -29,6 +29,10 @@ export interface NoteLine {
   tolerancePercent: number;
   predictedOhms: number | null;
   method: string;
+  /** the published formula's value beside it; left out of notes from before it was stated */
+  closedForm?: { ohms: number; title: string; inRange: boolean } | null;
+  /** predicted share of production within the tolerance, and 0.5 to 99.5 % of it [Ω]; likewise */
+  spread?: { yield: number; low: number; high: number; method: string } | null;
   references: string;
   /** how many routed nets use it; null when not known */
   routedNets: number | null;

@@ -1,5 +1,7 @@
 import { z } from "zod";
+import { processDoc, type ProcessDoc } from "./process";
 import { id, nameText, origin, version } from "./common";
+import { sourceNote } from "./material";
 import { decimalText, frequency, length, positiveLength } from "./quantity";
 
 export const layerKinds = ["mask", "foil", "signal", "plane", "core", "prepreg"] as const;
@@ -44,11 +46,15 @@ export const stackupLayer = z.object({
   /** Plane: the net it carries, for example GND. */
   planeNet: z.string().trim().max(60).default(""),
   origin: origin.default("assumed"),
+  /** Where the material's values come from; absent where nothing was said of it. */
+  sourceNote: sourceNote.optional(),
 });
 export type StackupLayerDoc = z.infer<typeof stackupLayer>;
 
 export const stackupDoc = z.object({
   name: nameText(80),
+  /** left out: as usual, until the fabricator's own is entered */
+  process: processDoc.optional(),
   layers: z
     .array(stackupLayer)
     .max(120)
@@ -87,6 +93,7 @@ export type StoredStackupLayer = StackupLayerDoc & { id: string; lineageId: stri
 export interface StoredStackup {
   name: string;
   version: number;
+  process?: ProcessDoc | undefined;
   layers: StoredStackupLayer[];
 }
 export const stackupUpdate = z.object({ version, stackup: stackupDoc });

@@ -1,7 +1,7 @@
 import { createHash } from "node:crypto";
 import { existsSync, mkdirSync, readdirSync, readFileSync, statSync, writeFileSync } from "node:fs";
 import path from "node:path";
-import { must, runNode } from "./run.mjs";
+import { must, runNode, runScript } from "./run.mjs";
 
 const STAMP = ".next/built-from";
 
@@ -12,6 +12,11 @@ const INPUTS = [
   "lib",
   "public",
   "scripts/build-workers.mjs",
+  "scripts/make-validation.ts",
+  "scripts/validation",
+  "tests/reference",
+  "tests/support/reference-cross-section.ts",
+  "tests/si/network/reference-case.ts",
   "instrumentation.ts",
   "instrumentation-client.ts",
   "proxy.ts",
@@ -28,6 +33,10 @@ export async function ensureBuild({ env = process.env } = {}) {
   const fingerprint = fingerprintOf(INPUTS);
   if (existsSync(".next/BUILD_ID") && readStamp() === fingerprint) return false;
   await buildWorkers({ env });
+  await must(
+    "The engine could not be measured against the reference data; the reason stands above.",
+    runScript("scripts/make-validation.ts", { env, quiet: true }),
+  );
   console.log("Building the app (about a minute, only when its sources changed) …");
   await must(
     "The app could not be built; the reason stands above.",

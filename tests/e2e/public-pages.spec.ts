@@ -2,6 +2,7 @@ import { expect, expectAccessible, expectNoSidewaysScroll, test } from "./suppor
 
 const PAGES = [
   { path: "/", heading: "Keep every net inside its rules" },
+  { path: "/validation", heading: "Validation" },
   { path: "/sign-in", heading: "Sign in" },
   { path: "/sign-up", heading: "Make an account" },
   { path: "/forgot", heading: "Reset the password" },
@@ -18,6 +19,23 @@ for (const { path, heading } of PAGES) {
     await expectNoSidewaysScroll(page);
   });
 }
+
+test("the validation page shows every kind of comparison, and nothing beyond what is allowed", async ({
+  quietPage: page,
+}) => {
+  await page.goto("/validation");
+  await expect(page.getByRole("heading", { level: 2 })).toHaveText([
+    /Field solver against finite elements/,
+    /Field solver against exact values/,
+    /Waveforms against exact sums/,
+    /Published formulas/,
+  ]);
+  const verdicts = page.getByRole("table").getByText(/^(pass|fail)$/);
+  expect(await verdicts.count()).toBeGreaterThan(20);
+  await expect(page.getByRole("table").getByText("fail", { exact: true })).toHaveCount(0);
+  await page.getByText("Every case with its worst number").first().click();
+  await expect(page.getByRole("rowheader", { name: "fem-microstrip-00" }).first()).toBeVisible();
+});
 
 test("answers carry the security headers", async ({ request }) => {
   const headers = (await request.get("/sign-in")).headers();

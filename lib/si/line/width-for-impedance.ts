@@ -1,4 +1,4 @@
-import { bestClosedForm, type BestClosedForm, type CrossSection, type Trace } from "../cross-section";
+import { bestClosedForm, type CrossSection, type Trace } from "../cross-section";
 import { DomainError, UnsupportedError } from "../errors";
 import { dimensionForTarget } from "./dimension-for-target";
 
@@ -57,11 +57,17 @@ export function widthForImpedance(request: WidthRequest): WidthResult {
   return { ...found, method };
 }
 
+/** What a closed form and a field solution have in common. */
+interface Impedances {
+  single?: { impedance: number };
+  pair?: { differential: number; common: number };
+}
+
 /**
  * The impedance of that kind [Ω].
  * @throws DomainError where the line has none: a single impedance of a pair, a differential one of a single trace
  */
-export function impedanceOf(line: BestClosedForm, kind: ImpedanceTarget["kind"]): number {
+export function impedanceOf(line: Impedances, kind: ImpedanceTarget["kind"]): number {
   const value = kind === "single" ? line.single?.impedance : line.pair?.[kind];
   if (value === undefined) {
     throw new DomainError(

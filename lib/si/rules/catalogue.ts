@@ -3,6 +3,7 @@ import { belowRail } from "./below-rail";
 import { criticalLength } from "./critical-length";
 import { flightTime } from "./flight-time";
 import { impedanceCentring } from "./impedance-centring";
+import { impedanceYield } from "./impedance-yield";
 import { levelMargin } from "./level-margin";
 import { overshoot } from "./overshoot";
 import { ringback } from "./ringback";
@@ -31,6 +32,7 @@ export const ruleCatalogue: readonly RuleDefinition[] = [
   ...edgeRules.map((rule) => rule.definition),
   ...staticRules.map((rule) => rule.definition),
   impedanceCentring,
+  impedanceYield,
 ];
 
 /** Every mechanism a finding can carry, with the title of the problem it makes. */
@@ -44,6 +46,7 @@ export const mechanismTitles: Readonly<Record<string, string>> = {
   level: "Steady level too close to the threshold",
   "late arrival": "Arrives late",
   "cross-section": "Width misses the target impedance",
+  spread: "Production spreads beyond the tolerance",
   spacing: "Close neighbour",
   "long line": "Long for its edge",
   "missing input": "Input missing",

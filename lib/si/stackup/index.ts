@@ -17,6 +17,13 @@ export {
   totalThickness,
 } from "./thickness";
 export { buildCrossSection, type BuiltCrossSection, type TraceShape } from "./build-cross-section";
-export { lineOnLayer, widthOnLayer, type LayerWidthRequest } from "./line-on-layer";
+export {
+  FIELD_METHOD,
+  lineOnLayer,
+  widthOnLayer,
+  type LayerLine,
+  type LayerWidthRequest,
+} from "./line-on-layer";
 export { stackupWarnings, type StackupWarning } from "./warnings";
 export { stackupTemplates, type StackupTemplate } from "./templates";
+export { capabilityOf, type Capability } from "./capability";

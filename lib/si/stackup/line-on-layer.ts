@@ -1,20 +1,65 @@
-import { bestClosedForm, type BestClosedForm } from "../cross-section";
-import { DomainError } from "../errors";
+import { bestClosedForm, type BestClosedForm, type LineParameters, type Mode } from "../cross-section";
+import { DomainError, EngineError } from "../errors";
+import { solveCrossSection } from "../field";
+import type { Accuracy } from "../field/accuracy";
 import { dimensionForTarget, impedanceOf, type ImpedanceTarget } from "../line";
 import { buildCrossSection, type BuiltCrossSection, type TraceShape } from "./build-cross-section";
 import type { Stackup } from "./model";
 
+/** A trace or pair on a layer: the field solution, and the published formula beside it. */
+export interface LayerLine {
+  single?: Mode;
+  pair?: { odd: Mode; even: Mode; differential: number; common: number };
+  field: LineParameters;
+  /** null where no published formula fits the cross-section */
+  closedForm: BestClosedForm | null;
+}
+
+/** How the numbers of a LayerLine come about, for tables and notes. */
+export const FIELD_METHOD = "2-D field solution";
+
 /**
- * Impedance and delay of a trace on a layer, by the closed form in use.
- * @throws DomainError for missing or illegal inputs, UnsupportedError where no closed form fits
+ * Impedance and delay of a trace or pair on a layer, by the field solver (`standard` unless told otherwise), with the
+ * closed form that fits beside it.
+ * @throws DomainError for missing or illegal inputs
  */
 export function lineOnLayer(
   stackup: Stackup,
   index: number,
   shape: TraceShape,
-): { line: BestClosedForm; built: BuiltCrossSection } {
+  accuracy: Accuracy = "standard",
+): { line: LayerLine; built: BuiltCrossSection } {
   const built = buildCrossSection(stackup, index, shape);
-  return { line: bestClosedForm(built.section), built };
+  const field = solveCrossSection(built.section, { accuracy });
+  const { single, pair } = field;
+  return {
+    line: {
+      ...(single ? { single } : {}),
+      ...(pair?.odd && pair.even
+        ? {
+            pair: {
+              odd: pair.odd,
+              even: pair.even,
+              differential: pair.differential,
+              common: pair.common,
+            },
+          }
+        : {}),
+      field,
+      closedForm: closedFormOf(built),
+    },
+    built,
+  };
+}
+
+/** The formula that fits, or null where none does or where it has no value. */
+function closedFormOf({ section }: BuiltCrossSection): BestClosedForm | null {
+  try {
+    return bestClosedForm(section);
+  } catch (error) {
+    if (error instanceof EngineError) return null;
+    throw error;
+  }
 }
 
 export interface LayerWidthRequest {
@@ -31,20 +76,21 @@ export interface LayerWidthRequest {
   min: number;
   max: number;
   grid?: number;
+  accuracy?: Accuracy;
 }
 
 /**
- * Foot width, or gap, at which a line on that layer meets its target; the closed form in use.
+ * Foot width, or gap, at which a line on that layer meets its target, by the field solver.
  * @returns value [m], impedance there [Ω], the line and its section
- * @throws DomainError, UnreachableTargetError with the reachable range, UnsupportedError
+ * @throws DomainError, UnreachableTargetError with the reachable range
  */
 export function widthOnLayer(request: LayerWidthRequest): {
   value: number;
   impedance: number;
-  line: BestClosedForm;
+  line: LayerLine;
   built: BuiltCrossSection;
 } {
-  const { stackup, index, target, vary, coplanarGap } = request;
+  const { stackup, index, target, vary, coplanarGap, accuracy = "standard" } = request;
   const pair = target.kind !== "single";
   const shapeAt = (value: number): TraceShape => {
     const width = vary === "width" ? value : request.width;
@@ -59,7 +105,10 @@ export function widthOnLayer(request: LayerWidthRequest): {
   };
   if (vary === "gap" && !pair) throw new DomainError("Only a pair has a gap to vary.", "vary");
   const found = dimensionForTarget({
-    impedanceAt: (value) => impedanceOf(lineOnLayer(stackup, index, shapeAt(value)).line, target.kind),
+    impedanceAt: (value) => {
+      const { section } = buildCrossSection(stackup, index, shapeAt(value));
+      return impedanceOf(solveCrossSection(section, { accuracy }), target.kind);
+    },
     ohms: target.ohms,
     spoken: vary,
     min: request.min,
@@ -69,6 +118,6 @@ export function widthOnLayer(request: LayerWidthRequest): {
   return {
     value: found.value,
     impedance: found.impedance,
-    ...lineOnLayer(stackup, index, shapeAt(found.value)),
+    ...lineOnLayer(stackup, index, shapeAt(found.value), accuracy),
   };
 }
