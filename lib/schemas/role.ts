@@ -24,6 +24,8 @@ export const permissions = [
   "note:acknowledge",
   "team:read",
   "team:manage",
+  "material:read",
+  "material:edit",
   "audit:read",
 ] as const;
 export type Permission = (typeof permissions)[number];
@@ -40,6 +42,8 @@ const designer: Permission[] = [
   "review:comment",
   "release:read",
   "team:read",
+  "material:read",
+  "material:edit",
 ];
 const reviewer: Permission[] = [
   "project:read",
@@ -54,6 +58,7 @@ const reviewer: Permission[] = [
   "release:create",
   "release:read",
   "team:read",
+  "material:read",
 ];
 
 /** Owners hold the designer's and the reviewer's rights; a manufacturer sees only notes sent to them. */

@@ -4,6 +4,14 @@ import { getBindings, putBindings } from "@/lib/db/binding";
 import { startDraft } from "@/lib/db/draft-copy";
 import { hasEdited, listEditors } from "@/lib/db/edit";
 import { applyLayoutLists } from "@/lib/db/layout-lists";
+import {
+  createMaterial,
+  getMaterial,
+  listMaterials,
+  putMaterial,
+  removeMaterial,
+  restoreMaterial,
+} from "@/lib/db/material";
 import { createModel, deleteModel, getModel, listModels, putModel } from "@/lib/db/model";
 import { listNeighbours } from "@/lib/db/neighbour";
 import { getNet, listNets } from "@/lib/db/net";
@@ -17,14 +25,14 @@ import { currentInputHash, freezeInputs, readInputs, thawInputs } from "@/lib/db
 import { getStackup, putStackup } from "@/lib/db/stackup";
 import { redo, undo } from "@/lib/db/undo";
 import type { UserActor } from "@/lib/schemas/actor";
-import { aClass, aModel, aNet } from "../support/documents";
+import { aClass, aMaterial, aModel, aNet } from "../support/documents";
 import { createTestDatabase, type TestDatabase } from "../support/database";
 
 let data: TestDatabase;
 let designer: UserActor;
 let projectId: string;
 let draft: RevisionRef;
-let ids: { classId: string; modelId: string; netId: string };
+let ids: { classId: string; modelId: string; materialId: string; netId: string };
 let chunks: { name: string; sha256: string }[];
 
 beforeAll(async () => {
@@ -35,9 +43,10 @@ beforeAll(async () => {
   draft = await findRevision(designer, projectId);
   const netClass = await createNetClass(designer, projectId, aClass("Data"));
   const model = await createModel(designer, projectId, aModel("Port"));
+  const material = await createMaterial(designer, aMaterial("Thin laminate"));
   await applyLayoutLists(designer, projectId, { nets: [aNet("D0")] }, { mode: "merge", summary: "1 net" });
   const [net] = (await listNets(designer, draft)).nets;
-  ids = { classId: netClass.id, modelId: model.id, netId: net?.id ?? "" };
+  ids = { classId: netClass.id, modelId: model.id, materialId: material.id, netId: net?.id ?? "" };
   ({ chunks } = await freezeInputs(designer, await readInputs(designer, draft.id)));
 });
 afterAll(() => data.close());
@@ -51,6 +60,7 @@ const reads: Record<string, Act> = {
   getStackup: (actor) => getStackup(actor, draft),
   getNetClass: (actor) => getNetClass(actor, draft, ids.classId),
   getModel: (actor) => getModel(actor, draft, ids.modelId),
+  getMaterial: (actor) => getMaterial(actor, ids.materialId),
   getBindings: (actor) => getBindings(actor, draft),
   getRuleSet: (actor) => getRuleSet(actor, draft),
   getNet: (actor) => getNet(actor, draft, ids.netId),
@@ -62,6 +72,7 @@ const reads: Record<string, Act> = {
 const lists: Record<string, (actor: UserActor) => Promise<unknown[]>> = {
   listNetClasses: (actor) => listNetClasses(actor, draft),
   listModels: (actor) => listModels(actor, draft),
+  listMaterials: (actor) => listMaterials(actor),
   listNets: async (actor) => (await listNets(actor, draft)).nets,
   listParts: (actor) => listParts(actor, draft),
   listNeighbours: (actor) => listNeighbours(actor, draft),
@@ -79,6 +90,9 @@ const writes: Record<string, Act> = {
   createModel: (actor) => createModel(actor, projectId, aModel("Theirs")),
   putModel: (actor) => putModel(actor, projectId, ids.modelId, 0, aModel("Theirs")),
   deleteModel: (actor) => deleteModel(actor, projectId, ids.modelId, 0),
+  putMaterial: (actor) => putMaterial(actor, ids.materialId, 0, aMaterial("Theirs")),
+  removeMaterial: (actor) => removeMaterial(actor, ids.materialId, 0),
+  restoreMaterial: (actor) => restoreMaterial(actor, ids.materialId),
   putBindings: (actor) => putBindings(actor, projectId, 0, []),
   putRuleSet: (actor) => putRuleSet(actor, projectId, 0, { rules: {}, judgedAt: "die" }),
   patchNets: (actor) => patchNets(actor, projectId, [{ id: ids.netId, fields: { scope: "out" } }], "theirs"),
@@ -130,6 +144,9 @@ describe("a reviewer of the same team", () => {
     "createModel",
     "putModel",
     "deleteModel",
+    "putMaterial",
+    "removeMaterial",
+    "restoreMaterial",
     "putBindings",
     "applyLayoutLists",
     "startDraft",

@@ -1,6 +1,6 @@
 import type { UserActor } from "@/lib/schemas/actor";
 import { MISSING, NET_LIST, SECRET, type AccessWorld } from "./access-world";
-import { aClass, aModel } from "./documents";
+import { aClass, aMaterial, aModel } from "./documents";
 
 export interface Call {
   params?: Record<string, string>;
@@ -54,6 +54,10 @@ const inImport = (body?: (received: AccessWorld["received"]) => unknown): Access
   }),
 });
 
+const inMaterial = (body?: (material: AccessWorld["material"]) => unknown): AccessFixture => ({
+  call: ({ material }) => ({ params: { materialId: material.id }, body: body?.(material) }),
+});
+
 const tomorrow = () => Date.now() + 86_400_000;
 
 /** One entry for each method of each route under app/api/v1; the access matrix fails where one is missing. */
@@ -68,6 +72,18 @@ export const accessFixtures: Record<string, AccessFixture> = {
   "POST /fabrication/notes/[releaseId]/acknowledge": sentNote({ words: "Thank you." }),
   "GET /links/[token]/csv": link(),
   "POST /links/[token]/acknowledge": link({ words: "Thank you." }),
+
+  "GET /materials": { call: () => ({}) },
+  "POST /materials": { call: () => ({ body: { material: aMaterial(`${SECRET} ${Math.random()}`) } }) },
+  "GET /materials/[materialId]": inMaterial(),
+  "PUT /materials/[materialId]": inMaterial(({ version, name }) => ({
+    version,
+    material: aMaterial(`${name}, thin`),
+  })),
+  "DELETE /materials/[materialId]": inMaterial(({ version }) => ({ version })),
+  "POST /materials/[materialId]/restore": {
+    call: (world) => ({ params: { materialId: world.removedMaterial.id } }),
+  },
 
   "GET /projects": { call: () => ({}) },
   "POST /projects": { call: () => ({ body: { name: `${SECRET} ${Math.random()}` } }) },

@@ -3,6 +3,7 @@ import { eq } from "drizzle-orm";
 import { getBindings } from "@/lib/db/binding";
 import { newId } from "@/lib/db/ids";
 import { applyLayoutLists } from "@/lib/db/layout-lists";
+import { createMaterial, removeMaterial } from "@/lib/db/material";
 import { createModel } from "@/lib/db/model";
 import { createNetClass } from "@/lib/db/net-class";
 import { listNets } from "@/lib/db/net";
@@ -29,7 +30,7 @@ import { resolvePaths } from "@/lib/resolve/resolve-paths";
 import type { UserActor } from "@/lib/schemas/actor";
 import type { ImpedanceNote } from "@/lib/schemas/release";
 import type { TestDatabase } from "./database";
-import { aClass, aModel, aNet } from "./documents";
+import { aClass, aMaterial, aModel, aNet } from "./documents";
 
 /** Stands in the name of everything that the own team makes: to be seen in no answer to anybody else. */
 export const SECRET = "Tide gauge";
@@ -53,6 +54,9 @@ export async function makeWorld(data: TestDatabase) {
   const projectId = project.id;
   const netClass = await createNetClass(designer, projectId, aClass(`${SECRET} class`));
   const model = await createModel(designer, projectId, aModel(`${SECRET} driver`));
+  const material = await createMaterial(designer, aMaterial(`${SECRET} laminate ${made}`));
+  const removedMaterial = await createMaterial(designer, aMaterial(`${SECRET} old laminate ${made}`));
+  await removeMaterial(designer, removedMaterial.id, removedMaterial.version);
   await applyLayoutLists(
     designer,
     projectId,
@@ -216,6 +220,8 @@ export async function makeWorld(data: TestDatabase) {
     draft,
     netClass,
     model,
+    material,
+    removedMaterial,
     net,
     stackup,
     rules,

@@ -1,3 +1,4 @@
+import { materialDoc, type MaterialDoc } from "@/lib/schemas/material";
 import { modelDoc, type ModelDoc } from "@/lib/schemas/model";
 import { netDoc, type NetDoc } from "@/lib/schemas/net";
 import { netClassDoc, type NetClassDoc } from "@/lib/schemas/net-class";
@@ -43,5 +44,19 @@ export function aModel(name: string): ModelDoc {
       resistance: corners({ value: "17", unit: "Ω" }),
       riseTime: corners({ value: "0.5", unit: "ns" }),
     },
+  });
+}
+
+export function aMaterial(name: string, over: Partial<MaterialDoc> = {}): MaterialDoc {
+  return materialDoc.parse({
+    name,
+    kind: "laminate",
+    dk: "3.62",
+    df: "0.0041",
+    frequency: { value: "10", unit: "GHz" },
+    thickness: { value: "0.1", unit: "mm" },
+    source: "Data sheet of the invented maker, table 2",
+    origin: "data sheet",
+    ...over,
   });
 }

@@ -1,5 +1,6 @@
 /** Types of the JSON columns, from the schemas that check them. */
 export type { StackupLayerDoc } from "@/lib/schemas/stackup";
+export type { MaterialDoc } from "@/lib/schemas/material";
 export type { ModelDoc } from "@/lib/schemas/model";
 export type { NetClassDoc } from "@/lib/schemas/net-class";
 export type { NetDoc, PartDoc } from "@/lib/schemas/net";

@@ -1,5 +1,6 @@
 export * from "./auth";
 export * from "./project";
+export * from "./material";
 export * from "./net";
 export * from "./run";
 export * from "./review";
