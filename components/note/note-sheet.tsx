@@ -41,7 +41,7 @@ export function NoteSheet({ note, noteHash, actions }: Props) {
       <section>
         <h2 className="mb-2 text-lg font-semibold">Controlled lines</h2>
         <div className="overflow-x-auto" tabIndex={0} role="region" aria-label="Controlled lines">
-          <table className="w-full min-w-[46rem] border-collapse text-sm">
+          <table className="w-full min-w-[58rem] border-collapse text-sm">
             <thead>
               <tr className="border-ink border-b text-left">
                 <Head>Line</Head>
@@ -52,6 +52,8 @@ export function NoteSheet({ note, noteHash, actions }: Props) {
                 <Head end>Target</Head>
                 <Head end>Tolerance</Head>
                 <Head end>Predicted</Head>
+                <Head end>By formula</Head>
+                <Head end>Spread and yield</Head>
                 <th scope="col" className="py-1.5 pl-3 font-medium">
                   References
                 </th>
@@ -69,7 +71,10 @@ export function NoteSheet({ note, noteHash, actions }: Props) {
         ) : null}
         <p className="text-ink-soft mt-2 max-w-prose text-xs">
           Foot width is the finished width of the trace where it meets its laminate. Predicted values come
-          from published closed forms, named in the CSV; the solder mask is not in them.
+          from a two-dimensional field solution of the finished cross-section, solder mask included; beside
+          them stands the published formula that fits best, named in the CSV. The spread holds 99 % of
+          production as predicted from the process tolerances, and its yield is the share within the
+          tolerance.
         </p>
       </section>
 
@@ -102,9 +107,21 @@ function LineRow({ line }: { line: NoteLine }) {
       <Amount text={`${trim(line.targetOhms)} Ω`} />
       <Amount text={`±${trim(line.tolerancePercent)} %`} />
       <Amount text={line.predictedOhms === null ? "no data" : `${line.predictedOhms.toFixed(1)} Ω`} />
+      <Amount text={formulaText(line)} />
+      <Amount text={spreadText(line)} />
       <td className="py-1.5 pl-3">{line.references || "–"}</td>
     </tr>
   );
+}
+
+function formulaText({ closedForm }: NoteLine): string {
+  if (!closedForm) return "–";
+  return `${closedForm.ohms.toFixed(1)} Ω${closedForm.inRange ? "" : ", out of range"}`;
+}
+
+function spreadText({ spread }: NoteLine): string {
+  if (!spread) return "–";
+  return `${spread.low.toFixed(1)} to ${spread.high.toFixed(1)} Ω, ${(100 * spread.yield).toFixed(1)} %`;
 }
 
 function Amount({ text }: { text: string }) {
