@@ -20,6 +20,7 @@ import { LayerDetails } from "./layer-details";
 import { removeLayer } from "./layer-edits";
 import { LayerTable } from "./layer-table";
 import { LayerToolbar } from "./layer-toolbar";
+import { ProcessFields } from "./process-fields";
 import { SaveStatus, SaveTrouble } from "./save-status";
 import { sectionLayers } from "./section-layers";
 import { StackupFacts } from "./stackup-facts";
@@ -205,6 +206,7 @@ function Editor({ projectId, projectName, revision, stackup: stored, readOnly }:
               </div>
             </div>
           </div>
+          <ProcessFields process={stackup.process} onChange={editor.changeProcess} />
         </>
       )}
       {readOnly === null ? (

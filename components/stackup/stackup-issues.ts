@@ -8,7 +8,7 @@ export interface Refusal {
   reason: string;
 }
 
-/** By `<layer key>.<field>`; the stackup's own name by "name". */
+/** By `<layer key>.<field>`; the stackup's own name by "name", its process by `process.<field>`. */
 export type Refusals = Readonly<Record<string, Refusal>>;
 
 /** Why the stackup is not saved as it is. */
@@ -22,7 +22,7 @@ export interface StackupIssue {
 export function stackupIssues(stackup: EditStackup, refusals: Refusals): StackupIssue[] {
   const refused = Object.entries(refusals).map(([address, { reason }]): StackupIssue => {
     const { layer, field } = locate(stackup, address);
-    if (!layer) return { layerKey: null, message: `Name of the stackup: ${reason}` };
+    if (!layer) return { layerKey: null, message: `${PLACES[field] ?? "Fabricator’s process"}: ${reason}` };
     return {
       layerKey: layer.key,
       message: `${layer.name}, ${fieldNames[field as LayerField] ?? "plies"}: ${reason}`,
@@ -42,6 +42,9 @@ export function stackupIssues(stackup: EditStackup, refusals: Refusals): Stackup
   return [...refused, ...broken];
 }
 
+/** What does not belong to a layer. */
+const PLACES: Readonly<Record<string, string>> = { name: "Name of the stackup" };
+
 function locate(stackup: EditStackup, address: string) {
   const layer = stackup.layers.find(({ key }) => address.startsWith(`${key}.`));
   return { layer, field: layer ? (address.slice(layer.key.length + 1).split(".")[0] ?? "") : address };
@@ -50,7 +53,10 @@ function locate(stackup: EditStackup, address: string) {
 /** The refusals of layers that are still there. */
 export function refusalsOf(layers: EditStackup["layers"], refusals: Refusals): Refusals {
   const left = Object.entries(refusals).filter(
-    ([address]) => address === "name" || layers.some(({ key }) => address.startsWith(`${key}.`)),
+    ([address]) =>
+      address === "name" ||
+      address.startsWith("process.") ||
+      layers.some(({ key }) => address.startsWith(`${key}.`)),
   );
   return left.length === Object.keys(refusals).length ? refusals : Object.fromEntries(left);
 }

@@ -4,6 +4,7 @@ import { useQueryClient } from "@tanstack/react-query";
 import { useCallback, useEffect, useMemo, useReducer, useRef } from "react";
 import { putStackup, stackupQuery } from "@/lib/client/stackup";
 import { undoKey } from "@/lib/client/undo";
+import type { ProcessDoc } from "@/lib/schemas/process";
 import type { StackupLayerDoc, StoredStackup } from "@/lib/schemas/stackup";
 import { adoptIds, contentOf, type EditStackup, toDoc, toEdit } from "./edit-layer";
 import { type Refusals, refusalsOf, stackupIssues } from "./stackup-issues";
@@ -139,6 +140,11 @@ export function useStackupEditor(
     (name: string) => dispatch((present) => ({ ...present, stackup: { ...present.stackup, name } })),
     [],
   );
+  const changeProcess = useCallback(
+    (process: ProcessDoc) =>
+      dispatch((present) => ({ ...present, stackup: { ...present.stackup, process } })),
+    [],
+  );
   const refuse = useCallback(
     (address: string, text: string, reason: string) =>
       dispatch((present) => ({ ...present, refusals: { ...present.refusals, [address]: { text, reason } } })),
@@ -169,6 +175,7 @@ export function useStackupEditor(
     changeLayers,
     changeLayer,
     rename,
+    changeProcess,
     refuse,
     accept,
     select,

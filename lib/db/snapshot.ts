@@ -175,6 +175,7 @@ async function readOnce(actor: Actor, revisionId: string): Promise<RevisionInput
     stackup: {
       name: stackup.name,
       version: 0,
+      ...(stackup.process ? { process: stackup.process } : {}),
       layers: stackup.layers.map(({ thickness_m: _derived, ...layer }) => ({
         ...layer,
         id: layer.lineageId,

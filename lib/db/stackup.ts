@@ -2,8 +2,10 @@ import "server-only";
 import { and, asc, eq, sql } from "drizzle-orm";
 import { z } from "zod";
 import { can, type Actor } from "@/lib/schemas/actor";
+import { canonicalJson } from "@/lib/schemas/canonical-json";
 import { NotFoundError } from "@/lib/schemas/errors";
 import { id } from "@/lib/schemas/common";
+import { processDoc, type ProcessDoc } from "@/lib/schemas/process";
 import {
   stackupDoc,
   stackupLayer as stackupLayerDoc,
@@ -22,11 +24,13 @@ import type { Statement } from "./unit";
 
 interface StackupState {
   name: string;
+  process?: ProcessDoc | undefined;
   layers: StoredStackupLayer[];
 }
 
 const stackupState = z.object({
   name: z.string(),
+  process: processDoc.optional(),
   layers: z.array(stackupLayerDoc.extend({ id, lineageId: id })),
 });
 
@@ -52,6 +56,7 @@ export async function getStackup(actor: Actor, revision: Pick<RevisionRef, "id">
   return {
     name: head.name,
     version: head.version,
+    ...(head.process ? { process: head.process } : {}),
     layers: rows.map((row) => ({
       ...row.doc,
       id: row.id,
@@ -75,7 +80,11 @@ export async function putStackup(
   const draft = await getDraft(actor, projectId);
   const doc = stackupDoc.parse(input);
   const reading = await stackupThing.read(actor, draft, null, null);
-  const after = { name: doc.name, layers: identify(doc, reading.state?.layers ?? []) };
+  const after = {
+    name: doc.name,
+    ...(doc.process ? { process: doc.process } : {}),
+    layers: identify(doc, reading.state?.layers ?? []),
+  };
   const changed = stackupThing.describe(reading.state, after);
   await changeThing(actor, draft, stackupThing, {
     entityId: null,
@@ -92,9 +101,13 @@ export const stackupThing: DraftThing<StackupState> = {
   what: "The stackup",
   parse: (stored) => (stored === null ? null : stackupState.parse(stored)),
   read: async (actor, draft): Promise<Reading<StackupState>> => {
-    const { name, version, layers } = await getStackup(actor, draft);
+    const { name, version, process, layers } = await getStackup(actor, draft);
     return {
-      state: { name, layers: layers.map(({ thickness_m: _derived, ...layer }) => layer) },
+      state: {
+        name,
+        ...(process ? { process } : {}),
+        layers: layers.map(({ thickness_m: _derived, ...layer }) => layer),
+      },
       version,
       unchanged: [
         sql`exists (select 1 from ${stackup} where ${stackup.revisionId} = ${draft.id} and ${stackup.version} = ${version})`,
@@ -106,7 +119,7 @@ export const stackupThing: DraftThing<StackupState> = {
     return [
       db
         .update(stackup)
-        .set({ name: state.name, version })
+        .set({ name: state.name, process: state.process ?? null, version })
         .where(and(eq(stackup.revisionId, draft.id), eq(stackup.teamId, draft.teamId))),
       db
         .delete(stackupLayer)
@@ -119,6 +132,8 @@ export const stackupThing: DraftThing<StackupState> = {
   },
   describe: (before, after) => {
     const changed: string[] = before?.name !== after?.name ? ["name"] : [];
+    if (canonicalJson(before?.process ?? null) !== canonicalJson(after?.process ?? null))
+      changed.push("fabricator’s process");
     const old = new Map(before?.layers.map((layer) => [layer.lineageId, layer]));
     for (const layer of after?.layers ?? []) {
       const was = old.get(layer.lineageId);

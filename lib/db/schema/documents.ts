@@ -1,4 +1,5 @@
 /** Types of the JSON columns, from the schemas that check them. */
+export type { ProcessDoc } from "@/lib/schemas/process";
 export type { StackupLayerDoc } from "@/lib/schemas/stackup";
 export type { MaterialDoc } from "@/lib/schemas/material";
 export type { ModelDoc } from "@/lib/schemas/model";

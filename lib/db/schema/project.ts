@@ -1,5 +1,5 @@
 import { index, integer, real, sqliteTable, text, uniqueIndex } from "drizzle-orm/sqlite-core";
-import type { ModelDoc, NetClassDoc, RuleSetDoc, StackupLayerDoc } from "./documents";
+import type { ModelDoc, NetClassDoc, ProcessDoc, RuleSetDoc, StackupLayerDoc } from "./documents";
 import { atColumn, idColumn, teamColumn, versionColumn } from "./columns";
 
 export const project = sqliteTable(
@@ -52,6 +52,8 @@ export const stackup = sqliteTable("stackup", {
     .references(() => revision.id, { onDelete: "cascade" }),
   teamId: teamColumn(),
   name: text("name").notNull(),
+  /** what the fabricator's process holds; null until it was entered */
+  process: text("process", { mode: "json" }).$type<ProcessDoc>(),
   version: versionColumn(),
 });
 

@@ -1,0 +1,1 @@
+ALTER TABLE `stackup` ADD `process` text;
