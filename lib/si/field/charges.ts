@@ -1,19 +1,27 @@
+import { potentialRow } from "./copper-rows";
 import { backsolve, factorise } from "./factorise";
+import { fluxRows } from "./flux-rows";
 import { gaussRule } from "./gauss";
-import { along, type Mesh } from "./mesh";
-import { addFlux, addPotential } from "./rows";
+import { type Mesh } from "./mesh";
+import { along } from "./panels";
 import { INTERFACE, type Cut } from "./segment";
 
-/** 1: mirror-even about x = 0, −1: mirror-odd, 0: the whole plane is meshed. */
-export type Parity = -1 | 0 | 1;
+/** Mirror symmetry used: none, the even mode alone, or even and odd. */
+export type Modes = "whole" | "even" | "both";
 
 export interface Charges {
-  /** free charge on each trace by each excitation, over ε0 and volt; with dielectrics and without */
+  /** free charge of each trace over ε0 and volt, by excitation, with dielectrics and without */
   filled: number[][];
   air: number[][];
-  /** total charge of every node by each excitation, over 2πε0, with dielectrics */
-  density: Float64Array[];
 }
+
+let matrixA = new Float64Array(0);
+let matrixB = new Float64Array(0);
+let cutEven = new Float64Array(0);
+let cutOdd = new Float64Array(0);
+const endX = new Float64Array(9);
+const endY = new Float64Array(9);
+const mapped = { x: 0, y: 0, mirrorX: 0, mirrorY: 0 };
 
 /**
  * Solves the total-charge equations of a mesh: potential at the nodes of copper, balance of flux over a cell around each
@@ -21,93 +29,141 @@ export interface Charges {
  * those of the air-filled line.
  *
  * @param excitations  potential of each trace [V]; coplanar ground is at 0
+ * @param keep  receives the total charge of every node over 2πε0, by mode and excitation, with dielectrics
+ * @returns one result per mode: [whole], [even] or [even, odd]
  */
 export function solveCharges(
   mesh: Mesh,
   cuts: Cut[],
-  parity: Parity,
-  near: number,
+  modes: Modes,
   excitations: number[][],
-): Charges {
-  const { nodes, copper, panels, first } = mesh;
-  const stride = nodes % 512 === 0 ? nodes + 1 : nodes;
-  const a = new Float64Array(nodes * stride);
-  fillMatrix(mesh, parity, near, a, stride);
-  factorise(a, nodes, stride);
-  const traces = excitations[0]?.length ?? 0;
-  const weights = panels.map((panel) => Math.PI * (panel.right + panel.left));
-  const cutRows = cuts.map((cut) => {
-    const row = new Float64Array(nodes);
-    flux(mesh, parity, near, cut.x1, cut.y, cut.x2, cut.y, -1, row, 0);
-    return row;
+  keep?: Float64Array[][],
+): Charges[] {
+  const { nodes } = mesh;
+  // rows a multiple of 4096 bytes apart would fall on the same cache lines
+  const stride = nodes % 64 === 0 ? nodes + 1 : nodes;
+  if (matrixA.length < nodes * stride) matrixA = new Float64Array(nodes * stride);
+  const both = modes === "both";
+  if (both && matrixB.length < nodes * stride) matrixB = new Float64Array(nodes * stride);
+  if (cutEven.length < cuts.length * nodes) {
+    cutEven = new Float64Array(cuts.length * nodes);
+    cutOdd = new Float64Array(cuts.length * nodes);
+  }
+  fillMatrix(mesh, modes !== "whole", matrixA, both ? matrixB : null, stride);
+  cuts.forEach((cut, c) => {
+    endX[0] = cut.x1;
+    endX[1] = cut.x2;
+    endY[0] = endY[1] = cut.y;
+    fluxRows(mesh, endX, endY, 1, -1, modes !== "whole", cutEven, both ? cutOdd : null, c * nodes, nodes);
   });
-  const result: Charges = { filled: [], air: [], density: [] };
+  const results = [solveMode(mesh, cuts, cutEven, matrixA, stride, excitations, keep)];
+  if (both) results.push(solveMode(mesh, cuts, cutOdd, matrixB, stride, excitations, keep));
+  return results;
+}
+
+function fillMatrix(
+  mesh: Mesh,
+  mirrored: boolean,
+  even: Float64Array,
+  odd: Float64Array | null,
+  stride: number,
+): void {
+  for (let k = 0; k < mesh.panels; k++) {
+    const start = mesh.first[k]!;
+    const n = mesh.size[k]!;
+    if (mesh.owner[k] === INTERFACE) {
+      balanceRows(mesh, k, mirrored, even, odd, stride);
+      continue;
+    }
+    for (let i = start; i < start + n; i++) {
+      mapped.x = mesh.mapX[i]!;
+      mapped.y = mesh.mapY[i]!;
+      mapped.mirrorX = mesh.mirrorX[i]!;
+      mapped.mirrorY = mesh.mirrorY[i]!;
+      potentialRow(mesh, mesh.x[i]!, mesh.y[i]!, mapped, i, mirrored, even, odd, i * stride);
+    }
+  }
+}
+
+function balanceRows(
+  mesh: Mesh,
+  k: number,
+  mirrored: boolean,
+  even: Float64Array,
+  odd: Float64Array | null,
+  stride: number,
+): void {
+  const start = mesh.first[k]!;
+  const n = mesh.size[k]!;
+  const rule = gaussRule(n);
+  for (let e = 0; e <= n; e++) {
+    const r = along(mesh.power[k]!, rule.ends[e]!);
+    endX[e] = mesh.ax[k]! + r * mesh.vx[k]!;
+    endY[e] = mesh.ay[k]! + r * mesh.vy[k]!;
+  }
+  fluxRows(mesh, endX, endY, n, mesh.segment[k]!, mirrored, even, odd, start * stride, stride);
+  const right = mesh.right[k]!;
+  const left = mesh.left[k]!;
+  const contrast = (right - left) / (right + left) / Math.PI;
+  for (let i = 0; i < n; i++) {
+    const row = (start + i) * stride;
+    for (let j = 0; j < mesh.nodes; j++) even[row + j]! *= contrast;
+    for (let j = 0; j < n; j++) even[row + start + j]! += rule.cellShare[i * n + j]!;
+    if (!odd) continue;
+    for (let j = 0; j < mesh.nodes; j++) odd[row + j]! *= contrast;
+    for (let j = 0; j < n; j++) odd[row + start + j]! += rule.cellShare[i * n + j]!;
+  }
+}
+
+let rhs = new Float64Array(0);
+let airRhs = new Float64Array(0);
+
+function solveMode(
+  mesh: Mesh,
+  cuts: Cut[],
+  cutRows: Float64Array,
+  a: Float64Array,
+  stride: number,
+  excitations: number[][],
+  keep?: Float64Array[][],
+): Charges {
+  const { nodes, copper, first } = mesh;
+  factorise(a, nodes, stride);
+  if (rhs.length < nodes) {
+    rhs = new Float64Array(nodes);
+    airRhs = new Float64Array(nodes);
+  }
+  const charges: Charges = { filled: [], air: [] };
+  const kept: Float64Array[] = [];
   for (const volts of excitations) {
-    const rhs = new Float64Array(nodes);
-    panels.forEach((panel, k) => {
-      if (panel.owner < 0) return;
-      for (let j = first[k]!; j < first[k + 1]!; j++) rhs[j] = volts[panel.owner] ?? 0;
-    });
-    const airDensity = rhs.slice(0, copper);
-    backsolve(a, copper, stride, airDensity);
+    rhs.fill(0);
+    for (let k = 0; k < mesh.panels; k++) {
+      const owner = mesh.owner[k]!;
+      if (owner >= 0) rhs.fill(volts[owner] ?? 0, first[k], first[k + 1]);
+    }
+    airRhs.set(rhs);
+    backsolve(a, copper, stride, airRhs);
     backsolve(a, nodes, stride, rhs);
-    const filled = new Array<number>(traces).fill(0);
-    const air = new Array<number>(traces).fill(0);
-    panels.forEach((panel, k) => {
-      if (panel.owner < 0) return;
+    const filled = volts.map(() => 0);
+    const air = volts.map(() => 0);
+    for (let k = 0; k < mesh.panels; k++) {
+      const owner = mesh.owner[k]!;
+      if (owner < 0) continue;
+      const weight = Math.PI * (mesh.right[k]! + mesh.left[k]!);
       for (let j = first[k]!; j < first[k + 1]!; j++) {
-        filled[panel.owner]! += weights[k]! * rhs[j]!;
-        air[panel.owner]! += 2 * Math.PI * airDensity[j]!;
+        filled[owner]! += weight * rhs[j]!;
+        air[owner]! += 2 * Math.PI * airRhs[j]!;
       }
-    });
+    }
     cuts.forEach((cut, c) => {
       let through = 0;
-      for (let j = 0; j < nodes; j++) through += cutRows[c]![j]! * rhs[j]!;
+      for (let j = 0; j < nodes; j++) through += cutRows[c * nodes + j]! * rhs[j]!;
       filled[cut.owner]! += cut.step * through;
     });
-    result.filled.push(filled);
-    result.air.push(air);
-    result.density.push(rhs);
+    charges.filled.push(filled);
+    charges.air.push(air);
+    kept.push(rhs.slice(0, nodes));
   }
-  return result;
-}
-
-function fillMatrix(mesh: Mesh, parity: Parity, near: number, a: Float64Array, stride: number): void {
-  const { panels, first } = mesh;
-  panels.forEach((panel, k) => {
-    const rule = gaussRule(panel.n);
-    for (let i = 0; i < panel.n; i++) {
-      const row = (first[k]! + i) * stride;
-      const node = first[k]! + i;
-      if (panel.owner !== INTERFACE) {
-        addPotential(mesh, near, mesh.x[node]!, mesh.y[node]!, node, 1, a, row);
-        if (parity !== 0) addPotential(mesh, near, -mesh.x[node]!, mesh.y[node]!, -1, parity, a, row);
-        continue;
-      }
-      const from = along(panel, rule.ends[i]!);
-      const to = along(panel, rule.ends[i + 1]!);
-      const { ax, ay, vx, vy, segment } = panel;
-      flux(mesh, parity, near, ax + from * vx, ay + from * vy, ax + to * vx, ay + to * vy, segment, a, row);
-      const k0 = (panel.right - panel.left) / (panel.right + panel.left) / Math.PI;
-      for (let j = 0; j < mesh.nodes; j++) a[row + j]! *= k0;
-      for (let j = 0; j < panel.n; j++) a[row + first[k]! + j]! += rule.cellShare[i * panel.n + j]!;
-    }
-  });
-}
-
-/** Flux through a cell of the charges and of their mirror images. */
-function flux(
-  mesh: Mesh,
-  parity: Parity,
-  near: number,
-  xa: number,
-  ya: number,
-  xb: number,
-  yb: number,
-  segment: number,
-  out: Float64Array,
-  at: number,
-): void {
-  addFlux(mesh, near, xa, ya, xb, yb, segment, 1, out, at);
-  if (parity !== 0) addFlux(mesh, near, -xa, ya, -xb, yb, -1, -parity, out, at);
+  keep?.push(kept);
+  return charges;
 }

@@ -1,16 +1,51 @@
 /**
- * LU factors in place, A = L U with unit lower triangle, rows `from` ≤ i < `to` against all rows above; the leading block
- * must already be factored. Row-major with stride `stride`. No pivoting: collocation and flux rows dominate their diagonals.
+ * LU factors in place, A = L U with unit lower triangle; row-major with stride `stride`. The leading block's factors are
+ * the leading block of the factors. No pivoting: collocation and flux rows dominate their diagonals. Four pivots are
+ * eliminated at a time, which halves the traffic with memory.
  */
 export function factorise(a: Float64Array, n: number, stride: number): void {
-  for (let k = 0; k < n; k++) {
+  let k = 0;
+  for (; k + 4 <= n; k += 4) {
+    const r0 = k * stride;
+    const r1 = r0 + stride;
+    const r2 = r1 + stride;
+    const r3 = r2 + stride;
+    for (let p = 0; p < 3; p++) {
+      const rowP = (k + p) * stride;
+      const inverse = 1 / a[rowP + k + p]!;
+      for (let q = p + 1; q < 4; q++) {
+        const rowQ = (k + q) * stride;
+        const factor = a[rowQ + k + p]! * inverse;
+        a[rowQ + k + p] = factor;
+        for (let j = k + p + 1; j < n; j++) a[rowQ + j]! -= factor * a[rowP + j]!;
+      }
+    }
+    const d0 = 1 / a[r0 + k]!;
+    const d1 = 1 / a[r1 + k + 1]!;
+    const d2 = 1 / a[r2 + k + 2]!;
+    const d3 = 1 / a[r3 + k + 3]!;
+    for (let i = k + 4; i < n; i++) {
+      const row = i * stride;
+      const f0 = a[row + k]! * d0;
+      const f1 = (a[row + k + 1]! - f0 * a[r0 + k + 1]!) * d1;
+      const f2 = (a[row + k + 2]! - f0 * a[r0 + k + 2]! - f1 * a[r1 + k + 2]!) * d2;
+      const f3 = (a[row + k + 3]! - f0 * a[r0 + k + 3]! - f1 * a[r1 + k + 3]! - f2 * a[r2 + k + 3]!) * d3;
+      a[row + k] = f0;
+      a[row + k + 1] = f1;
+      a[row + k + 2] = f2;
+      a[row + k + 3] = f3;
+      for (let j = k + 4; j < n; j++) {
+        a[row + j]! -= f0 * a[r0 + j]! + f1 * a[r1 + j]! + f2 * a[r2 + j]! + f3 * a[r3 + j]!;
+      }
+    }
+  }
+  for (; k < n; k++) {
     const rowK = k * stride;
     const inverse = 1 / a[rowK + k]!;
     for (let i = k + 1; i < n; i++) {
       const rowI = i * stride;
       const factor = a[rowI + k]! * inverse;
       a[rowI + k] = factor;
-      if (factor === 0) continue;
       for (let j = k + 1; j < n; j++) a[rowI + j]! -= factor * a[rowK + j]!;
     }
   }

@@ -119,7 +119,8 @@ function coppersOf(section: CrossSection, levels: Level[], height: number): Copp
 
 /** x of a side at height y. */
 function sideAt(copper: Copper, side: [number, number], y: number): number {
-  if (copper.top === copper.y || !Number.isFinite(side[0])) return side[0];
+  if (y === copper.y || !Number.isFinite(side[0])) return side[0];
+  if (y === copper.top) return side[1];
   return side[0] + ((side[1] - side[0]) * (y - copper.y)) / (copper.top - copper.y);
 }
 

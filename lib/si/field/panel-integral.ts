@@ -1,5 +1,6 @@
-import { gaussRule, type Rule } from "./gauss";
-import type { Panel } from "./panels";
+import { gaussRule } from "./gauss";
+import { Mesh } from "./mesh";
+import { along } from "./panels";
 
 /** Results of panelLogarithm, one per node of the panel. */
 export const logReal = new Float64Array(8);
@@ -7,48 +8,55 @@ export const logImag = new Float64Array(8);
 
 const sumReal = new Float64Array(9);
 const sumImag = new Float64Array(9);
+/** |ζ|² beyond which point values are taken. */
+const FAR = 10;
+const FAR_MAPPED = 400;
 const COS120 = -0.5;
 const SIN120 = Math.sqrt(3) / 2;
 
 /**
- * ∫ q_j ln(z − z′) over a panel, for the density of unit charge at each of its nodes j (a polynomial in u).
+ * ∫ q_j ln(z − z′) over panel k, for the density of unit charge at each of its nodes j (a polynomial in u).
  *
  *     ln(ζ − u^p) = Σ_k ln(ζ_k − u),  ζ = (z − a)/v, ζ_k the p-th roots of ζ
  *     ∫ P_m(t) ln(τ − t) dt = 2 (Q_{m+1}(τ) − Q_{m−1}(τ))/(2m + 1),  m ≥ 1  (Legendre functions of the second kind)
  *
  * Real parts are logarithms of distance [ln m]; differences of imaginary parts between two points are angles [rad], up to
- * the same multiple of 2π in every node. Accuracy 1e-11 for |τ| < 6, where the forward recursion for Q_m still is stable.
+ * the same multiple of 2π in every node. Accuracy 1e-10.
  */
-export function panelLogarithm(panel: Panel, rule: Rule, x: number, y: number): void {
-  const { vx, vy, p, n } = panel;
-  const square = vx * vx + vy * vy;
-  const dx = x - panel.ax;
-  const dy = y - panel.ay;
-  const zr = (dx * vx + dy * vy) / square;
-  const zi = (dy * vx - dx * vy) / square;
+export function panelLogarithm(mesh: Mesh, k: number, x: number, y: number): void {
+  const p = mesh.power[k]!;
+  const n = mesh.size[k]!;
+  const dx = x - mesh.ax[k]!;
+  const dy = y - mesh.ay[k]!;
+  const ir = mesh.inverseX[k]!;
+  const ii = mesh.inverseY[k]!;
+  const zr = dx * ir - dy * ii;
+  const zi = dx * ii + dy * ir;
+  const square = zr * zr + zi * zi;
+  if (square > (p === 1 ? FAR : FAR_MAPPED)) {
+    pointValues(p, n, zr, zi, mesh.logLength[k]!);
+    return;
+  }
   for (let m = 0; m < n; m++) sumReal[m] = sumImag[m] = 0;
   if (p === 1) addRoot(2 * zr - 1, 2 * zi, n);
-  else {
-    const modulus = Math.sqrt(zr * zr + zi * zi);
-    if (p === 2) {
-      let re = Math.sqrt(Math.max(0, (modulus + zr) / 2));
-      let im = Math.sqrt(Math.max(0, (modulus - zr) / 2));
-      if (zi < 0) im = -im;
-      if (zi === 0 && zr < 0) re = 0;
-      addRoot(2 * re - 1, 2 * im, n);
-      addRoot(-2 * re - 1, -2 * im, n);
-    } else {
-      const size = Math.cbrt(modulus);
-      const angle = zi === 0 && zr >= 0 ? 0 : Math.atan2(zi, zr) / 3;
-      const re = size * Math.cos(angle);
-      const im = size * Math.sin(angle);
-      addRoot(2 * re - 1, 2 * im, n);
-      addRoot(2 * (re * COS120 - im * SIN120) - 1, 2 * (im * COS120 + re * SIN120), n);
-      addRoot(2 * (re * COS120 + im * SIN120) - 1, 2 * (im * COS120 - re * SIN120), n);
-    }
+  else if (p === 2) {
+    const modulus = Math.sqrt(square);
+    const re = Math.sqrt(Math.max(0, (modulus + zr) / 2));
+    const im =
+      zi < 0 ? -Math.sqrt(Math.max(0, (modulus - zr) / 2)) : Math.sqrt(Math.max(0, (modulus - zr) / 2));
+    addRoot(2 * re - 1, 2 * im, n);
+    addRoot(-2 * re - 1, -2 * im, n);
+  } else {
+    const size = Math.cbrt(Math.sqrt(square));
+    const angle = zi === 0 && zr >= 0 ? 0 : Math.atan2(zi, zr) / 3;
+    const re = size * Math.cos(angle);
+    const im = size * Math.sin(angle);
+    addRoot(2 * re - 1, 2 * im, n);
+    addRoot(2 * (re * COS120 - im * SIN120) - 1, 2 * (im * COS120 + re * SIN120), n);
+    addRoot(2 * (re * COS120 + im * SIN120) - 1, 2 * (im * COS120 - re * SIN120), n);
   }
-  const offset = Math.log(square) / 2 - p * Math.LN2;
-  const { legendre } = rule;
+  const offset = mesh.logLength[k]! - p * Math.LN2;
+  const { legendre } = gaussRule(n);
   for (let j = 0; j < n; j++) {
     let re = offset;
     let im = 0;
@@ -59,6 +67,16 @@ export function panelLogarithm(panel: Panel, rule: Rule, x: number, y: number): 
     }
     logReal[j] = re;
     logImag[j] = im;
+  }
+}
+
+/** Far away the rule's own points serve better: the recursion would lose |2τ|^m of its digits. */
+function pointValues(p: number, n: number, zr: number, zi: number, offset: number): void {
+  const { t } = gaussRule(n);
+  for (let j = 0; j < n; j++) {
+    const re = zr - along(p, t[j]!);
+    logReal[j] = offset + Math.log(re * re + zi * zi) / 2;
+    logImag[j] = Math.atan2(zi, re);
   }
 }
 
@@ -78,8 +96,8 @@ function addRoot(a: number, b: number, n: number): void {
   let midR = a * lowR - b * lowI - 1;
   let midI = a * lowI + b * lowR;
   for (let m = 1; m < n; m++) {
-    const c = (2 * m + 1) / (m + 1);
     const d = m / (m + 1);
+    const c = 1 + d;
     const highR = c * (a * midR - b * midI) - d * lowR;
     const highI = c * (a * midI + b * midR) - d * lowI;
     const scale = 2 / (2 * m + 1);
@@ -92,22 +110,20 @@ function addRoot(a: number, b: number, n: number): void {
   }
 }
 
-const selfTables = new Map<number, Float64Array>();
+const selfTables: (Float64Array | undefined)[] = [];
+const unit = new Mesh();
 
 /** [i·n + j] = real part at node i of a panel of length 1, for its own node j; add ln|v|. */
-export function selfLogarithm(p: 1 | 2 | 3, n: number): Float64Array {
-  const key = p * 16 + n;
-  let table = selfTables.get(key);
-  if (!table) {
-    table = new Float64Array(n * n);
-    const rule = gaussRule(n);
-    const panel: Panel = { ax: 0, ay: 0, vx: 1, vy: 0, p, n, owner: 0, right: 1, left: 1, segment: 0 };
-    for (let i = 0; i < n; i++) {
-      const u = (1 + rule.t[i]!) / 2;
-      panelLogarithm(panel, rule, p === 1 ? u : p === 2 ? u * u : u * u * u, 0);
-      for (let j = 0; j < n; j++) table[i * n + j] = logReal[j]!;
-    }
-    selfTables.set(key, table);
+export function selfLogarithm(p: number, n: number): Float64Array {
+  const known = selfTables[p * 16 + n];
+  if (known) return known;
+  const table = new Float64Array(n * n);
+  const panel = { ax: 0, ay: 0, vx: 1, vy: 0, p: p as 1 | 2 | 3, n, owner: 0, right: 1, left: 1, segment: 0 };
+  unit.load([panel], 0, 1);
+  for (let i = 0; i < n; i++) {
+    panelLogarithm(unit, 0, unit.x[i]!, 0);
+    for (let j = 0; j < n; j++) table[i * n + j] = logReal[j]!;
   }
+  selfTables[p * 16 + n] = table;
   return table;
 }

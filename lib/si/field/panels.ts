@@ -18,6 +18,12 @@ export interface Panel {
   segment: number;
 }
 
+/** Share r/|v| of a panel's length at t ∈ [−1, 1], u = (1 + t)/2. */
+export function along(p: number, t: number): number {
+  const u = (1 + t) / 2;
+  return p === 1 ? u : p === 2 ? u * u : u * u * u;
+}
+
 /** Integer decisions of a mesh: held fixed, the mesh follows its geometry smoothly. */
 export interface Topology {
   /** per segment: vertices that refine it inside, and panels between breakpoints */

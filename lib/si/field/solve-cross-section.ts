@@ -4,10 +4,12 @@ import { EPS0 } from "../physical-constants";
 import { FINENESS, type Accuracy, type Fineness } from "./accuracy";
 import { solveCharges } from "./charges";
 import { lineParameters, type Capacitances } from "./line-parameters";
-import { meshOf } from "./mesh";
+import { Mesh } from "./mesh";
 import { outlineOf } from "./outline";
 import { panelsOf, rightHalf } from "./panels";
 import { centred, isMirroredVertically, symmetryOf } from "./symmetry";
+
+const workspace = new Mesh();
 
 /**
  * Quasi-static line parameters of a cross-section by a boundary integral over its charges.
@@ -33,17 +35,16 @@ export function solveWith(section: CrossSection, fineness: Fineness): LineParame
       .map((cut) => ({ ...cut, x1: Math.max(0, cut.x1) }));
   }
   const { panels } = panelsOf(outline, half, fineness);
-  const mesh = meshOf(panels, outline.upper);
+  const mesh = workspace.load(panels, outline.upper, fineness.near);
   const count = section.traces.length;
   let c: Capacitances;
   if (kind === "swap") {
     const right = section.traces[0]!.x > section.traces[1]!.x ? 0 : 1;
     const volts = right === 0 ? [1, 0] : [0, 1];
-    const even = solveCharges(mesh, outline.cuts, 1, fineness.near, [volts]);
-    const odd = solveCharges(mesh, outline.cuts, -1, fineness.near, [volts]);
+    const [even, odd] = solveCharges(mesh, outline.cuts, "both", [volts]);
     const matrix = (key: "filled" | "air") => {
-      const e = even[key][0]![right]! * EPS0;
-      const o = odd[key][0]![right]! * EPS0;
+      const e = even![key][0]![right]! * EPS0;
+      const o = odd![key][0]![right]! * EPS0;
       return [
         [(e + o) / 2, (e - o) / 2],
         [(e - o) / 2, (e + o) / 2],
@@ -52,11 +53,11 @@ export function solveWith(section: CrossSection, fineness: Fineness): LineParame
     c = { filled: matrix("filled"), air: matrix("air") };
   } else {
     const unit = section.traces.map((_, i) => section.traces.map((__, j) => (i === j ? 1 : 0)));
-    const solved = solveCharges(mesh, outline.cuts, half ? 1 : 0, fineness.near, unit);
+    const [solved] = solveCharges(mesh, outline.cuts, half ? "even" : "whole", unit);
     const scale = EPS0 * (half ? 2 : 1);
     const matrix = (q: number[][]) =>
       section.traces.map((_, i) => section.traces.map((__, j) => (scale * (q[j]![i]! + q[i]![j]!)) / 2));
-    c = { filled: matrix(solved.filled), air: matrix(solved.air) };
+    c = { filled: matrix(solved!.filled), air: matrix(solved!.air) };
   }
   const result = lineParameters(c, count === 2 && (kind === "swap" || isMirroredVertically(section)));
   if (!(c.filled[0]![0]! > 0)) throw new NotConvergedError("The field solution did not settle.", 0, 0);
