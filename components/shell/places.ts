@@ -4,6 +4,7 @@ import {
   FolderKanban,
   Layers,
   LayoutDashboard,
+  Library,
   ListChecks,
   type LucideIcon,
   PackageCheck,
@@ -27,6 +28,7 @@ export const PROJECTS: Place = { label: "Projects", href: "/projects", icon: Fol
 /** What else there is for a team; a place that would only answer "not found" is left out. */
 export function teamPlaces(mayReadAudit: boolean): readonly Place[] {
   return [
+    { label: "Materials", href: "/materials", icon: Library },
     { label: "Team", href: "/team", icon: Users },
     ...(mayReadAudit ? [{ label: "Audit", href: "/audit", icon: ScrollText }] : []),
     { label: "Validation", href: "/validation", icon: Scale },
