@@ -8,7 +8,7 @@ import { copperFoils, dielectricFamilies } from "@/lib/si/materials";
 import { type EditLayer, toDoc } from "./edit-layer";
 import { columnLength } from "./layer-field-text";
 import { LayerText } from "./layer-text";
-import { FoilMenu, MaterialMenu } from "./material-menu";
+import { MaterialMenu } from "./material-menu";
 import { PliesEditor } from "./plies-editor";
 import { useStackupFields } from "./stackup-fields";
 import { useStackupUnits } from "./stackup-units";
@@ -31,11 +31,7 @@ export function LayerDetails({ editor, layer }: { editor: StackupEditor; layer: 
             {layer.kind}, layer {place} of {editor.stackup.layers.length}
           </span>
         </h2>
-        {readOnly ? null : isCopper(layer) ? (
-          <FoilMenu onPick={(values) => change(layer.key, values)} />
-        ) : (
-          <MaterialMenu kind={layer.kind} onPick={(values) => change(layer.key, values)} />
-        )}
+        {readOnly ? null : <MaterialMenu layer={layer} onPick={(values) => change(layer.key, values)} />}
       </div>
       <div className="grid grid-cols-2 gap-x-4 gap-y-3 sm:grid-cols-3">
         {isCopper(layer) ? (
@@ -56,6 +52,15 @@ export function LayerDetails({ editor, layer }: { editor: StackupEditor; layer: 
             onChange={(event) => change(layer.key, { origin: event.target.value as Origin })}
           />
         )}
+        <div className="col-span-2">
+          <LayerText
+            layer={layer}
+            onChange={change}
+            field="sourceNote"
+            label="Source note"
+            placeholder="where these values come from"
+          />
+        </div>
       </div>
     </section>
   );

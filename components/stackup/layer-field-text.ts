@@ -4,7 +4,7 @@ import { convert, Decimal, formatQuantity, parseQuantity, type Quantity } from "
 
 export type LengthField = "thickness" | "baseFoil" | "plating" | "etch" | "roughness" | "maskOverTrace";
 export type NumberField = "tolerancePercent" | "coveragePercent" | "dk" | "df";
-export type WordField = "name" | "material" | "planeNet";
+export type WordField = "name" | "material" | "planeNet" | "sourceNote";
 export type LayerField = LengthField | NumberField | WordField | "dkFrequency";
 
 const LENGTHS: ReadonlySet<string> = new Set<LengthField>([
@@ -15,7 +15,7 @@ const LENGTHS: ReadonlySet<string> = new Set<LengthField>([
   "roughness",
   "maskOverTrace",
 ]);
-const WORDS: ReadonlySet<string> = new Set<WordField>(["name", "material", "planeNet"]);
+const WORDS: ReadonlySet<string> = new Set<WordField>(["name", "material", "planeNet", "sourceNote"]);
 
 export const fieldNames: Record<LayerField, string> = {
   name: "name",
@@ -32,6 +32,7 @@ export const fieldNames: Record<LayerField, string> = {
   roughness: "roughness",
   maskOverTrace: "mask over trace",
   planeNet: "net",
+  sourceNote: "source note",
 };
 
 /**
@@ -50,14 +51,14 @@ export function readLayerField(field: LayerField, text: string, unit: string): P
 /** What the field holds while one types in it: the value as it was typed. */
 export function typedText(layer: StackupLayerDoc, field: LayerField): string {
   const value = layer[field];
-  if (value === null) return "";
+  if (value === null || value === undefined) return "";
   return typeof value === "string" ? value : formatQuantity(value);
 }
 
 /** What the field shows otherwise: lengths in the reader's unit, foils by their weight. */
 export function shownText(layer: StackupLayerDoc, field: LayerField, unit: string): string {
   const value = layer[field];
-  if (value === null) return "";
+  if (value === null || value === undefined) return "";
   if (typeof value !== "string") return LENGTHS.has(field) ? shownLength(value, unit) : formatQuantity(value);
   return value !== "" && field.endsWith("Percent") ? `${value} %` : value;
 }
@@ -78,6 +79,8 @@ export function columnLength(value: Quantity, unit: LengthUnit): { text: string;
 
 function valueOf(field: LayerField, text: string, unit: string): unknown {
   const typed = text.trim();
+  // No note is none, not an empty one.
+  if (field === "sourceNote" && typed === "") return undefined;
   if (WORDS.has(field)) return typed;
   if (typed === "") return null;
   if (LENGTHS.has(field)) return parseQuantity(typed, "length", unit);

@@ -1,82 +1,102 @@
 "use client";
 
+import { useQuery } from "@tanstack/react-query";
 import { ChevronDown } from "lucide-react";
+import { Fragment, type ReactNode } from "react";
 import { Button } from "@/components/ui/button";
 import { Menu, MenuItem, MenuSeparator } from "@/components/ui/menu";
-import type { LayerKind, StackupLayerDoc } from "@/lib/schemas/stackup";
-import { copperFoils, dielectricFamilies, foilTreatments } from "@/lib/si/materials";
-import { fromSi } from "@/lib/si/units";
+import { materialsQuery } from "@/lib/client/materials";
+import type { StackupLayerDoc } from "@/lib/schemas/stackup";
+import { genericMaterials, type LibraryMaterial, type MaterialKind } from "@/lib/si/materials";
+import { isCopper } from "@/lib/si/stackup";
+import { convert, formatQuantity } from "@/lib/si/units";
+import { fillIn, materialKindsOf } from "./fill-in";
 
-type Pick = (values: Partial<StackupLayerDoc>) => void;
+const HEADINGS: Record<MaterialKind, string> = {
+  laminate: "Generic laminates, typical",
+  prepreg: "Generic plies by glass style",
+  foil: "Foils by weight, roughness by profile",
+  mask: "Generic masks, typical",
+};
 
-/** Typical values of a family of dielectrics, marked as assumed: the data sheet decides. */
-export function MaterialMenu({ kind, onPick }: { kind: LayerKind; onPick: Pick }) {
-  const families = dielectricFamilies.filter(({ use }) =>
-    kind === "mask" ? use !== "laminate" : use !== "mask",
-  );
+interface Props {
+  layer: StackupLayerDoc;
+  onPick: (values: Partial<StackupLayerDoc>) => void;
+}
+
+/** Fills a layer in from a material, with the note of its source: the team's own first, then the generic library. */
+export function MaterialMenu({ layer, onPick }: Props) {
+  const kinds = materialKindsOf(layer);
+  const { data, isError } = useQuery(materialsQuery());
+  const own = data?.filter(({ kind }) => kinds.includes(kind)) ?? [];
   return (
     <Menu
       align="end"
       trigger={
         <Button>
-          Fill in a material
+          {isCopper(layer) ? "Fill in a foil" : "Fill in a material"}
           <ChevronDown size={14} aria-hidden="true" />
         </Button>
       }
     >
-      <p className="text-ink-soft px-2 py-1 text-xs">Typical values; the laminate’s data sheet decides.</p>
-      {families.map((family) => (
-        <MenuItem
-          key={family.id}
-          onSelect={() =>
-            onPick({
-              material: family.name,
-              dk: family.dk,
-              df: family.df,
-              dkFrequency: fromSi(family.frequency, "GHz"),
-              origin: "assumed",
-            })
-          }
-        >
-          <span className="flex-1">{family.name}</span>
-          <span className="text-ink-soft ml-6 text-xs">
-            Dk {family.dk}, Df {family.df} at {family.frequency / 1e9} GHz
-          </span>
-        </MenuItem>
+      <Heading>The team’s own</Heading>
+      {own.length === 0 ? (
+        <Heading>
+          {isError
+            ? "They could not be read. Close this and open it again."
+            : data
+              ? "None of this kind yet; the page Materials has them."
+              : "Reading them…"}
+        </Heading>
+      ) : (
+        own.map((entry) => (
+          <Entry
+            key={entry.id}
+            material={entry}
+            onSelect={() => onPick(fillIn(layer, entry, entry.origin))}
+          />
+        ))
+      )}
+      {kinds.map((wanted) => (
+        <Fragment key={wanted}>
+          <MenuSeparator />
+          <Heading>{HEADINGS[wanted]}; the data sheet decides</Heading>
+          {genericMaterials
+            .filter(({ kind }) => kind === wanted)
+            .map((entry) => (
+              <Entry
+                key={entry.name}
+                material={entry}
+                onSelect={() => onPick(fillIn(layer, entry, "assumed"))}
+              />
+            ))}
+        </Fragment>
       ))}
     </Menu>
   );
 }
 
-/** Foils by weight and roughness by treatment. */
-export function FoilMenu({ onPick }: { onPick: Pick }) {
+function Heading({ children }: { children: ReactNode }) {
+  return <p className="text-ink-soft px-2 py-1 text-xs">{children}</p>;
+}
+
+function Entry({ material, onSelect }: { material: LibraryMaterial; onSelect: () => void }) {
   return (
-    <Menu
-      align="end"
-      trigger={
-        <Button>
-          Fill in a foil
-          <ChevronDown size={14} aria-hidden="true" />
-        </Button>
-      }
-    >
-      {copperFoils.map((foil) => (
-        <MenuItem key={foil.name} onSelect={() => onPick({ baseFoil: foil.weight })}>
-          <span className="flex-1">{foil.name}</span>
-          <span className="text-ink-soft ml-6 text-xs">{Math.round(foil.gramsPerSquareMetre)} g/m²</span>
-        </MenuItem>
-      ))}
-      <MenuSeparator />
-      <p className="text-ink-soft px-2 py-1 text-xs">Roughness, typical</p>
-      {foilTreatments.map((treatment) => (
-        <MenuItem
-          key={treatment.id}
-          onSelect={() => onPick({ roughness: fromSi(treatment.roughness, "µm") })}
-        >
-          <span className="flex-1">{treatment.name}</span>
-          <span className="text-ink-soft ml-6 text-xs">{fromSi(treatment.roughness, "µm").value} µm</span>
-        </MenuItem>
-      ))}
-    </Menu>
+    <MenuItem onSelect={onSelect}>
+      <span className="flex-1">{material.name}</span>
+      <span className="text-ink-soft ml-6 text-xs">{factsOf(material)}</span>
+    </MenuItem>
   );
+}
+
+/** "Dk 4.1, Df 0.019 at 1 GHz, 120 µm" */
+function factsOf({ dk, df, frequency, thickness, roughness, kind }: LibraryMaterial): string {
+  const at = frequency ? ` at ${convert(frequency, "GHz").value} GHz` : "";
+  return [
+    dk ? `Dk ${dk}${df ? `, Df ${df}` : ""}${at}` : null,
+    thickness ? formatQuantity(kind === "foil" ? convert(thickness, "µm") : thickness) : null,
+    roughness ? `${formatQuantity(roughness)} rms` : null,
+  ]
+    .filter(Boolean)
+    .join(", ");
 }

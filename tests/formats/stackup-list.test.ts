@@ -25,6 +25,7 @@ const layer = fc
     plating: maybe(quantity),
     pressed: fc.boolean(),
     planeNet: fc.constantFrom("", "GND", "+3V3"),
+    sourceNote: fc.option(fc.constantFrom("data sheet, p. 2", "=from memory"), { nil: undefined }),
   })
   .map(({ foil, pressed, kind, thickness, plating, planeNet, ...rest }): StackupLayerDoc => {
     const copper = kind === "foil" || kind === "signal" || kind === "plane";

@@ -23,6 +23,7 @@ export const stackupColumns = [
   { id: "maskOverTrace", label: "mask over trace", headers: ["mask over trace", "over trace"] },
   { id: "planeNet", label: "plane net", headers: ["plane net", "net"] },
   { id: "origin", label: "origin", headers: ["origin", "source"] },
+  { id: "sourceNote", label: "source note", headers: ["source note", "note", "notes"] },
 ] as const;
 
 export type StackupColumn = (typeof stackupColumns)[number]["id"];

@@ -95,6 +95,7 @@ function readLayer(row: LayerRow): unknown {
     maskOverTrace: row.quantity("maskOverTrace", "length"),
     planeNet: row.text("planeNet"),
     origin: origins.find((origin) => origin === row.text("origin").toLowerCase()) ?? "assumed",
+    sourceNote: row.text("sourceNote").slice(0, 200).trim() || undefined,
   };
 }
 

@@ -6,8 +6,10 @@ import { Tooltip } from "radix-ui";
 import { afterEach, beforeAll, beforeEach, describe, expect, it, vi } from "vitest";
 import { LengthUnitProvider } from "@/components/shell/length-unit";
 import { StackupEditor } from "@/components/stackup/stackup-editor";
+import type { StoredMaterial } from "@/lib/schemas/material";
 import { type StackupDoc, stackupDoc, type StoredStackup } from "@/lib/schemas/stackup";
 import { stackupTemplates } from "@/lib/si/stackup";
+import { aMaterial } from "@/tests/support/documents";
 
 const PROJECT = "0198f000-0000-7000-8000-000000000001";
 const uuid = (index: number) => `0198f000-0000-7000-8000-1000000000${String(index).padStart(2, "0")}`;
@@ -29,6 +31,8 @@ interface Put {
 let puts: Put[] = [];
 /** What the server has. */
 let present = stored();
+/** The team's own. */
+let materials: StoredMaterial[] = [];
 let refuse: ((put: Put) => Response | null) | null = null;
 
 beforeAll(() => {
@@ -42,6 +46,7 @@ beforeAll(() => {
 beforeEach(() => {
   puts = [];
   present = stored();
+  materials = [];
   refuse = null;
   vi.stubGlobal(
     "fetch",
@@ -60,6 +65,7 @@ beforeEach(() => {
         return Response.json({ name: put.stackup.name, version: put.version + 1, layers });
       }
       if (address.includes("/stackup")) return Response.json(present);
+      if (address.endsWith("/materials")) return Response.json({ materials });
       return Response.json({ undo: null, redo: null });
     }),
   );
@@ -191,6 +197,38 @@ describe("stackup editor", () => {
     // 120 µm − 34.3 µm × (1 − 0.8): the inner plane of 1 oz sinks in, computed.
     const details = screen.getByRole("region", { name: "Layer Prepreg 1-2" });
     expect(within(details).getByText("0.11314 mm")).toBeTruthy();
+  });
+
+  it("fills a layer in from the team's own material, offered before the generic ones, with its source", async () => {
+    materials = [
+      {
+        ...aMaterial("Estuary core", { thickness: { value: "0.3", unit: "mm" } }),
+        id: uuid(90),
+        version: 0,
+        createdAt: 0,
+        updatedAt: 0,
+        createdByName: null,
+      },
+    ];
+    const user = show();
+    await user.click(field("Name of Core 2-3"));
+    await user.click(screen.getByRole("button", { name: "Fill in a material" }));
+    const own = await screen.findByRole("menuitem", { name: /^Estuary core/ });
+    expect(screen.getAllByRole("menuitem")[0]).toBe(own);
+    expect(screen.getByRole("menuitem", { name: /^Modified epoxy, mid loss/ })).toBeTruthy();
+    await user.click(own);
+    expect(field("Dk of Core 2-3").value).toBe("3.62");
+    expect(field("Source note").value).toBe("Data sheet of the invented maker, table 2");
+    await waitFor(() => expect(puts).toHaveLength(1), { timeout: 3000 });
+    expect(puts[0]?.stackup.layers.find(({ name }) => name === "Core 2-3")).toMatchObject({
+      material: "Estuary core",
+      dk: "3.62",
+      df: "0.0041",
+      dkFrequency: { value: "10", unit: "GHz" },
+      thickness: { value: "0.3", unit: "mm" },
+      origin: "data sheet",
+      sourceNote: "Data sheet of the invented maker, table 2",
+    });
   });
 
   it("shows a released stackup without anything to edit", () => {
