@@ -2,8 +2,8 @@ import { potentialRow } from "./copper-rows";
 import { backsolve, factorise } from "./factorise";
 import { fluxRows } from "./flux-rows";
 import { gaussRule } from "./gauss";
-import { type Mesh } from "./mesh";
-import { along } from "./panels";
+import { along, type Mesh } from "./mesh";
+
 import { INTERFACE, type Cut } from "./segment";
 
 /** Mirror symmetry used: none, the even mode alone, or even and odd. */

@@ -1,10 +1,12 @@
 import { gaussRule } from "./gauss";
-import { along, type Panel } from "./panels";
-import { INTERFACE } from "./segment";
+import { INTERFACE, type Segment } from "./segment";
 
 /**
  * Panels and their nodes in flat arrays, copper first; reused from solve to solve. Between two planes b apart,
  * W = exp(πz/b) maps the strip to the upper half plane, where a charge has one image; over one plane W = z.
+ *
+ * A panel runs from its start a along v, r = |v|·u^p: p = 3 at copper corners (charge ∝ r^(−⅓)), p = 2 at the edges of
+ * strips without thickness (r^(−½)), 1 elsewhere; so the density is smooth in u everywhere.
  */
 export class Mesh {
   panels = 0;
@@ -13,8 +15,8 @@ export class Mesh {
   copper = 0;
   /** distance between the planes [m], 0 over one plane */
   upper = 0;
-  power = new Uint8Array(0);
-  size = new Uint8Array(0);
+  power = new Int32Array(0);
+  size = new Int32Array(0);
   owner = new Int32Array(0);
   segment = new Int32Array(0);
   /** first node of each panel, and one past the last */
@@ -42,38 +44,40 @@ export class Mesh {
   mirrorX = new Float64Array(0);
   mirrorY = new Float64Array(0);
 
+  private near = 3;
+  private roomForPanels = 0;
+  private roomForNodes = 0;
+
   /** @param near  panels nearer than this many half-lengths are integrated in closed form */
-  load(panels: Panel[], upper: number, near: number): this {
-    let nodes = 0;
-    for (const panel of panels) nodes += panel.n;
-    this.reserve(panels.length, nodes);
-    this.panels = panels.length;
-    this.nodes = nodes;
+  begin(upper: number, near: number): void {
+    this.panels = 0;
+    this.nodes = 0;
     this.copper = 0;
     this.upper = upper;
-    let node = 0;
-    for (let k = 0; k < panels.length; k++) {
-      const panel = panels[k]!;
-      this.first[k] = node;
-      this.loadPanel(k, panel, near);
-      this.loadNodes(node, panel);
-      node += panel.n;
-      if (panel.owner !== INTERFACE) this.copper = node;
-    }
-    this.first[panels.length] = nodes;
-    return this;
+    this.near = near;
   }
 
-  private loadPanel(k: number, panel: Panel, near: number): void {
-    const { ax, ay, vx, vy, p } = panel;
+  /**
+   * Adds the panel between shares `from` and `to` of a segment, starting at `from`: r = |v|·u^p from there, p = `power`.
+   * Where it runs against the segment, right and left change places.
+   */
+  addPanel(s: Segment, index: number, from: number, to: number, power: number, n: number): void {
+    this.reserve(n);
+    const k = this.panels;
+    const dx = s.x2 - s.x1;
+    const dy = s.y2 - s.y1;
+    const ax = from === 1 ? s.x2 : s.x1 + from * dx;
+    const ay = from === 1 ? s.y2 : s.y1 + from * dy;
+    const vx = (to === 1 ? s.x2 : s.x1 + to * dx) - ax;
+    const vy = (to === 1 ? s.y2 : s.y1 + to * dy) - ay;
     const square = vx * vx + vy * vy;
     const half = Math.sqrt(square) / 2;
-    this.power[k] = p;
-    this.size[k] = panel.n;
-    this.owner[k] = panel.owner;
-    this.segment[k] = panel.segment;
-    this.right[k] = panel.right;
-    this.left[k] = panel.left;
+    this.power[k] = power;
+    this.size[k] = n;
+    this.owner[k] = s.owner;
+    this.segment[k] = index;
+    this.right[k] = to > from ? s.right : s.left;
+    this.left[k] = to > from ? s.left : s.right;
     this.ax[k] = ax;
     this.ay[k] = ay;
     this.vx[k] = vx;
@@ -85,16 +89,23 @@ export class Mesh {
     this.centreY[k] = ay + vy / 2;
     this.half[k] = half;
     // in u = r^(1/3) everything looks nearer
-    this.reach[k] = (p === 1 ? near : 2 * near + 1) * half;
+    this.reach[k] = (power === 1 ? this.near : 2 * this.near + 1) * half;
+    this.addNodes(k, power, n);
   }
 
-  private loadNodes(node: number, panel: Panel): void {
-    const { t } = gaussRule(panel.n);
-    for (let j = 0; j < panel.n; j++) {
-      const r = along(panel.p, t[j]!);
-      const x = panel.ax + r * panel.vx;
-      const y = panel.ay + r * panel.vy;
-      const i = node + j;
+  /** After the last panel. */
+  close(): void {
+    this.first[this.panels] = this.nodes;
+  }
+
+  private addNodes(k: number, power: number, n: number): void {
+    const { t } = gaussRule(n);
+    this.first[k] = this.nodes;
+    for (let j = 0; j < n; j++) {
+      const r = along(power, t[j]!);
+      const x = this.ax[k]! + r * this.vx[k]!;
+      const y = this.ay[k]! + r * this.vy[k]!;
+      const i = this.nodes + j;
       this.x[i] = x;
       this.y[i] = y;
       this.mapX[i] = mappedX(this.upper, x, y);
@@ -102,22 +113,39 @@ export class Mesh {
       this.mirrorX[i] = mappedX(this.upper, -x, y);
       this.mirrorY[i] = mappedY(this.upper, -x, y);
     }
+    this.panels += 1;
+    this.nodes += n;
+    if (this.owner[k] !== INTERFACE) this.copper = this.nodes;
   }
 
-  private reserve(panels: number, nodes: number): void {
-    if (this.power.length < panels) {
-      const room = panels + 24;
-      this.power = new Uint8Array(room);
-      this.size = new Uint8Array(room);
-      this.owner = new Int32Array(room);
-      this.segment = new Int32Array(room);
-      this.first = new Int32Array(room + 1);
-      for (const name of perPanel) this[name] = new Float64Array(room);
+  /** Room for one more panel of n nodes. */
+  private reserve(n: number): void {
+    if (this.panels + 1 > this.roomForPanels) {
+      const room = 2 * this.panels + 64;
+      for (const name of perPanel) this[name] = longer(this[name], new Float64Array(room));
+      for (const name of labels) this[name] = longer(this[name], new Int32Array(room + 1));
+      this.roomForPanels = room;
     }
-    if (this.x.length < nodes) for (const name of perNode) this[name] = new Float64Array(nodes + 64);
+    if (this.nodes + n > this.roomForNodes) {
+      const room = 2 * this.nodes + 256;
+      for (const name of perNode) this[name] = longer(this[name], new Float64Array(room));
+      this.roomForNodes = room;
+    }
   }
 }
 
+function longer<T extends Float64Array | Int32Array>(old: T, wider: T): T {
+  wider.set(old);
+  return wider;
+}
+
+/** Share r/|v| of a panel's length at t ∈ [−1, 1]: u^p, u = (1 + t)/2. */
+export function along(p: number, t: number): number {
+  const u = (1 + t) / 2;
+  return p === 1 ? u : p === 2 ? u * u : u * u * u;
+}
+
+const labels = ["power", "size", "owner", "segment", "first"] as const;
 const perPanel = [
   "right",
   "left",

@@ -1,6 +1,6 @@
 import { gaussRule } from "./gauss";
-import { Mesh } from "./mesh";
-import { along } from "./panels";
+import { Mesh, along } from "./mesh";
+import { INTERFACE, PLAIN } from "./segment";
 
 /** Results of panelLogarithm, one per node of the panel. */
 export const logReal = new Float64Array(8);
@@ -118,8 +118,21 @@ export function selfLogarithm(p: number, n: number): Float64Array {
   const known = selfTables[p * 16 + n];
   if (known) return known;
   const table = new Float64Array(n * n);
-  const panel = { ax: 0, ay: 0, vx: 1, vy: 0, p: p as 1 | 2 | 3, n, owner: 0, right: 1, left: 1, segment: 0 };
-  unit.load([panel], 0, 1);
+  const segment = {
+    x1: 0,
+    y1: 0,
+    x2: 1,
+    y2: 0,
+    end1: PLAIN,
+    end2: PLAIN,
+    owner: INTERFACE,
+    right: 1,
+    left: 1,
+    outward: 0,
+  };
+  unit.begin(0, 1);
+  unit.addPanel(segment, 0, 0, 1, p, n);
+  unit.close();
   for (let i = 0; i < n; i++) {
     panelLogarithm(unit, 0, unit.x[i]!, 0);
     for (let j = 0; j < n; j++) table[i * n + j] = logReal[j]!;

@@ -1,246 +1,161 @@
 import type { Fineness } from "./accuracy";
+import type { Mesh } from "./mesh";
 import { CORNER, EDGE, INTERFACE, PLAIN, type Outline, type Segment } from "./segment";
-
-/**
- * Panels of one solve. A panel runs from its start a along v, r = |v|·u^p: p = 3 at copper corners (charge ∝ r^−⅓),
- * p = 2 at the edges of strips without thickness (r^−½), 1 elsewhere; so the density is smooth in u everywhere.
- */
-export interface Panel {
-  ax: number;
-  ay: number;
-  vx: number;
-  vy: number;
-  p: 1 | 2 | 3;
-  n: number;
-  owner: number;
-  right: number;
-  left: number;
-  segment: number;
-}
-
-/** Share r/|v| of a panel's length at t ∈ [−1, 1], u = (1 + t)/2. */
-export function along(p: number, t: number): number {
-  const u = (1 + t) / 2;
-  return p === 1 ? u : p === 2 ? u * u : u * u * u;
-}
+import { Vertices, distanceTo, projection } from "./vertices";
 
 /** Integer decisions of a mesh: held fixed, the mesh follows its geometry smoothly. */
 export interface Topology {
-  /** per segment: vertices that refine it inside, and panels between breakpoints */
+  /** per segment: the vertices that refine it inside, and the panels in each stretch between them */
   parts: { inner: number[]; counts: number[] }[];
 }
 
-interface Vertex {
-  x: number;
-  y: number;
-  kind: number;
-  /** distance to the nearest other vertex, mirror image or plane [m] */
-  room: number;
-}
-
-/** Segments of the half x ≥ 0, cut at the mirror line. */
-export function rightHalf(segments: Segment[], scale: number): Segment[] {
-  const tiny = 1e-9 * scale;
-  const kept: Segment[] = [];
-  for (const s of segments) {
-    if (s.x1 <= tiny && s.x2 <= tiny) continue;
-    if (s.x1 >= -tiny && s.x2 >= -tiny) {
-      kept.push(s);
-      continue;
-    }
-    const y = s.y1 + ((s.y2 - s.y1) * -s.x1) / (s.x2 - s.x1);
-    const outward = s.outward === 2 ? 1 : s.outward;
-    if (s.x1 < 0) kept.push({ ...s, x1: 0, y1: y, end1: PLAIN, outward: outward === -1 ? 0 : outward });
-    else kept.push({ ...s, x2: 0, y2: y, end2: PLAIN, outward: outward === 1 ? 0 : outward });
-  }
-  return kept;
-}
+const vertices = new Vertices();
+/** Refinement points of the segment at hand: place and panel length there [m]. */
+const at = new Float64Array(64);
+const size = new Float64Array(64);
+const ends = new Float64Array(256);
 
 /** Cuts an outline into panels, copper first; decides the topology, or follows the one given. */
-export function panelsOf(
+export function layPanels(
+  mesh: Mesh,
   outline: Outline,
   half: boolean,
   fineness: Fineness,
   fixed?: Topology,
-): { panels: Panel[]; topology: Topology } {
-  const { segments } = outline;
-  const vertices = verticesOf(segments, outline.upper, half);
-  const topology: Topology = { parts: [] };
-  const panels: Panel[] = [];
-  segments.forEach((segment, index) => {
-    const part = fixed?.parts[index] ?? { inner: innerVertices(segment, vertices, fineness), counts: [] };
-    topology.parts.push(part);
-    cut(segment, index, vertices, fineness, part, panels);
+): Topology {
+  const { segments, upper } = outline;
+  vertices.load(outline, half);
+  mesh.begin(upper, fineness.near);
+  const held = fixed?.parts.length === segments.length ? fixed : undefined;
+  const parts = segments.map((segment, index) => {
+    const part = held?.parts[index] ?? { inner: [], counts: [] };
+    layOn(mesh, segment, index, fineness, part, held === undefined);
+    return part;
   });
-  panels.sort((a, b) => Number(a.owner === INTERFACE) - Number(b.owner === INTERFACE));
-  return { panels, topology };
+  mesh.close();
+  return held ?? { parts };
 }
 
-function verticesOf(segments: Segment[], upper: number, half: boolean): Vertex[] {
-  const vertices: Vertex[] = [];
-  const add = (x: number, y: number, kind: number) => {
-    if (kind === PLAIN) return;
-    const known = vertices.find((v) => v.x === x && v.y === y);
-    if (known) known.kind = Math.max(known.kind, kind);
-    else vertices.push({ x, y, kind, room: 2 * y });
-  };
-  for (const s of segments) {
-    add(s.x1, s.y1, s.end1);
-    add(s.x2, s.y2, s.end2);
-  }
-  for (const v of vertices) {
-    if (upper > 0) v.room = Math.min(v.room, 2 * (upper - v.y));
-    if (half) v.room = Math.min(v.room, 2 * v.x);
-    for (const other of vertices) {
-      if (other === v) continue;
-      const d = Math.sqrt((other.x - v.x) ** 2 + (other.y - v.y) ** 2);
-      if (d < v.room) v.room = d;
-    }
-    for (const s of segments) {
-      if (s.owner === INTERFACE) continue;
-      const d = distanceTo(s, v);
-      if (d > 0 && d < v.room) v.room = d;
-    }
-  }
-  return vertices;
-}
-
-/** Distance from a vertex to a segment; 0 where it lies on it. */
-function distanceTo(s: Segment, v: { x: number; y: number }): number {
-  const t = projection(s, v);
-  const x = s.x1 + t * (s.x2 - s.x1) - v.x;
-  const y = s.y1 + t * (s.y2 - s.y1) - v.y;
-  const d = Math.sqrt(x * x + y * y);
-  return d < 1e-9 * (Math.abs(v.y) + Math.abs(s.y1)) ? 0 : d;
-}
-
-/** Foot of the perpendicular as a share of the segment, held within it. */
-function projection(s: Segment, v: { x: number; y: number }): number {
-  const dx = s.x2 - s.x1;
-  const dy = s.y2 - s.y1;
-  const t = ((v.x - s.x1) * dx + (v.y - s.y1) * dy) / (dx * dx + dy * dy);
-  return Math.min(1, Math.max(0, t));
-}
-
-function lengthOf(s: Segment): number {
-  return Math.sqrt((s.x2 - s.x1) ** 2 + (s.y2 - s.y1) ** 2);
-}
-
-/** Panel length wanted at an end of a segment. */
-function endSize(s: Segment, end: 1 | 2, vertices: Vertex[], f: Fineness, length: number): number {
-  const kind = end === 1 ? s.end1 : s.end2;
-  const x = end === 1 ? s.x1 : s.x2;
-  const y = end === 1 ? s.y1 : s.y2;
-  if (kind === PLAIN) {
-    let size = length;
-    for (const v of vertices) {
-      const d = Math.sqrt((v.x - x) ** 2 + (v.y - y) ** 2);
-      size = Math.min(size, 2 * f.facing * d);
-    }
-    return size;
-  }
-  const vertex = vertices.find((v) => v.x === x && v.y === y);
-  const room = Math.min(vertex?.room ?? length, length);
-  const share = s.owner === INTERFACE && kind < CORNER ? f.interfaceShare : f.copperShare;
-  return share * room;
-}
-
-function slopeOf(s: Segment, f: Fineness): number {
-  return s.outward !== 0 ? f.outerGrowth : f.growth;
-}
-
-/** Vertices that face the segment so closely that it must be refined between its ends. */
-function innerVertices(s: Segment, vertices: Vertex[], f: Fineness): number[] {
-  const length = lengthOf(s);
-  const growth = slopeOf(s, f);
-  const points = [
-    { at: 0, size: endSize(s, 1, vertices, f, length) },
-    { at: length, size: endSize(s, 2, vertices, f, length) },
-  ];
-  const facing = vertices
-    .map((v, index) => ({ index, at: projection(s, v) * length, size: f.facing * distanceTo(s, v) }))
-    .filter((item) => item.size > 0 && item.at > 0 && item.at < length)
-    .sort((a, b) => a.size - b.size);
-  const chosen: { index: number; at: number }[] = [];
-  for (const item of facing) {
-    const already = Math.min(...points.map((p) => p.size + growth * Math.abs(p.at - item.at)));
-    if (item.size > 0.7 * already) continue;
-    if (Math.min(item.at, length - item.at) < 0.3 * item.size) continue;
-    points.push(item);
-    chosen.push(item);
-  }
-  return chosen.sort((a, b) => a.at - b.at).map((item) => item.index);
-}
-
-function cut(
+function layOn(
+  mesh: Mesh,
   s: Segment,
   index: number,
-  vertices: Vertex[],
   f: Fineness,
   part: Topology["parts"][number],
-  panels: Panel[],
+  decide: boolean,
 ): void {
-  const length = lengthOf(s);
-  const growth = slopeOf(s, f);
-  const points = [
-    { at: 0, size: endSize(s, 1, vertices, f, length) },
-    ...part.inner.map((i) => {
-      const v = vertices[i] as Vertex;
-      return { at: projection(s, v) * length, size: f.facing * distanceTo(s, v) };
-    }),
-    { at: length, size: endSize(s, 2, vertices, f, length) },
-  ];
-  for (let k = 0; k + 1 < points.length; k++) {
-    const a = points[k] as (typeof points)[number];
-    const b = points[k + 1] as (typeof points)[number];
-    const ends = grade(
-      b.at - a.at,
-      a.size,
-      b.size,
+  const length = Math.sqrt((s.x2 - s.x1) * (s.x2 - s.x1) + (s.y2 - s.y1) * (s.y2 - s.y1));
+  const growth = s.outward === 0 ? f.growth : f.outerGrowth;
+  at[0] = 0;
+  size[0] = endSize(s, s.end1, s.x1, s.y1, f, length);
+  at[1] = length;
+  size[1] = endSize(s, s.end2, s.x2, s.y2, f, length);
+  if (decide) chooseInner(s, f, length, growth, part.inner);
+  let last = 0;
+  const endAt = at[1];
+  const endLength = size[1]!;
+  for (const i of part.inner) {
+    last += 1;
+    at[last] = projection(s, vertices.x[i]!, vertices.y[i]!) * length;
+    size[last] = f.facing * distanceTo(s, vertices.x[i]!, vertices.y[i]!);
+  }
+  last += 1;
+  at[last] = endAt;
+  size[last] = endLength;
+  const first = power(s.end1);
+  const final = power(s.end2);
+  for (let k = 0; k < last; k++) {
+    const from = at[k]!;
+    const least = last === 1 && first > 1 && final > 1 ? 2 : 1;
+    const count = grade(
+      at[k + 1]! - from,
+      size[k]!,
+      size[k + 1]!,
       growth,
-      part.counts,
-      k,
-      bothSingular(s, k, points.length),
+      least,
+      decide ? 0 : (part.counts[k] ?? 1),
     );
-    for (let i = 0; i + 1 < ends.length; i++) {
-      const first = k === 0 && i === 0 ? power(s.end1) : 1;
-      const last = k + 2 === points.length && i + 2 === ends.length ? power(s.end2) : 1;
-      pushPanel(s, index, (a.at + ends[i]!) / length, (a.at + ends[i + 1]!) / length, first, last, f, panels);
+    part.counts[k] = count;
+    for (let i = 0; i < count; i++) {
+      const a = (from + ends[i]!) / length;
+      const b = k + 1 === last && i + 1 === count ? 1 : (from + ends[i + 1]!) / length;
+      const nodes = s.owner === INTERFACE ? f.interfaceNodes : f.copperNodes;
+      if (b === 1 && final > 1) mesh.addPanel(s, index, 1, a, final, nodes);
+      else mesh.addPanel(s, index, a, b, a === 0 ? first : 1, nodes);
     }
   }
 }
 
-function bothSingular(s: Segment, k: number, count: number): boolean {
-  return count === 2 && k === 0 && power(s.end1) > 1 && power(s.end2) > 1;
-}
-
-function power(kind: number): 1 | 2 | 3 {
+/** Charge near copper corners goes as r^(−⅓), at the edges of strips without thickness as r^(−½). */
+function power(kind: number): number {
   return kind === CORNER ? 3 : kind === EDGE ? 2 : 1;
 }
 
+/** Panel length wanted at an end of a segment. */
+function endSize(s: Segment, kind: number, x: number, y: number, f: Fineness, length: number): number {
+  if (kind === PLAIN) {
+    let nearest = length;
+    for (let i = 0; i < vertices.count; i++) {
+      const dx = vertices.x[i]! - x;
+      const dy = vertices.y[i]! - y;
+      nearest = Math.min(nearest, 2 * f.facing * Math.sqrt(dx * dx + dy * dy));
+    }
+    return nearest;
+  }
+  const share = s.owner === INTERFACE && kind < CORNER ? f.interfaceShare : f.copperShare;
+  return share * Math.min(vertices.room[vertices.at(x, y)] ?? length, length);
+}
+
+/** Chooses the vertices that face the segment so closely that it must be refined between its ends. */
+function chooseInner(s: Segment, f: Fineness, length: number, growth: number, inner: number[]): void {
+  let count = 2;
+  // the closest first; each takes in those whose demand it already meets
+  for (let round = 0; round < vertices.count; round++) {
+    let best = -1;
+    let bestSize = Infinity;
+    let bestAt = 0;
+    for (let i = 0; i < vertices.count; i++) {
+      const x = vertices.x[i]!;
+      const y = vertices.y[i]!;
+      const place = projection(s, x, y) * length;
+      if (place <= 0 || place >= length) continue;
+      const wanted = f.facing * distanceTo(s, x, y);
+      if (wanted <= 0 || wanted >= bestSize || Math.min(place, length - place) < 0.3 * wanted) continue;
+      let allowed = Infinity;
+      for (let p = 0; p < count; p++)
+        allowed = Math.min(allowed, size[p]! + growth * Math.abs(at[p]! - place));
+      if (wanted > 0.7 * allowed) continue;
+      best = i;
+      bestSize = wanted;
+      bestAt = place;
+    }
+    if (best < 0 || count === at.length) break;
+    at[count] = bestAt;
+    size[count] = bestSize;
+    count += 1;
+    inner.push(best);
+  }
+  inner.sort(
+    (a, b) => projection(s, vertices.x[a]!, vertices.y[a]!) - projection(s, vertices.x[b]!, vertices.y[b]!),
+  );
+}
+
 /**
- * Ends of panels on (0, length) whose lengths follow size(t) = min(a + growth·t, b + growth·(length − t)):
- * equal steps of ∫dt/size.
+ * Fills `ends` with the ends of panels on (0, length) whose lengths follow
+ * size(t) = min(a + growth·t, b + growth·(length − t)): equal steps of ∫dt/size.
+ *
+ * @param fixed  number of panels, or 0 to let the sizes decide
+ * @returns number of panels
  */
-function grade(
-  length: number,
-  a: number,
-  b: number,
-  growth: number,
-  counts: number[],
-  k: number,
-  two: boolean,
-): Float64Array {
+function grade(length: number, a: number, b: number, growth: number, least: number, fixed: number): number {
   const start = Math.min(a, b + growth * length);
   const end = Math.min(b, a + growth * length);
   // where both branches meet
   const middle = Math.min(length, Math.max(0, (end - start + growth * length) / (2 * growth)));
   const rising = Math.log(1 + (growth * middle) / start) / growth;
-  const falling = Math.log(1 + (growth * (length - middle)) / end) / growth;
-  const total = rising + falling;
-  const count = counts[k] ?? Math.max(two ? 2 : 1, Math.ceil(total - 0.2));
-  counts[k] = count;
-  const ends = new Float64Array(count + 1);
+  const total = rising + Math.log(1 + (growth * (length - middle)) / end) / growth;
+  const count = fixed > 0 ? fixed : Math.min(ends.length - 1, Math.max(least, Math.ceil(total - 0.2)));
+  ends[0] = 0;
   for (let i = 1; i < count; i++) {
     const m = (i * total) / count;
     ends[i] =
@@ -249,39 +164,5 @@ function grade(
         : length - (end * (Math.exp(growth * (total - m)) - 1)) / growth;
   }
   ends[count] = length;
-  return ends;
-}
-
-function pushPanel(
-  s: Segment,
-  segment: number,
-  from: number,
-  to: number,
-  first: 1 | 2 | 3,
-  last: 1 | 2 | 3,
-  f: Fineness,
-  panels: Panel[],
-): void {
-  const dx = s.x2 - s.x1;
-  const dy = s.y2 - s.y1;
-  const base = { n: s.owner === INTERFACE ? f.interfaceNodes : f.copperNodes, owner: s.owner, segment };
-  const x1 = s.x1 + from * dx;
-  const y1 = s.y1 + from * dy;
-  const x2 = to === 1 ? s.x2 : s.x1 + to * dx;
-  const y2 = to === 1 ? s.y2 : s.y1 + to * dy;
-  if (last > 1) {
-    // turned round, so that the panel starts at its corner
-    panels.push({ ...base, ax: x2, ay: y2, vx: x1 - x2, vy: y1 - y2, p: last, right: s.left, left: s.right });
-  } else {
-    panels.push({
-      ...base,
-      ax: x1,
-      ay: y1,
-      vx: x2 - x1,
-      vy: y2 - y1,
-      p: first,
-      right: s.right,
-      left: s.left,
-    });
-  }
+  return count;
 }

@@ -1,12 +1,13 @@
 import { validateCrossSection, type CrossSection, type LineParameters } from "../cross-section";
 import { NotConvergedError } from "../errors";
 import { EPS0 } from "../physical-constants";
+import { rightHalf } from "./half";
 import { FINENESS, type Accuracy, type Fineness } from "./accuracy";
 import { solveCharges } from "./charges";
 import { lineParameters, type Capacitances } from "./line-parameters";
 import { Mesh } from "./mesh";
 import { outlineOf } from "./outline";
-import { panelsOf, rightHalf } from "./panels";
+import { layPanels } from "./panels";
 import { centred, isMirroredVertically, symmetryOf } from "./symmetry";
 
 const workspace = new Mesh();
@@ -26,16 +27,11 @@ export function solveCrossSection(
 
 export function solveWith(section: CrossSection, fineness: Fineness): LineParameters {
   const { kind, axis } = symmetryOf(section);
-  const outline = outlineOf(centred(section, kind === "none" ? 0 : axis));
   const half = kind !== "none";
-  if (half) {
-    outline.segments = rightHalf(outline.segments, outline.segments[0]?.y1 ?? 1);
-    outline.cuts = outline.cuts
-      .filter((cut) => cut.x2 > 0)
-      .map((cut) => ({ ...cut, x1: Math.max(0, cut.x1) }));
-  }
-  const { panels } = panelsOf(outline, half, fineness);
-  const mesh = workspace.load(panels, outline.upper, fineness.near);
+  const whole = outlineOf(centred(section, half ? axis : 0));
+  const outline = half ? rightHalf(whole) : whole;
+  const mesh = workspace;
+  layPanels(mesh, outline, half, fineness);
   const count = section.traces.length;
   let c: Capacitances;
   if (kind === "swap") {
