@@ -49,6 +49,12 @@ export function bounceTable(network: Network, options: { until: number; floor?: 
       `${curved.name} is not linear, so its bounces depend on their height; look at the waveforms instead.`,
       "parts",
     );
+  const lossy = circuit.lines.find(({ skin }) => skin > 0);
+  if (lossy)
+    throw new UnsupportedError(
+      `${network.sections[lossy.section]!.name} has skin loss, so its bounces have no single height; look at the waveforms instead.`,
+      "sections",
+    );
   const moving = circuit.fixed.findIndex(
     ({ wave }) =>
       wave !== null && (wave.kind === "sine" || wave.value.some((value) => value !== wave.value[0])),

@@ -38,6 +38,8 @@ export interface WaveLine {
   b: Port;
   impedance: number;
   delay: number;
+  /** [√s]; 0: lossless */
+  skin: number;
 }
 
 /** The linear circuit with shorts joined, nodes numbered and drivers turned into ideal voltages behind resistors. */
@@ -145,11 +147,6 @@ function waveLines(section: Section, index: number, ref: (node: string) => Ref):
   const field = `sections[${index}]`;
   const port = (node: string): Port => ({ node: ref(node), second: null, sign: 1 });
   if (section.kind === "line") {
-    if (section.skin)
-      throw new UnsupportedError(
-        `${section.name} has skin loss, which is not simulated yet.`,
-        `${field}.skin`,
-      );
     return [
       {
         section: index,
@@ -158,6 +155,7 @@ function waveLines(section: Section, index: number, ref: (node: string) => Ref):
         b: port(section.b),
         impedance: section.impedance,
         delay: section.delay,
+        skin: section.skin ?? 0,
       },
     ];
   }
@@ -176,6 +174,7 @@ function waveLines(section: Section, index: number, ref: (node: string) => Ref):
         b: port(section.b),
         impedance: Math.sqrt(section.l / section.c),
         delay,
+        skin: 0,
       },
     ];
   }
@@ -191,6 +190,7 @@ function waveLines(section: Section, index: number, ref: (node: string) => Ref):
       a: both(section.a1, section.a2),
       b: both(section.b1, section.b2),
       ...section[mode],
+      skin: 0,
     };
   });
 }

@@ -1,5 +1,6 @@
 import type { Circuit } from "./circuit";
 import type { Cluster } from "./clusters";
+import { skinFilter, type SkinFilter } from "./skin-fit";
 import { discretise, discretiseNode, type Propagator } from "./discretise";
 
 /** A line's delay in steps: whole ones, and the weights of four neighbours where it is not a whole number. */
@@ -16,6 +17,8 @@ export interface GridPlan {
   /** zeros before t = 0 in every wave's history */
   pad: number;
   delays: StepDelay[];
+  /** by line; null: lossless */
+  skins: (SkinFilter | null)[];
   /** steps that can be done for one cluster before the others must follow */
   block: number;
   clusters: PlannedCluster[];
@@ -54,7 +57,15 @@ export function planGrid(
     pad = Math.max(pad, whole + 4);
   }
   const steps = Math.max(1, Math.ceil(until / step - 1e-9));
-  return { step, steps, pad, delays, block, clusters: clusters.map((cluster) => planCluster(cluster, step)) };
+  return {
+    step,
+    steps,
+    pad,
+    delays,
+    skins: circuit.lines.map(({ skin }) => (skin > 0 ? skinFilter(skin, step, until) : null)),
+    block,
+    clusters: clusters.map((cluster) => planCluster(cluster, step)),
+  };
 }
 
 function stepDelay(steps: number): StepDelay {

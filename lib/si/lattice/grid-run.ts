@@ -1,6 +1,7 @@
 import type { GridPlan, PlannedCluster } from "./grid-plan";
 import type { Channel } from "./channels";
 import type { ClusterPort } from "./clusters";
+import { skinWorker, type SkinWorker } from "./skin-worker";
 import { driveOf, heldOf, type Arriving, type GridInput } from "./grid-input";
 import { matrixWorker } from "./matrix-worker";
 import type { TableContext } from "./table-worker";
@@ -34,13 +35,13 @@ export function runGrid(
   recorded: Iterable<number>,
   tables?: TableContext,
 ): GridRun {
-  const { steps, pad, delays, block } = plan;
+  const { steps, pad, delays, skins, block } = plan;
   const ends = 2 * delays.length;
   const outgoing: Float64Array[] = [];
   const incident: (Float64Array | null)[] = [];
   for (let end = 0; end < ends; end++) {
     outgoing.push(workspace.take(steps + 1 + pad).fill(0, 0, pad));
-    incident.push(delays[end >> 1]!.taps ? workspace.take(steps + 1 + pad) : null);
+    incident.push(delays[end >> 1]!.taps || skins[end >> 1] ? workspace.take(steps + 1 + pad) : null);
   }
   const nodes: (Float64Array | null)[] = new Array<Float64Array | null>(nodeCount).fill(null);
   for (const node of recorded) nodes[node] = workspace.take(steps + 1);
@@ -53,6 +54,10 @@ export function runGrid(
       ? { samples: delayed, offset: pad }
       : { samples: far, offset: pad - delays[end >> 1]!.whole };
   });
+  const losses: (SkinWorker | null)[] = outgoing.map((_, end) => {
+    const filter = skins[end >> 1];
+    return filter ? skinWorker(filter) : null;
+  });
   const workers = plan.clusters.map((planned) =>
     clusterWorker(planned, inputs, arriving, outgoing, pad, nodes, still, scratch, tables),
   );
@@ -61,7 +66,11 @@ export function runGrid(
     for (let end = 0; end < ends; end++) {
       const into = incident[end];
       const { taps, whole } = delays[end >> 1]!;
-      if (into && taps) interpolate(outgoing[end ^ 1]!, into, taps, pad - whole, pad, from, to);
+      if (!into) continue;
+      const far = outgoing[end ^ 1]!;
+      if (taps) interpolate(far, into, taps, pad - whole, pad, from, to);
+      else for (let n = from + pad; n < to + pad; n++) into[n] = far[n - whole]!;
+      losses[end]?.(into, from + pad, to + pad);
     }
     for (const work of workers) work(from, to);
   }

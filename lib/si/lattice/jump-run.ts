@@ -1,5 +1,6 @@
 import type { Channel } from "./channels";
 import { discretise } from "./discretise";
+import { jumpLoss } from "./skin-worker";
 import type { GridPlan, PlannedCluster } from "./grid-plan";
 
 /** The response to a 1 V jump at t = 0: at each step the value before and after what jumps there. */
@@ -22,7 +23,7 @@ const AT_ONCE = 1e-9;
  * jump as a slope of about a step.
  */
 export function runJump(plan: GridPlan, fixed: number, channels: readonly Channel[]): JumpRun {
-  const { steps, pad, delays, step } = plan;
+  const { steps, pad, delays, skins, step } = plan;
   const length = steps + 1 + pad;
   const outgoing: Waves[] = delays.flatMap(() =>
     [0, 1].map(() => ({ before: new Float64Array(length), after: new Float64Array(length) })),
@@ -35,6 +36,10 @@ export function runJump(plan: GridPlan, fixed: number, channels: readonly Channe
   for (const channel of channels)
     if (channel.kind === "node")
       nodes.set(channel.node, { before: new Float64Array(steps + 1), after: new Float64Array(steps + 1) });
+  const losses = incident.map((_, end) => {
+    const filter = skins[end >> 1];
+    return filter ? jumpLoss(filter) : null;
+  });
   const states = plan.clusters.map((planned) => clusterState(planned, fixed, step));
   for (let n = 0; n <= steps; n++) {
     const at = n + pad;
@@ -50,6 +55,7 @@ export function runJump(plan: GridPlan, fixed: number, channels: readonly Channe
         into.before[at] = from.before[at - whole]!;
         into.after[at] = from.after[at - whole]!;
       }
+      losses[end]?.(into, at);
     }
     for (const state of states) advance(state, n, at, incident, outgoing, nodes);
   }

@@ -7,6 +7,7 @@ import { buildClusters } from "./clusters";
 import type { Waveforms } from "./comb-output";
 import type { Prepared } from "./prepared";
 import { simulateComb } from "./simulate-comb";
+import { simulateSkin } from "./simulate-skin";
 import { simulateTables } from "./simulate-tables";
 import { simulateGrid } from "./simulate-grid";
 import { lumpShortLines } from "./lump";
@@ -111,7 +112,9 @@ function draw(
   const { circuit, clusters, accuracy } = prepared;
   try {
     const hasTables = circuit.elements.length > 0;
-    const exact = !hasTables && clusters.every((cluster) => cluster.isStatic) ? simulateComb(prepared) : null;
+    const isResistive = !hasTables && clusters.every((cluster) => cluster.isStatic);
+    const isLossless = circuit.lines.every(({ skin }) => skin === 0);
+    const exact = isResistive ? (isLossless ? simulateComb : simulateSkin)(prepared) : null;
     if (exact) return exact;
     const ramp = shortestRamp(circuit);
     // Whoever asks for the waves wants those of every section.

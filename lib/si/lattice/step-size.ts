@@ -4,6 +4,7 @@ import { corners } from "../network/wave";
 import type { Circuit } from "./circuit";
 import type { Cluster } from "./clusters";
 import { curveStep } from "./curve-step";
+import { skinStep } from "./skin-step";
 
 export type Accuracy = "live" | "standard" | "reference";
 
@@ -90,14 +91,20 @@ export function chooseStep(
   const between = isLumped ? 0.6 * fineness.ramp * ramp : Infinity;
   const wanted =
     asked ??
-    Math.min(
-      between,
-      curveStep(clusters, ramp, until, circuit.elements.length > 0 ? 0.7 * fineness.curve : fineness.curve),
-      sineStep(circuit, fineness.sine),
-      clusters.some((cluster) => cluster.isStatic && cluster.tables.length > 0)
-        ? ramp * fineness.table
-        : Infinity,
-    );
+    skinStep(circuit, until, accuracy, {
+      ramp,
+      jumps: wavesOf(circuit).some(
+        (wave) => wave.kind === "pwl" && corners(wave).some(({ jump }) => jump !== 0),
+      ),
+      wanted: Math.min(
+        between,
+        curveStep(clusters, ramp, until, circuit.elements.length > 0 ? 0.7 * fineness.curve : fineness.curve),
+        sineStep(circuit, fineness.sine),
+        clusters.some((cluster) => cluster.isStatic && cluster.tables.length > 0)
+          ? ramp * fineness.table
+          : Infinity,
+      ),
+    });
   // Where nothing rounds the corners off, they must be kept by the step alone.
   const sharp = clusters.every((cluster) => cluster.isStatic);
   const choice =
