@@ -8,3 +8,4 @@ export {
 export type { Accuracy } from "./step-size";
 export { bounceTable, type Bounce } from "./bounce-table";
 export { wavesAlong, type WavesAt } from "./along-line";
+export { nodeSpectrum, standingWave, type NodeSpectrum, type StandingWavePoint } from "./standing-wave";
