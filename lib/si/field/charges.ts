@@ -13,6 +13,8 @@ export interface Charges {
   /** free charge of each trace over ε0 and volt, by excitation, with dielectrics and without */
   filled: number[][];
   air: number[][];
+  /** largest unresolved share of the charge over the excitations, see unresolvedShare */
+  unresolved: number;
 }
 
 let matrixA = new Float64Array(0);
@@ -133,7 +135,7 @@ function solveMode(
     rhs = new Float64Array(nodes);
     airRhs = new Float64Array(nodes);
   }
-  const charges: Charges = { filled: [], air: [] };
+  const charges: Charges = { filled: [], air: [], unresolved: 0 };
   const kept: Float64Array[] = [];
   for (const volts of excitations) {
     rhs.fill(0);
@@ -162,8 +164,34 @@ function solveMode(
     });
     charges.filled.push(filled);
     charges.air.push(air);
-    kept.push(rhs.slice(0, nodes));
+    charges.unresolved = Math.max(charges.unresolved, unresolvedShare(mesh, rhs));
+    if (keep) kept.push(rhs.slice(0, nodes));
   }
   keep?.push(kept);
   return charges;
+}
+
+/**
+ * What the panels' polynomials leave out, judged by how their Legendre coefficients fall: Σ a²/(a + b) over the charge on
+ * copper, a and b the last coefficients' magnitudes.
+ */
+function unresolvedShare(mesh: Mesh, density: Float64Array): number {
+  let missing = 0;
+  let charge = 0;
+  for (let k = 0; k < mesh.panels; k++) {
+    const n = mesh.size[k]!;
+    const start = mesh.first[k]!;
+    const { legendre } = gaussRule(n);
+    let last = 0;
+    let previous = 0;
+    for (let j = 0; j < n; j++) {
+      const x = density[start + j]!;
+      last += legendre[j * n + n - 1]! * x;
+      previous += legendre[j * n + n - 2]! * x;
+      if (mesh.owner[k] !== INTERFACE) charge += Math.abs(x);
+    }
+    const a = Math.abs(last);
+    missing += (a * a) / (a + Math.abs(previous) + 1e-300);
+  }
+  return missing / charge;
 }

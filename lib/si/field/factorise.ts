@@ -34,10 +34,8 @@ export function factorise(a: Float64Array, n: number, stride: number): void {
       a[row + k + 1] = f1;
       a[row + k + 2] = f2;
       a[row + k + 3] = f3;
-      for (let j = k + 4; j < n; j++) {
-        a[row + j]! -= f0 * a[r0 + j]! + f1 * a[r1 + j]! + f2 * a[r2 + j]! + f3 * a[r3 + j]!;
-      }
     }
+    eliminate(a, n, stride, k);
   }
   for (; k < n; k++) {
     const rowK = k * stride;
@@ -47,6 +45,43 @@ export function factorise(a: Float64Array, n: number, stride: number): void {
       const factor = a[rowI + k]! * inverse;
       a[rowI + k] = factor;
       for (let j = k + 1; j < n; j++) a[rowI + j]! -= factor * a[rowK + j]!;
+    }
+  }
+}
+
+/** Subtracts from rows k + 4 … what the four pivot rows k … k + 3 contribute; two rows at a time share their loads. */
+function eliminate(a: Float64Array, n: number, stride: number, k: number): void {
+  const r0 = k * stride;
+  const r1 = r0 + stride;
+  const r2 = r1 + stride;
+  const r3 = r2 + stride;
+  let i = k + 4;
+  for (; i + 2 <= n; i += 2) {
+    const p = i * stride;
+    const q = p + stride;
+    const f0 = a[p + k]!;
+    const f1 = a[p + k + 1]!;
+    const f2 = a[p + k + 2]!;
+    const f3 = a[p + k + 3]!;
+    const g0 = a[q + k]!;
+    const g1 = a[q + k + 1]!;
+    const g2 = a[q + k + 2]!;
+    const g3 = a[q + k + 3]!;
+    for (let j = k + 4; j < n; j++) {
+      const u0 = a[r0 + j]!;
+      const u1 = a[r1 + j]!;
+      const u2 = a[r2 + j]!;
+      const u3 = a[r3 + j]!;
+      a[p + j] = a[p + j]! - f0 * u0 - f1 * u1 - f2 * u2 - f3 * u3;
+      a[q + j] = a[q + j]! - g0 * u0 - g1 * u1 - g2 * u2 - g3 * u3;
+    }
+  }
+  for (; i < n; i++) {
+    const p = i * stride;
+    for (let m = 0; m < 4; m++) {
+      const f = a[p + k + m]!;
+      const row = r0 + m * stride;
+      for (let j = k + 4; j < n; j++) a[p + j]! -= f * a[row + j]!;
     }
   }
 }

@@ -15,6 +15,7 @@ const endX = new Float64Array(9);
 const endY = new Float64Array(9);
 const mapX = new Float64Array(9);
 const mapY = new Float64Array(9);
+const nearEnd = new Uint8Array(9);
 const imag = new Float64Array(9 * 8);
 
 /**
@@ -137,11 +138,20 @@ function integrateNear(
     const start = first[k]!;
     const n = first[k + 1]! - start;
     const { w } = gaussRule(n);
+    const close = reach[k]! * reach[k]!;
     for (let e = 0; e <= cells; e++) {
+      const px = endX[e]! - centreX[k]!;
+      const py = endY[e]! - centreY[k]!;
+      nearEnd[e] = px * px + py * py <= close ? 1 : 0;
+    }
+    for (let e = 0; e <= cells; e++) {
+      // a far end serves only to close a cell with a near one
+      if (!nearEnd[e] && !(e > 0 && nearEnd[e - 1]) && !(e < cells && nearEnd[e + 1])) continue;
       panelLogarithm(mesh, k, endX[e]!, endY[e]!);
       for (let j = 0; j < n; j++) imag[e * 8 + j] = logImag[j]!;
     }
     for (let i = 0; i < cells; i++) {
+      if (!nearEnd[i] && !nearEnd[i + 1]) continue;
       let mean = 0;
       for (let j = 0; j < n; j++) mean += w[j]! * (imag[i * 8 + 8 + j]! - imag[i * 8 + j]!);
       const turns = 2 * Math.PI * Math.round(mean / (4 * Math.PI));

@@ -1,1 +1,1 @@
-export { solveCrossSection } from "./solve-cross-section";
+export { neighbourSolver, solveCrossSection, type FieldParameters } from "./solve-cross-section";

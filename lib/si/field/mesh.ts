@@ -44,7 +44,8 @@ export class Mesh {
   mirrorX = new Float64Array(0);
   mirrorY = new Float64Array(0);
 
-  private near = 3;
+  /** |ζ − ½|² by p beyond which the rule's points serve instead of integrals, ζ = (z − a)/v */
+  readonly farness = new Float64Array(4);
   private roomForPanels = 0;
   private roomForNodes = 0;
 
@@ -54,7 +55,9 @@ export class Mesh {
     this.nodes = 0;
     this.copper = 0;
     this.upper = upper;
-    this.near = near;
+    // in u = r^(1/p) everything looks nearer
+    this.farness[1] = (near * near) / 4;
+    this.farness[2] = this.farness[3] = (near + 0.5) * (near + 0.5);
   }
 
   /**
@@ -88,8 +91,7 @@ export class Mesh {
     this.centreX[k] = ax + vx / 2;
     this.centreY[k] = ay + vy / 2;
     this.half[k] = half;
-    // in u = r^(1/3) everything looks nearer
-    this.reach[k] = (power === 1 ? this.near : 2 * this.near + 1) * half;
+    this.reach[k] = Math.sqrt(square * this.farness[power]!);
     this.addNodes(k, power, n);
   }
 

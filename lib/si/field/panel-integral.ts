@@ -8,9 +8,6 @@ export const logImag = new Float64Array(8);
 
 const sumReal = new Float64Array(9);
 const sumImag = new Float64Array(9);
-/** |ζ|² beyond which point values are taken. */
-const FAR = 10;
-const FAR_MAPPED = 400;
 const COS120 = -0.5;
 const SIN120 = Math.sqrt(3) / 2;
 
@@ -33,7 +30,7 @@ export function panelLogarithm(mesh: Mesh, k: number, x: number, y: number): voi
   const zr = dx * ir - dy * ii;
   const zi = dx * ii + dy * ir;
   const square = zr * zr + zi * zi;
-  if (square > (p === 1 ? FAR : FAR_MAPPED)) {
+  if (square - zr + 0.25 > mesh.farness[p]!) {
     pointValues(p, n, zr, zi, mesh.logLength[k]!);
     return;
   }
@@ -76,7 +73,8 @@ function pointValues(p: number, n: number, zr: number, zi: number, offset: numbe
   for (let j = 0; j < n; j++) {
     const re = zr - along(p, t[j]!);
     logReal[j] = offset + Math.log(re * re + zi * zi) / 2;
-    logImag[j] = Math.atan2(zi, re);
+    // (ζ₁ − u)(ζ₂ − u) = −(ζ − u²)
+    logImag[j] = p === 2 ? Math.atan2(-zi, -re) : Math.atan2(zi, re);
   }
 }
 

@@ -53,7 +53,7 @@ function layOn(
   if (decide) chooseInner(s, f, length, growth, part.inner);
   let last = 0;
   const endAt = at[1];
-  const endLength = size[1]!;
+  const endLength = size[1];
   for (const i of part.inner) {
     last += 1;
     at[last] = projection(s, vertices.x[i]!, vertices.y[i]!) * length;
@@ -62,6 +62,7 @@ function layOn(
   last += 1;
   at[last] = endAt;
   size[last] = endLength;
+  const nodes = s.owner === INTERFACE ? f.interfaceNodes : f.copperNodes;
   const first = power(s.end1);
   const final = power(s.end2);
   for (let k = 0; k < last; k++) {
@@ -79,7 +80,6 @@ function layOn(
     for (let i = 0; i < count; i++) {
       const a = (from + ends[i]!) / length;
       const b = k + 1 === last && i + 1 === count ? 1 : (from + ends[i + 1]!) / length;
-      const nodes = s.owner === INTERFACE ? f.interfaceNodes : f.copperNodes;
       if (b === 1 && final > 1) mesh.addPanel(s, index, 1, a, final, nodes);
       else mesh.addPanel(s, index, a, b, a === 0 ? first : 1, nodes);
     }
