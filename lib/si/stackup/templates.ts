@@ -40,7 +40,7 @@ const recipes: Recipe[] = [
   {
     order: "SGSSGS",
     description: "Four signal layers, each beside a ground plane.",
-    dielectrics: [["2116"], 360, ["7628", "7628"]],
+    dielectrics: [["2116"], 400, ["7628", "7628"]],
     innerOunces: { signal: "1", plane: "1" },
   },
   {
@@ -52,7 +52,7 @@ const recipes: Recipe[] = [
   {
     order: "SGSGSSPSGS",
     description: "Six signal layers, three grounds, one supply.",
-    dielectrics: [["3313"], 130, ["7628"], 130, ["7628"]],
+    dielectrics: [["3313"], 150, ["7628"], 150, ["7628"]],
     innerOunces: { signal: "0.5", plane: "1" },
   },
   {
