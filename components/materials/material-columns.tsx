@@ -20,7 +20,7 @@ export function materialColumns(unit: LengthUnit, acts: MaterialActs | null): Da
     {
       id: "name",
       header: "Name",
-      width: 270,
+      width: 230,
       sortValue: ({ material }) => material.name,
       cell: ({ material }) => (
         <span className="font-medium" title={material.name}>
@@ -31,21 +31,21 @@ export function materialColumns(unit: LengthUnit, acts: MaterialActs | null): Da
     {
       id: "whose",
       header: "Whose",
-      width: 84,
+      width: 76,
       sortValue: ({ own }) => (own ? 0 : 1),
       cell: ({ own }) => <Badge tone={own ? "copper" : "plain"}>{own ? "team" : "generic"}</Badge>,
     },
     {
       id: "kind",
       header: "Kind",
-      width: 84,
+      width: 76,
       sortValue: ({ material }) => material.kind,
       cell: ({ material }) => material.kind,
     },
     {
       id: "style",
       header: "Glass",
-      width: 72,
+      width: 60,
       explanation: "Glass style by its IPC-4412 number",
       sortValue: ({ material }) => material.glassStyle || null,
       cell: ({ material }) => material.glassStyle || none,
@@ -54,7 +54,7 @@ export function materialColumns(unit: LengthUnit, acts: MaterialActs | null): Da
       id: "resin",
       header: "Resin",
       kind: "number",
-      width: 76,
+      width: 64,
       explanation: "Resin content by weight",
       sortValue: ({ material }) => numberOf(material.resinPercent),
       number: ({ material }) => (material.resinPercent ? { text: material.resinPercent, unit: "%" } : null),
@@ -63,7 +63,7 @@ export function materialColumns(unit: LengthUnit, acts: MaterialActs | null): Da
       id: "dk",
       header: "Dk",
       kind: "number",
-      width: 64,
+      width: 56,
       sortValue: ({ material }) => numberOf(material.dk),
       number: ({ material }) => (material.dk ? { text: material.dk } : null),
     },
@@ -71,7 +71,7 @@ export function materialColumns(unit: LengthUnit, acts: MaterialActs | null): Da
       id: "df",
       header: "Df",
       kind: "number",
-      width: 76,
+      width: 72,
       sortValue: ({ material }) => numberOf(material.df),
       number: ({ material }) => (material.df ? { text: material.df } : null),
     },
@@ -79,7 +79,7 @@ export function materialColumns(unit: LengthUnit, acts: MaterialActs | null): Da
       id: "at",
       header: "At",
       kind: "number",
-      width: 84,
+      width: 72,
       explanation: "The frequency at which Dk and Df hold",
       sortValue: ({ material }) => (material.frequency ? toSi(material.frequency, "frequency") : null),
       number: ({ material }) =>
@@ -89,7 +89,7 @@ export function materialColumns(unit: LengthUnit, acts: MaterialActs | null): Da
       id: "compared",
       header: "Dk, 10 GHz",
       kind: "number",
-      width: 96,
+      width: 88,
       explanation: "Dk carried to 10 GHz, with Df taken as constant (Djordjević and others, 2001)",
       sortValue: ({ material }) => comparedDk(material),
       number: ({ material }) => {
@@ -101,7 +101,7 @@ export function materialColumns(unit: LengthUnit, acts: MaterialActs | null): Da
       id: "thickness",
       header: "Thickness",
       kind: "number",
-      width: 112,
+      width: 100,
       explanation: "Laminate and mask as laid, prepreg one ply without copper to fill, foil its base",
       sortValue: ({ material }) => metres(material.thickness),
       number: ({ material }) => (material.thickness ? columnLength(material.thickness, unit) : null),
@@ -110,7 +110,7 @@ export function materialColumns(unit: LengthUnit, acts: MaterialActs | null): Da
       id: "roughness",
       header: "Roughness",
       kind: "number",
-      width: 96,
+      width: 88,
       explanation: "Foil: rms of the bonded side",
       sortValue: ({ material }) => metres(material.roughness),
       number: ({ material }) =>
@@ -131,7 +131,7 @@ export function materialColumns(unit: LengthUnit, acts: MaterialActs | null): Da
     columns.push({
       id: "acts",
       header: "Acts",
-      width: 64,
+      width: 60,
       cell: (row) => (
         <Menu
           align="end"

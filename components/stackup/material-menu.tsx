@@ -45,7 +45,7 @@ export function MaterialMenu({ layer, onPick }: Props) {
           {isError
             ? "They could not be read. Close this and open it again."
             : data
-              ? "None of this kind yet; the page Materials has them."
+              ? "None of this kind yet. Add them on the page Materials."
               : "Reading them…"}
         </Heading>
       ) : (
@@ -83,8 +83,10 @@ function Heading({ children }: { children: ReactNode }) {
 function Entry({ material, onSelect }: { material: LibraryMaterial; onSelect: () => void }) {
   return (
     <MenuItem onSelect={onSelect}>
-      <span className="flex-1">{material.name}</span>
-      <span className="text-ink-soft ml-6 text-xs">{factsOf(material)}</span>
+      <span className="flex min-w-0 flex-1 flex-col py-1 sm:flex-row sm:items-baseline sm:justify-between sm:gap-6 sm:py-0">
+        <span>{material.name}</span>
+        <span className="text-ink-soft text-xs">{factsOf(material)}</span>
+      </span>
     </MenuItem>
   );
 }

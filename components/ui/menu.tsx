@@ -24,7 +24,7 @@ export function Menu({ trigger, children, align = "start" }: MenuProps) {
           align={align}
           sideOffset={4}
           collisionPadding={8}
-          className="border-field-line bg-sheet text-ink z-50 max-h-(--radix-dropdown-menu-content-available-height) min-w-44 overflow-y-auto rounded border p-1"
+          className="border-field-line bg-sheet text-ink z-50 max-h-(--radix-dropdown-menu-content-available-height) max-w-(--radix-dropdown-menu-content-available-width) min-w-44 overflow-y-auto rounded border p-1"
         >
           {children}
         </Radix.Content>

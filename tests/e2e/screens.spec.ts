@@ -69,6 +69,7 @@ const COMMON: Place[] = [
 const ONCE: Place[] = [
   { name: "projects", path: () => "/projects", shows: table("Projects") },
   { name: "team", path: () => "/team", shows: table("Members") },
+  { name: "materials", path: () => "/materials", shows: table("Materials") },
   { name: "create-team", path: () => "/create-team" },
   { name: "import", path: at("nets/import"), shows: heading("Import") },
   { name: "roles", path: at("nets/roles"), shows: heading("Which pins drive") },
