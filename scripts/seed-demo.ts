@@ -20,6 +20,7 @@ import { addClasses, nameLayers } from "./demo/board-setup";
 import { importBoard } from "./demo/import-board";
 import { largeBoard } from "./demo/large-board";
 import { makeTeam, readAccounts } from "./demo/people";
+import { addMaterials } from "./demo/team-materials";
 import { tideGaugeBoard } from "./demo/tide-gauge-board";
 
 const HALF_YEAR_MS = 182 * 86_400_000;
@@ -29,6 +30,7 @@ const LARGE_BOARD_SEED = 20_260;
 const accounts = readAccounts();
 await getAuth();
 const people = await makeTeam(accounts);
+await addMaterials(people.designer);
 await makeTideGauge(
   people.designer,
   people.reviewer,
