@@ -6,6 +6,7 @@ export * from "./cross-section";
 export * from "./physical-constants";
 export * from "./field";
 export * from "./frequency";
+export * from "./spread";
 export * from "./line";
 export * from "./stackup";
 export * from "./materials";

@@ -2,8 +2,9 @@ import type { BenchSection } from "./section";
 import { calibration } from "./sections/calibration";
 import { check } from "./sections/check";
 import { lattice } from "./sections/lattice";
+import { spreadAndLoss } from "./sections/spread";
 
-const sections: BenchSection[] = [calibration, lattice, check];
+const sections: BenchSection[] = [calibration, lattice, check, spreadAndLoss];
 
 const print = (line: string) => process.stdout.write(`${line}\n`);
 for (const section of sections) {

@@ -15,12 +15,7 @@ export {
   type DispersedLine,
 } from "./kirschning-jansen-1982";
 export { kirschningJansenPairDispersion, kirschningJansenPairDispersionNote } from "./kirschning-jansen-1984";
-export {
-  lineLoss,
-  type ConductorInput,
-  type LineLoss,
-  type LineLossOptions,
-  type ModeLoss,
-} from "./line-loss";
+export { lineLoss, type ConductorInput, type LineLoss, type LineLossOptions } from "./line-loss";
+export type { ModeLoss } from "./mode-loss";
 export { resistanceFactor } from "./wall-recession";
 export { dispersionNote, type DispersionNote } from "./dispersion-note";

@@ -1,7 +1,7 @@
-import { MU0 } from "../physical-constants";
+import { basisAt, type Basis } from "./conduction-modes";
 import { solveComplexSymmetric } from "./complex-symmetric";
 import { cellsOf, type FilamentConductor } from "./filaments";
-import { meanLogDistances } from "./mean-log-distance";
+import { cellResistances, mutualInductances } from "./mutual-inductances";
 
 /** Conductors of a cross-section, only those at x ≥ 0 when it mirrors itself there. */
 export interface FilamentModel {
@@ -47,18 +47,6 @@ export function seriesImpedance(model: FilamentModel): (frequency: number) => Se
     const basis = basisAt(conductors, first, unknowns, frequency, conductivity);
     return solveAt(model, frequency, { cells, unknowns, mutual, resistance, basis });
   };
-}
-
-/** Unknown u spreads over cells from[u], from[u] + step, … with complex weights. */
-interface Basis {
-  from: Int32Array;
-  step: Int32Array;
-  count: Int32Array;
-  signal: Int32Array;
-  /** start of the unknown's weights */
-  at: Int32Array;
-  re: Float64Array;
-  im: Float64Array;
 }
 
 interface Prepared {
@@ -178,142 +166,6 @@ function projected(p: Prepared, omega: number, re: Float64Array, im: Float64Arra
       im[v * n + u] = si;
     }
   }
-}
-
-function basisAt(
-  conductors: FilamentConductor[],
-  first: number[],
-  unknowns: number,
-  frequency: number,
-  conductivity: number,
-): Basis {
-  const total = conductors.reduce((sum, c) => sum + cellsOf(c) * (c.sheet ? 2 : 1), 0);
-  const ints = () => new Int32Array(unknowns);
-  const basis: Basis = {
-    from: ints(),
-    step: ints(),
-    count: ints(),
-    signal: ints(),
-    at: ints(),
-    re: new Float64Array(total),
-    im: new Float64Array(total),
-  };
-  let u = 0;
-  let w = 0;
-  conductors.forEach((conductor, c) => {
-    const columns = conductor.rows[0]!.edges.length - 1;
-    if (!conductor.sheet) {
-      for (let cell = 0; cell < cellsOf(conductor); cell++, u++, w++) {
-        basis.from[u] = first[c]! + cell;
-        basis.step[u] = basis.count[u] = 1;
-        basis.signal[u] = conductor.signal;
-        basis.at[u] = w;
-        basis.re[w] = 1;
-      }
-      return;
-    }
-    const courses = throughSheet(conductor, frequency, conductivity);
-    for (let column = 0; column < columns; column++) {
-      for (const course of courses) {
-        basis.from[u] = first[c]! + column;
-        basis.step[u] = columns;
-        basis.count[u] = conductor.rows.length;
-        basis.signal[u] = conductor.signal;
-        basis.at[u] = w;
-        basis.re.set(course.re, w);
-        basis.im.set(course.im, w);
-        w += conductor.rows.length;
-        u++;
-      }
-    }
-  });
-  return basis;
-}
-
-/** Shares of the rows of a sheet in cosh γ(y − yc) and sinh γ(y − yc), γ = (1 + j)/δ, each scaled to stay of order one. */
-function throughSheet(
-  conductor: FilamentConductor,
-  frequency: number,
-  conductivity: number,
-): { re: Float64Array; im: Float64Array }[] {
-  const a = Math.sqrt(Math.PI * frequency * MU0 * conductivity);
-  const bottom = conductor.rows[0]!.y0;
-  const top = conductor.rows.at(-1)!.y1;
-  const n = conductor.rows.length;
-  const course = () => ({ re: new Float64Array(n), im: new Float64Array(n) });
-  const down = course();
-  const up = course();
-  // ∫ e^{−γ d} over a row, d from the bottom and from the top face
-  const integral = (d0: number, d1: number) => {
-    const e0 = Math.exp(-a * d0);
-    const e1 = Math.exp(-a * d1);
-    const re = e0 * Math.cos(a * d0) - e1 * Math.cos(a * d1);
-    const im = -e0 * Math.sin(a * d0) + e1 * Math.sin(a * d1);
-    // ÷ (1 + j)a
-    return { re: (re + im) / (2 * a), im: (im - re) / (2 * a) };
-  };
-  conductor.rows.forEach((row, i) => {
-    const fromBottom = integral(row.y0 - bottom, row.y1 - bottom);
-    const fromTop = integral(top - row.y1, top - row.y0);
-    up.re[i] = fromBottom.re + fromTop.re;
-    up.im[i] = fromBottom.im + fromTop.im;
-    down.re[i] = fromTop.re - fromBottom.re;
-    down.im[i] = fromTop.im - fromBottom.im;
-  });
-  return [up, down].map((c) => {
-    // scale by the largest row
-    let largest = 0;
-    let k = 0;
-    for (let i = 0; i < n; i++) {
-      const size = c.re[i]! ** 2 + c.im[i]! ** 2;
-      if (size > largest) [largest, k] = [size, i];
-    }
-    const [pr, pi] = [c.re[k]! / largest, -c.im[k]! / largest];
-    const scaled = course();
-    for (let i = 0; i < n; i++) {
-      scaled.re[i] = c.re[i]! * pr - c.im[i]! * pi;
-      scaled.im[i] = c.re[i]! * pi + c.im[i]! * pr;
-    }
-    return scaled;
-  });
-}
-
-function cellResistances(conductors: FilamentConductor[], conductivity: number, cells: number): Float64Array {
-  const resistance = new Float64Array(cells);
-  let k = 0;
-  for (const { rows } of conductors) {
-    for (const { y0, y1, edges } of rows) {
-      for (let i = 0; i + 1 < edges.length; i++) {
-        resistance[k++] = 1 / (conductivity * (edges[i + 1]! - edges[i]!) * (y1 - y0));
-      }
-    }
-  }
-  return resistance;
-}
-
-function mutualInductances(conductors: FilamentConductor[], mirror: number, cells: number): Float64Array {
-  const rows = conductors.flatMap((conductor) => conductor.rows);
-  const starts: number[] = [];
-  rows.reduce((sum, row) => (starts.push(sum), sum + row.edges.length - 1), 0);
-  const reach = Math.max(...rows.map((row) => Math.max(-row.edges[0]!, row.edges.at(-1)!, row.y1, -row.y0)));
-  const reference = Math.log(4 * reach);
-  const scale = -MU0 / (2 * Math.PI);
-  const m = new Float64Array(cells * cells);
-  for (let a = 0; a < rows.length; a++) {
-    for (let b = 0; b <= a; b++) {
-      const put = (sign: number) => (i: number, j: number, mean: number) => {
-        m[(starts[a]! + i) * cells + starts[b]! + j]! += sign * scale * (mean - reference);
-      };
-      meanLogDistances(rows[a]!, rows[b]!, false, put(1));
-      if (mirror !== 0) meanLogDistances(rows[a]!, rows[b]!, true, put(mirror));
-      if (a === b) continue;
-      for (let i = starts[a]!; i < starts[a]! + rows[a]!.edges.length - 1; i++) {
-        for (let j = starts[b]!; j < starts[b]! + rows[b]!.edges.length - 1; j++)
-          m[j * cells + i] = m[i * cells + j]!;
-      }
-    }
-  }
-  return m;
 }
 
 type Vector = { re: Float64Array; im: Float64Array };
