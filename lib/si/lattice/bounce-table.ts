@@ -1,7 +1,7 @@
 import { DomainError, UnsupportedError } from "../errors";
 import type { Network, Section } from "../network/types";
 import { validateNetwork } from "../network/validate";
-import { buildCircuit, type Port } from "./circuit";
+import { buildCircuit, type Circuit, type Port } from "./circuit";
 import { buildClusters } from "./clusters";
 import { combClusters, runComb } from "./comb";
 
@@ -21,15 +21,21 @@ export interface Bounce {
   voltage: number;
 }
 
+/** Most moments of a table; a net with many branches multiplies its echoes. */
 const MOST_MOMENTS = 20_000;
+const FLOOR = 1e-6;
+/** A default floor is raised by this at a time until the table fits. */
+const COARSER = 10;
 
 /**
  * The bounce table of a resistive network: what arrives and leaves at every section end, and the running node voltage,
- * after a 1 V step of the first driver whose wave moves (the first driver where none does). Exact for any topology and
- * any delays; waves below `floor` (default 1e-6) are dropped.
+ * after a 1 V step of the first driver whose wave moves (the first driver where none does). Exact for any topology,
+ * rings included, and any delays, but for waves below `floor`, which are dropped.
  *
  * @param options.until  [s], > 0
- * @throws DomainError where the network is not valid or has no driver
+ * @param options.floor  share of the source step; default 1e-6, or ten, a hundred … times that where the table would
+ *                       grow beyond 20,000 moments
+ * @throws DomainError where the network is not valid, has no driver, or has more moments above the given floor
  * @throws UnsupportedError where a part stores energy or is not linear
  */
 export function bounceTable(network: Network, options: { until: number; floor?: number }): Bounce[] {
@@ -61,16 +67,37 @@ export function bounceTable(network: Network, options: { until: number; floor?: 
   );
   const source = moving > 0 ? moving : circuit.fixed.findIndex(({ wave }) => wave !== null);
   if (source < 0) throw new DomainError("A bounce table needs a driver.", "drivers");
-  const clusters = combClusters(buildClusters(circuit));
+  const { until, floor } = options;
+  if (floor !== undefined && !(floor >= 0))
+    throw new DomainError("The bounce table's floor must be zero or more.", "floor");
+  for (let least = floor ?? FLOOR; least <= 1; least *= COARSER) {
+    const table = tableAbove(network, circuit, source, until, least);
+    if (table) return table;
+    if (floor !== undefined) break;
+  }
+  throw new DomainError(
+    `The net sends more than ${MOST_MOMENTS} bounces before the end; end earlier or leave out smaller ones with a higher floor.`,
+    "floor",
+  );
+}
+
+/** null: too many. */
+function tableAbove(
+  network: Network,
+  circuit: Circuit,
+  source: number,
+  until: number,
+  floor: number,
+): Bounce[] | null {
   const volts = new Float64Array(circuit.nodeCount);
   const held = new Float64Array(circuit.fixed.length);
   held[source] = 1;
   const table: Bounce[] = [];
-  runComb(
+  const isWhole = runComb(
     circuit,
-    clusters,
+    combClusters(buildClusters(circuit)),
     source,
-    { until: options.until, floor: options.floor ?? 1e-6, most: MOST_MOMENTS },
+    { until, floor, most: MOST_MOMENTS },
     ({ time, cluster: { cluster }, rise, incident, outgoing }) => {
       cluster.nodes.forEach((node, i) => (volts[node] = volts[node]! + rise[i]!));
       cluster.ports.forEach(({ end }, k) => {
@@ -93,7 +120,7 @@ export function bounceTable(network: Network, options: { until: number; floor?: 
       });
     },
   );
-  return table;
+  return isWhole ? table : null;
 }
 
 function endNode(section: Section, isB: boolean): string {
