@@ -1,4 +1,5 @@
 import "server-only";
+import { setImmediate } from "node:timers/promises";
 import { log } from "@/lib/db/log";
 import {
   claimRun,
@@ -11,6 +12,7 @@ import {
   type RunRow,
 } from "@/lib/db/run";
 import { thawInputs } from "@/lib/db/snapshot";
+import type { ControlledLine } from "@/lib/si/rules/check-impedance";
 import { controlledLines } from "@/lib/resolve/controlled-lines";
 import { resolvePaths } from "@/lib/resolve/resolve-paths";
 import { systemActor } from "@/lib/schemas/actor";
@@ -69,7 +71,13 @@ async function workRun(row: RunRow): Promise<void> {
   try {
     const inputs = await thawInputs(systemActor(row.teamId), row.inputChunks);
     const done = await checkedPathIds(row.id);
-    const lines = checkLines(controlledLines(inputs)).filter((line) => !done.has(line.pathId));
+    const controlled: ControlledLine[] = [];
+    for (const line of controlledLines(inputs)) {
+      controlled.push(line);
+      // Others are served between one field solution and the next.
+      await setImmediate();
+    }
+    const lines = checkLines(controlled).filter((line) => !done.has(line.pathId));
     if (lines.length > 0 && !(await saveBatch(row.id, resultRows(row.id, row.teamId, lines)))) return;
     const paths = resolvePaths(inputs).paths.filter((path) => !done.has(path.id));
     const corners = row.corners.map(parseCorner);

@@ -1,5 +1,7 @@
 import { FIELD_METHOD, lineOnLayer, stackupFromTyped, toSi, type Stackup } from "@/lib/si";
 import { closedFormOf } from "./line-table";
+import type { LineSpread } from "@/lib/si/rules/check-impedance";
+import { LineSpreads } from "./line-spreads";
 import { finishedCopperText, layerThickness } from "./note-layers";
 import type { StoredNetClass } from "@/lib/schemas/net-class";
 import type { ImpedanceNote, NoteLine } from "@/lib/schemas/release";
@@ -44,6 +46,7 @@ export function impedanceNote(inputs: RevisionInputs, heading: NoteHeading): Imp
 /** One row a structure: classes that share layer, width, gap and target share it. Numbered in stackup order. */
 function noteLines(inputs: RevisionInputs): NoteLine[] {
   const stackup = stackupFromTyped(inputs.stackup.layers);
+  const spreads = new LineSpreads(inputs.stackup);
   const rows = new Map<string, NoteLine>();
   for (const netClass of [...inputs.classes].sort((a, b) => (a.name < b.name ? -1 : 1))) {
     if (!netClass.targetImpedance) continue;
@@ -79,6 +82,9 @@ function noteLines(inputs: RevisionInputs): NoteLine[] {
         targetOhms,
         tolerancePercent: Number(netClass.tolerancePercent),
         ...predict(stackup, index, width, gap),
+        spread: spreadOf(
+          spreads.of(index, { width, gap }, targetOhms, Number(netClass.tolerancePercent) / 100),
+        ),
         routedNets: routed,
       });
     }
@@ -92,6 +98,10 @@ function noteLines(inputs: RevisionInputs): NoteLine[] {
         toSi(a.width, "length") - toSi(b.width, "length"),
     )
     .map((row, index) => ({ ...row, line: index + 1 }));
+}
+
+function spreadOf(spread: LineSpread | null): NoteLine["spread"] {
+  return spread && { yield: spread.yield, low: spread.low, high: spread.high, method: spread.method };
 }
 
 function predict(

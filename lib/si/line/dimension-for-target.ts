@@ -12,9 +12,11 @@ export interface DimensionRequest {
   min: number;
   max: number;
   grid?: number;
+  /** relative impedance error at which the search ends; 1e-10 */
+  tolerance?: number;
 }
 
-/** Relative impedance error at which the search ends; far below what any fabricator holds. */
+/** Far below what any fabricator holds. */
 const TOLERANCE = 1e-10;
 
 /**
@@ -28,7 +30,7 @@ export function dimensionForTarget(request: DimensionRequest): {
   impedance: number;
   solves: number;
 } {
-  const { ohms, min, max, grid, impedanceAt } = request;
+  const { ohms, min, max, grid, impedanceAt, tolerance = TOLERANCE } = request;
   if (!(ohms > 0 && Number.isFinite(ohms))) {
     throw new DomainError(`The target impedance must be above zero; it is ${ohms}.`, "target.ohms");
   }
@@ -42,15 +44,15 @@ export function dimensionForTarget(request: DimensionRequest): {
   const ends = bracketEnds(deviation, min, max);
   const { low, high } = ends;
   if (
-    low.value > TOLERANCE === high.value > TOLERANCE &&
-    Math.min(Math.abs(low.value), Math.abs(high.value)) > TOLERANCE
+    low.value > tolerance === high.value > tolerance &&
+    Math.min(Math.abs(low.value), Math.abs(high.value)) > tolerance
   ) {
     throw unreachable(
       request,
       [low.value, high.value].map((value) => ohms * (1 + value)),
     );
   }
-  const root = monotonicRoot(deviation, ends, TOLERANCE);
+  const root = monotonicRoot(deviation, ends, tolerance);
   const solves = ends.evaluations + root.evaluations;
   if (grid === undefined) return { value: root.x, impedance: ohms * (1 + root.residual), solves };
   const value = nearestStep(root.x, grid, low.x, high.x);

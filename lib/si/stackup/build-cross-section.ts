@@ -24,6 +24,10 @@ export interface BuiltCrossSection {
   turned: boolean;
   /** face of the section on which the foot is; "top" only where the single plane lies on the crown's side */
   foot: "bottom" | "top";
+  /** for each of the section's layers, the layer of the stackup that it is, as an index */
+  sources: number[];
+  /** the mask over the trace, as an index into the stackup; a conformal one or a flat cover */
+  maskLayer: number | null;
   /** inputs that were missing and what was taken instead, as phrases */
   assumptions: string[];
 }
@@ -78,8 +82,13 @@ export function buildCrossSection(stackup: Stackup, index: number, shape: TraceS
     // told at the foot; the section wants it at the bottom face
     section.coplanar = { gap: shape.coplanarGap + (foot === "bottom" ? 0 : (layer.etch ?? 0)) };
   }
+  const sources = [
+    ...lower.slabs.map((slab) => slab.index).reverse(),
+    ...(outer ? [] : upper.slabs.map((slab) => slab.index)),
+  ];
   const mask = outer ? upper.slabs[0] : undefined;
   if (mask?.index !== undefined) addMask(section, stackup, mask.index, thickness, assumptions);
+  if (mask && section.layers.length > sources.length) sources.push(mask.index);
   const sink = nearestDielectric(stackup.layers, index, protrusion === "up" ? -1 : 1);
   return {
     section,
@@ -90,6 +99,8 @@ export function buildCrossSection(stackup: Stackup, index: number, shape: TraceS
     side: sink?.kind === "core" || sink?.kind === "prepreg" ? sink.kind : mask ? "mask" : "air",
     turned: upward === "down",
     foot,
+    sources,
+    maskLayer: mask?.index ?? null,
     assumptions,
   };
 }

@@ -27,3 +27,5 @@ export {
 export { stackupWarnings, type StackupWarning } from "./warnings";
 export { stackupTemplates, type StackupTemplate } from "./templates";
 export { capabilityOf, type Capability } from "./capability";
+export { type Process } from "./process";
+export { SPREAD_SAMPLES, spreadOnLayer, yieldOf, type LayerSpread } from "./spread-on-layer";

@@ -62,6 +62,9 @@ function closedFormOf({ section }: BuiltCrossSection): BestClosedForm | null {
   }
 }
 
+/** Relative; meshes of neighbouring widths may differ by as much. */
+const FIELD_TOLERANCE = 1e-6;
+
 export interface LayerWidthRequest {
   stackup: Stackup;
   /** a signal or foil layer */
@@ -114,6 +117,7 @@ export function widthOnLayer(request: LayerWidthRequest): {
     min: request.min,
     max: request.max,
     grid: request.grid,
+    tolerance: FIELD_TOLERANCE,
   });
   return {
     value: found.value,
