@@ -1,7 +1,7 @@
 import fc from "fast-check";
 import { describe, expect, it } from "vitest";
 import { validateCrossSection } from "@/lib/si/cross-section";
-import { DomainError, UnsupportedError } from "@/lib/si/errors";
+import { DomainError } from "@/lib/si/errors";
 import {
   buildCrossSection,
   lineOnLayer,
