@@ -14,7 +14,7 @@ export interface MetalOptions {
 
 /** First cell at a surface, in skin depths at the highest frequency. */
 const FINE = 0.4;
-/** Rows at least for a trapezoid: its sides become steps. */
+/** Rows at least for a trapezoid whose skin is thin: its sides become steps. */
 const SLOPED_ROWS = 8;
 
 /** One current pattern of a section: how the model mirrors and what its solution must be multiplied by. */
@@ -74,7 +74,13 @@ function traceRows(trace: Trace, fine: number, half: boolean): FilamentRow[] {
     const halfWidth = (widthBottom + share * (widthTop - widthBottom)) / 2;
     return unit.map((u) => x + u * halfWidth);
   };
-  return stacked(y, y + thickness, fine, edges, widthBottom === widthTop ? 3 : SLOPED_ROWS);
+  return stacked(
+    y,
+    y + thickness,
+    fine,
+    edges,
+    widthBottom === widthTop || fine > thickness / 20 ? 3 : SLOPED_ROWS,
+  );
 }
 
 function stacked(

@@ -25,7 +25,7 @@ export interface PatternInput {
 /** Filaments serve up to the frequency where the copper is this many skin depths thick. */
 const THICK = 16;
 /** Nodes of the interpolation lie at most this ratio apart in frequency. */
-const RATIO = 2.5;
+const RATIO = 3;
 /** Stands for zero frequency: every conductor then carries uniform current. */
 const DIRECT_CURRENT_HZ = 1e-3;
 
@@ -91,12 +91,22 @@ function rounded(
   return ratio < 1 ? Math.pow(ratio, (-share * share * (3 - 2 * share)) / 2) : 1;
 }
 
-function filamentSolver({ section, metal, pattern, currents }: PatternInput, limit: number) {
-  const solve = seriesImpedance(conductorModel(section, metal, pattern, limit));
+/** Two models: few filaments where the skin is thick, many up to the limit. */
+function filamentSolver(input: PatternInput, limit: number): (frequency: number) => SeriesAt {
+  let coarse: ((frequency: number) => SeriesAt) | undefined;
+  let fine: ((frequency: number) => SeriesAt) | undefined;
+  return (frequency) => {
+    if (frequency > limit / 16) return (fine ??= filamentModel(input, limit))(frequency);
+    return (coarse ??= filamentModel(input, limit / 6))(Math.max(frequency, DIRECT_CURRENT_HZ));
+  };
+}
+
+function filamentModel({ section, metal, pattern, currents }: PatternInput, highest: number) {
+  const solve = seriesImpedance(conductorModel(section, metal, pattern, highest));
   const share = halved(section, pattern) ? 0.5 : 1;
   const vector = pattern === "both" ? currents : [1];
   return (frequency: number): SeriesAt => {
-    const { resistance, inductance } = solve(Math.max(frequency, DIRECT_CURRENT_HZ));
+    const { resistance, inductance } = solve(frequency);
     return {
       resistance: share * quadratic(resistance, vector),
       inductance: share * quadratic(inductance, vector),
