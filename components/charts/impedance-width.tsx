@@ -20,10 +20,11 @@ export function ImpedanceWidth({ width, ...props }: Props) {
   );
 }
 
-function AtWidth({ points, width, height, title, unit, target, chosen }: Props & { width: number }) {
+function AtWidth(props: Props & { width: number }) {
+  const { points, width, height, title, unit, target, chosen, grid, least } = props;
   const drawing = useMemo(
-    () => impedanceWidth(points, { width, height, title, unit, target, chosen }),
-    [points, width, height, title, unit, target, chosen],
+    () => impedanceWidth(points, { width, height, title, unit, target, chosen, grid, least }),
+    [points, width, height, title, unit, target, chosen, grid, least],
   );
   return <DrawingSvg drawing={drawing} />;
 }

@@ -5,18 +5,27 @@ import { save } from "@/components/charts/save-file";
 import { Button } from "@/components/ui/button";
 import { Menu, MenuItem, MenuSeparator } from "@/components/ui/menu";
 import { toast } from "@/components/ui/toast";
+import { errorMessage } from "@/lib/client/api";
+import type { Engine } from "@/lib/client/engine";
+import type { Outcome } from "@/lib/client/engine-line";
+import type { SpreadFacts } from "@/lib/client/engine-spread";
 import type { LengthUnit } from "@/lib/client/preferences";
+import type { ProcessDoc } from "@/lib/schemas/process";
+import type { Stackup } from "@/lib/si/stackup";
 import type { ImpedanceRow } from "./impedance-rows";
-import { type WidthChoice, widthTableCsv, widthTableText } from "./width-table";
+import { lineOf, type WidthChoice, widthTableCsv, widthTableText } from "./width-table";
 
 interface Props {
   rows: readonly ImpedanceRow[];
   unit: LengthUnit;
   fileName: string;
+  engine: Engine;
+  stackup: Stackup;
+  process: ProcessDoc;
 }
 
 /** The table class × layer → width, gap for the layout program: on the clipboard or as a file. */
-export function CopyMenu({ rows, unit, fileName }: Props) {
+export function CopyMenu({ rows, unit, fileName, engine, stackup, process }: Props) {
   async function copy(choice: WidthChoice): Promise<void> {
     try {
       await navigator.clipboard.writeText(widthTableText(rows, unit, choice));
@@ -25,17 +34,39 @@ export function CopyMenu({ rows, unit, fileName }: Props) {
       toast.error("The browser did not allow copying. Save the table as CSV instead.");
     }
   }
-  function saveCsv(choice: WidthChoice): void {
-    save(
-      `${fileName}.csv`,
-      new Blob([widthTableCsv(rows, unit, choice)], { type: "text/csv;charset=utf-8" }),
-    );
+  async function saveCsv(choice: WidthChoice): Promise<void> {
+    try {
+      const spreads: (Outcome<SpreadFacts> | null)[] = [];
+      for (const row of rows) spreads.push(await spreadOf(row, choice));
+      save(
+        `${fileName}.csv`,
+        new Blob([widthTableCsv(rows, unit, choice, spreads)], { type: "text/csv;charset=utf-8" }),
+      );
+    } catch (error) {
+      toast.error(errorMessage(error));
+    }
   }
+  async function spreadOf(row: ImpedanceRow, choice: WidthChoice): Promise<Outcome<SpreadFacts> | null> {
+    if (choice === "present" && !row.spreadPending) return row.spread;
+    const { width, gap } = lineOf(row, choice);
+    if (width === null || (row.line === "differential" && gap === null)) return null;
+    const { index, target, tolerance } = row;
+    return engine.run({
+      kind: "line-spread",
+      stackup,
+      index,
+      shape: { width, gap },
+      process,
+      ohms: target,
+      tolerance,
+    });
+  }
+  const waiting = rows.some(({ pending }) => pending);
   return (
     <Menu
       align="end"
       trigger={
-        <Button disabled={rows.length === 0}>
+        <Button disabled={rows.length === 0 || waiting}>
           <Copy size={14} aria-hidden="true" />
           Copy as table
           <ChevronDown size={14} aria-hidden="true" />
@@ -47,8 +78,10 @@ export function CopyMenu({ rows, unit, fileName }: Props) {
         Copy widths as the classes have them, in {unit}
       </MenuItem>
       <MenuSeparator />
-      <MenuItem onSelect={() => saveCsv("meeting")}>Save widths that meet the target as CSV</MenuItem>
-      <MenuItem onSelect={() => saveCsv("present")}>Save widths as the classes have them as CSV</MenuItem>
+      <MenuItem onSelect={() => void saveCsv("meeting")}>Save widths that meet the target as CSV</MenuItem>
+      <MenuItem onSelect={() => void saveCsv("present")}>
+        Save widths as the classes have them as CSV
+      </MenuItem>
     </Menu>
   );
 }

@@ -7,7 +7,7 @@ import { type GridName, gridNames } from "./grids";
 import { type ImpedanceState, layerChoices, verdictChoices } from "./use-impedance-state";
 
 const LAYER_WORDS = { allowed: "allowed by the class", all: "every signal layer" } as const;
-const SHOW_WORDS = { any: "all", off: "off target", none: "without a width" } as const;
+const SHOW_WORDS = { any: "all", off: "off target", yield: "low yield", none: "without a width" } as const;
 
 /** Which rows, on which grid, in which unit. */
 export function FilterBar({ state, classes }: { state: ImpedanceState; classes: readonly StoredNetClass[] }) {

@@ -1,12 +1,18 @@
 "use client";
 
 import type { ClosedFormResult } from "@/lib/si/cross-section";
-import type { LineKind } from "./solve-line";
+import type { LineKind } from "@/lib/client/engine-line";
 import { ohms, signedPercent } from "./row-words";
 
-/** Every published formula that fits the section: its value, its difference to the one in use, range and source. */
-export function FormsTable({ forms, kind }: { forms: readonly ClosedFormResult[]; kind: LineKind }) {
-  const used = forms[0] && valueOf(forms[0], kind);
+interface Props {
+  forms: readonly ClosedFormResult[];
+  kind: LineKind;
+  /** the field solution [Ω] */
+  field: number | null;
+}
+
+/** Every published formula that fits the section: its value, its difference to the field solution, range and source. */
+export function FormsTable({ forms, kind, field }: Props) {
   return (
     <section aria-label="Formulas" className="mt-5">
       <h3 className="mb-1 text-sm font-semibold">Every formula that fits</h3>
@@ -21,14 +27,15 @@ export function FormsTable({ forms, kind }: { forms: readonly ClosedFormResult[]
                 <div className="flex items-baseline justify-between gap-3">
                   <span className={index === 0 ? "font-medium" : undefined}>
                     {form.title}
-                    {index === 0 ? <span className="text-ink-soft font-normal">, in use</span> : null}
+                    {index === 0 ? <span className="text-ink-soft font-normal">, fits best</span> : null}
                   </span>
                   <span className="whitespace-nowrap">
                     {ohms(value)}
                     <span className="text-ink-soft">{"\u2009Ω"}</span>
-                    {index > 0 && used !== undefined && used > 0 && value !== undefined ? (
+                    {field !== null && value !== undefined ? (
                       <span className="text-ink-soft ml-2 text-xs">
-                        {signedPercent((100 * (value - used)) / used)} %
+                        {signedPercent((100 * (value - field)) / field)}
+                        {"\u2009%"}
                       </span>
                     ) : null}
                   </span>

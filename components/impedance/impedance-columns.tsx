@@ -1,37 +1,46 @@
 import type { DataColumn } from "@/components/ui/data-table";
-import { VerdictMark } from "@/components/ui/verdict-mark";
 import type { LengthUnit } from "@/lib/client/preferences";
+import { MarkedNumber } from "./marked-number";
 import { columnDigits } from "./grids";
 import type { ImpedanceRow } from "./impedance-rows";
-import { ohms, remarks, signedPercent } from "./row-words";
+import { capabilityWords, formulaDifference, ohms, remarks, signedPercent, yieldPercent } from "./row-words";
 
 type Column = DataColumn<ImpedanceRow>;
+
+/** Stands where an answer is on its way. */
+export const COMING = "…";
 
 /** The columns; `narrow` leaves those that stand beside an open panel. */
 export function impedanceColumns(unit: LengthUnit, narrow: boolean): Column[] {
   const length = (metres: number | null | undefined) =>
     metres === null || metres === undefined ? null : { text: columnDigits(metres, unit), unit };
+  const answered = (row: ImpedanceRow, number: { text: string; unit: string } | null) =>
+    row.pending ? { text: COMING } : number;
   const columns: (Column & { beside?: boolean })[] = [
     {
       id: "class",
       header: "Class",
-      width: 116,
+      width: 112,
       beside: true,
-      cell: (row) => row.netClass.name,
+      cell: (row) => <span title={row.netClass.name}>{row.netClass.name}</span>,
       sortValue: (row) => row.netClass.name,
     },
     {
       id: "layer",
       header: "Layer",
-      width: 88,
+      width: 80,
       beside: true,
-      cell: (row) => <span className={row.allowed ? undefined : "text-ink-soft"}>{row.layer.name}</span>,
+      cell: (row) => (
+        <span title={row.layer.name} className={row.allowed ? undefined : "text-ink-soft"}>
+          {row.layer.name}
+        </span>
+      ),
       sortValue: (row) => row.index,
     },
     {
       id: "target",
       header: "Target",
-      width: 76,
+      width: 64,
       beside: true,
       kind: "number",
       number: (row) => ({ text: String(Number(row.target.toFixed(2))), unit: "Ω" }),
@@ -41,7 +50,7 @@ export function impedanceColumns(unit: LengthUnit, narrow: boolean): Column[] {
     {
       id: "tolerance",
       header: "±",
-      width: 56,
+      width: 50,
       kind: "number",
       number: (row) => ({ text: String(row.tolerance), unit: "%" }),
       explanation: "Tolerance of the class",
@@ -58,7 +67,7 @@ export function impedanceColumns(unit: LengthUnit, narrow: boolean): Column[] {
     {
       id: "gap",
       header: "Gap",
-      width: 86,
+      width: 84,
       kind: "number",
       number: (row) => (row.gapAssumed ? null : length(row.gap)),
       sortValue: (row) => row.gap,
@@ -67,69 +76,110 @@ export function impedanceColumns(unit: LengthUnit, narrow: boolean): Column[] {
     {
       id: "gives",
       header: "Gives",
-      width: 80,
+      width: 72,
       beside: true,
       kind: "number",
-      number: (row) => (row.now?.ok ? { text: ohms(row.now.value.impedance), unit: "Ω" } : null),
+      number: (row) => answered(row, row.now?.ok ? { text: ohms(row.now.value.impedance), unit: "Ω" } : null),
       sortValue: (row) => (row.now?.ok ? row.now.value.impedance : null),
-      explanation: "Nominal impedance of the class’s width, by the closed form in use",
+      explanation: "Nominal impedance of the class’s width, by the 2-D field solution",
     },
     {
-      id: "off",
-      header: "Off",
-      width: 76,
-      kind: "number",
-      number: (row) => (row.off === null ? null : { text: signedPercent(row.off), unit: "%" }),
-      sortValue: (row) => (row.off === null ? null : Math.abs(row.off)),
-      explanation: "Difference to the target",
-    },
-    {
-      id: "verdict",
-      header: "Centring",
-      width: 88,
+      id: "centring",
+      header: "Off target",
+      width: 92,
       beside: true,
-      cell: (row) => <VerdictMark verdict={row.verdict} />,
-      sortValue: (row) => ["fail", "near", "no data", "pass"].indexOf(row.verdict),
-      explanation: "By the project’s rule of impedance centring",
+      cell: (row) => (
+        <MarkedNumber
+          verdict={row.pending ? null : row.centring}
+          text={row.pending ? COMING : row.off === null ? null : signedPercent(row.off)}
+        />
+      ),
+      sortValue: (row) => (row.off === null ? null : Math.abs(row.off)),
+      explanation: "Difference to the target, judged by the project’s rule of impedance centring",
+    },
+    {
+      id: "formula",
+      header: "Formula",
+      width: 78,
+      kind: "number",
+      number: (row) => {
+        const difference = formulaDifference(row);
+        return answered(row, difference === null ? null : { text: signedPercent(difference), unit: "%" });
+      },
+      sortValue: (row) => {
+        const difference = formulaDifference(row);
+        return difference === null ? null : Math.abs(difference);
+      },
+      explanation: "Difference of the published closed form to the field solution",
+    },
+    {
+      id: "spread",
+      header: "Spread",
+      width: 108,
+      kind: "number",
+      number: (row) =>
+        row.spreadPending
+          ? { text: COMING }
+          : row.spread?.ok
+            ? { text: `${ohms(row.spread.value.low)}–${ohms(row.spread.value.high)}`, unit: "Ω" }
+            : null,
+      sortValue: (row) => (row.spread?.ok ? row.spread.value.high - row.spread.value.low : null),
+      explanation: "Predicted for production: 0.5th to 99.5th percentile",
+    },
+    {
+      id: "yield",
+      header: "Yield",
+      width: 92,
+      beside: true,
+      cell: (row) => (
+        <MarkedNumber
+          verdict={row.spreadPending ? null : row.yielding}
+          text={row.spreadPending ? COMING : row.spread?.ok ? yieldPercent(row.spread.value.yield) : null}
+        />
+      ),
+      sortValue: (row) => (row.spread?.ok ? row.spread.value.yield : null),
+      explanation:
+        "Predicted share of production within the tolerance, judged by the rule of impedance yield",
     },
     {
       id: "meets",
-      header: "Meets target",
-      width: 108,
+      header: "Meets at",
+      width: 88,
       beside: true,
       kind: "number",
-      number: (row) => length(row.width0.ok ? row.width0.value.dimension : null),
-      sortValue: (row) => (row.width0.ok ? row.width0.value.dimension : null),
+      number: (row) => answered(row, length(row.meets?.ok ? row.meets.value.dimension : null)),
+      sortValue: (row) => (row.meets?.ok ? row.meets.value.dimension : null),
       explanation: "Width that meets the target, on the grid; the gap of a pair stays",
     },
     {
       id: "there",
       header: "There",
-      width: 72,
+      width: 70,
       kind: "number",
-      number: (row) => (row.width0.ok ? { text: ohms(row.width0.value.impedance), unit: "Ω" } : null),
+      number: (row) =>
+        answered(row, row.meets?.ok ? { text: ohms(row.meets.value.impedance), unit: "Ω" } : null),
       explanation: "Impedance at that step of the grid",
     },
     {
       id: "gapMeets",
       header: "Or gap",
-      width: 86,
+      width: 84,
       kind: "number",
-      number: (row) => length(row.gap0?.ok ? row.gap0.value.dimension : null),
+      number: (row) => answered(row, length(row.gapMeets?.ok ? row.gapMeets.value.dimension : null)),
       explanation: "Of a pair: the gap that meets the target at the class’s width",
     },
-    {
-      id: "remarks",
-      header: "Remarks",
-      cell: (row) => {
-        const words = remarks(row).join("; ");
-        return (
-          <span title={words} className="text-ink-soft">
-            {words}
-          </span>
-        );
-      },
-    },
+    { id: "remarks", header: "Remarks", cell: (row) => <Remarks row={row} unit={unit} /> },
   ];
   return narrow ? columns.filter(({ beside }) => beside) : columns;
+}
+
+/** What cannot be etched comes first and in the colour of a warning. */
+export function Remarks({ row, unit }: { row: ImpedanceRow; unit: LengthUnit }) {
+  const warned = capabilityWords(row, unit).length > 0;
+  const words = remarks(row, unit).join("; ");
+  return (
+    <span title={words} className={warned ? "text-near" : "text-ink-soft"}>
+      {words}
+    </span>
+  );
 }

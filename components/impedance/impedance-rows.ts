@@ -1,16 +1,17 @@
+import type { CellAnswer, CellJob } from "@/lib/client/engine-impedance";
+import type { FoundDimension, LineFacts, LineKind, Outcome } from "@/lib/client/engine-line";
+import type { SpreadFacts, SpreadJob } from "@/lib/client/engine-spread";
 import type { NetClassDoc, StoredNetClass } from "@/lib/schemas/net-class";
+import type { ProcessDoc } from "@/lib/schemas/process";
 import type { StoredStackupLayer } from "@/lib/schemas/stackup";
 import type { ResolvedLimit } from "@/lib/si/path/types";
-import { checkImpedance } from "@/lib/si/rules/check-impedance";
-import { impedanceCentring } from "@/lib/si/rules/impedance-centring";
-import { isSignal, type Stackup } from "@/lib/si/stackup";
+import type { Capability, Stackup } from "@/lib/si/stackup";
+import { isSignal } from "@/lib/si/stackup/model";
 import { toSi } from "@/lib/si/units";
-import { gapFor, lineFacts, type FoundDimension, type LineFacts, type Outcome, widthFor } from "./solve-line";
+import { type RowVerdict, verdictsOf } from "./row-verdicts";
 
-export type RowVerdict = "pass" | "near" | "fail" | "no data";
-
-/** One class on one layer: what its width gives, and what would meet its target. */
-export interface ImpedanceRow {
+/** One class on one layer, as class and stackup have it. */
+export interface RowInput {
   /** `<class lineage>.<layer lineage>` */
   id: string;
   netClass: StoredNetClass;
@@ -19,6 +20,7 @@ export interface ImpedanceRow {
   index: number;
   /** The class names this layer, or none at all, which allows each. */
   allowed: boolean;
+  line: LineKind;
   /** [Ω] */
   target: number;
   /** ± [%] */
@@ -29,79 +31,70 @@ export interface ImpedanceRow {
   gap: number | null;
   /** True where no class gave the gap and it was taken by us. */
   gapAssumed: boolean;
+}
+
+/** The same with what the engine has answered so far. */
+export interface ImpedanceRow extends RowInput {
+  /** not answered yet */
+  pending: boolean;
   /** What the class's width gives; null where it has none. */
   now: Outcome<LineFacts> | null;
-  /** |now − target| / target, signed [%] */
+  /** (now − target) / target, signed [%] */
   off: number | null;
-  verdict: RowVerdict;
+  centring: RowVerdict;
   /** The width that meets the target, at that gap. */
-  width0: Outcome<FoundDimension>;
+  meets: Outcome<FoundDimension> | null;
   /** Of a pair with a width: the gap that meets the target at that width. */
-  gap0: Outcome<FoundDimension> | null;
+  gapMeets: Outcome<FoundDimension> | null;
+  spreadPending: boolean;
+  /** of the class's width in production; null where it has none */
+  spread: Outcome<SpreadFacts> | null;
+  yielding: RowVerdict;
+  /** what can be etched there; null where it is not known */
+  least: Capability | null;
 }
 
 interface Inputs {
-  stackup: Stackup;
   layers: readonly StoredStackupLayer[];
   classes: readonly StoredNetClass[];
-  /** limit of impedance centring, by class lineage */
-  limits: Readonly<Record<string, ResolvedLimit>>;
-  /** [m] */
-  grid: number;
 }
 
 /** A gap to begin with where a pair's class tells none [m]; common practice, no source. */
 const USUAL_GAP = 0.15e-3;
 
 /** Every class with a target on every signal layer, in the order of classes and layers. */
-export function impedanceRows({ stackup, layers, classes, limits, grid }: Inputs): ImpedanceRow[] {
+export function rowInputs({ layers, classes }: Inputs): RowInput[] {
   return classes.flatMap((netClass) => {
     if (!netClass.targetImpedance) return [];
     const target = toSi(netClass.targetImpedance, "resistance");
     if (!(target > 0)) return [];
     return layers.flatMap((layer, index) =>
-      isSignal(layer)
-        ? [rowOf({ stackup, netClass, layer, index, target, grid, limit: limits[netClass.lineageId] })]
-        : [],
+      isSignal(layer) ? [inputOf(netClass, layer, index, target)] : [],
     );
   });
 }
 
-interface RowInputs {
-  stackup: Stackup;
-  netClass: StoredNetClass;
-  layer: StoredStackupLayer;
-  index: number;
-  target: number;
-  grid: number;
-  limit: ResolvedLimit | undefined;
-}
-
-function rowOf({ stackup, netClass, layer, index, target, grid, limit }: RowInputs): ImpedanceRow {
+function inputOf(
+  netClass: StoredNetClass,
+  layer: StoredStackupLayer,
+  index: number,
+  target: number,
+): RowInput {
   const entry = netClass.layers.find(({ layerLineageId }) => layerLineageId === layer.lineageId);
   const pair = netClass.kind === "differential";
-  const width = entry?.width ? toSi(entry.width, "length") : null;
   const ownGap = pair && entry?.gap ? toSi(entry.gap, "length") : null;
-  const gap = pair ? (ownGap ?? gapElsewhere(netClass) ?? USUAL_GAP) : null;
-  const search = { stackup, index, kind: netClass.kind, ohms: target, grid };
-  const now = width === null || (pair && ownGap === null) ? null : lineFacts(stackup, index, { width, gap });
-  const impedance = now?.ok ? now.value.impedance : null;
   return {
     id: `${netClass.lineageId}.${layer.lineageId}`,
     netClass,
     layer,
     index,
     allowed: entry !== undefined || netClass.layers.length === 0,
+    line: netClass.kind,
     target,
     tolerance: Number(netClass.tolerancePercent),
-    width,
-    gap,
+    width: entry?.width ? toSi(entry.width, "length") : null,
+    gap: pair ? (ownGap ?? gapElsewhere(netClass) ?? USUAL_GAP) : null,
     gapAssumed: pair && ownGap === null,
-    now,
-    off: impedance === null ? null : (100 * (impedance - target)) / target,
-    verdict: verdictOf(netClass, layer, { target, impedance, width: width ?? 0, gap, limit }),
-    width0: widthFor(search, gap),
-    gap0: pair && width !== null ? gapFor(search, width) : null,
   };
 }
 
@@ -110,39 +103,50 @@ function gapElsewhere(netClass: NetClassDoc): number | null {
   return given ? toSi(given, "length") : null;
 }
 
-/** How an impedance stands to its target, by the rule that judges centring in a run: both say the same. */
-export function verdictOf(
-  netClass: Pick<StoredNetClass, "name" | "lineageId" | "kind">,
-  layer: { lineageId: string; name: string },
-  line: {
-    target: number;
-    impedance: number | null;
-    width: number;
-    gap: number | null;
-    limit: ResolvedLimit | undefined;
-  },
-): RowVerdict {
-  if (line.impedance === null || !line.limit) return "no data";
-  const [judged] = checkImpedance([
-    {
-      id: layer.lineageId,
-      className: netClass.name,
-      classLineageId: netClass.lineageId,
-      layer: layer.name,
-      layerLineageId: layer.lineageId,
-      kind: netClass.kind,
-      width: line.width,
-      gap: line.gap,
-      target: line.target,
-      nominal: line.impedance,
-      method: null,
-      tolerance: 0,
-      closedForm: null,
-      spread: null,
-      missing: null,
-      limits: { [impedanceCentring.id]: line.limit },
-    },
-  ]);
-  const verdict = judged?.result.verdict;
-  return verdict === "pass" || verdict === "near" || verdict === "fail" ? verdict : "no data";
+export function cellJobOf(row: RowInput, stackup: Stackup, grid: number): CellJob {
+  const { index, line, target, width, gap, gapAssumed } = row;
+  return { kind: "line-cell", stackup, index, line, ohms: target, grid, width, gap, gapAssumed };
+}
+
+/** Null where the class has no line on this layer yet. */
+export function spreadJobOf(row: RowInput, stackup: Stackup, process: ProcessDoc): SpreadJob | null {
+  const { index, width, gap, gapAssumed, target, tolerance } = row;
+  if (width === null || gapAssumed) return null;
+  return { kind: "line-spread", stackup, index, shape: { width, gap }, process, ohms: target, tolerance };
+}
+
+export interface RowAnswers {
+  /** undefined: not yet */
+  cell: CellAnswer | undefined;
+  /** undefined: not yet; null: nothing is asked */
+  spread: Outcome<SpreadFacts> | null | undefined;
+}
+
+/** @param limits of the class, by rule id */
+export function rowOf(
+  input: RowInput,
+  { cell, spread }: RowAnswers,
+  least: Capability | null,
+  limits: Readonly<Record<string, ResolvedLimit>>,
+): ImpedanceRow {
+  const now = cell?.now ?? null;
+  const impedance = now?.ok ? now.value.impedance : null;
+  const verdicts = verdictsOf(
+    input,
+    { impedance, width: input.width ?? 0, gap: input.gap, spread: spread?.ok ? spread.value : null },
+    limits,
+  );
+  return {
+    ...input,
+    pending: cell === undefined,
+    now,
+    off: impedance === null ? null : (100 * (impedance - input.target)) / input.target,
+    centring: verdicts.centring,
+    meets: cell?.meets ?? null,
+    gapMeets: cell?.gapMeets ?? null,
+    spreadPending: spread === undefined,
+    spread: spread ?? null,
+    yielding: verdicts.yielding,
+    least,
+  };
 }

@@ -5,9 +5,10 @@ import { useEffect, useRef } from "react";
 import { useLengthUnit } from "@/components/shell/length-unit";
 import { LENGTH_UNITS, type LengthUnit } from "@/lib/client/preferences";
 import { defaultGrid, type GridName, gridNames } from "./grids";
+import { trialParsers } from "./trial-address";
 
 export const layerChoices = ["allowed", "all"] as const;
-export const verdictChoices = ["any", "off", "none"] as const;
+export const verdictChoices = ["any", "off", "yield", "none"] as const;
 
 const parsers = {
   /** the row whose panel is open */
@@ -17,6 +18,7 @@ const parsers = {
   class: parseAsString,
   layers: parseAsStringLiteral(layerChoices).withDefault("allowed"),
   show: parseAsStringLiteral(verdictChoices).withDefault("any"),
+  ...trialParsers,
 };
 
 /** What the page shows, all of it in the address. Its unit is this person's, unless the address names another. */

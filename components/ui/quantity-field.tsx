@@ -81,6 +81,8 @@ export function QuantityField(props: Props) {
         readOnly={props.readOnly}
         className={cn(controlClasses, props.alignRight && "text-right")}
         value={text ?? (value ? shown(value, unit) : "")}
+        // Ctrl+Z is the text's own while it is being typed.
+        data-typing={text !== null && text !== (value ? formatQuantity(value) : "") ? "" : undefined}
         onFocus={(event) => {
           if (text === null && !props.readOnly) setText(value ? formatQuantity(value) : "");
           const input = event.currentTarget;

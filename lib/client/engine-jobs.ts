@@ -5,17 +5,20 @@ import { allCorners } from "@/lib/si/rules/corners";
 import type { PathResult } from "@/lib/si/rules/types";
 import { pathBounces, type PathBounces } from "@/lib/resolve/path-bounces";
 import { pathWaveforms, type PathWaveforms, type WaveformRequest } from "@/lib/resolve/path-waveforms";
+import { answerImpedance, type ImpedanceAnswers, type ImpedanceJob } from "./engine-impedance";
 
 /** What the engine is asked in the browser; each a pure function of its input. */
 export type EngineJob =
-  { kind: "picture"; path: ResolvedPath; request: WaveformRequest } | { kind: "check"; path: ResolvedPath };
+  | { kind: "picture"; path: ResolvedPath; request: WaveformRequest }
+  | { kind: "check"; path: ResolvedPath }
+  | ImpedanceJob;
 
 export interface PathPicture {
   waveforms: PathWaveforms;
   bounces: PathBounces;
 }
 
-export interface EngineAnswers {
+export interface EngineAnswers extends ImpedanceAnswers {
   picture: PathPicture;
   check: PathResult;
 }
@@ -27,6 +30,7 @@ export function runJob<J extends EngineJob>(job: J): EngineAnswers[J["kind"]] {
 
 function answer(job: EngineJob): EngineAnswers[EngineJob["kind"]] {
   if (job.kind === "check") return checkPath(job.path, { corners: [...allCorners] });
+  if (job.kind !== "picture") return answerImpedance(job);
   const waveforms = pathWaveforms(job.path, { ...job.request, waves: true });
   return { waveforms, bounces: pathBounces(waveforms.network, waveforms.until) };
 }

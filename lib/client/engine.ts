@@ -46,9 +46,16 @@ export class WorkerEngine implements Engine {
 }
 
 let shared: Engine | null = null;
+let second: Engine | null = null;
 
 /** One for the page. */
 export function pageEngine(): Engine {
   shared ??= new WorkerEngine();
   return shared;
+}
+
+/** Another one, for long lists and curves: what is dragged by hand never waits behind them. */
+export function backgroundEngine(): Engine {
+  second ??= new WorkerEngine();
+  return second;
 }

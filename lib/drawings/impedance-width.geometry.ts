@@ -32,6 +32,10 @@ export interface ImpedanceWidthOptions {
   target?: { ohms: number; tolerance: number /* fraction */ } | null;
   /** the width now chosen [m] */
   chosen?: number | null;
+  /** step of widths [m]: marked along the axis where they have room */
+  grid?: number | null;
+  /** least width that is etched [m] */
+  least?: number | null;
 }
 
 /** Impedance against foot width, its spread as a band, the target's tolerance as another, the chosen width marked. */
@@ -39,7 +43,7 @@ export function impedanceWidth(
   points: readonly WidthPoint[],
   options: ImpedanceWidthOptions,
 ): Drawing & { box: PlotBox; widthAt: (pixel: number) => number; chosenOhms: number | null } {
-  const { width, height = 240, unit, target, chosen } = options;
+  const { width, height = 240, unit, target, chosen, grid, least } = options;
   const title = options.title ?? "Impedance against width";
   const sound = points
     .filter((p) => p.width > 0 && Number.isFinite(p.impedance))
@@ -81,6 +85,8 @@ export function impedanceWidth(
         text(box.left - 8, y(v) + 4, ohmsText(v), { anchor: "end", ink: "ink-soft" }),
       ]),
     ...bottomAxis(x, ticks, box),
+    ...(grid ? gridSteps(grid, [first.width, last.width], (m) => x(m / metre), box) : []),
+    ...(least && least > first.width ? leastWidth(x(Math.min(least, last.width) / metre), box) : []),
     ...(goal && target ? goalBand(goal, target, y, box) : []),
     group(
       [
@@ -115,6 +121,7 @@ export function impedanceWidth(
   const description = [
     `Impedance falls from ${ohmsText(first.impedance)} at foot width ${lengthText(first.width, unit)} to ${ohmsText(last.impedance)} at ${lengthText(last.width, unit)}.`,
     target ? `Target ${ohmsText(target.ohms)} ± ${numberText(target.tolerance * 100, 0)}\u2009%.` : "",
+    least ? `Widths below ${lengthText(least, unit)} are not etched.` : "",
     chosen && ohms !== null ? `Chosen: ${lengthText(chosen, unit)}, ${ohmsText(ohms)}.` : "",
   ]
     .filter((s) => s !== "")
@@ -129,6 +136,45 @@ export function impedanceWidth(
     chosenOhms: ohms,
     widthAt: (pixel) => x.invert(Math.min(Math.max(pixel, box.left), box.right)) * metre,
   };
+}
+
+/** Below this distance steps of the grid run together [px]. */
+const STEP_ROOM = 2.5;
+
+function gridSteps(grid: number, [from, to]: Domain, at: (metres: number) => number, box: PlotBox): Mark[] {
+  const every = [1, 2, 5, 10, 20, 50, 100].find((n) => at(n * grid) - at(0) >= STEP_ROOM);
+  if (!every) return [];
+  const first = Math.ceil(from / (grid * every) - 1e-9);
+  const count = Math.floor(to / (grid * every) + 1e-9) - first + 1;
+  return Array.from({ length: Math.max(count, 0) }, (_, i) => {
+    const x = at((first + i) * grid * every);
+    return line(x, box.bottom - 4, x, box.bottom, { stroke: "ink-soft", weight: 0.5 });
+  });
+}
+
+/** What is too narrow to be etched, hatched. */
+function leastWidth(x: number, box: PlotBox): Mark[] {
+  const room = x - box.left;
+  return [
+    rect(box.left, box.top, room, box.bottom - box.top, { fill: "hatch-soft" }),
+    line(x, box.top, x, box.bottom, { stroke: "near", weight: 1, dash: "3 3" }),
+    text(x + 5, box.bottom - 8, "least etched", { ink: "near", halo: true }),
+  ];
+}
+
+/** The curve as rows, headings first. */
+export function curveRows(points: readonly WidthPoint[], unit: LengthUnit): (string | number | null)[][] {
+  const digits = (value: number | undefined): number | null =>
+    value === undefined ? null : Number(value.toPrecision(6));
+  return [
+    [`width (${unit})`, "impedance (Ω)", "0.5th percentile (Ω)", "99.5th percentile (Ω)"],
+    ...points.map((p) => [
+      Number((p.width / (unit === "mm" ? 1e-3 : 25.4e-6)).toPrecision(6)),
+      digits(p.impedance),
+      digits(p.low),
+      digits(p.high),
+    ]),
+  ];
 }
 
 function goalBand(

@@ -28,3 +28,30 @@ export function describeTrace(shape: TraceSectionShape, unit: LengthUnit): strin
   const dielectrics = shape.layers.map((l) => `${length(l.thickness)} at Dk ${l.er.toFixed(2)}`).join(", ");
   return `${parts.join(" ")}, to scale: ${facts.join("; ")}. Dielectrics from the lower plane upward: ${dielectrics}.`;
 }
+
+/** The dimensions of the cross-section as rows, headings first. */
+export function sectionRows(shape: TraceSectionShape, unit: LengthUnit): (string | number)[][] {
+  const length = (m: number): number => Number((m / (unit === "mm" ? 1e-3 : 25.4e-6)).toPrecision(7));
+  const rows: (string | number)[][] = [["part", "quantity", "value", "unit"]];
+  shape.traces.forEach((t, i) => {
+    const part = shape.traces.length === 1 ? "trace" : `trace ${i + 1}`;
+    rows.push(
+      [part, "centre", length(t.x), unit],
+      [part, "height below", length(t.y), unit],
+      [part, "copper thickness", length(t.thickness), unit],
+      [part, "foot width", length(t.widthBottom), unit],
+      [part, "crown width", length(t.widthTop), unit],
+    );
+  });
+  shape.layers.forEach((l, i) => {
+    rows.push([`dielectric ${i + 1}`, "thickness", length(l.thickness), unit]);
+    rows.push([`dielectric ${i + 1}`, "Dk", l.er, ""]);
+  });
+  if (shape.mask)
+    rows.push(
+      ["mask", "over laminate", length(shape.mask.overLaminate), unit],
+      ["mask", "over copper", length(shape.mask.overTrace), unit],
+      ["mask", "Dk", shape.mask.er, ""],
+    );
+  return rows;
+}

@@ -1,18 +1,14 @@
 import { describe, expect, it } from "vitest";
 import { withClassWidth } from "@/components/impedance/class-width";
 import { gridStep, lengthDigits } from "@/components/impedance/grids";
-import { impedanceRows } from "@/components/impedance/impedance-rows";
 import { remarks, signedPercent } from "@/components/impedance/row-words";
 import { widthTableCsv, widthTableText } from "@/components/impedance/width-table";
-import { aBoard, aClassOn, LIMIT } from "../../support/impedance-page";
+import { aClassOn, solvedRows } from "../../support/impedance-page";
 
 const mm = (value: string) => ({ value, unit: "mm" });
 
-function rowsOf(classes: ReturnType<typeof aClassOn>[], grid: Parameters<typeof gridStep>[0] = "5 µm") {
-  const { si, stackup } = aBoard();
-  const limits = Object.fromEntries(classes.map(({ lineageId }) => [lineageId, LIMIT]));
-  return impedanceRows({ stackup: si, layers: stackup.layers, classes, limits, grid: gridStep(grid) });
-}
+const rowsOf = (classes: ReturnType<typeof aClassOn>[], grid: Parameters<typeof gridStep>[0] = "5 µm") =>
+  solvedRows(classes, gridStep(grid));
 
 describe("rows of the impedance page", () => {
   it("has one row for every class with a target on every signal layer", () => {
@@ -28,18 +24,18 @@ describe("rows of the impedance page", () => {
     for (const grid of ["1 µm", "5 µm", "0.1 mil"] as const) {
       const step = gridStep(grid);
       const [row] = rowsOf([aClassOn("Bus", { L1: ["0.2", null] })], grid);
-      if (!row?.width0.ok) throw new Error("No width was found.");
-      const steps = row.width0.value.dimension / step;
+      if (!row?.meets?.ok) throw new Error("No width was found.");
+      const steps = row.meets.value.dimension / step;
       expect(Math.abs(steps - Math.round(steps))).toBeLessThan(1e-9);
-      expect(Math.abs(row.width0.value.impedance - 50)).toBeLessThan(0.3);
+      expect(Math.abs(row.meets.value.impedance - 50)).toBeLessThan(0.3);
     }
   });
 
   it("judges centring by the rule: a width that meets passes, one far off fails, none is no data", () => {
     const [found] = rowsOf([aClassOn("Bus", { L1: ["0.2", null] })]);
-    if (!found?.width0.ok) throw new Error("No width was found.");
-    const meeting = String(Number((found.width0.value.dimension * 1e3).toFixed(4)));
-    const verdict = (width: string | null) => rowsOf([aClassOn("Bus", { L1: [width, null] })])[0]?.verdict;
+    if (!found?.meets?.ok) throw new Error("No width was found.");
+    const meeting = String(Number((found.meets.value.dimension * 1e3).toFixed(4)));
+    const verdict = (width: string | null) => rowsOf([aClassOn("Bus", { L1: [width, null] })])[0]?.centring;
     expect(verdict(meeting)).toBe("pass");
     expect(verdict("1")).toBe("fail");
     expect(verdict(null)).toBe("no data");
@@ -49,8 +45,8 @@ describe("rows of the impedance page", () => {
     const [row] = rowsOf([
       aClassOn("Feed", { L1: [null, null] }, { targetImpedance: { value: "400", unit: "Ω" } }),
     ]);
-    expect(row?.width0.ok).toBe(false);
-    expect(row && remarks(row)[0]).toMatch(/^out of reach: [\d.]+ to [\d.]+\u2009Ω$/);
+    expect(row?.meets?.ok).toBe(false);
+    expect(row && remarks(row, "mm")[0]).toMatch(/^out of reach: [\d.]+ to [\d.]+\u2009Ω$/);
   });
 
   it("finds for a pair both the width at its gap and the gap at its width", () => {
@@ -62,15 +58,15 @@ describe("rows of the impedance page", () => {
       ),
     ]);
     expect(row?.now?.ok && row.now.value.impedance).toBeGreaterThan(60);
-    expect(row?.width0.ok && Math.abs(row.width0.value.impedance - 100)).toBeLessThan(0.6);
+    expect(row?.meets?.ok && Math.abs(row.meets.value.impedance - 100)).toBeLessThan(0.6);
     expect(row?.gapAssumed).toBe(false);
-    expect(row?.gap0).not.toBeNull();
+    expect(row?.gapMeets).not.toBeNull();
   });
 
   it("marks a pair's gap that no class told as assumed", () => {
     const [row] = rowsOf([aClassOn("Link", { L1: [null, null] }, { kind: "differential" })]);
     expect(row?.gapAssumed).toBe(true);
-    expect(row && remarks(row)).toContain("no width yet");
+    expect(row && remarks(row, "mm")).toContain("no width yet");
   });
 });
 
@@ -100,11 +96,24 @@ describe("the table for the layout program", () => {
   it("gives the widths that meet the target on the grid, as CSV as well", () => {
     const rows = rowsOf(classes(), "1 µm").filter(({ allowed }) => allowed);
     const [bus] = rows;
-    if (!bus?.width0.ok) throw new Error("No width was found.");
-    const width = (bus.width0.value.dimension * 1e3).toFixed(3).replace(/0+$/, "");
-    expect(widthTableCsv(rows, "mm", "meeting").split("\r\n")[1]).toBe(
-      `'=Bus,L1,${width},,50,${bus.width0.value.impedance.toFixed(1)}`,
+    if (!bus?.meets?.ok) throw new Error("No width was found.");
+    const width = (bus.meets.value.dimension * 1e3).toFixed(3).replace(/0+$/, "");
+    const csv = widthTableCsv(rows, "mm", "meeting", []);
+    expect(csv.split("\r\n")[1]).toMatch(
+      `'=Bus,L1,${width},,50,${bus.meets.value.impedance.toFixed(1)},10,${bus.meets.value.formula?.ohms.toFixed(1)},`,
     );
+  });
+
+  it("carries field value, formula, spread and yield of the classes' own widths into the CSV", () => {
+    const rows = rowsOf(classes()).filter(({ allowed }) => allowed);
+    const spreads = rows.map(({ spread }) => spread);
+    const [head, bus] = widthTableCsv(rows, "mm", "present", spreads).split("\r\n");
+    const [first] = rows;
+    if (!first?.now?.ok || !first.spread?.ok) throw new Error("The row was not solved.");
+    const { low, high, yield: share } = first.spread.value;
+    expect(head).toContain("Impedance (Ω),Tolerance (%),Formula (Ω),Formula,Spread low (Ω)");
+    expect(bus).toContain(`,${first.now.value.impedance.toFixed(1)},10,`);
+    expect(bus).toContain(`,${low.toFixed(1)},${high.toFixed(1)},${(100 * share).toFixed(1)},`);
   });
 });
 

@@ -9,7 +9,8 @@ import { ImpedanceView } from "@/components/impedance/impedance-view";
 import { LengthUnitProvider } from "@/components/shell/length-unit";
 import type { StoredStackup } from "@/lib/schemas/stackup";
 import type { NetClassDoc, StoredNetClass } from "@/lib/schemas/net-class";
-import { aBoard, aClassOn, LIMIT } from "../../support/impedance-page";
+import { directEngine } from "../../support/direct-engine";
+import { aBoard, aClassOn, LIMITS } from "../../support/impedance-page";
 
 const CLASSES = [
   aClassOn("Bus", { L1: ["0.2", null], L4: ["0.3", null] }),
@@ -37,6 +38,7 @@ beforeAll(() => {
   };
 });
 beforeEach(() => {
+  vi.stubGlobal("matchMedia", () => ({ matches: true }));
   puts = [];
   address = new URLSearchParams();
   vi.stubGlobal(
@@ -83,9 +85,10 @@ function show(
               revision="A"
               stackup={stackup}
               classes={classes}
-              limits={Object.fromEntries(classes.map(({ lineageId }) => [lineageId, LIMIT]))}
+              limits={Object.fromEntries(classes.map(({ lineageId }) => [lineageId, LIMITS]))}
               readOnly={readOnly}
               search=""
+              engines={{ live: directEngine, background: directEngine }}
             />
           </Tooltip.Provider>
         </LengthUnitProvider>

@@ -12,6 +12,7 @@ import { LimitResolver } from "@/lib/resolve/limits";
 import { can, type Actor } from "@/lib/schemas/actor";
 import { NotFoundError } from "@/lib/schemas/errors";
 import { impedanceCentring } from "@/lib/si/rules/impedance-centring";
+import { impedanceYield } from "@/lib/si/rules/impedance-yield";
 
 export const metadata: Metadata = { title: "Impedance" };
 
@@ -51,8 +52,12 @@ async function read(actor: Actor, projectId: string, letter: string | null) {
     const resolver = new LimitResolver(ruleSet);
     const limits = Object.fromEntries(
       classes.flatMap((netClass) => {
-        const limit = resolver.of([], netClass, null)[impedanceCentring.id];
-        return limit ? [[netClass.lineageId, limit]] : [];
+        const all = resolver.of([], netClass, null);
+        const own = [impedanceCentring.id, impedanceYield.id].flatMap((rule) => {
+          const limit = all[rule];
+          return limit ? [[rule, limit] as const] : [];
+        });
+        return [[netClass.lineageId, Object.fromEntries(own)]];
       }),
     );
     return { revision, stackup, classes, limits };
