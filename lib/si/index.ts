@@ -11,6 +11,7 @@ export * from "./line";
 export * from "./stackup";
 export * from "./materials";
 export * from "./lattice";
+export * from "./ports";
 export * from "./waveform";
 export * from "./path";
 export * from "./rules";

@@ -99,5 +99,6 @@ export function tablesOf(model: IbisModel, corner: IbisCorner): CornerTables | n
 
 export function percent(share: number): string {
   const value = 100 * share;
+  if (!(value <= 1000)) return "more than 1000 %";
   return `${value >= 10 ? value.toFixed(0) : value.toFixed(1)} %`;
 }
