@@ -103,7 +103,9 @@ export function MaterialDialog({ start, onClose, onSaved }: Props) {
       wide
       onOpenChange={onClose}
       title={editing ? `Edit ${editing.name}` : "Add a material"}
-      description="For every project of the team. Stackups that were filled in from it keep the values they have."
+      description={`For every project of the team. Stackups that were filled in from it keep the values they have.${
+        editing?.createdByName ? ` Added by ${editing.createdByName}.` : ""
+      }`}
     >
       <form method="post" noValidate onSubmit={(event) => void submit(event)} className="flex flex-col gap-4">
         <div className="grid gap-x-4 gap-y-3 sm:grid-cols-3">

@@ -28,7 +28,7 @@ interface Props {
 export function MaterialMenu({ layer, onPick }: Props) {
   const kinds = materialKindsOf(layer);
   const { data, isError } = useQuery(materialsQuery());
-  const own = data?.filter(({ kind }) => kinds.includes(kind)) ?? [];
+  const own = kinds.flatMap((wanted) => data?.filter(({ kind }) => kind === wanted) ?? []);
   return (
     <Menu
       align="end"
