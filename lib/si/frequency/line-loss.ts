@@ -76,7 +76,7 @@ export function lineLoss(
       {
         section,
         metal,
-        pattern: patternOf(mode.name),
+        pattern: patternOf(mode.name, section),
         currents: mode.currents,
         factor,
         external: inductance,
@@ -98,8 +98,11 @@ export function lineLoss(
   return { ...first, frequencies, modes, ...(odd && { odd }), ...(even && { even }) };
 }
 
-function patternOf(name: ModeName): Pattern {
-  return name === "single" || name === "odd" || name === "even" ? name : "both";
+/** Odd and even currents mirror themselves between traces side by side; one above the other both must be solved. */
+function patternOf(name: ModeName, { traces }: CrossSection): Pattern {
+  if (name === "single") return name;
+  const sideBySide = (name === "odd" || name === "even") && traces[0]?.y === traces[1]?.y;
+  return sideBySide ? name : "both";
 }
 
 function metalOf(section: CrossSection, conductor: ConductorInput): MetalOptions {

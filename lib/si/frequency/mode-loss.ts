@@ -21,7 +21,7 @@ export interface ModeLoss {
   inductance: Float64Array;
   conductance: Float64Array;
   capacitance: Float64Array;
-  /** characteristic impedance [Ω], real and imaginary part */
+  /** characteristic impedance [Ω], real and imaginary part; without limit (Infinity) at 0 Hz, as εeff */
   impedance: Float64Array;
   reactance: Float64Array;
   /** (c β/ω)² [1] */
@@ -100,7 +100,7 @@ function fill(
   result.conductance[k] = g;
   result.capacitance[k] = c;
   if (omega === 0) {
-    // no loss in a leakage-free dielectric, an impedance without limit: the static line's values stand in
+    // R over no conductance: nothing propagates
     result.impedance[k] = Infinity;
     result.effectivePermittivity[k] = Infinity;
     return;

@@ -1,5 +1,6 @@
 import { GEOMETRY_TOLERANCE, stackHeight, validateCrossSection } from "../cross-section/validate";
 import type { CrossSection, Trace } from "../cross-section";
+import { DomainError } from "../errors";
 import type { Factor } from "./tolerances";
 
 /** Gap between the facing feet of a pair side by side [m]; null for others. */
@@ -40,9 +41,24 @@ export function sectionMover(
     moved.traces.forEach((trace, i) => {
       trace.y = seated(trace, seats[i]!, boundaries);
     });
-    validateCrossSection(moved);
+    requireLegal(moved);
     return moved;
   };
+}
+
+function requireLegal(moved: CrossSection): void {
+  try {
+    validateCrossSection(moved);
+  } catch (error) {
+    if (!(error instanceof DomainError)) throw error;
+    throw new DomainError(
+      `Within these tolerances the section becomes impossible. ${error.message}`,
+      error.field,
+      {
+        cause: error,
+      },
+    );
+  }
 }
 
 function apply(section: CrossSection, { target, nominal }: Factor, by: number, seats: Seat[]): void {

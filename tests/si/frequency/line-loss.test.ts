@@ -189,18 +189,18 @@ describe("loss over frequency", () => {
         { ...left!, x: 0.3 * MM, widthBottom: 0.25 * MM, widthTop: 0.23 * MM },
       ],
     };
-    const broadside: CrossSection = {
+    const broadside = (upper: number): CrossSection => ({
       layers: [{ thickness: 0.8 * MM, er: 4, tanD: 0.01 }],
       upperPlane: true,
-      traces: [0.25, 0.5].map((y) => ({
+      traces: [0.25, upper].map((y) => ({
         x: 0,
         y: y * MM,
         thickness: 35e-6,
         widthBottom: 0.2 * MM,
         widthTop: 0.2 * MM,
       })),
-    };
-    for (const section of [unequal, broadside]) {
+    });
+    for (const section of [unequal, broadside(0.5), broadside(0.515)]) {
       const loss = lineLoss(section, solveCrossSection(section), copper, Float64Array.of(1e7, 1e11));
       expect(loss.modes).toHaveLength(2);
       for (const mode of loss.modes) {
