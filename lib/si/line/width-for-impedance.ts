@@ -1,11 +1,9 @@
-import { bestClosedForm, type CrossSection, type Trace } from "../cross-section";
-import { DomainError, UnsupportedError } from "../errors";
+import { bestClosedForm, type CrossSection } from "../cross-section";
+import { DomainError } from "../errors";
 import { dimensionForTarget } from "./dimension-for-target";
-
-export interface ImpedanceTarget {
-  kind: "single" | "differential" | "common";
-  ohms: number;
-}
+import { fieldDimension } from "./field-dimension";
+import { impedanceOf, type ImpedanceTarget } from "./impedance-of";
+import { withSpacing, withWidth } from "./reshape";
 
 export interface WidthRequest {
   section: CrossSection;
@@ -31,86 +29,27 @@ export interface WidthResult {
 }
 
 /**
- * Width (of the bottom face) or spacing at which a line meets its target.
+ * Width (of the bottom face) or spacing at which a line meets its target, by the closed form that fits or by the field.
  * The side slope, the spacing between edges (when the width varies) and the coplanar slot stay; a pair stays centred.
  *
- * @returns value [m] with impedance [Ω]; without a grid the impedance is the target to 1e-10
- * @throws DomainError for illegal input, UnreachableTargetError with the reachable range, UnsupportedError where no
- *   closed form fits or a field solution is asked for
+ * @returns value [m] with impedance [Ω]; without a grid the impedance is the target, to 1e-10 (closed form) or 1e-6 (field)
+ * @throws DomainError for illegal input, UnreachableTargetError with the reachable range, UnsupportedError where a closed
+ *   form is asked for and none fits
  */
 export function widthForImpedance(request: WidthRequest): WidthResult {
-  const { section, target, vary, min, max, grid, method } = request;
-  if (method === "field")
-    throw new UnsupportedError("Widths are found by closed forms only so far.", "method");
+  const { section, target, vary, min, max, grid, method, accuracy } = request;
   if (vary === "spacing" && section.traces.length !== 2) {
     throw new DomainError("Only a pair has a spacing to vary.", "vary");
   }
   const reshape = vary === "width" ? withWidth : withSpacing;
-  const found = dimensionForTarget({
-    impedanceAt: (value) => impedanceOf(bestClosedForm(reshape(section, value)), target.kind),
-    ohms: target.ohms,
-    spoken: vary === "width" ? "width" : "gap",
-    min,
-    max,
-    grid,
-  });
+  const sectionAt = (value: number) => reshape(section, value);
+  const search = { ohms: target.ohms, spoken: vary === "width" ? "width" : "gap", min, max, grid };
+  const found =
+    method === "field"
+      ? fieldDimension({ ...search, sectionAt, kind: target.kind, accuracy })
+      : dimensionForTarget({
+          ...search,
+          impedanceAt: (value) => impedanceOf(bestClosedForm(sectionAt(value)), target.kind),
+        });
   return { ...found, method };
-}
-
-/** What a closed form and a field solution have in common. */
-interface Impedances {
-  single?: { impedance: number };
-  pair?: { differential: number; common: number };
-}
-
-/**
- * The impedance of that kind [Ω].
- * @throws DomainError where the line has none: a single impedance of a pair, a differential one of a single trace
- */
-export function impedanceOf(line: Impedances, kind: ImpedanceTarget["kind"]): number {
-  const value = kind === "single" ? line.single?.impedance : line.pair?.[kind];
-  if (value === undefined) {
-    throw new DomainError(
-      `A ${line.pair ? "pair" : "single trace"} has no ${kind} impedance.`,
-      "target.kind",
-    );
-  }
-  return value;
-}
-
-/** The same cross-section with another bottom width of every trace; slopes, gap, slot and the pair's centre stay. */
-export function withWidth(section: CrossSection, width: number): CrossSection {
-  const resized = section.traces.map((trace) => ({
-    ...trace,
-    widthBottom: width,
-    widthTop: trace.widthTop + width - trace.widthBottom,
-  }));
-  if (resized.some((trace) => !(trace.widthTop > 0))) {
-    throw new DomainError("The trace is so narrow that etching leaves no top.", "min");
-  }
-  const [left, right] = section.traces;
-  if (!left || !right) return { ...section, traces: resized };
-  return { ...section, traces: centred(resized, (left.x + right.x) / 2, gapOf(left, right)) };
-}
-
-/** The same pair with another gap between its bottom faces; its centre stays. */
-export function withSpacing(section: CrossSection, gap: number): CrossSection {
-  const [left, right] = section.traces;
-  if (!left || !right) throw new DomainError("Only a pair has a spacing to vary.", "vary");
-  return { ...section, traces: centred(section.traces, (left.x + right.x) / 2, gap) };
-}
-
-function gapOf(left: Trace, right: Trace): number {
-  return right.x - left.x - (left.widthBottom + right.widthBottom) / 2;
-}
-
-function centred(traces: Trace[], centre: number, gap: number): Trace[] {
-  const [left, right] = traces;
-  if (!left || !right) return traces;
-  if (Math.abs(left.x - right.x) < Math.abs(left.y - right.y)) return traces; // broadside: one stays above the other
-  const span = left.widthBottom + gap + right.widthBottom;
-  return [
-    { ...left, x: centre - span / 2 + left.widthBottom / 2 },
-    { ...right, x: centre + span / 2 - right.widthBottom / 2 },
-  ];
 }

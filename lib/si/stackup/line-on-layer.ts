@@ -2,7 +2,7 @@ import { bestClosedForm, type BestClosedForm, type LineParameters, type Mode } f
 import { DomainError, EngineError } from "../errors";
 import { solveCrossSection } from "../field";
 import type { Accuracy } from "../field/accuracy";
-import { dimensionForTarget, impedanceOf, type ImpedanceTarget } from "../line";
+import { fieldDimension, type ImpedanceTarget } from "../line";
 import { buildCrossSection, type BuiltCrossSection, type TraceShape } from "./build-cross-section";
 import type { Stackup } from "./model";
 
@@ -62,9 +62,6 @@ function closedFormOf({ section }: BuiltCrossSection): BestClosedForm | null {
   }
 }
 
-/** Relative; meshes of neighbouring widths may differ by as much. */
-const FIELD_TOLERANCE = 1e-6;
-
 export interface LayerWidthRequest {
   stackup: Stackup;
   /** a signal or foil layer */
@@ -107,17 +104,15 @@ export function widthOnLayer(request: LayerWidthRequest): {
     };
   };
   if (vary === "gap" && !pair) throw new DomainError("Only a pair has a gap to vary.", "vary");
-  const found = dimensionForTarget({
-    impedanceAt: (value) => {
-      const { section } = buildCrossSection(stackup, index, shapeAt(value));
-      return impedanceOf(solveCrossSection(section, { accuracy }), target.kind);
-    },
+  const found = fieldDimension({
+    sectionAt: (value) => buildCrossSection(stackup, index, shapeAt(value)).section,
+    kind: target.kind,
+    accuracy,
     ohms: target.ohms,
     spoken: vary,
     min: request.min,
     max: request.max,
     grid: request.grid,
-    tolerance: FIELD_TOLERANCE,
   });
   return {
     value: found.value,

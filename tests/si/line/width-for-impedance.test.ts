@@ -1,7 +1,7 @@
 import fc from "fast-check";
 import { describe, expect, it } from "vitest";
 import { bestClosedForm } from "@/lib/si/cross-section";
-import { DomainError, UnreachableTargetError, UnsupportedError } from "@/lib/si/errors";
+import { DomainError, UnreachableTargetError } from "@/lib/si/errors";
 import { impedanceOf, widthForImpedance, withSpacing, withWidth, type WidthRequest } from "@/lib/si/line";
 import { innerSection, outerSection } from "../../support/sections";
 
@@ -133,7 +133,6 @@ describe("widthForImpedance", () => {
   });
 
   it("refuses what makes no sense with a typed error", () => {
-    expect(() => widthForImpedance(ask({ method: "field" }))).toThrow(UnsupportedError);
     expect(() => widthForImpedance(ask({ vary: "spacing" }))).toThrow(DomainError);
     expect(() => widthForImpedance(ask({ target: { kind: "differential", ohms: 90 } }))).toThrow(DomainError);
     expect(() => widthForImpedance(ask({ section: outerPair }))).toThrow(DomainError);

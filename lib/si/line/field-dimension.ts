@@ -1,0 +1,114 @@
+import { bestClosedForm, type CrossSection } from "../cross-section";
+import { DomainError, EngineError } from "../errors";
+import { neighbourSolver } from "../field";
+import { dimensionForTarget, type DimensionRequest } from "./dimension-for-target";
+import { impedanceOf, type ImpedanceTarget } from "./impedance-of";
+
+export interface FieldDimensionRequest extends Omit<DimensionRequest, "impedanceAt" | "tolerance"> {
+  sectionAt: (dimension: number) => CrossSection;
+  kind: ImpedanceTarget["kind"];
+  accuracy?: "live" | "standard" | "reference";
+}
+
+/** Relative impedance error at which the search ends. */
+const TOLERANCE = 1e-6;
+const LONGEST_SEARCH = 8;
+/** d ln Z / d ln x where no closed form tells it: of a width, and of a gap */
+const SLOPE = { width: -0.45, gap: 0.15 };
+
+/**
+ * The dimension at which a field solution meets its target: from the closed form's answer by secants in
+ * (ln x, ln Z), all on one mesh topology, so that the impedance is a smooth function of x. Three or four solves.
+ *
+ * @returns dimension [m], impedance there [Ω], number of field solves
+ * @throws as dimensionForTarget
+ */
+export function fieldDimension(request: FieldDimensionRequest): {
+  value: number;
+  impedance: number;
+  solves: number;
+} {
+  const { sectionAt, kind, accuracy, ohms, min, max, grid } = request;
+  let solves = 0;
+  const solve = neighbourSolver({ accuracy });
+  const impedanceAt = (x: number) => {
+    solves += 1;
+    return impedanceOf(solve(sectionAt(x)), kind);
+  };
+  const root = secant(request, impedanceAt);
+  if (root !== null) {
+    if (grid === undefined) return { ...root, solves };
+    const steps = Math.round(root.value / grid);
+    const value = Number((steps * grid).toPrecision(12));
+    if (value >= min * (1 - 1e-9) && value <= max * (1 + 1e-9)) {
+      return { value, impedance: impedanceAt(value), solves };
+    }
+  }
+  // outside the range, at its ends, or stubborn: bracket it, and tell what can be reached
+  const found = dimensionForTarget({
+    ...request,
+    ohms,
+    tolerance: TOLERANCE,
+    impedanceAt: (x) => {
+      solves += 1;
+      return impedanceOf(neighbourSolver({ accuracy })(sectionAt(x)), kind);
+    },
+  });
+  return { ...found, solves };
+}
+
+/** null where the target is not met strictly inside the range. */
+function secant(
+  request: FieldDimensionRequest,
+  impedanceAt: (x: number) => number,
+): { value: number; impedance: number } | null {
+  const { ohms, min, max } = request;
+  if (!(min > 0 && max > min && ohms > 0 && Number.isFinite(max) && Number.isFinite(ohms))) return null;
+  let { x, slope } = startingPoint(request);
+  let lastX = 0;
+  let lastZ = 0;
+  for (let round = 0; round < LONGEST_SEARCH; round++) {
+    let z: number;
+    try {
+      z = impedanceAt(x);
+    } catch (error) {
+      if (error instanceof DomainError && error.field !== "target.kind") return null;
+      throw error;
+    }
+    const miss = Math.log(z / ohms);
+    if (Math.abs(miss) <= TOLERANCE) return { value: x, impedance: z };
+    if (round > 0) {
+      const measured = Math.log(z / lastZ) / Math.log(x / lastX);
+      if (measured * slope > 0) slope = measured;
+    }
+    lastX = x;
+    lastZ = z;
+    // no step further than a factor of three: slopes flatten out there
+    x *= Math.exp(Math.max(-1.1, Math.min(1.1, -miss / slope)));
+    if (x < min || x > max) {
+      if (lastX === min || lastX === max) return null;
+      x = x < min ? min : max;
+    }
+  }
+  return null;
+}
+
+/** Where the closed form meets the target, and its slope d ln Z / d ln x there. */
+function startingPoint(request: FieldDimensionRequest): { x: number; slope: number } {
+  const { sectionAt, kind, min, max, spoken } = request;
+  const closed = (x: number) => impedanceOf(bestClosedForm(sectionAt(x)), kind);
+  const fallback = spoken === "gap" ? SLOPE.gap : SLOPE.width;
+  try {
+    const { value } = dimensionForTarget({
+      ...request,
+      grid: undefined,
+      impedanceAt: closed,
+      tolerance: 3e-3,
+    });
+    const slope = Math.log(closed(value * 1.05) / closed(value)) / Math.log(1.05);
+    return { x: value, slope: slope * fallback > 0 ? slope : fallback };
+  } catch (error) {
+    if (error instanceof EngineError) return { x: Math.sqrt(min * max), slope: fallback };
+    throw error;
+  }
+}
