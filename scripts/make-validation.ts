@@ -6,11 +6,12 @@ import { mkdirSync, writeFileSync } from "node:fs";
 import type { ValidationReport } from "../lib/schemas/validation";
 import { engineVersion } from "../lib/si";
 import { fieldSolver, formulas } from "./validation/cross-sections";
+import { measuredLines } from "./validation/measured-lines";
 import { waveforms } from "./validation/waveforms";
 
 const report: ValidationReport = {
   engine: engineVersion,
-  chapters: [...fieldSolver(), waveforms(), formulas()],
+  chapters: [...fieldSolver(), waveforms(), measuredLines(), formulas()],
 };
 mkdirSync("dist", { recursive: true });
 writeFileSync("dist/validation.json", JSON.stringify(report));
