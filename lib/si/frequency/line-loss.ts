@@ -3,7 +3,7 @@ import { DomainError } from "../errors";
 import { solveCrossSection } from "../field";
 import type { MetalOptions, Pattern } from "./conductor-model";
 import { fillingFactors, materialsOf } from "./filling-factors";
-import { lineImpedance, type SeriesAt } from "./line-impedance";
+import { filamentsOf, lineImpedance, type Filaments, type SeriesAt } from "./line-impedance";
 import { overFrequency, type ModeLoss } from "./mode-loss";
 import { modePatterns, type ModeName } from "./mode-patterns";
 import { roughnessFactor, type Roughness } from "./roughness";
@@ -48,7 +48,7 @@ const PLANE_HEIGHTS = 30;
  *
  * @param params       of the section, as `solveCrossSection` gives them
  * @param frequencies  [Hz], ≥ 0
- * @returns see above; smooth R within 2 % of finite elements, quasi-static: no dispersion, radiation or surface waves
+ * @returns see above; smooth R within 2 % (see `lineImpedance`), quasi-static: no dispersion, radiation or surface waves
  * @throws DomainError for bad input, UnsupportedError for copper without thickness
  */
 export function lineLoss(
@@ -69,14 +69,19 @@ export function lineLoss(
   const external = externalInductance(params);
   const fillings = fillingFactors(section, solve);
   const materials = materialsOf(fillings, options.dielectricsAt_Hz ?? 1e9);
+  const models = new Map<Pattern, Filaments>();
+  const filaments = (pattern: Pattern) => {
+    const found = models.get(pattern) ?? filamentsOf(section, metal, pattern);
+    models.set(pattern, found);
+    return found;
+  };
   const modes = modePatterns(params).map((mode): ModeLoss => {
     const factor = quadratic(factors, mode.currents);
     const inductance = quadratic(external, mode.currents);
     const series = lineImpedance(
       {
-        section,
-        metal,
-        pattern: patternOf(mode.name, section),
+        conductivity: metal.conductivity,
+        filaments: filaments(patternOf(mode.name, section)),
         currents: mode.currents,
         factor,
         external: inductance,
