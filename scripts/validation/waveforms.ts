@@ -6,6 +6,7 @@ import { type CaseValues, grouped } from "./grouped";
 const KINDS = [
   { group: "A", title: "Resistive ends, any topology", allowed: 1e-9 },
   { group: "B", title: "Capacitors, coils, clamps, tables, pairs, loss", allowed: 2e-3 },
+  { group: "K", title: "Skin effect", allowed: 2e-3 },
 ] as const;
 
 /** Waveforms at every receiver against exact sums and a circuit simulator. */

@@ -27,7 +27,9 @@ test("the validation page shows every kind of comparison, and nothing beyond wha
   await expect(page.getByRole("heading", { level: 2 })).toHaveText([
     /Field solver against finite elements/,
     /Field solver against exact values/,
+    /Loss against finite elements/,
     /Waveforms against exact sums/,
+    /Step responses against measured microstrips/,
     /Published formulas/,
   ]);
   const verdicts = page.getByRole("table").getByText(/^(pass|fail)$/);
