@@ -17,7 +17,7 @@ export function TraceSection({ width, ...props }: Props) {
   return width ? (
     <AtWidth {...props} width={width} />
   ) : (
-    <Sized least={480}>{(w) => <AtWidth {...props} width={w} />}</Sized>
+    <Sized>{(w) => <AtWidth {...props} width={w} />}</Sized>
   );
 }
 

@@ -10,17 +10,23 @@ type Column = DataColumn<ImpedanceRow>;
 /** Stands where an answer is on its way. */
 export const COMING = "…";
 
-/** The columns; `narrow` leaves those that stand beside an open panel. */
-export function impedanceColumns(unit: LengthUnit, narrow: boolean): Column[] {
+interface Choice {
+  /** only those that stand beside an open panel */
+  narrow: boolean;
+  /** some row is of a pair */
+  pairs: boolean;
+}
+
+export function impedanceColumns(unit: LengthUnit, { narrow, pairs }: Choice): Column[] {
   const length = (metres: number | null | undefined) =>
     metres === null || metres === undefined ? null : { text: columnDigits(metres, unit), unit };
   const answered = (row: ImpedanceRow, number: { text: string; unit: string } | null) =>
     row.pending ? { text: COMING } : number;
-  const columns: (Column & { beside?: boolean })[] = [
+  const columns: (Column & { beside?: boolean; ofPairs?: boolean })[] = [
     {
       id: "class",
       header: "Class",
-      width: 112,
+      width: 104,
       beside: true,
       cell: (row) => <span title={row.netClass.name}>{row.netClass.name}</span>,
       sortValue: (row) => row.netClass.name,
@@ -28,7 +34,7 @@ export function impedanceColumns(unit: LengthUnit, narrow: boolean): Column[] {
     {
       id: "layer",
       header: "Layer",
-      width: 80,
+      width: 78,
       beside: true,
       cell: (row) => (
         <span title={row.layer.name} className={row.allowed ? undefined : "text-ink-soft"}>
@@ -40,7 +46,7 @@ export function impedanceColumns(unit: LengthUnit, narrow: boolean): Column[] {
     {
       id: "target",
       header: "Target",
-      width: 64,
+      width: 60,
       beside: true,
       kind: "number",
       number: (row) => ({ text: String(Number(row.target.toFixed(2))), unit: "Ω" }),
@@ -50,7 +56,7 @@ export function impedanceColumns(unit: LengthUnit, narrow: boolean): Column[] {
     {
       id: "tolerance",
       header: "±",
-      width: 50,
+      width: 48,
       kind: "number",
       number: (row) => ({ text: String(row.tolerance), unit: "%" }),
       explanation: "Tolerance of the class",
@@ -58,7 +64,7 @@ export function impedanceColumns(unit: LengthUnit, narrow: boolean): Column[] {
     {
       id: "width",
       header: "Width",
-      width: 84,
+      width: 80,
       kind: "number",
       number: (row) => length(row.width),
       sortValue: (row) => row.width,
@@ -67,7 +73,8 @@ export function impedanceColumns(unit: LengthUnit, narrow: boolean): Column[] {
     {
       id: "gap",
       header: "Gap",
-      width: 84,
+      ofPairs: true,
+      width: 80,
       kind: "number",
       number: (row) => (row.gapAssumed ? null : length(row.gap)),
       sortValue: (row) => row.gap,
@@ -76,7 +83,7 @@ export function impedanceColumns(unit: LengthUnit, narrow: boolean): Column[] {
     {
       id: "gives",
       header: "Gives",
-      width: 72,
+      width: 66,
       beside: true,
       kind: "number",
       number: (row) => answered(row, row.now?.ok ? { text: ohms(row.now.value.impedance), unit: "Ω" } : null),
@@ -86,7 +93,7 @@ export function impedanceColumns(unit: LengthUnit, narrow: boolean): Column[] {
     {
       id: "centring",
       header: "Off target",
-      width: 92,
+      width: 84,
       beside: true,
       cell: (row) => (
         <MarkedNumber
@@ -100,7 +107,7 @@ export function impedanceColumns(unit: LengthUnit, narrow: boolean): Column[] {
     {
       id: "formula",
       header: "Formula",
-      width: 78,
+      width: 70,
       kind: "number",
       number: (row) => {
         const difference = formulaDifference(row);
@@ -115,7 +122,7 @@ export function impedanceColumns(unit: LengthUnit, narrow: boolean): Column[] {
     {
       id: "spread",
       header: "Spread",
-      width: 108,
+      width: 104,
       kind: "number",
       number: (row) =>
         row.spreadPending
@@ -129,7 +136,7 @@ export function impedanceColumns(unit: LengthUnit, narrow: boolean): Column[] {
     {
       id: "yield",
       header: "Yield",
-      width: 92,
+      width: 84,
       beside: true,
       cell: (row) => (
         <MarkedNumber
@@ -144,7 +151,7 @@ export function impedanceColumns(unit: LengthUnit, narrow: boolean): Column[] {
     {
       id: "meets",
       header: "Meets at",
-      width: 88,
+      width: 80,
       beside: true,
       kind: "number",
       number: (row) => answered(row, length(row.meets?.ok ? row.meets.value.dimension : null)),
@@ -154,7 +161,7 @@ export function impedanceColumns(unit: LengthUnit, narrow: boolean): Column[] {
     {
       id: "there",
       header: "There",
-      width: 70,
+      width: 66,
       kind: "number",
       number: (row) =>
         answered(row, row.meets?.ok ? { text: ohms(row.meets.value.impedance), unit: "Ω" } : null),
@@ -163,14 +170,15 @@ export function impedanceColumns(unit: LengthUnit, narrow: boolean): Column[] {
     {
       id: "gapMeets",
       header: "Or gap",
-      width: 84,
+      ofPairs: true,
+      width: 80,
       kind: "number",
       number: (row) => answered(row, length(row.gapMeets?.ok ? row.gapMeets.value.dimension : null)),
       explanation: "Of a pair: the gap that meets the target at the class’s width",
     },
     { id: "remarks", header: "Remarks", cell: (row) => <Remarks row={row} unit={unit} /> },
   ];
-  return narrow ? columns.filter(({ beside }) => beside) : columns;
+  return columns.filter(({ beside, ofPairs }) => (beside || !narrow) && (pairs || !ofPairs));
 }
 
 /** What cannot be etched comes first and in the colour of a warning. */

@@ -15,7 +15,7 @@ import { SectionDrawing } from "./section-drawing";
 import { TrialControls } from "./trial-controls";
 import { TrialHead } from "./trial-head";
 import { TrialNumbers } from "./trial-numbers";
-import { LossPlot, TrialPlots } from "./trial-plots";
+import { LossPlot, WidthPlot } from "./trial-plots";
 import { TrialSpread } from "./trial-spread";
 import type { ImpedanceState } from "./use-impedance-state";
 import { leastOf } from "./use-rows";
@@ -45,9 +45,18 @@ export function ImpedancePanel(props: Props) {
   const { unit } = state;
   const { netClass, layer, line } = row;
   const trial = useTrial(row, state);
+  const [plotRef, plotSeen] = useInView<HTMLElement>();
   const [lossRef, lossSeen] = useInView<HTMLElement>();
-  const answers = useTrialAnswers({ row, stackup, process, trial, grid, engines, withLoss: lossSeen });
-  const { tried, search, spread, curve, loss, sides, refused, widest } = answers;
+  const answers = useTrialAnswers({
+    row,
+    stackup,
+    process,
+    trial,
+    grid,
+    engines,
+    seen: { plot: plotSeen, loss: lossSeen },
+  });
+  const { tried, search, spread, curve, band, loss, sides, refused, widest } = answers;
   const { width, gap } = trial.shape;
   const meets = search.answer?.meets ?? null;
   const same = width === row.width && (gap === null || (gap === row.gap && !row.gapAssumed));
@@ -132,12 +141,14 @@ export function ImpedancePanel(props: Props) {
         </p>
         <TrialNumbers trial={tried.answer} unit={unit} />
         <TrialSpread row={row} spread={spread.answer} error={spread.error} />
-        <TrialPlots
+        <WidthPlot
+          ref={plotRef}
           row={row}
           unit={unit}
           grid={grid}
           chosen={width}
           points={curve.answer}
+          band={band.answer}
           least={leastOf(stackup, row.index, process)}
         />
         <LossPlot ref={lossRef} row={row} unit={unit} loss={loss.answer} error={loss.error} />

@@ -23,7 +23,8 @@ const LABEL = "Impedance by class and layer";
 /** Class × layer; drawn anew only when its rows change, not with every trial beside it. */
 export const ImpedanceTable = memo(function ImpedanceTable(props: Props) {
   const { rows, unit, beside, activeId, onActiveChange, onOpen, empty } = props;
-  const columns = useMemo(() => impedanceColumns(unit, beside), [unit, beside]);
+  const pairs = rows.some(({ line }) => line === "differential");
+  const columns = useMemo(() => impedanceColumns(unit, { narrow: beside, pairs }), [unit, beside, pairs]);
   return (
     <>
       <div className="hidden sm:block print:block">

@@ -58,10 +58,9 @@ export function capabilityWords(
   const under = (value: number | null, limit: number) => value !== null && value < limit * (1 - 1e-9);
   const words: string[] = [];
   const limit = (metres: number) => `${lengthDigits(metres, unit)} ${unit}`;
-  if (under(width, least.minWidth)) words.push(`width below the ${limit(least.minWidth)} that is etched`);
-  if (!gapAssumed && under(gap, least.minGap))
-    words.push(`gap below the ${limit(least.minGap)} that is etched`);
+  if (under(width, least.minWidth)) words.push(`width below least, ${limit(least.minWidth)}`);
+  if (!gapAssumed && under(gap, least.minGap)) words.push(`gap below least, ${limit(least.minGap)}`);
   if (words.length === 0 && meets?.ok && under(meets.value.dimension, least.minWidth))
-    words.push(`the width that meets is below the ${limit(least.minWidth)} that is etched`);
+    words.push(`meets below least, ${limit(least.minWidth)}`);
   return words;
 }

@@ -34,7 +34,7 @@ export function Slide({ label, id, value, min, max, step, words, onDrag, onSettl
     return () => input?.removeEventListener("change", listen);
   }, []);
   return (
-    <div className="grid grid-cols-[92px_1fr_96px] items-center gap-3">
+    <div className="grid grid-cols-[112px_1fr_96px] items-center gap-3">
       <label htmlFor={id} className="text-sm font-medium">
         {label}
       </label>

@@ -68,7 +68,7 @@ export function TrialControls({ trial, sides, unit, grid, widest }: Props) {
           );
         })}
         {sides?.mask
-          ? length("Mask over it", "mask", change.mask ?? sides.mask.overTrace, {
+          ? length("Mask over copper", "mask", change.mask ?? sides.mask.overTrace, {
               min: 5e-6,
               max: 60e-6,
               step: fine,

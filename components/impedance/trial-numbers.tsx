@@ -4,7 +4,7 @@ import type { ReactNode } from "react";
 import type { Trial } from "@/lib/client/engine-impedance";
 import type { LineFacts } from "@/lib/client/engine-line";
 import type { LengthUnit } from "@/lib/client/preferences";
-import { ohms, signedPercent } from "./row-words";
+import { signedPercent } from "./row-words";
 
 /** Every number of the solved line, the published formula beside it. */
 export function TrialNumbers({ trial, unit }: { trial: Trial | null; unit: LengthUnit }) {
@@ -23,16 +23,14 @@ export function TrialNumbers({ trial, unit }: { trial: Trial | null; unit: Lengt
         ))}
       </dl>
       {facts?.formula ? (
-        <p className="mt-2 text-sm">
-          {facts.formula.title}: {ohms(facts.formula.ohms)}
-          <Soft> Ω</Soft>, {signedPercent((100 * (facts.formula.ohms - facts.impedance)) / facts.impedance)}
-          <Soft> %</Soft> from the field solution;{" "}
-          <span className={facts.formula.inRange ? "text-ink-soft" : "text-near"}>
+        <p className="text-ink-soft mt-2 text-xs">
+          Formula: {facts.formula.title};{" "}
+          <span className={facts.formula.inRange ? undefined : "text-near"}>
             {facts.formula.inRange ? "within" : "outside"} its range ({facts.formula.range}).
           </span>
         </p>
       ) : facts ? (
-        <p className="text-ink-soft mt-2 text-sm">No published formula fits this section.</p>
+        <p className="text-ink-soft mt-2 text-xs">No published formula fits this section.</p>
       ) : null}
     </section>
   );
@@ -63,12 +61,25 @@ function numbersOf(facts: LineFacts, unit: LengthUnit): Entry[] {
       <Soft> %</Soft>
     </>,
   ];
+  const formula: Entry[] = facts.formula
+    ? [
+        ["Formula", z(facts.formula.ohms)],
+        [
+          "Its difference",
+          <>
+            {signedPercent((100 * (facts.formula.ohms - facts.impedance)) / facts.impedance)}
+            <Soft> %</Soft>
+          </>,
+        ],
+      ]
+    : [];
   if (!even)
     return [
       ["Impedance", z(facts.impedance)],
       ["Effective Dk", mode.effectivePermittivity.toFixed(3)],
       ["Delay", delay(mode.delay)],
       error,
+      ...formula,
     ];
   return [
     ["Differential", z(facts.impedance)],
@@ -81,6 +92,7 @@ function numbersOf(facts: LineFacts, unit: LengthUnit): Entry[] {
     ["Effective Dk, even", even.effectivePermittivity.toFixed(3)],
     ["Delay, even", delay(even.delay)],
     error,
+    ...formula,
   ];
 }
 

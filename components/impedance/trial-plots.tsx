@@ -4,18 +4,20 @@ import type { LossFacts } from "@/lib/client/engine-loss";
 import type { Outcome } from "@/lib/client/engine-line";
 import { quantityText } from "@/lib/drawings/number-text";
 import { LossFrequency } from "@/components/charts/loss-frequency";
-import type { Ref } from "react";
+import { type Ref, useMemo } from "react";
 import { ImpedanceWidth } from "@/components/charts/impedance-width";
 import { Skeleton } from "@/components/ui/skeleton";
+import type { BandPoint } from "@/lib/client/engine-spread";
 import type { CurvePoint } from "@/lib/client/engine-impedance";
 import type { LengthUnit } from "@/lib/client/preferences";
-import { curveRows, impedanceWidth } from "@/lib/drawings/impedance-width.geometry";
+import { curveRows, impedanceWidth, type WidthPoint } from "@/lib/drawings/impedance-width.geometry";
 import { lossFrequency, lossRows } from "@/lib/drawings/loss-frequency.geometry";
 import type { Capability } from "@/lib/si/stackup";
 import type { ImpedanceRow } from "./impedance-rows";
 import { Saved } from "./trial-spread";
 
 interface Props {
+  ref: Ref<HTMLElement>;
   row: ImpedanceRow;
   unit: LengthUnit;
   /** [m] */
@@ -23,25 +25,29 @@ interface Props {
   /** [m] */
   chosen: number;
   points: CurvePoint[] | null;
+  /** how production spreads along it */
+  band: BandPoint[] | null;
   least: Capability | null;
 }
 
 const HEIGHT = 230;
 
 /** Impedance against width, with what is wanted and what can be etched. */
-export function TrialPlots({ row, unit, grid, chosen, points, least }: Props) {
+export function WidthPlot({ ref, row, unit, grid, chosen, points, band, least }: Props) {
+  const spread = useMemo(() => points && withSpread(points, band ?? []), [points, band]);
   const target = { ohms: row.target, tolerance: row.tolerance / 100 };
   const options = { unit, target, chosen, grid, least: least?.minWidth ?? null };
   return (
-    <section aria-label="Impedance against width" className="mt-5">
+    <section ref={ref} aria-label="Impedance against width" className="mt-5">
       <h3 className="mb-1 text-sm font-semibold">Impedance against width</h3>
-      {points ? (
+      {spread ? (
         <>
-          <ImpedanceWidth points={points} height={HEIGHT} {...options} />
+          <ImpedanceWidth points={spread} height={HEIGHT} {...options} />
           <Saved
+            words={band ? "The band holds 99\u2009% of production at each width." : undefined}
             fileName={`${row.netClass.name} on ${row.layer.name} width`}
-            drawing={() => impedanceWidth(points, { width: 720, height: 340, ...options })}
-            rows={() => curveRows(points, unit)}
+            drawing={() => impedanceWidth(spread, { width: 720, height: 340, ...options })}
+            rows={() => curveRows(spread, unit)}
           />
         </>
       ) : (
@@ -51,6 +57,21 @@ export function TrialPlots({ row, unit, grid, chosen, points, least }: Props) {
       )}
     </section>
   );
+}
+
+/** The curve with the spread between the widths at which it was computed, straight in their logarithm. */
+function withSpread(points: readonly CurvePoint[], band: readonly BandPoint[]): WidthPoint[] {
+  return points.map((point) => {
+    const after = band.findIndex(({ width }) => width >= point.width * (1 - 1e-9));
+    const [a, b] = [band[Math.max(after - 1, 0)], band[after]];
+    if (!a || !b) return point;
+    const part = a === b ? 0 : Math.log(point.width / a.width) / Math.log(b.width / a.width);
+    return {
+      ...point,
+      low: point.impedance * (a.low + part * (b.low - a.low)),
+      high: point.impedance * (a.high + part * (b.high - a.high)),
+    };
+  });
 }
 
 interface LossProps {

@@ -5,7 +5,7 @@ import type { Engine } from "@/lib/client/engine";
 import type { CurveJob, SearchJob, TrialJob } from "@/lib/client/engine-impedance";
 import type { LossJob } from "@/lib/client/engine-loss";
 import { SOUGHT } from "@/lib/client/engine-sought";
-import type { SpreadJob } from "@/lib/client/engine-spread";
+import type { BandJob, SpreadJob } from "@/lib/client/engine-spread";
 import { useEngine } from "@/lib/client/use-engine";
 import { trialSides, type TrialSides, trialStackup } from "@/lib/resolve/trial-stackup";
 import type { ProcessDoc } from "@/lib/schemas/process";
@@ -22,12 +22,12 @@ interface Inputs {
   /** [m] */
   grid: number;
   engines: { live: Engine; background: Engine };
-  /** It takes longest; not asked for until it is looked at. */
-  withLoss: boolean;
+  /** What takes longest is not asked for until it is looked at. */
+  seen: { plot: boolean; loss: boolean };
 }
 
 /** Everything shown of a trial: its line live, the rest once the hand rests. */
-export function useTrialAnswers({ row, stackup, process, trial, grid, engines, withLoss }: Inputs) {
+export function useTrialAnswers({ row, stackup, process, trial, grid, engines, seen }: Inputs) {
   const { index, line, target, tolerance } = row;
   const { dragging } = trial;
   const { width, gap } = trial.shape;
@@ -98,12 +98,28 @@ export function useTrialAnswers({ row, stackup, process, trial, grid, engines, w
   );
   const spread = useEngine(engines.background, spreadJob);
 
+  const bandJob = useSettled(
+    useMemo(
+      (): BandJob => ({
+        kind: "line-band",
+        stackup: changed,
+        index,
+        gap,
+        process,
+        from: SOUGHT.min,
+        to: widest,
+      }),
+      [changed, index, gap, process, widest],
+    ),
+    !dragging,
+  );
+  const band = useEngine(engines.background, seen.plot ? bandJob : null);
   const lossJob = useSettled(
     useMemo((): LossJob => ({ kind: "line-loss", stackup: changed, index, shape }), [changed, index, shape]),
     !dragging,
   );
-  const loss = useEngine(engines.background, withLoss ? lossJob : null);
-  return { sides, changed, refused, widest, tried, curve, search, spread, loss };
+  const loss = useEngine(engines.background, seen.loss ? lossJob : null);
+  return { sides, changed, refused, widest, tried, curve, search, spread, band, loss };
 }
 
 /** The value as it was when the hand last rested. */

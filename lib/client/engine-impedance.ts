@@ -13,10 +13,17 @@ import {
   widthFor,
 } from "./engine-line";
 import { type LossFacts, type LossJob, lossOf } from "./engine-loss";
-import { lineSpread, type SpreadFacts, type SpreadJob } from "./engine-spread";
+import {
+  type BandJob,
+  type BandPoint,
+  lineSpread,
+  spreadBand,
+  type SpreadFacts,
+  type SpreadJob,
+} from "./engine-spread";
 
 /** What the impedance page asks of the engine. */
-export type ImpedanceJob = CellJob | SearchJob | TrialJob | CurveJob | SpreadJob | LossJob;
+export type ImpedanceJob = CellJob | SearchJob | TrialJob | CurveJob | SpreadJob | BandJob | LossJob;
 
 export interface ImpedanceAnswers {
   "line-cell": CellAnswer;
@@ -24,6 +31,7 @@ export interface ImpedanceAnswers {
   "line-trial": Trial;
   "line-curve": CurvePoint[];
   "line-spread": Outcome<SpreadFacts>;
+  "line-band": BandPoint[];
   "line-loss": Outcome<LossFacts>;
 }
 
@@ -118,6 +126,8 @@ export function answerImpedance(job: ImpedanceJob): ImpedanceAnswers[ImpedanceJo
       return curve(job);
     case "line-spread":
       return lineSpread(job);
+    case "line-band":
+      return spreadBand(job);
     case "line-loss":
       return lossOf(job);
   }

@@ -1,8 +1,8 @@
+import { processToSi } from "@/lib/resolve/process-to-si";
 import type { ProcessDoc } from "@/lib/schemas/process";
-import type { Stackup } from "@/lib/si/stackup";
-import type { Process } from "@/lib/si/stackup/process";
-import { spreadOnLayer, yieldOf } from "@/lib/si/stackup/spread-on-layer";
-import { toSi } from "@/lib/si/units";
+import type { CrossSection } from "@/lib/si/cross-section";
+import { solveCrossSection } from "@/lib/si/field";
+import { spreadOnLayer, type Stackup, yieldOf } from "@/lib/si/stackup";
 import { attempt, type LineShape, type Outcome, traceShape } from "./engine-line";
 import { remembered } from "./engine-memo";
 
@@ -58,7 +58,9 @@ export function lineSpread({
 }: SpreadJob): Outcome<SpreadFacts> {
   return attempt(() => {
     const spread = remembered(["spread", stackup, index, shape, process], () =>
-      spreadOnLayer(stackup, index, traceShape(shape), processInSi(process)),
+      spreadOnLayer(stackup, index, traceShape(shape), processToSi(process), {
+        solve: solveOnce("standard"),
+      }),
     );
     const { low, high, mean, sigma, histogram, sensitivities, method } = spread;
     return {
@@ -78,16 +80,50 @@ export function lineSpread({
   });
 }
 
-function processInSi(process: ProcessDoc): Process {
-  const length = (quantity: ProcessDoc["minWidth"]) => (quantity ? toSi(quantity, "length") : null);
-  return {
-    width: Number(process.widthPercent) / 100,
-    copper: Number(process.copperPercent) / 100,
-    dielectric: Number(process.dielectricPercent) / 100,
-    dk: Number(process.dkPercent) / 100,
-    mask: Number(process.maskPercent) / 100,
-    distribution: process.distribution,
-    minWidth: length(process.minWidth),
-    minGap: length(process.minGap),
-  };
+/** Mirrored layers and classes of one width share the solutions under their spreads. */
+const solveOnce = (accuracy: "live" | "standard") => (section: CrossSection) =>
+  remembered(["solved", section, accuracy], () => solveCrossSection(section, { accuracy }));
+
+/** How wide the spread is over a range of widths. */
+export interface BandJob {
+  kind: "line-band";
+  stackup: Stackup;
+  index: number;
+  gap: number | null;
+  process: ProcessDoc;
+  /** [m] */
+  from: number;
+  to: number;
+}
+
+/** 0.5th and 99.5th percentile as shares of the nominal. */
+export interface BandPoint {
+  /** [m] */
+  width: number;
+  low: number;
+  high: number;
+}
+
+const BAND_POINTS = 7;
+const BAND_SAMPLES = 400;
+
+/** The spread's ends change slowly with the width: a few widths tell them for a curve. */
+export function spreadBand({ stackup, index, gap, process, from, to }: BandJob): BandPoint[] {
+  return Array.from({ length: BAND_POINTS }, (_, i) => from * (to / from) ** (i / (BAND_POINTS - 1))).flatMap(
+    (width) => {
+      const spread = attempt(() =>
+        remembered(["band", stackup, index, { width, gap }, process], () => {
+          const { nominal, low, high } = spreadOnLayer(
+            stackup,
+            index,
+            traceShape({ width, gap }),
+            processToSi(process),
+            { samples: BAND_SAMPLES, accuracy: "live", solve: solveOnce("live") },
+          );
+          return { low: low / nominal, high: high / nominal };
+        }),
+      );
+      return spread.ok ? [{ width, ...spread.value }] : [];
+    },
+  );
 }

@@ -47,7 +47,8 @@ interface Vertical {
   x: number;
   from1: number;
   from2: number;
-  label: string;
+  /** one line, or two where the room beside is small */
+  label: string | readonly [name: string, value: string];
   /** the label sits right (default) or left of the line */
   left?: boolean;
 }
@@ -68,8 +69,12 @@ export function verticalDimension({ y1, y2, x, from1, from2, label, left = false
     }),
     arrow(x, top, outside ? "down" : "up"),
     arrow(x, bottom, outside ? "up" : "down"),
-    text(left ? x - 8 : x + 8, (top + bottom) / 2 + 4, label, { anchor: left ? "end" : "start", halo: true }),
   );
+  const lines = typeof label === "string" ? [label] : label;
+  lines.forEach((words, i) => {
+    const y = (top + bottom) / 2 + 4 + (i - (lines.length - 1) / 2) * (SIZE + 2);
+    marks.push(text(left ? x - 8 : x + 8, y, words, { anchor: left ? "end" : "start", halo: true }));
+  });
   return marks;
 }
 

@@ -1,6 +1,7 @@
 import { linear } from "./axis";
 import { type Drawing, emptyDrawing, line, type Mark, rect, text } from "./marks";
 import { numberText, withUnit } from "./number-text";
+import { textWidth } from "./text-width";
 
 /** What one tolerance makes of the spread. */
 export interface ToleranceShare {
@@ -17,6 +18,7 @@ export interface ToleranceBarsOptions {
 }
 
 const ROW = 22;
+const SIZE = 12;
 /** Shares below this are one bar together. */
 const SMALL = 0.005;
 
@@ -29,12 +31,15 @@ export function toleranceBars(shares: readonly ToleranceShare[], options: Tolera
   if (shown.length === 0) return emptyDrawing(title, "No tolerance was varied.", width, 2 * ROW);
 
   const height = shown.length * ROW + 4;
-  const nameWidth = Math.min(220, Math.max(110, width * 0.36));
-  const x = linear([0, 1], [nameWidth, width - 128]);
+  const longest = Math.max(...shown.map(({ name }) => textWidth(name, SIZE)));
+  const nameWidth = Math.min(longest + 10, width * 0.5);
+  // the longest bar leaves room for its own words only
+  const most = Math.max(...shown.map(({ share }) => share));
+  const x = linear([0, most], [nameWidth, Math.max(width - 104, nameWidth + 24)]);
   const marks: Mark[] = shown.flatMap((entry, i): Mark[] => {
     const y = 2 + i * ROW;
     return [
-      text(nameWidth - 8, y + 15, entry.name, { anchor: "end" }),
+      text(nameWidth - 8, y + 15, fitted(entry.name, nameWidth - 8), { anchor: "end", tip: entry.name }),
       rect(x(0), y + 4, Math.max(x(entry.share) - x(0), 1), ROW - 8, { fill: "copper", fillOpacity: 0.75 }),
       text(x(entry.share) + 6, y + 15, words(entry)),
     ];
@@ -51,6 +56,14 @@ export function toleranceRows(shares: readonly ToleranceShare[]): (string | numb
     ["tolerance", "share of variance (%)", "spread by it (Ω)"],
     ...shares.map((s) => [s.name, Number((100 * s.share).toPrecision(5)), Number(s.ohms.toPrecision(5))]),
   ];
+}
+
+/** A name cut to its room. */
+function fitted(name: string, room: number): string {
+  if (textWidth(name, SIZE) <= room) return name;
+  let cut = name;
+  while (cut.length > 1 && textWidth(`${cut}…`, SIZE) > room) cut = cut.slice(0, -1);
+  return `${cut.trimEnd()}…`;
 }
 
 const words = ({ share, ohms }: ToleranceShare): string =>

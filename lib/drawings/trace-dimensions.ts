@@ -15,10 +15,13 @@ export function traceDimensions(
   right: number,
   unit: LengthUnit,
   base: number,
+  compact: boolean,
 ): Mark[] {
   const [first, second] = shape.traces;
   if (!first) return [];
   const words = (name: string, m: number): string => `${name} ${lengthText(m, unit)}`;
+  const beside = (name: string, m: number): string | [string, string] =>
+    compact ? [name, lengthText(m, unit)] : words(name, m);
   const top = first.y + first.thickness;
   const ceiling = shape.upperPlane
     ? at.y(laminate) - PLANE
@@ -49,7 +52,7 @@ export function traceDimensions(
       x: right + 14,
       from1: right,
       from2: right,
-      label: words("height below", first.y),
+      label: beside("height below", first.y),
     }),
     ...verticalDimension({
       y1: at.y(first.y),
@@ -69,7 +72,7 @@ export function traceDimensions(
         x: right + 14,
         from1: right,
         from2: right,
-        label: words("height above", laminate - top),
+        label: beside("height above", laminate - top),
       }),
     );
   if (second && Math.abs(second.y - first.y) < 1e-12) {

@@ -1,6 +1,8 @@
 import {
   type Drawing,
   emptyDrawing,
+  group,
+  type GroupMark,
   line,
   type Mark,
   type Point,
@@ -9,7 +11,7 @@ import {
   rect,
   text,
 } from "./marks";
-import type { LengthUnit } from "./number-text";
+import { lengthText, type LengthUnit } from "./number-text";
 import { scaleBar } from "./scale-bar";
 import { maskOutline } from "./trace-mask-outline";
 import { PLANE, traceDimensions } from "./trace-dimensions";
@@ -31,10 +33,14 @@ export interface TraceSectionOptions {
   equipotentials?: readonly Equipotential[];
 }
 
-const LEFT = 92;
-const RIGHT = 172;
+/** Room for the dimensions around the body [px]; a narrow drawing writes those beside it on two lines. */
+const ROOM = { left: 92, right: 172 };
+const COMPACT_ROOM = { left: 86, right: 100 };
+const COMPACT_BELOW = 600;
 const ABOVE = 58;
 const BELOW = 66;
+/** of the air over an outer trace in which lines of equal potential are drawn [px] */
+const AIR = 52;
 
 /** One trace or pair over or between its planes, to scale, with its dimensions. */
 export function traceSection(
@@ -58,6 +64,8 @@ export function traceSection(
   );
   const half = Math.max(...shape.traces.map((t) => Math.abs(t.x) + Math.max(t.widthBottom, t.widthTop) / 2));
   const reach = half + Math.max(0.7 * first.widthBottom, 0.5 * laminate, (shape.coplanar?.gap ?? 0) * 1.6);
+  const compact = width < COMPACT_BELOW;
+  const { left: LEFT, right: RIGHT } = compact ? COMPACT_ROOM : ROOM;
   const scale = Math.min((width - LEFT - RIGHT) / (2 * reach), (height - ABOVE - BELOW) / crest);
   const centre = (LEFT + width - RIGHT) / 2;
   const base = height - BELOW - (height - ABOVE - BELOW - crest * scale) / 2;
@@ -66,7 +74,7 @@ export function traceSection(
   const [left, right] = [LEFT, width - RIGHT];
 
   const marks: Mark[] = [
-    ...dielectrics(shape, at, left, right),
+    ...dielectrics(shape, at, left, right, unit),
     ...(shape.mask
       ? [
           polygon(
@@ -78,12 +86,12 @@ export function traceSection(
           ),
         ]
       : []),
-    ...(options.equipotentials ?? []).map((line) =>
-      polyline(
-        line.points.map(([x, y]): Point => [at.x(x), at.y(y)]),
-        { stroke: "violet", weight: 0.8, opacity: 0.25 + 0.55 * line.level },
-      ),
-    ),
+    ...potentials(options.equipotentials ?? [], at, {
+      x: left,
+      y: at.y(crest) - (shape.upperPlane ? 0 : AIR),
+      width: right - left,
+      height: base - at.y(crest) + (shape.upperPlane ? 0 : AIR),
+    }),
     plane(left, right, at.y(0), at.y(0) + PLANE),
     ...(shape.upperPlane ? [plane(left, right, at.y(laminate) - PLANE, at.y(laminate))] : []),
     ...coplanarGround(shape, at, left, right),
@@ -98,17 +106,38 @@ export function traceSection(
         { fill: "copper", hit: "trace" },
       ),
     ),
-    ...traceDimensions(shape, at, laminate, left, right, unit, base),
+    ...traceDimensions(shape, at, laminate, left, right, unit, base, compact),
     ...scaleBar(left, height - 8, scale, 100, unit),
   ];
   return { width, height, title, description: describeTrace(shape, unit), marks, scale };
+}
+
+function potentials(lines: readonly Equipotential[], at: Placement, clip: GroupMark["clip"]): Mark[] {
+  if (lines.length === 0) return [];
+  return [
+    group(
+      lines.map(({ points, level }) =>
+        polyline(
+          points.map(([x, y]): Point => [at.x(x), at.y(y)]),
+          { stroke: "violet", weight: 0.8, opacity: 0.35 + 0.5 * Math.abs(level) },
+        ),
+      ),
+      { clip },
+    ),
+  ];
 }
 
 function plane(left: number, right: number, top: number, bottom: number): Mark {
   return rect(left, top, right - left, bottom - top, { fill: "copper", fillOpacity: 0.9 });
 }
 
-function dielectrics(shape: TraceSectionShape, at: Placement, left: number, right: number): Mark[] {
+function dielectrics(
+  shape: TraceSectionShape,
+  at: Placement,
+  left: number,
+  right: number,
+  unit: LengthUnit,
+): Mark[] {
   const marks: Mark[] = [];
   let y = 0;
   shape.layers.forEach((layer, i) => {
@@ -121,15 +150,17 @@ function dielectrics(shape: TraceSectionShape, at: Placement, left: number, righ
     );
     if (i > 0)
       marks.push(line(left, bottom, right, bottom, { stroke: "ink-soft", weight: 0.5, opacity: 0.5 }));
+    const holdsTrace = shape.traces.some(
+      (t) => t.y + 1e-9 < y + layer.thickness && t.y + t.thickness > y + 1e-9,
+    );
+    const facts = [
+      `Dk ${layer.er.toFixed(2)}`,
+      // the height dimensions tell those beside the trace, which are higher by the copper
+      ...(holdsTrace ? [] : [lengthText(layer.thickness, unit)]),
+      ...(layer.name ? [layer.name] : []),
+    ];
     if (bottom - top >= 13)
-      marks.push(
-        text(
-          left + 8,
-          (top + bottom) / 2 + 4,
-          `Dk ${layer.er.toFixed(2)}${layer.name ? `, ${layer.name}` : ""}`,
-          { ink: "ink-soft" },
-        ),
-      );
+      marks.push(text(left + 8, (top + bottom) / 2 + 4, facts.join(", "), { ink: "ink-soft", halo: true }));
     y += layer.thickness;
   });
   return marks;

@@ -1,4 +1,4 @@
-import type { CrossSection } from "../cross-section";
+import type { CrossSection, LineParameters } from "../cross-section";
 import { impedanceSpread, predictedYield, type SectionTolerances, type Tolerance } from "../spread";
 import { buildCrossSection, type BuiltCrossSection, type TraceShape } from "./build-cross-section";
 import type { Stackup } from "./model";
@@ -41,13 +41,23 @@ export function spreadOnLayer(
   index: number,
   shape: TraceShape,
   process: Process,
-  options: { samples?: number; accuracy?: "live" | "standard" | "reference" } = {},
+  options: {
+    samples?: number;
+    accuracy?: "live" | "standard" | "reference";
+    /** in place of the field solver, for whoever keeps its answers */
+    solve?: (section: CrossSection) => LineParameters;
+  } = {},
 ): LayerSpread {
   validateProcess(process);
   const built = buildCrossSection(stackup, index, shape);
   const tolerances = sectionTolerances(stackup, index, built, process);
-  const { samples = SPREAD_SAMPLES, accuracy = "standard" } = options;
-  const spread = impedanceSpread(built.section, tolerances, { samples, seed: SEED, accuracy });
+  const { samples = SPREAD_SAMPLES, accuracy = "standard", solve } = options;
+  const spread = impedanceSpread(built.section, tolerances, {
+    samples,
+    seed: SEED,
+    accuracy,
+    ...(solve && { solve }),
+  });
   return {
     nominal: spread.nominal,
     mean: spread.mean,
