@@ -1,6 +1,6 @@
 // @vitest-environment jsdom
 import { QueryClient, QueryClientProvider } from "@tanstack/react-query";
-import { cleanup, render, screen, waitFor, within } from "@testing-library/react";
+import { cleanup, fireEvent, render, screen, waitFor, within } from "@testing-library/react";
 import userEvent from "@testing-library/user-event";
 import { NuqsTestingAdapter, type OnUrlUpdateFunction } from "nuqs/adapters/testing";
 import { Tooltip } from "radix-ui";
@@ -21,6 +21,8 @@ const CLASSES = [
   ),
 ];
 
+/** How often the page's own undo was asked for. */
+let undone = 0;
 let puts: { version: number; netClass: NetClassDoc }[] = [];
 let address = new URLSearchParams();
 /** What the server has. */
@@ -40,10 +42,12 @@ beforeAll(() => {
 beforeEach(() => {
   vi.stubGlobal("matchMedia", () => ({ matches: true }));
   puts = [];
+  undone = 0;
   address = new URLSearchParams();
   vi.stubGlobal(
     "fetch",
     vi.fn(async (path: string, init?: RequestInit) => {
+      if (init?.method === "POST") undone++;
       if (init?.method !== "PUT") {
         if (path.includes("/stackup")) return Response.json(served.stackup);
         return Response.json(
@@ -139,6 +143,70 @@ describe("impedance page", () => {
     // 0.2 mm is 7.874 mil, computed
     expect(rows[0]?.textContent).toContain("7.874");
     expect(rows[0]?.textContent).toContain("mil");
+  });
+
+  it("undoes trials by Ctrl+Z in the panel, one step a slider or number, and resets them", async () => {
+    const user = show();
+    await user.keyboard("j{Enter}");
+    await waitFor(() => expect(panel()).not.toBeNull());
+    const height = await screen.findByRole<HTMLInputElement>("textbox", {
+      name: "Height below, as a number",
+    });
+    const own = height.value;
+    await user.click(height);
+    await user.clear(height);
+    await user.type(height, "0.3{Enter}");
+    expect(address.get("below")).toBe("300");
+    expect(panel()?.textContent).toContain("Heights, Dk and mask are only tried here");
+    const slider = screen.getByRole<HTMLInputElement>("slider", { name: "Foot width" });
+    fireEvent.input(slider, { target: { value: "60" } });
+    fireEvent.input(slider, { target: { value: "61" } });
+    fireEvent(slider, new Event("change", { bubbles: true }));
+    // 61 steps of 5 µm
+    await waitFor(() => expect(address.get("width")).toBe("305"));
+    slider.focus();
+    await user.keyboard("{Control>}z{/Control}");
+    await waitFor(() => expect(address.get("width")).toBeNull());
+    expect(address.get("below")).toBe("300");
+    await user.keyboard("{Control>}z{/Control}");
+    await waitFor(() => expect(address.get("below")).toBeNull());
+    expect(height.value).toBe(own);
+    await user.click(screen.getByRole("button", { name: "Redo trial" }));
+    await waitFor(() => expect(address.get("below")).toBe("300"));
+    await user.click(screen.getByRole("button", { name: "Reset" }));
+    await waitFor(() => expect(address.get("below")).toBeNull());
+    expect(undone).toBe(0);
+  });
+
+  it("restores row, width, heights, Dk and mask from the address", async () => {
+    const [bus] = CLASSES;
+    const cell = `${bus?.lineageId}.${bus?.layers[0]?.layerLineageId}`;
+    show({ search: `?cell=${cell}&width=250&below=150&dkBelow=3.6&mask=12` });
+    const value = async (name: string) =>
+      (await screen.findByRole<HTMLInputElement>("textbox", { name: `${name}, as a number` })).value;
+    expect(await value("Foot width")).toBe("0.25 mm");
+    expect(await value("Height below")).toBe("0.15 mm");
+    expect(await value("Dk below")).toBe("3.6");
+    expect(await value("Mask over copper")).toBe("0.012 mm");
+    await waitFor(() =>
+      expect(panel()?.querySelector("desc")?.textContent).toContain("height below 0.150\u2009mm"),
+    );
+  });
+
+  it("forgets what was tried with the row it was tried on", async () => {
+    const user = show();
+    await user.keyboard("j{Enter}");
+    await waitFor(() => expect(panel()).not.toBeNull());
+    const width = screen.getByRole<HTMLInputElement>("textbox", { name: "Foot width, as a number" });
+    await user.click(width);
+    await user.clear(width);
+    await user.type(width, "0.4{Enter}");
+    expect(address.get("width")).toBe("400");
+    await user.tab();
+    (document.activeElement as HTMLElement).blur();
+    await user.keyboard("j");
+    await waitFor(() => expect(panel()?.textContent).toContain("Bus on L4"));
+    expect(address.get("width")).toBeNull();
   });
 
   it("lets a reviewer try widths without a button that writes them", async () => {
