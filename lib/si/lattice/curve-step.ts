@@ -2,26 +2,28 @@ import type { Cluster } from "./clusters";
 import { discretiseLevels, type Propagator } from "./discretise";
 
 /**
- * A chord over one step of exp(−t/τ) started by a ramp misses by step²/(8 τ ramp) of the swing; where several clusters
- * follow one another, their misses add.
+ * A chord over one step of exp(−t/τ) started by a ramp misses by step²/(8 τ ramp) of the swing. Nodes with nothing but
+ * capacitance follow the curve of what arrives, so that only the drawn chord counts; clusters of several nodes take it
+ * as straight, and where several follow one another, their misses add.
  */
 export function curveStep(
   clusters: readonly Cluster[],
   ramp: number,
   until: number,
-  fineness: number,
+  fineness: { curve: number; chord: number },
 ): number {
   const longest = Number.isFinite(ramp) ? ramp / 4 : until / 1000;
   const dynamic = clusters.filter(
     (cluster) => !cluster.isStatic && cluster.ports.length + cluster.feeds.length > 0,
   );
-  const curve = fineness / Math.max(1, dynamic.length / 2) ** 0.25;
+  const curve = fineness.curve / Math.max(1, dynamic.length / 2) ** 0.25;
   let step = longest;
   for (const { size, e, g } of dynamic) {
     if (size !== 1) continue;
     const tau = e[0]! / g[0]!;
     const scale = Number.isFinite(ramp) ? ramp : tau;
-    if (tau > 1e-3 * scale) step = Math.min(step, Math.max(curve * Math.sqrt(tau * scale), scale / 400));
+    if (tau > 1e-3 * scale)
+      step = Math.min(step, Math.max(fineness.chord * Math.sqrt(tau * scale), scale / 400));
   }
   for (const cluster of dynamic)
     if (cluster.size > 1) step = Math.min(step, clusterStep(cluster, step, ramp, (curve * curve) / 8));

@@ -1,5 +1,6 @@
 import type { Circuit } from "./circuit";
 import type { Cluster } from "./clusters";
+import { curvedUpdate, type CurvedUpdate } from "./curved-workers";
 import { skinFilter, type SkinFilter } from "./skin-fit";
 import { discretise, discretiseNode, type Propagator } from "./discretise";
 
@@ -19,6 +20,8 @@ export interface GridPlan {
   delays: StepDelay[];
   /** by line; null: lossless */
   skins: (SkinFilter | null)[];
+  /** how many steps before they are needed arrivals are looked at: 1 where some node follows their curve */
+  ahead: 0 | 1;
   /** steps that can be done for one cluster before the others must follow */
   block: number;
   clusters: PlannedCluster[];
@@ -28,6 +31,8 @@ export interface PlannedCluster {
   cluster: Cluster;
   /** one node without coils: three numbers instead of matrices */
   single: { p: number; q0: number; q1: number } | null;
+  /** the same, following the curve of arrivals; null: straight lines are as good */
+  curved: CurvedUpdate | null;
   propagator: Propagator | null;
   /** what a current that is there from t = 0 does at once, before any charge has moved */
   atOnce: Float64Array | null;
@@ -56,6 +61,9 @@ export function planGrid(
     block = Math.min(block, taps ? whole - 1 : whole);
     pad = Math.max(pad, whole + 4);
   }
+  const planned = clusters.map((cluster) => planCluster(cluster, step));
+  const ahead = block > 1 && planned.some(({ curved }) => curved) ? 1 : 0;
+  if (ahead === 0) for (const one of planned) one.curved = null;
   const steps = Math.max(1, Math.ceil(until / step - 1e-9));
   return {
     step,
@@ -63,8 +71,9 @@ export function planGrid(
     pad,
     delays,
     skins: circuit.lines.map(({ skin }) => (skin > 0 ? skinFilter(skin, step, until) : null)),
-    block,
-    clusters: clusters.map((cluster) => planCluster(cluster, step)),
+    ahead,
+    block: block - ahead,
+    clusters: planned,
   };
 }
 
@@ -86,17 +95,25 @@ function stepDelay(steps: number): StepDelay {
 function planCluster(cluster: Cluster, step: number): PlannedCluster {
   const { size, e, g } = cluster;
   const idle = cluster.ports.length + cluster.feeds.length + cluster.tables.length === 0;
-  if (size === 0 || idle) return { cluster, single: null, propagator: null, atOnce: null };
+  if (size === 0 || idle) return { cluster, single: null, curved: null, propagator: null, atOnce: null };
   const plain =
     cluster.tables.length === 0 &&
     cluster.nodes.length === 1 &&
     size === 1 &&
     cluster.ports.every((port) => port.share === 1);
-  if (plain) return { cluster, single: discretiseNode(e[0]!, g[0]!, step), propagator: null, atOnce: null };
+  if (plain)
+    return {
+      cluster,
+      single: discretiseNode(e[0]!, g[0]!, step),
+      curved: e[0]! > 0 && cluster.ports.length > 0 ? curvedUpdate(e[0]!, g[0]!, step) : null,
+      propagator: null,
+      atOnce: null,
+    };
   const felt = cluster.feeds.some((feed) => feed.farads > 0);
   return {
     cluster,
     single: null,
+    curved: null,
     propagator: discretise(e, g, size, step),
     atOnce: felt ? discretise(e, g, size, step * AT_ONCE).q1 : null,
   };

@@ -3,6 +3,7 @@ import type { Channel } from "./channels";
 import type { ClusterPort } from "./clusters";
 import { skinWorker, type SkinWorker } from "./skin-worker";
 import { driveOf, heldOf, type Arriving, type GridInput } from "./grid-input";
+import { curvedEnd, curvedJunction, curvedThrough, type CurvedUpdate } from "./curved-workers";
 import { matrixWorker } from "./matrix-worker";
 import type { TableContext } from "./table-worker";
 import { workspace } from "./workspace";
@@ -35,17 +36,16 @@ export function runGrid(
   recorded: Iterable<number>,
   tables?: TableContext,
 ): GridRun {
-  const { steps, pad, delays, skins, block } = plan;
+  const { steps, pad, delays, skins, block, ahead } = plan;
   const ends = 2 * delays.length;
   const outgoing: Float64Array[] = [];
   const incident: (Float64Array | null)[] = [];
   for (let end = 0; end < ends; end++) {
     outgoing.push(workspace.take(steps + 1 + pad).fill(0, 0, pad));
-    incident.push(delays[end >> 1]!.taps || skins[end >> 1] ? workspace.take(steps + 1 + pad) : null);
+    incident.push(delays[end >> 1]!.taps || skins[end >> 1] ? workspace.take(steps + 1 + ahead + pad) : null);
   }
   const nodes: (Float64Array | null)[] = new Array<Float64Array | null>(nodeCount).fill(null);
   for (const node of recorded) nodes[node] = workspace.take(steps + 1);
-  const still = workspace.take(steps + 1).fill(0, 0, steps + 1);
   const scratch = workspace.take(steps + 1);
   const arriving: Arriving[] = outgoing.map((_, end) => {
     const delayed = incident[end];
@@ -59,18 +59,20 @@ export function runGrid(
     return filter ? skinWorker(filter) : null;
   });
   const workers = plan.clusters.map((planned) =>
-    clusterWorker(planned, inputs, arriving, outgoing, pad, nodes, still, scratch, tables),
+    clusterWorker(planned, inputs, arriving, outgoing, pad, nodes, scratch, tables),
   );
   for (let from = 0; from <= steps; from += block) {
     const to = Math.min(steps + 1, from + block);
+    // Arrivals that are looked at ahead are there a step earlier.
+    const first = from === 0 ? 0 : from + ahead;
     for (let end = 0; end < ends; end++) {
       const into = incident[end];
       const { taps, whole } = delays[end >> 1]!;
       if (!into) continue;
       const far = outgoing[end ^ 1]!;
-      if (taps) interpolate(far, into, taps, pad - whole, pad, from, to);
-      else for (let n = from + pad; n < to + pad; n++) into[n] = far[n - whole]!;
-      losses[end]?.(into, from + pad, to + pad);
+      if (taps) interpolate(far, into, taps, pad - whole, pad, first, to + ahead);
+      else for (let n = first + pad; n < to + ahead + pad; n++) into[n] = far[n - whole]!;
+      losses[end]?.(into, first + pad, to + ahead + pad);
     }
     for (const work of workers) work(from, to);
   }
@@ -119,21 +121,23 @@ function clusterWorker(
   outgoing: readonly Float64Array[],
   pad: number,
   nodes: readonly (Float64Array | null)[],
-  still: Float64Array,
   scratch: Float64Array,
   tables: TableContext | undefined,
 ): Worker {
-  const { cluster, single, propagator } = planned;
-  if (single)
-    return nodeWorker(
-      single,
+  const { cluster, single, curved, propagator } = planned;
+  const recorded = nodes[cluster.nodes[0]!] ?? scratch;
+  if (single && curved)
+    return curvedWorker(
+      curved,
       cluster.ports,
-      driveOf(cluster, 0, inputs) ?? still,
+      ownOf(single, driveOf(cluster, 0, inputs)),
       arriving,
       outgoing,
       pad,
-      nodes[cluster.nodes[0]!] ?? scratch,
+      recorded,
     );
+  if (single)
+    return nodeWorker(single, cluster.ports, driveOf(cluster, 0, inputs), arriving, outgoing, pad, recorded);
   if (propagator) return matrixWorker(planned, inputs, arriving, outgoing, pad, nodes, tables);
   return heldWorker(cluster.ports, inputs, arriving, outgoing, pad);
 }
@@ -159,23 +163,57 @@ function heldWorker(
   };
 }
 
-function nodeWorker(
-  kept: NodeUpdate,
+/** What the node's own sources do to it, straight between samples as their corners lie on them; from rest. */
+function ownOf({ q0, q1 }: NodeUpdate, drive: Float64Array | null): Float64Array | null {
+  if (!drive) return null;
+  let before = drive[0]!;
+  drive[0] = 0;
+  for (let n = 1; n < drive.length; n++) {
+    const now = drive[n]!;
+    drive[n] = q0 * before + q1 * now;
+    before = now;
+  }
+  return drive;
+}
+
+function curvedWorker(
+  kept: CurvedUpdate,
   ports: readonly ClusterPort[],
-  drive: Float64Array,
+  own: Float64Array | null,
   arriving: readonly Arriving[],
   outgoing: readonly Float64Array[],
   pad: number,
   record: Float64Array,
 ): Worker {
   const [first, second] = ports;
-  const wave = (port: ClusterPort): PortWave => ({
-    weight: 2 * port.admittance,
-    ...arriving[port.end]!,
-    out: outgoing[port.end]!,
-  });
+  const wave = (port: ClusterPort): PortWave => portWave(port, arriving, outgoing);
+  if (first && ports.length === 1) return curvedEnd(kept, wave(first), own, pad, record);
+  if (first && second && ports.length === 2 && !own)
+    return curvedThrough(kept, wave(first), wave(second), pad, record);
+  return curvedJunction(kept, ports.map(wave), own, pad, record);
+}
+
+function portWave(
+  port: ClusterPort,
+  arriving: readonly Arriving[],
+  outgoing: readonly Float64Array[],
+): PortWave {
+  return { weight: 2 * port.admittance, ...arriving[port.end]!, out: outgoing[port.end]! };
+}
+
+function nodeWorker(
+  kept: NodeUpdate,
+  ports: readonly ClusterPort[],
+  drive: Float64Array | null,
+  arriving: readonly Arriving[],
+  outgoing: readonly Float64Array[],
+  pad: number,
+  record: Float64Array,
+): Worker {
+  const [first, second] = ports;
+  const wave = (port: ClusterPort): PortWave => portWave(port, arriving, outgoing);
   if (first && ports.length === 1) return endWorker(kept, wave(first), drive, pad, record);
-  if (first && second && ports.length === 2)
-    return throughWorker(kept, wave(first), wave(second), drive, pad, record);
+  if (first && second && ports.length === 2 && !drive)
+    return throughWorker(kept, wave(first), wave(second), pad, record);
   return junctionWorker(kept, ports.map(wave), drive, pad, record);
 }

@@ -21,84 +21,115 @@ export interface PortWave {
 export function endWorker(
   { p, q0, q1 }: NodeUpdate,
   { weight, samples, offset, out }: PortWave,
-  drive: Float64Array,
+  drive: Float64Array | null,
   pad: number,
   record: Float64Array,
 ): Worker {
-  let v = 0;
-  let before = 0;
+  const state = new Float64Array(2);
   return (from, to) => {
-    let volts = v;
-    let last = before;
-    for (let n = from; n < to; n++) {
-      const a = samples[n + offset]!;
-      const now = drive[n]! + weight * a;
-      // From rest: a node with capacitance starts at nothing, one without follows at once.
-      volts = n === 0 ? (q0 === 0 ? q1 * now : 0) : p * volts + q0 * last + q1 * now;
-      last = now;
-      record[n] = volts;
-      out[n + pad] = volts - a;
+    let volts = state[0]!;
+    let last = state[1]!;
+    let n = from;
+    if (n === 0) {
+      const a = samples[offset]!;
+      last = (drive ? drive[0]! : 0) + weight * a;
+      volts = atStart(q0, q1, last);
+      record[0] = volts;
+      out[pad] = volts - a;
+      n = 1;
     }
-    v = volts;
-    before = last;
+    if (drive)
+      for (; n < to; n++) {
+        const a = samples[n + offset]!;
+        const now = drive[n]! + weight * a;
+        volts = p * volts + (q0 * last + q1 * now);
+        last = now;
+        record[n] = volts;
+        out[n + pad] = volts - a;
+      }
+    else
+      for (; n < to; n++) {
+        const a = samples[n + offset]!;
+        const now = weight * a;
+        volts = p * volts + (q0 * last + q1 * now);
+        last = now;
+        record[n] = volts;
+        out[n + pad] = volts - a;
+      }
+    state[0] = volts;
+    state[1] = last;
   };
 }
 
-/** A node between two lines. */
+/** A node between two lines that no source moves. */
 export function throughWorker(
   { p, q0, q1 }: NodeUpdate,
   first: PortWave,
   second: PortWave,
-  drive: Float64Array,
   pad: number,
   record: Float64Array,
 ): Worker {
   const { weight: weightA, samples: samplesA, offset: offsetA, out: outA } = first;
   const { weight: weightB, samples: samplesB, offset: offsetB, out: outB } = second;
-  let v = 0;
-  let before = 0;
+  const state = new Float64Array(2);
   return (from, to) => {
-    let volts = v;
-    let last = before;
-    for (let n = from; n < to; n++) {
+    let volts = state[0]!;
+    let last = state[1]!;
+    let n = from;
+    if (n === 0) {
+      const a = samplesA[offsetA]!;
+      const b = samplesB[offsetB]!;
+      last = weightA * a + weightB * b;
+      volts = atStart(q0, q1, last);
+      record[0] = volts;
+      outA[pad] = volts - a;
+      outB[pad] = volts - b;
+      n = 1;
+    }
+    for (; n < to; n++) {
       const a = samplesA[n + offsetA]!;
       const b = samplesB[n + offsetB]!;
-      const now = drive[n]! + weightA * a + weightB * b;
-      volts = n === 0 ? (q0 === 0 ? q1 * now : 0) : p * volts + q0 * last + q1 * now;
+      const now = weightA * a + weightB * b;
+      volts = p * volts + (q0 * last + q1 * now);
       last = now;
       record[n] = volts;
       outA[n + pad] = volts - a;
       outB[n + pad] = volts - b;
     }
-    v = volts;
-    before = last;
+    state[0] = volts;
+    state[1] = last;
   };
+}
+
+/** From rest: a node with capacitance starts at nothing, one without follows at once. */
+function atStart(q0: number, q1: number, current: number): number {
+  return q0 === 0 ? q1 * current : 0;
 }
 
 /** A node with no line or with three and more. */
 export function junctionWorker(
   { p, q0, q1 }: NodeUpdate,
   ports: readonly PortWave[],
-  drive: Float64Array,
+  drive: Float64Array | null,
   pad: number,
   record: Float64Array,
 ): Worker {
-  let v = 0;
-  let before = 0;
+  const state = new Float64Array(2);
   return (from, to) => {
-    for (let n = from; n < to; n++) record[n] = drive[n]!;
+    if (drive) for (let n = from; n < to; n++) record[n] = drive[n]!;
+    else record.fill(0, from, to);
     for (const { weight, samples, offset } of ports)
       for (let n = from; n < to; n++) record[n] = record[n]! + weight * samples[n + offset]!;
-    let volts = v;
-    let last = before;
+    let volts = state[0]!;
+    let last = state[1]!;
     for (let n = from; n < to; n++) {
       const now = record[n]!;
-      volts = n === 0 ? (q0 === 0 ? q1 * now : 0) : p * volts + q0 * last + q1 * now;
+      volts = n === 0 ? atStart(q0, q1, now) : p * volts + (q0 * last + q1 * now);
       last = now;
       record[n] = volts;
     }
-    v = volts;
-    before = last;
+    state[0] = volts;
+    state[1] = last;
     for (const { samples, offset, out } of ports)
       for (let n = from; n < to; n++) out[n + pad] = record[n]! - samples[n + offset]!;
   };

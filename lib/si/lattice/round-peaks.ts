@@ -1,7 +1,14 @@
 import type { Waveforms } from "./comb-output";
+import { workspace } from "./workspace";
 
 /** Peaks that rise above their samples by less than this share of the swing are left as they are. */
 const WORTH = 1e-6;
+
+/** Where samples are added: by sample, how far from it the peak is [steps]; 0: nothing. */
+interface Marks {
+  offset: Float64Array;
+  count: number;
+}
 
 /**
  * Adds a sample at the top of every round peak and the bottom of every round valley: the vertex of the parabola through
@@ -9,39 +16,98 @@ const WORTH = 1e-6;
  */
 export function markRoundPeaks(waveforms: Waveforms, swing: number): Waveforms {
   const { time, values } = waveforms;
-  const extra = new Map<number, number>();
-  for (const v of values) findPeaks(time, v, swing, extra);
-  if (extra.size === 0) return waveforms;
-  const order = [...extra]
-    .map(([i, offset]) => ({
-      from: offset < 0 ? i - 1 : i,
-      i,
-      offset,
-      at: time[i]! + offset * (time[i + 1]! - time[i]!),
-    }))
-    .sort((a, b) => a.at - b.at);
+  const marks = findAll(values, time.length, swing, time);
+  if (marks.count === 0) return waveforms;
+  const out = new Float64Array(time.length + marks.count);
+  weaveTime(time, marks, out);
   return {
-    time: woven(time, order, (k) => order[k]!.at),
-    values: values.map((v) =>
-      woven(v, order, (k) =>
-        isRoundAt(v, order[k]!.i)
-          ? parabola(v, order[k]!.i, order[k]!.offset)
-          : straight(v, order[k]!.i, order[k]!.offset),
-      ),
-    ),
+    time: out,
+    values: values.map((v) => {
+      const woven = new Float64Array(time.length + marks.count);
+      weave(v, time.length, marks, 0, woven, 0);
+      return woven;
+    }),
   };
 }
 
-function findPeaks(time: Float64Array, v: Float64Array, swing: number, extra: Map<number, number>) {
-  for (let i = 2; i < v.length - 2; i++) {
-    const rise = v[i]! - v[i - 1]!;
-    const next = v[i + 1]! - v[i]!;
-    if (rise * next > 0 || rise === next || !isRound(v, i) || !isEven(time, i)) continue;
-    const curvature = next - rise;
-    const offset = -(rise + next) / (2 * curvature);
-    if (Math.abs(offset) > 0.02 && Math.abs(curvature * offset * offset) > 2 * WORTH * swing)
-      extra.set(i, offset);
+/**
+ * The record of one run on an even grid, with the same peaks: rest + series, from `origin` on and at 0.
+ *
+ * @param series  by channel, `count` values each; null: never moves
+ */
+export function drawEven(
+  series: readonly (Float64Array | null)[],
+  rest: Float64Array,
+  { origin, step, count, swing }: { origin: number; step: number; count: number; swing: number },
+): Waveforms {
+  const marks = findAll(series, count, swing, null);
+  const lead = origin > 0 ? 1 : 0;
+  const length = lead + count + marks.count;
+  const time = new Float64Array(length);
+  let at = lead;
+  for (let n = 0; n < count; n++) {
+    const offset = marks.offset[n]!;
+    const t = origin + n * step;
+    if (offset < 0) time[at++] = t + offset * step;
+    time[at++] = t;
+    if (offset > 0) time[at++] = t + offset * step;
   }
+  const values = series.map((v, c) => {
+    const out = new Float64Array(length);
+    if (v) {
+      out[0] = rest[c]!;
+      weave(v, count, marks, rest[c]!, out, lead);
+    } else out.fill(rest[c]!);
+    return out;
+  });
+  return { time, values };
+}
+
+function findAll(
+  values: readonly (Float64Array | null)[],
+  count: number,
+  swing: number,
+  time: Float64Array | null,
+): Marks {
+  const offset = workspace.take(count).fill(0, 0, count);
+  const marks = { offset, count: 0 };
+  for (const v of values) if (v) findPeaks(v, count, 2 * WORTH * swing, time, marks);
+  return marks;
+}
+
+function findPeaks(
+  v: Float64Array,
+  count: number,
+  least: number,
+  time: Float64Array | null,
+  marks: Marks,
+): void {
+  let here = v[1]!;
+  let rise = here - v[0]!;
+  for (let i = 1; i < count - 2; i++) {
+    const after = v[i + 1]!;
+    const next = after - here;
+    if (rise * next <= 0 && rise !== next && i >= 2) mark(v, i, rise, next, least, time, marks);
+    here = after;
+    rise = next;
+  }
+}
+
+function mark(
+  v: Float64Array,
+  i: number,
+  rise: number,
+  next: number,
+  least: number,
+  time: Float64Array | null,
+  marks: Marks,
+): void {
+  const curvature = next - rise;
+  const offset = -(rise + next) / (2 * curvature);
+  if (!(Math.abs(offset) > 0.02) || !(Math.abs(curvature * offset * offset) > least)) return;
+  if (!isRound(v, i) || (time && !isEven(time, i))) return;
+  if (marks.offset[i] === 0) marks.count++;
+  marks.offset[i] = offset;
 }
 
 function isEven(time: Float64Array, i: number): boolean {
@@ -59,34 +125,45 @@ function isRound(v: Float64Array, i: number): boolean {
   return before / here > 0.5 && before / here < 2 && after / here > 0.5 && after / here < 2;
 }
 
-function isRoundAt(v: Float64Array, i: number): boolean {
-  return v[i + 1] !== v[i] && isRound(v, i);
+/** Copies `count` values, raised by `rest`, to `out` from `at` on, and what belongs at the marks between them. */
+function weave(
+  v: Float64Array,
+  count: number,
+  { offset: offsets }: Marks,
+  rest: number,
+  out: Float64Array,
+  at: number,
+): void {
+  for (let i = 0; i < count; i++) {
+    const offset = offsets[i]!;
+    const here = v[i]! + rest;
+    if (offset === 0) out[at++] = here;
+    else if (offset < 0) {
+      out[at++] = valueBeside(v, i, offset) + rest;
+      out[at++] = here;
+    } else {
+      out[at++] = here;
+      out[at++] = valueBeside(v, i, offset) + rest;
+    }
+  }
 }
 
-function parabola(v: Float64Array, i: number, x: number): number {
+function weaveTime(time: Float64Array, { offset: offsets }: Marks, out: Float64Array): void {
+  let at = 0;
+  for (let i = 0; i < time.length; i++) {
+    const offset = offsets[i]!;
+    const beside = offset === 0 ? 0 : time[i]! + offset * (time[i + 1]! - time[i]!);
+    if (offset < 0) out[at++] = beside;
+    out[at++] = time[i]!;
+    if (offset > 0) out[at++] = beside;
+  }
+}
+
+/** On the parabola where this channel is round there too, else straight between its samples. */
+function valueBeside(v: Float64Array, i: number, x: number): number {
   const a = v[i - 1]!;
   const b = v[i]!;
   const c = v[i + 1]!;
-  return b + (x * (c - a)) / 2 + (x * x * (c - 2 * b + a)) / 2;
-}
-
-function straight(v: Float64Array, i: number, x: number): number {
-  return x < 0 ? v[i]! + x * (v[i]! - v[i - 1]!) : v[i]! + x * (v[i + 1]! - v[i]!);
-}
-
-/** The array with one value more behind each `from`. */
-function woven(
-  array: Float64Array,
-  order: readonly { from: number }[],
-  value: (k: number) => number,
-): Float64Array {
-  const out = new Float64Array(array.length + order.length);
-  let start = 0;
-  order.forEach(({ from }, k) => {
-    out.set(array.subarray(start, from + 1), start + k);
-    out[from + 1 + k] = value(k);
-    start = from + 1;
-  });
-  out.set(array.subarray(start), start + order.length);
-  return out;
+  if (c !== b && isRound(v, i)) return b + (x * (c - a)) / 2 + (x * x * (c - 2 * b + a)) / 2;
+  return x < 0 ? b + x * (b - a) : b + x * (c - b);
 }

@@ -15,10 +15,13 @@ export interface StepChoice {
 }
 
 /** How finely things are resolved: curvature of charging, ramps between whole steps, a sine's period, a table's corners. */
-const FINENESS: Record<Accuracy, { curve: number; ramp: number; sine: number; table: number }> = {
-  live: { curve: 0.1, ramp: 1 / 30, sine: 1 / 64, table: 1 / 40 },
-  standard: { curve: 0.05, ramp: 1 / 60, sine: 1 / 160, table: 1 / 120 },
-  reference: { curve: 0.03, ramp: 1 / 160, sine: 1 / 400, table: 1 / 500 },
+const FINENESS: Record<
+  Accuracy,
+  { curve: number; chord: number; ramp: number; sine: number; table: number }
+> = {
+  live: { curve: 0.1, chord: 0.12, ramp: 1 / 30, sine: 1 / 64, table: 1 / 40 },
+  standard: { curve: 0.05, chord: 0.07, ramp: 1 / 60, sine: 1 / 160, table: 1 / 120 },
+  reference: { curve: 0.03, chord: 0.035, ramp: 1 / 160, sine: 1 / 400, table: 1 / 500 },
 };
 const MOST_STEPS = 1_000_000;
 /** A step may be this much finer than needed before an exact common step is given up. */
@@ -98,7 +101,16 @@ export function chooseStep(
       ),
       wanted: Math.min(
         between,
-        curveStep(clusters, ramp, until, circuit.elements.length > 0 ? 0.7 * fineness.curve : fineness.curve),
+        curveStep(
+          clusters,
+          ramp,
+          until,
+          circuit.elements.length > 0 || delays.length === 0
+            ? { curve: 0.7 * fineness.curve, chord: 0.7 * fineness.curve }
+            : fineness,
+        ),
+        // Curves are followed from one step ahead, which a line of one step does not allow.
+        clusters.some(({ isStatic, size }) => !isStatic && size === 1) ? shortest / 2 : Infinity,
         sineStep(circuit, fineness.sine),
         clusters.some((cluster) => cluster.isStatic && cluster.tables.length > 0)
           ? ramp * fineness.table
