@@ -1,5 +1,13 @@
 import { DomainError } from "@/lib/si/errors";
-import { columnPoints, dieCapacitance, hasCorner, slopeAt, tablesCorner, type IbisCorner } from "./corners";
+import {
+  columnPoints,
+  dieCapacitance,
+  hasCorner,
+  processColumn,
+  slopeAt,
+  tablesCorner,
+  type IbisCorner,
+} from "./corners";
 import { isEcl, type IbisModel, type IbisWaveform } from "./document";
 import { cornerTables, restVolts, type CornerTables } from "./iv-tables";
 import { smoothStep, smoothWave } from "./smooth-wave";
@@ -22,8 +30,10 @@ export const REST = {
 const MOST_TIMES = 3000;
 const MOST_PARTS = 12;
 const STEP_TIMES = 48;
-/** Weights this near a straight line are drawn as one: [1]. */
-const STRAIGHT = 5e-4;
+/** By how much the weights may be missed when they are drawn with few pieces [1]. */
+const MISSED = 2e-3;
+/** What the die's capacitance charges through while switching, at the least: a strong driver beside a line [Ω]. */
+const DIE_OHMS = 20;
 /** Volts of a load beside the upper supply that an ECL output is given by custom. */
 const ECL_TERMINATION = -2;
 
@@ -44,14 +54,22 @@ export function edgeWeights(model: IbisModel, corner: IbisCorner, edge: "rise" |
     const fixtures = waves.map((waveform) => fixtureWave(waveform, own));
     const times = divided(waves.flatMap(({ rows }) => columnPoints(rows, own).map(([t]) => t)));
     return {
-      ...thinWeights(switchWeights(tables, capacitance, fixtures, times, rest), STRAIGHT),
+      ...thinWeights(
+        switchWeights(tables, capacitance, fixtures, times, rest),
+        MISSED,
+        capacitance * DIE_OHMS,
+      ),
       method: waves.length > 1 ? "two waveforms" : "one waveform",
     };
   }
   const fixture = rampFixture(model, corner, tables, edge);
   const times = Array.from({ length: STEP_TIMES + 1 }, (_, i) => (fixture.wave.end * i) / STEP_TIMES);
   return {
-    ...thinWeights(switchWeights(tables, capacitance, [fixture], times, rest), STRAIGHT),
+    ...thinWeights(
+      switchWeights(tables, capacitance, [fixture], times, rest),
+      MISSED,
+      capacitance * DIE_OHMS,
+    ),
     method: "ramp",
   };
 }
@@ -78,8 +96,7 @@ function chooseWaveforms(model: IbisModel, corner: IbisCorner, edge: "rise" | "f
 }
 
 export function fixtureVolts(waveform: IbisWaveform, corner: IbisCorner): number {
-  const column = corner === "slow" ? "min" : corner === "fast" ? "max" : "typ";
-  return waveform.fixture[column] ?? waveform.fixture.typ ?? 0;
+  return waveform.fixture[processColumn(corner)] ?? waveform.fixture.typ ?? 0;
 }
 
 function fixtureWave(waveform: IbisWaveform, corner: IbisCorner): FixtureWave {
