@@ -1,14 +1,7 @@
+import { arctangent } from "./arctangent";
 import { gaussRule } from "./gauss";
 import { mappedX, mappedY, type Mesh } from "./mesh";
 import { logImag, panelLogarithm } from "./panel-integral";
-
-/** Angle of the vector (dot, cross) [rad]; a series where it is small, to 1e-9. */
-function angle(cross: number, dot: number): number {
-  const t = cross / dot;
-  if (dot <= 0 || t > 0.3 || t < -0.3) return Math.atan2(cross, dot);
-  const s = t * t;
-  return t * (1 - s * (1 / 3 - s * (1 / 5 - s * (1 / 7 - s * (1 / 9 - s * (1 / 11 - s / 13))))));
-}
 
 /** Points between which flux is counted: consecutive ends of cells on one straight line. */
 const endX = new Float64Array(9);
@@ -83,15 +76,15 @@ function oneSide(
         const dotI = x1 * x2 + z1 * z2;
         const crossI = x1 * z2 - x2 * z1;
         let flux: number;
-        if (own) flux = -angle(crossI, dotI);
+        if (own) flux = -arctangent(crossI, dotI);
         else {
           const dot = x1 * x2 + y1 * y2;
           const cross = x1 * y2 - x2 * y1;
           // each angle is below π, their sum need not be
           flux =
             dot > 0 && dotI > 0
-              ? angle(cross * dotI - dot * crossI, dot * dotI + cross * crossI)
-              : Math.atan2(cross, dot) - Math.atan2(crossI, dotI);
+              ? arctangent(cross * dotI - dot * crossI, dot * dotI + cross * crossI)
+              : arctangent(cross, dot) - arctangent(crossI, dotI);
         }
         const place = at + i * stride + j;
         even[place]! += evenSign * flux;
@@ -162,7 +155,7 @@ function integrateNear(
         const x2 = endX[i + 1]! - sx;
         const y1 = endY[i]! - sy;
         const y2 = endY[i + 1]! - sy;
-        const point = angle(x1 * y2 - x2 * y1, x1 * x2 + y1 * y2);
+        const point = arctangent(x1 * y2 - x2 * y1, x1 * x2 + y1 * y2);
         const change = imag[i * 8 + 8 + j]! - imag[i * 8 + j]! - turns - point;
         const place = at + i * stride + start + j;
         even[place]! += evenSign * change;

@@ -7,7 +7,7 @@ export function rightHalf({ segments, cuts, upper }: Outline): Outline {
     const tiny = 1e-9 * s.y1;
     if (s.x1 <= tiny && s.x2 <= tiny) continue;
     if (s.x1 >= -tiny && s.x2 >= -tiny) {
-      kept.push(s);
+      kept.push(s.x1 < 0 ? { ...s, x1: 0 } : s.x2 < 0 ? { ...s, x2: 0 } : s);
       continue;
     }
     const y = s.y1 + ((s.y2 - s.y1) * -s.x1) / (s.x2 - s.x1);

@@ -1,3 +1,4 @@
+import { arctangent } from "./arctangent";
 import { gaussRule } from "./gauss";
 import { Mesh, along } from "./mesh";
 import { INTERFACE, PLAIN } from "./segment";
@@ -45,7 +46,7 @@ export function panelLogarithm(mesh: Mesh, k: number, x: number, y: number): voi
     addRoot(-2 * re - 1, -2 * im, n);
   } else {
     const size = Math.cbrt(Math.sqrt(square));
-    const angle = zi === 0 && zr >= 0 ? 0 : Math.atan2(zi, zr) / 3;
+    const angle = zi === 0 && zr >= 0 ? 0 : arctangent(zi, zr) / 3;
     const re = size * Math.cos(angle);
     const im = size * Math.sin(angle);
     addRoot(2 * re - 1, 2 * im, n);
@@ -74,7 +75,7 @@ function pointValues(p: number, n: number, zr: number, zi: number, offset: numbe
     const re = zr - along(p, t[j]!);
     logReal[j] = offset + Math.log(re * re + zi * zi) / 2;
     // (ζ₁ − u)(ζ₂ − u) = −(ζ − u²)
-    logImag[j] = p === 2 ? Math.atan2(-zi, -re) : Math.atan2(zi, re);
+    logImag[j] = p === 2 ? arctangent(-zi, -re) : arctangent(zi, re);
   }
 }
 
@@ -85,8 +86,8 @@ function addRoot(a: number, b: number, n: number): void {
   // at an end of the panel the infinite parts of Q cancel; any finite stand-in does
   const lnPlus = Math.log(plus > 1e-60 ? plus : 1e-60) / 2;
   const lnMinus = Math.log(minus > 1e-60 ? minus : 1e-60) / 2;
-  const argPlus = Math.atan2(b, a + 1);
-  const argMinus = Math.atan2(b, a - 1);
+  const argPlus = arctangent(b, a + 1);
+  const argMinus = arctangent(b, a - 1);
   sumReal[0]! += (a + 1) * lnPlus - b * argPlus - (a - 1) * lnMinus + b * argMinus - 2;
   sumImag[0]! += (a + 1) * argPlus + b * lnPlus - (a - 1) * argMinus - b * lnMinus;
   let lowR = (lnPlus - lnMinus) / 2;

@@ -19,7 +19,8 @@ export class Vertices {
       const y = this.y[i]!;
       let room = 2 * y;
       if (upper > 0) room = Math.min(room, 2 * (upper - y));
-      if (half) room = Math.min(room, 2 * x);
+      // a corner on the mirror line is its own image
+      if (half && x > 1e-9 * y) room = Math.min(room, 2 * x);
       for (let j = 0; j < this.count; j++) {
         const d = Math.sqrt((this.x[j]! - x) * (this.x[j]! - x) + (this.y[j]! - y) * (this.y[j]! - y));
         if (j !== i && d < room) room = d;
