@@ -1,5 +1,5 @@
 import "server-only";
-import { and, asc, desc, eq, inArray, lt, notInArray, notLike, or, sql } from "drizzle-orm";
+import { and, asc, desc, eq, inArray, lt, ne, notInArray, notLike, or, sql } from "drizzle-orm";
 import { can, type Actor } from "@/lib/schemas/actor";
 import { NotFoundError, RefusedError } from "@/lib/schemas/errors";
 import type { ProblemEntry, SelectorEntry } from "@/lib/schemas/problem-list";
@@ -94,14 +94,14 @@ export async function listRuns(
   return rows.map(({ run: { inputChunks: _chunks, ...row }, ...more }) => ({ ...row, ...more }));
 }
 
-/** The newest run of a revision, or null. */
+/** The newest run of a revision that nobody cancelled, or null: a cancelled one says nothing about the board. */
 export async function latestRun(actor: Actor, revisionId: string): Promise<RunRow | null> {
   if (!can(actor, "project:read")) throw new NotFoundError("The revision");
   const db = await getDb();
   const [row] = await db
     .select()
     .from(run)
-    .where(and(eq(run.revisionId, revisionId), eq(run.teamId, actor.teamId)))
+    .where(and(eq(run.revisionId, revisionId), eq(run.teamId, actor.teamId), ne(run.state, "cancelled")))
     .orderBy(desc(run.number))
     .limit(1);
   return row ?? null;
