@@ -8,6 +8,7 @@ const PLACES: Record<ReleaseBlocker["kind"], { place: string; label: string }> =
   "no run": { place: "runs", label: "Go to the runs" },
   "stale run": { place: "runs", label: "Go to the runs" },
   "unfinished run": { place: "runs", label: "Go to the runs" },
+  "nothing judged": { place: "rules", label: "See the rules" },
   failures: { place: "review", label: "Work the problems" },
   "no data": { place: "review", label: "See what is missing" },
   flags: { place: "review", label: "See the flags" },

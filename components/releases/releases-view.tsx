@@ -136,6 +136,7 @@ function DraftSection({
 
 const WAYS: Record<ReleaseBlocker["kind"], string> = {
   "no run": "To the runs",
+  "nothing judged": "To the rules",
   "stale run": "To the runs",
   "unfinished run": "To the runs",
   failures: "To the problems",
@@ -153,6 +154,8 @@ function wayOut(projectId: string, blocker: ReleaseBlocker, runId: string | null
     case "editor signs":
     case "flags":
       return at("review");
+    case "nothing judged":
+      return at("rules");
     default:
       return at("runs");
   }

@@ -58,6 +58,7 @@ export function Blockers({ projectId }: { projectId: string }) {
 const CURES: Record<ReleaseBlocker["kind"], string> = {
   "no run": "Go to runs",
   "unfinished run": "Go to runs",
+  "nothing judged": "See the rules",
   "stale run": "Go to runs",
   failures: "Work them",
   "no data": "See what is missing",
@@ -72,6 +73,8 @@ function cureOf(projectId: string, { kind }: ReleaseBlocker, { run }: ReadinessV
       return run
         ? narrowedRun(projectId, run.id, { verdict: "fail", waived: "no" })
         : (`/projects/${projectId}/runs` as Route);
+    case "nothing judged":
+      return `/projects/${projectId}/rules` as Route;
     case "no data":
       return `${review}?tab=missing` as Route;
     case "flags":

@@ -1,6 +1,7 @@
 "use client";
 
 import { useQuery } from "@tanstack/react-query";
+import type { Route } from "next";
 import Link from "next/link";
 import { useState } from "react";
 import { Button } from "@/components/ui/button";
@@ -12,6 +13,7 @@ import type { Rights } from "@/components/runs/rights";
 import { counted } from "@/components/runs/run-words";
 import { errorMessage } from "@/lib/client/api";
 import { type Acceptance, acceptNoData, noDataQuery, withdrawAcceptance } from "@/lib/client/review";
+import { noRuleJudges } from "@/lib/schemas/review";
 import { ReasonDialog } from "./reason-dialog";
 import { useReviewAct } from "./use-review";
 
@@ -71,7 +73,11 @@ export function MissingInputs({ projectId, runId, rights, frozen }: Props) {
       cell: (row) => (
         <Link
           className="text-violet hover:underline"
-          href={narrowedRun(projectId, runId, { missing: row.missing, group: "missing input" })}
+          href={
+            row.missing === noRuleJudges
+              ? (`/projects/${projectId}/rules` as Route)
+              : narrowedRun(projectId, runId, { missing: row.missing, group: "missing input" })
+          }
         >
           {counted(row.paths, "path")}
         </Link>

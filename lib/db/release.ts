@@ -43,6 +43,7 @@ export async function releaseReadiness(
     const blockers = releaseBlockers({
       run: row,
       draftInputHash,
+      judgedPaths: 0,
       failuresNotWaived: 0,
       missingNotAccepted: [],
       openFlags: flags,
@@ -62,6 +63,7 @@ export async function releaseReadiness(
   const blockers = releaseBlockers({
     run: row,
     draftInputHash,
+    judgedPaths: judgedCount(row.counts),
     failuresNotWaived: open.length,
     missingNotAccepted: missing,
     openFlags: flags,
@@ -75,6 +77,13 @@ export async function releaseReadiness(
     waived: failing.length - open.length,
     signature: signature ? { signerName: signature.signerName, signedAt: signature.signedAt } : null,
   };
+}
+
+function judgedCount(counts: RunRow["counts"]): number {
+  return Object.entries(counts ?? {}).reduce(
+    (sum, [verdict, count]) => (verdict === "no data" ? sum : sum + count),
+    0,
+  );
 }
 
 /**

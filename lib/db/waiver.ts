@@ -1,9 +1,9 @@
 import "server-only";
-import { and, desc, eq, inArray, isNull, sql } from "drizzle-orm";
+import { and, desc, eq, inArray, isNull, notExists, sql } from "drizzle-orm";
 import { judgeWaiver, type JudgedWaiver } from "@/lib/resolve/waiver-state";
 import { can, type Actor } from "@/lib/schemas/actor";
 import { NotFoundError, RefusedError } from "@/lib/schemas/errors";
-import { maxWaiverMs } from "@/lib/schemas/review";
+import { maxWaiverMs, noRuleJudges } from "@/lib/schemas/review";
 import { commitAudited } from "./audit";
 import { getDb } from "./client";
 import { now } from "./clock";
@@ -329,14 +329,17 @@ export async function listAcceptances(actor: Actor, revisionId: string) {
     );
 }
 
-/** What is missing in a run, by the input that would fill it, with the paths that filling it would free. */
+/**
+ * What is missing in a run, by the input that would fill it, with the paths that filling it would free. A path that no
+ * rule judged has no problem to name its lack; it stands under `noRuleJudges`.
+ */
 export async function missingInputs(
   actor: Actor,
   row: RunRow,
 ): Promise<{ missing: string; paths: number }[]> {
   if (!can(actor, "project:read")) throw new NotFoundError("The run");
   const db = await getDb();
-  return db
+  const named = db
     .select({
       missing: sql<string>`${problem.missing}`,
       paths: sql<number>`count(DISTINCT ${problem.pathId})`,
@@ -352,6 +355,31 @@ export async function missingInputs(
     )
     .groupBy(problem.missing)
     .orderBy(sql`2 DESC`, problem.missing);
+  const unnamed = db
+    .select({ paths: sql<number>`count(*)` })
+    .from(pathResult)
+    .where(
+      and(
+        eq(pathResult.runId, row.id),
+        eq(pathResult.teamId, actor.teamId),
+        eq(pathResult.verdict, "no data"),
+        notExists(
+          db
+            .select({ one: sql`1` })
+            .from(problem)
+            .where(
+              and(
+                eq(problem.runId, pathResult.runId),
+                eq(problem.pathId, pathResult.pathId),
+                eq(problem.verdict, "no data"),
+                sql`${problem.missing} IS NOT NULL`,
+              ),
+            ),
+        ),
+      ),
+    );
+  const [groups, [without]] = await db.batch([named, unnamed]);
+  return without && without.paths > 0 ? [{ missing: noRuleJudges, paths: without.paths }, ...groups] : groups;
 }
 
 /** A reviewer's signature on a finished run of the draft; not by somebody who edited it. */

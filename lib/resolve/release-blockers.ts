@@ -4,6 +4,8 @@ import type { ReleaseBlocker } from "@/lib/schemas/release";
 export interface ReleaseReadiness {
   run: { number: number; state: string; inputHash: string } | null;
   draftInputHash: string;
+  /** paths of the run with a verdict other than no data */
+  judgedPaths: number;
   /** problems of verdict fail that no waiver covers */
   failuresNotWaived: number;
   /** missing inputs that nobody accepted, each with the paths it holds back */
@@ -22,7 +24,10 @@ export function releaseBlockers(facts: ReleaseReadiness): ReleaseBlocker[] {
     return [
       {
         kind: "unfinished run",
-        text: `Run ${run.number} is ${run.state}. Let it finish or start another.`,
+        text:
+          run.state === "failed"
+            ? `Run ${run.number} failed. Start another.`
+            : `Run ${run.number} is ${run.state}. Let it finish or start another.`,
         count: null,
       },
     ];
@@ -31,6 +36,12 @@ export function releaseBlockers(facts: ReleaseReadiness): ReleaseBlocker[] {
     blockers.push({
       kind: "stale run",
       text: `The draft was edited after run ${run.number}. Run the check again.`,
+      count: null,
+    });
+  if (facts.judgedPaths === 0)
+    blockers.push({
+      kind: "nothing judged",
+      text: `Run ${run.number} judged no path: each has no data. Switch a rule on or fill in what is missing, then run the check again.`,
       count: null,
     });
   if (facts.failuresNotWaived > 0)

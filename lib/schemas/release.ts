@@ -61,7 +61,15 @@ export interface ImpedanceNote {
 
 /** What stands in the way of a release, each with a way out. */
 export interface ReleaseBlocker {
-  kind: "no run" | "stale run" | "unfinished run" | "failures" | "no data" | "editor signs" | "flags";
+  kind:
+    | "no run"
+    | "stale run"
+    | "unfinished run"
+    | "nothing judged"
+    | "failures"
+    | "no data"
+    | "editor signs"
+    | "flags";
   text: string;
   count: number | null;
 }

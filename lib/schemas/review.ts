@@ -32,6 +32,8 @@ export const waiverInput = z.object({
   expiresAt: z.number().int(),
 });
 export const maxWaiverMs = 730 * dayMs;
+/** What a path lacks that no enabled rule speaks of: it has no data, and no problem says why. */
+export const noRuleJudges = "a rule that judges the path";
 export const noDataAcceptanceInput = z.object({
   /** the missing input that groups the findings, as the run names it */
   missing: z.string().min(1).max(300),

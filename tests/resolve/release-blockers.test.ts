@@ -4,6 +4,7 @@ import { releaseBlockers, type ReleaseReadiness } from "@/lib/resolve/release-bl
 const ready: ReleaseReadiness = {
   run: { number: 4, state: "done", inputHash: "h" },
   draftInputHash: "h",
+  judgedPaths: 31,
   failuresNotWaived: 0,
   missingNotAccepted: [],
   openFlags: 0,
@@ -19,6 +20,7 @@ describe("releaseBlockers", () => {
     ["no run", { run: null }],
     ["unfinished run", { run: { number: 4, state: "running", inputHash: "h" } }],
     ["stale run", { draftInputHash: "other" }],
+    ["nothing judged", { judgedPaths: 0 }],
     ["failures", { failuresNotWaived: 1 }],
     ["no data", { missingNotAccepted: [{ missing: "driver model of U5", paths: 3 }] }],
     ["flags", { openFlags: 2 }],
