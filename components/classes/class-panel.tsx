@@ -156,6 +156,7 @@ export function ClassPanel({ row, classes, onClose, onGone, onOpen }: Props) {
           onClose={() => setDeleting(false)}
           onGone={() => {
             setDeleting(false);
+            editor.forget(() => true);
             saving.settle(JSON.stringify(doc));
             onGone();
           }}

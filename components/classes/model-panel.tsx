@@ -89,6 +89,7 @@ export function ModelPanel({ model, use, onClose, onGone, onOpen }: Props) {
     onSuccess: async () => {
       await settled();
       toast.success(`${model.name} removed`, { action: { label: "Undo", onClick: undo } });
+      editor.forget(() => true);
       saving.settle(JSON.stringify(doc));
       onGone();
     },

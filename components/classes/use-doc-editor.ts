@@ -1,10 +1,17 @@
 "use client";
 
-import { useCallback, useEffect, useMemo, useRef, useState } from "react";
+import { useCallback, useMemo, useRef, useState } from "react";
 import { useAutosave } from "@/components/stackup/use-autosave";
+import { useLeaveGuard } from "@/components/stackup/use-leave-guard";
+import { toast } from "@/components/ui/toast";
 
 /** A text that a field could not take: it stays in the field until it is mended or given up. */
 export type Refusals = Readonly<Record<string, { text: string; reason: string }>>;
+
+interface State<Doc> {
+  doc: Doc;
+  refusals: Refusals;
+}
 
 interface Options<Doc extends object, Stored extends { version: number }> {
   stored: Stored;
@@ -28,28 +35,48 @@ export function useDocEditor<Doc extends object, Stored extends { version: numbe
   options: Options<Doc, Stored>,
 ) {
   const { stored, docOf, problems, save, readOnly } = options;
-  const [doc, setDoc] = useState<Doc>(() => docOf(stored));
-  const [refusals, setRefusals] = useState<Refusals>({});
+  const [{ doc, refusals }, setState] = useState<State<Doc>>(() => ({ doc: docOf(stored), refusals: {} }));
+  /** The state ahead of its drawing: what is saved as the page goes away includes the last text. */
+  const now = useRef<State<Doc>>({ doc, refusals });
+  const dispatch = useCallback((act: (present: State<Doc>) => Partial<State<Doc>>) => {
+    now.current = { ...now.current, ...act(now.current) };
+    setState(now.current);
+  }, []);
   const version = useRef(stored.version);
   /** What the server has, as far as is known here. */
   const base = useRef(doc);
   const content = useMemo(() => JSON.stringify(doc), [doc]);
-  const issues = useMemo(
-    () => [...Object.values(refusals).map(({ reason }) => reason), ...problems(doc)],
-    [refusals, problems, doc],
+  const issuesOf = useCallback(
+    (present: State<Doc>) => [
+      ...Object.values(present.refusals).map(({ reason }) => reason),
+      ...problems(present.doc),
+    ],
+    [problems],
   );
+  const issues = useMemo(() => issuesOf({ doc, refusals }), [issuesOf, doc, refusals]);
+  const why = useCallback(() => issuesOf(now.current)[0] ?? null, [issuesOf]);
 
   const autosave = useAutosave({
     content,
     blocked: !readOnly && issues.length > 0,
+    read: () => ({
+      content: JSON.stringify(now.current.doc),
+      blocked: !readOnly && issuesOf(now.current).length > 0,
+    }),
     save: async () => {
-      const sent = doc;
+      const sent = now.current.doc;
       const saved = await save(version.current, sent);
       version.current = saved.version;
       base.current = sent;
     },
+    left: (saved) =>
+      void saved.then((done) => {
+        if (!done) toast.error(`The last edits were not saved. ${why() ?? "The server did not take them."}`);
+      }),
   });
-  const { settle, flush } = autosave;
+  const { settle } = autosave;
+  const giveUp = useCallback(() => dispatch(() => ({ refusals: {} })), [dispatch]);
+  useLeaveGuard({ unsaved: autosave.unsaved, flush: autosave.flush, why, giveUp });
 
   /** Puts what the server has in place of what is here. */
   const take = useCallback(
@@ -58,10 +85,9 @@ export function useDocEditor<Doc extends object, Stored extends { version: numbe
       const next = docOf(current);
       base.current = next;
       settle(JSON.stringify(next));
-      setDoc(next);
-      setRefusals({});
+      dispatch(() => ({ doc: next, refusals: {} }));
     },
-    [docOf, settle],
+    [docOf, settle, dispatch],
   );
   /** Puts what was changed here over what somebody else saved meanwhile; what only they changed stays theirs. */
   const keepMine = useCallback(
@@ -71,39 +97,37 @@ export function useDocEditor<Doc extends object, Stored extends { version: numbe
       const before = base.current;
       base.current = theirs;
       settle(JSON.stringify(theirs));
-      setDoc((mine) => merged(before, mine, theirs));
+      dispatch(({ doc: mine }) => ({ doc: merged(before, mine, theirs) }));
     },
-    [docOf, settle],
+    [docOf, settle, dispatch],
   );
   const change = useCallback(
     (next: Partial<Doc> | ((doc: Doc) => Doc)) =>
-      setDoc((present) => (typeof next === "function" ? next(present) : { ...present, ...next })),
-    [],
+      dispatch(({ doc: present }) => ({
+        doc: typeof next === "function" ? next(present) : { ...present, ...next },
+      })),
+    [dispatch],
   );
   const refuse = useCallback(
     (address: string, text: string, reason: string) =>
-      setRefusals((present) => ({ ...present, [address]: { text, reason } })),
-    [],
-  );
-  const accept = useCallback(
-    (address: string) =>
-      setRefusals((present) => {
-        if (!(address in present)) return present;
-        const { [address]: _gone, ...rest } = present;
-        return rest;
-      }),
-    [],
+      dispatch((present) => ({ refusals: { ...present.refusals, [address]: { text, reason } } })),
+    [dispatch],
   );
   /** Forgets the refused texts of fields that are no longer there. */
   const forget = useCallback(
     (gone: (address: string) => boolean) =>
-      setRefusals((present) =>
-        Object.fromEntries(Object.entries(present).filter(([address]) => !gone(address))),
+      dispatch((present) =>
+        Object.keys(present.refusals).some(gone)
+          ? {
+              refusals: Object.fromEntries(
+                Object.entries(present.refusals).filter(([address]) => !gone(address)),
+              ),
+            }
+          : {},
       ),
-    [],
+    [dispatch],
   );
-
-  useEffect(() => () => void flush(), [flush]);
+  const accept = useCallback((address: string) => forget((refused) => refused === address), [forget]);
 
   return { doc, change, refusals, refuse, accept, forget, issues, saving: autosave, take, keepMine };
 }

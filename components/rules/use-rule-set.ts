@@ -3,6 +3,8 @@
 import { useQuery, useQueryClient } from "@tanstack/react-query";
 import { useCallback, useMemo, useRef, useState } from "react";
 import { useAutosave } from "@/components/stackup/use-autosave";
+import { useLeaveGuard } from "@/components/stackup/use-leave-guard";
+import { toast } from "@/components/ui/toast";
 import { ApiError, errorMessage } from "@/lib/client/api";
 import { reviewKey } from "@/lib/client/review";
 import { fetchRules, putRules, rulesQuery } from "@/lib/client/rules";
@@ -38,7 +40,22 @@ export function useRuleSetEditor(projectId: string, stored: StoredRuleSet) {
     void client.invalidateQueries({ queryKey: reviewKey(projectId) });
   }, [client, projectId]);
 
-  const autosave = useAutosave({ content, blocked: false, save });
+  const autosave = useAutosave({
+    content,
+    blocked: false,
+    save,
+    read: () => ({ content: JSON.stringify(latest.current), blocked: false }),
+    left: (saved) =>
+      void saved.then((done) => {
+        if (!done) toast.error("The rules were not saved as you left them. Open them and look once more.");
+      }),
+  });
+  useLeaveGuard({
+    unsaved: autosave.unsaved,
+    flush: autosave.flush,
+    why: () => null,
+    giveUp: () => undefined,
+  });
 
   /** Takes the server's state in place of what is on screen. */
   const reload = useCallback(async () => {

@@ -1,6 +1,6 @@
 "use client";
 
-import { createContext, type ReactNode, useContext, useId, useState } from "react";
+import { createContext, type ReactNode, useContext, useId, useLayoutEffect, useRef, useState } from "react";
 import { cn } from "@/components/ui/class-names";
 import { controlClasses, describedBy, Field } from "@/components/ui/field";
 import type { Refusals } from "./stackup-issues";
@@ -64,6 +64,15 @@ export function FieldText(props: Props) {
       refuse(address, written, reason instanceof Error ? reason.message : "This cannot be read.");
     }
   }
+
+  // Back and forward take the field off the screen without leaving it: what was typed is read all the same.
+  const gone = useRef<() => void>(() => undefined);
+  useLayoutEffect(() => {
+    gone.current = () => {
+      if (text !== null && !readOnly) read(text);
+    };
+  });
+  useLayoutEffect(() => () => gone.current(), []);
 
   if (readOnly)
     return inTable ? (

@@ -11,6 +11,10 @@ interface Options {
   blocked: boolean;
   /** Saves what is on screen now. */
   save: () => Promise<void>;
+  /** Content and blocked as they are at this moment, where that may be ahead of what was drawn last. */
+  read?: () => { content: string; blocked: boolean };
+  /** The editor left the screen; the promise tells whether all of it was saved. */
+  left?: (saved: Promise<boolean>) => void;
   /** Quiet time before a save [ms] */
   delay?: number;
 }
@@ -18,6 +22,8 @@ interface Options {
 export interface Autosave {
   state: SaveState;
   error: unknown;
+  /** True where something on screen is not on the server yet. */
+  unsaved: () => boolean;
   /** Saves at once what waits; true when nothing is left to save. */
   flush: () => Promise<boolean>;
   /** Tries again what failed. */
@@ -26,20 +32,24 @@ export interface Autosave {
   settle: (content: string) => void;
 }
 
-/** Saves a document a moment after its last change, one request at a time, and never loses the latest state. */
-export function useAutosave({ content, blocked, save, delay = 700 }: Options): Autosave {
+/**
+ * Saves a document a moment after its last change and when its editor leaves the screen, one request at a time, and
+ * never loses the latest state.
+ */
+export function useAutosave({ content, blocked, save, read, left, delay = 700 }: Options): Autosave {
   const [saved, setSaved] = useState(content);
   const [busy, setBusy] = useState(false);
   const [failure, setFailure] = useState<{ content: string; error: unknown } | null>(null);
-  const latest = useRef({ content, blocked, save, saved });
+  const latest = useRef({ content, blocked, save, saved, read, left });
   const running = useRef<Promise<boolean> | null>(null);
   useEffect(() => {
-    latest.current = { content, blocked, save, saved };
+    latest.current = { content, blocked, save, saved, read, left };
   });
 
   const flush = useCallback(async (): Promise<boolean> => {
-    if (running.current) await running.current;
-    const { content: sending, blocked: held, save: act, saved: known } = latest.current;
+    while (running.current) await running.current;
+    const { save: act, saved: known } = latest.current;
+    const { content: sending, blocked: held } = present(latest.current);
     if (held) return false;
     if (sending === known) return true;
     const work = (async () => {
@@ -62,6 +72,15 @@ export function useAutosave({ content, blocked, save, delay = 700 }: Options): A
     return work;
   }, []);
 
+  useEffect(
+    () => () => {
+      const { left: tell } = latest.current;
+      const work = flush();
+      tell?.(work);
+    },
+    [flush],
+  );
+
   const dirty = content !== saved;
   // The same content is not sent again by itself: it failed, and somebody has to say what shall happen.
   const failed = failure !== null && failure.content === content && dirty;
@@ -72,14 +91,18 @@ export function useAutosave({ content, blocked, save, delay = 700 }: Options): A
     return () => clearTimeout(timer);
   }, [content, dirty, blocked, busy, failed, conflicting, delay, flush]);
 
-  const unsaved = dirty || blocked;
+  const warned = dirty || blocked;
   useEffect(() => {
-    if (!unsaved) return;
+    if (!warned) return;
     const warn = (event: BeforeUnloadEvent) => event.preventDefault();
     window.addEventListener("beforeunload", warn);
     return () => window.removeEventListener("beforeunload", warn);
-  }, [unsaved]);
+  }, [warned]);
 
+  const unsaved = useCallback(() => {
+    const { content: now, blocked: held } = present(latest.current);
+    return held || now !== latest.current.saved || running.current !== null;
+  }, []);
   const retry = useCallback(() => {
     setFailure(null);
     void flush();
@@ -99,7 +122,12 @@ export function useAutosave({ content, blocked, save, delay = 700 }: Options): A
         : failed || conflicting
           ? "failed"
           : "waiting";
-  return { state, error: state === "failed" ? (failure?.error ?? null) : null, flush, retry, settle };
+  const error = state === "failed" ? (failure?.error ?? null) : null;
+  return { state, error, unsaved, flush, retry, settle };
+}
+
+function present({ read, content, blocked }: Pick<Options, "read" | "content" | "blocked">) {
+  return read?.() ?? { content, blocked };
 }
 
 /** Only its maker decides between two versions: further typing must not. */

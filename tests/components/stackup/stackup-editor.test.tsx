@@ -4,6 +4,7 @@ import { cleanup, render, screen, waitFor, within } from "@testing-library/react
 import userEvent from "@testing-library/user-event";
 import { Tooltip } from "radix-ui";
 import { afterEach, beforeAll, beforeEach, describe, expect, it, vi } from "vitest";
+import { Toaster } from "@/components/ui/toast";
 import { LengthUnitProvider } from "@/components/shell/length-unit";
 import { StackupEditor } from "@/components/stackup/stackup-editor";
 import type { StoredMaterial } from "@/lib/schemas/material";
@@ -33,9 +34,13 @@ let puts: Put[] = [];
 let present = stored();
 /** The team's own. */
 let materials: StoredMaterial[] = [];
+/** Takes the page off the screen, as Back does. */
+let leave: () => void;
+let followed: string[] = [];
 let refuse: ((put: Put) => Response | null) | null = null;
 
 beforeAll(() => {
+  Object.defineProperty(Element.prototype, "setPointerCapture", { value: () => undefined });
   Object.defineProperty(Element.prototype, "scrollIntoView", { value: () => undefined });
   globalThis.ResizeObserver ??= class {
     observe() {}
@@ -48,6 +53,8 @@ beforeEach(() => {
   present = stored();
   materials = [];
   refuse = null;
+  followed = [];
+  sessionStorage.clear();
   vi.stubGlobal(
     "fetch",
     vi.fn(async (address: string, init?: RequestInit) => {
@@ -76,10 +83,12 @@ afterEach(() => {
 });
 
 function show(stackup = stored(), readOnly: string | null = null) {
-  render(
+  const { unmount } = render(
     <QueryClientProvider client={new QueryClient({ defaultOptions: { queries: { retry: false } } })}>
       <LengthUnitProvider initial="mm">
         <Tooltip.Provider>
+          <Rail />
+          <Toaster />
           <StackupEditor
             projectId={PROJECT}
             projectName="Tide gauge controller"
@@ -92,9 +101,27 @@ function show(stackup = stored(), readOnly: string | null = null) {
       </LengthUnitProvider>
     </QueryClientProvider>,
   );
+  leave = unmount;
   return userEvent.setup();
 }
 
+/** A link of the rail: followed unless something before it prevented the click. */
+function Rail() {
+  return (
+    <a
+      href={`/projects/${PROJECT}/impedance`}
+      onClick={(event) => {
+        if (!event.defaultPrevented) followed.push(event.currentTarget.pathname);
+        event.preventDefault();
+      }}
+    >
+      Impedance
+    </a>
+  );
+}
+
+const thickness = (put: Put | undefined) =>
+  put?.stackup.layers.find(({ name }) => name === "Core 2-3")?.thickness;
 const field = (name: string) => screen.getByRole<HTMLInputElement>("textbox", { name });
 const combo = (name: string) => screen.getByRole<HTMLInputElement>("combobox", { name });
 const order = () =>
@@ -136,6 +163,53 @@ describe("stackup editor", () => {
     await retype(user, field("Dk of Core 2-3"), "4.5");
     await waitFor(() => expect(puts).toHaveLength(1), { timeout: 3000 });
     expect(puts[0]?.stackup.layers.find(({ name }) => name === "Core 2-3")?.dk).toBe("4.5");
+  });
+
+  it("saves what was typed before it follows a link", async () => {
+    const user = show();
+    await user.click(field("Thickness of Core 2-3"));
+    await user.clear(field("Thickness of Core 2-3"));
+    await user.type(field("Thickness of Core 2-3"), "1.1");
+    await user.click(screen.getByRole("link", { name: "Impedance" }));
+    await waitFor(() => expect(followed).toEqual([`/projects/${PROJECT}/impedance`]));
+    expect(puts).toHaveLength(1);
+    expect(thickness(puts[0])).toEqual({ value: "1.1", unit: "mm" });
+  });
+
+  it("saves an edit, and a text that is still being typed, when Back takes the page away", async () => {
+    const user = show();
+    await retype(user, field("Dk of Core 2-3"), "4.5");
+    await user.click(field("Thickness of Core 2-3"));
+    await user.clear(field("Thickness of Core 2-3"));
+    await user.type(field("Thickness of Core 2-3"), "1.2");
+    leave();
+    await waitFor(() => expect(thickness(puts.at(-1))).toEqual({ value: "1.2", unit: "mm" }));
+    expect(puts.at(-1)?.stackup.layers.find(({ name }) => name === "Core 2-3")?.dk).toBe("4.5");
+  });
+
+  it("stays where a text could not be read, and leaves without it only when told to", async () => {
+    const user = show();
+    await retype(user, field("Dk of Core 2-3"), "0.2");
+    await retype(user, field("Thickness of Core 2-3"), "1.3");
+    await user.click(screen.getByRole("link", { name: "Impedance" }));
+    expect(await screen.findByText(/^Not saved yet\. Core 2-3, Dk/)).toBeTruthy();
+    expect(followed).toEqual([]);
+    await user.click(screen.getByRole("button", { name: "Leave without it" }));
+    await waitFor(() => expect(followed).toHaveLength(1));
+    expect(thickness(puts[0])).toEqual({ value: "1.3", unit: "mm" });
+  });
+
+  it("keeps a refused text over Back and coming back", async () => {
+    const user = show();
+    await retype(user, field("Dk of Core 2-3"), "0.2");
+    await retype(user, field("Thickness of Core 2-3"), "1.4");
+    leave();
+    show();
+    await waitFor(() => expect(field("Dk of Core 2-3").value).toBe("0.2"));
+    expect(puts).toHaveLength(0);
+    await retype(user, field("Dk of Core 2-3"), "4.4");
+    await waitFor(() => expect(puts).toHaveLength(1), { timeout: 3000 });
+    expect(thickness(puts[0])).toEqual({ value: "1.4", unit: "mm" });
   });
 
   it("does not save two layers of one name, and says which", async () => {
