@@ -1,0 +1,3 @@
+import { lawsOfAnyNet } from "./laws-of-any-net";
+
+lawsOfAnyNet(1000, 90210);
