@@ -70,6 +70,30 @@ describe.skipIf(!present)("public samples", () => {
     expect(reasons("dclampst.ibs").join()).toContain("falls by 1.9 % of its range");
   });
 
+  it("an ECL output, whose both tables hang from the upper supply, swings from 3.19 V to 4.08 V on 50 Ω to 3 V", () => {
+    const { document } = read("diff_pecl_term.ibs");
+    expect(document?.components[0]?.differential[0]).toMatchObject({
+      pin: "1",
+      inverting: "2",
+      threshold: 0.25,
+    });
+    const model = document!.models.find(({ name }) => name === "PECL_DIFF_OUT")!;
+    const edges = [{ at: 0, edge: "rise" as const }];
+    const { driver, parts } = ibisDriver(model, "typical", { name: "D", node: "pad", edges });
+    const { voltage } = simulate(
+      {
+        rails: [{ name: "vt", node: "vt", volts: 3 }],
+        drivers: [driver],
+        sections: [],
+        parts: [...parts, { name: "R", kind: "R", a: "pad", b: "vt", value: 50 }],
+        probes: [{ name: "pad", node: "pad" }],
+      },
+      { until: 5e-9 },
+    );
+    expect(voltage.pad![0]).toBeCloseTo(3.19, 1);
+    expect(voltage.pad!.at(-1)).toBeCloseTo(4.08, 1);
+  });
+
   it("every waveform at every corner comes back in its own fixture, to 0.2 % of its swing", () => {
     let waveforms = 0;
     for (const file of files)
