@@ -16,7 +16,7 @@ import {
   unknownClasses,
   type ProjectContext,
 } from "@/lib/formats/lists/nets-from-rows";
-import { valueWarning } from "@/lib/formats/lists/parts-list";
+import { pinsWarning, valueWarning } from "@/lib/formats/lists/parts-list";
 import { previewInTurns, type ListPreview } from "@/lib/formats/lists/preview";
 import type { Actor } from "@/lib/schemas/actor";
 import type { ListMapping } from "@/lib/schemas/import-list";
@@ -88,8 +88,12 @@ export async function readList(
       const preview = await previewInTurns(table, { ...mapping, kind: mapping.kind }, turn);
       const rows = preview.good.filter(({ duplicateOf }) => duplicateOf === null);
       const warnings = rows.flatMap(({ row, value }) => {
-        const reason = valueWarning(value);
-        return reason ? [{ row, column: "value", value: value.value, reason }] : [];
+        const ofValue = valueWarning(value);
+        const ofPins = pinsWarning(value);
+        return [
+          ...(ofValue ? [{ row, column: "value", value: value.value, reason: ofValue }] : []),
+          ...(ofPins ? [{ row, column: "pins", value: value.pins.join(" "), reason: ofPins }] : []),
+        ];
       });
       const parts = rows.map(({ value }) => value);
       return {

@@ -1,4 +1,5 @@
-import { parseQuantity, toSi, type Dimension } from "@/lib/si/units";
+import { DomainError } from "@/lib/si/errors";
+import { parsePrintedValue, toSi, type PartDimension } from "@/lib/si/units";
 import type { StoredNet, StoredPart } from "@/lib/schemas/net";
 import { byName } from "./pin-names";
 
@@ -23,10 +24,10 @@ const kinds: Partial<Record<StoredPart["kind"], "R" | "C" | "L">> = {
   inductor: "L",
   ferrite: "L",
 };
-const dimensionOf: Record<"R" | "C" | "L", { dimension: Dimension; unit: string }> = {
-  R: { dimension: "resistance", unit: "Ω" },
-  C: { dimension: "capacitance", unit: "F" },
-  L: { dimension: "inductance", unit: "H" },
+const dimensionOf: Record<"R" | "C" | "L", PartDimension> = {
+  R: "resistance",
+  C: "capacitance",
+  L: "inductance",
 };
 
 export interface TwoTerminals {
@@ -86,18 +87,17 @@ function readValue(
       value: null,
       missing: { input, detail: `${reference} is on the route but not in the parts list.` },
     };
+  if (part.value === "")
+    return {
+      value: null,
+      missing: { input, detail: `${reference} has no value. Give it in the parts list.` },
+    };
   // A ferrite's impedance at one frequency is no inductance: "600R@100MHz" stays unread.
-  const { dimension, unit } = dimensionOf[kind];
-  const text = part.value.split(/[,;/@ ](?=\s*[±\d])/)[0]?.trim() ?? "";
+  const dimension = dimensionOf[kind];
   try {
-    const value = toSi(parseQuantity(text, dimension, unit), dimension);
-    const bare = kind !== "R" && /^[\d.,]+$/.test(text);
-    if (value >= 0 && !bare && (kind === "R" || value > 0)) return { value, missing: null };
-  } catch {
-    // said below, with the part's name
+    return { value: toSi(parsePrintedValue(part.value, dimension), dimension), missing: null };
+  } catch (error) {
+    if (!(error instanceof DomainError)) throw error;
+    return { value: null, missing: { input, detail: `${reference}: ${error.message}` } };
   }
-  const said = part.value
-    ? `"${part.value}" of ${reference} is not a value in ${unit}.`
-    : `${reference} has no value.`;
-  return { value: null, missing: { input, detail: said } };
 }

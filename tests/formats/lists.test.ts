@@ -6,7 +6,7 @@ import { badRowsCsv } from "@/lib/formats/lists/bad-rows";
 import { guessKind, guessMapping } from "@/lib/formats/lists/guess-mapping";
 import { copperLayers, proposeLayer } from "@/lib/formats/lists/layer-names";
 import { netsFromNetList, netsFromSections } from "@/lib/formats/lists/nets-from-rows";
-import { partKindOf, valueWarning } from "@/lib/formats/lists/parts-list";
+import { partKindOf, pinsWarning, valueWarning } from "@/lib/formats/lists/parts-list";
 import { previewTable } from "@/lib/formats/lists/preview";
 import { listKinds, type ListKind } from "@/lib/schemas/import-list";
 import { netDoc, partDoc } from "@/lib/schemas/net";
@@ -262,6 +262,16 @@ describe("parts list", () => {
     expect(valueWarning(part("C1", "10 uF 25V"))).toBeNull();
     expect(valueWarning(part("R1", "DNP"))).toBeNull();
     expect(valueWarning(part("R1", "see note"))).toContain("R1");
+    expect(valueWarning(part("R1", "4,7k"))).toBeNull();
+    expect(valueWarning(part("R1", "-33R"))).toContain("negative");
+  });
+});
+
+describe("pins of a part", () => {
+  it("are remarked on where a lone name is neither a count nor both pins", () => {
+    const part = (pins: string[]) => partDoc.parse({ reference: "R1", kind: "resistor", pins });
+    expect(pinsWarning(part(["abc"]))).toContain("'abc' is neither a count nor the pins of R1.");
+    expect([[], ["1", "2"], ["A", "K"]].map((pins) => pinsWarning(part(pins)))).toEqual([null, null, null]);
   });
 });
 

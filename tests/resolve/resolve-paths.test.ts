@@ -29,6 +29,10 @@ describe("what joins nets into one path", () => {
     expect(path.missing).toEqual([]);
   });
 
+  it.each(["4,7k", "4 700", "4,7k 1%"])("reads its value %s whole: 4700 Ω", (value) => {
+    expect(only(nets, { parts: [part("R1", value, "resistor")] }).parts[0]?.value).toBe(4700);
+  });
+
   it("an AC capacitor joins too", () => {
     const path = only([routed("TX", ["U1.1 C1.1 3"]), routed("TX_C", ["C1.2 U2.1 40"])], {
       parts: [part("C1", "100n", "capacitor")],
@@ -166,6 +170,18 @@ describe("what is missing is named by the input that would fill it", () => {
       "a part without value",
       [routed("D0_S", ["U1.1 R1.1 3"]), routed("D0", ["R1.2 U2.1 40"])],
       { parts: [part("R1", "tbd", "resistor")] },
+      "value of R1",
+    ],
+    [
+      "a part whose value can be read two ways",
+      [routed("D0_S", ["U1.1 R1.1 3"]), routed("D0", ["R1.2 U2.1 40"])],
+      { parts: [part("R1", "4 70", "resistor")] },
+      "value of R1",
+    ],
+    [
+      "a part of a negative value",
+      [routed("D0_S", ["U1.1 R1.1 3"]), routed("D0", ["R1.2 U2.1 40"])],
+      { parts: [part("R1", "-33R", "resistor")] },
       "value of R1",
     ],
     [

@@ -1,15 +1,15 @@
 import type { PartDoc } from "@/lib/schemas/net";
 import { DomainError } from "@/lib/si/errors";
-import { parseQuantity, type Dimension } from "@/lib/si/units";
+import { parsePrintedValue, type PartDimension } from "@/lib/si/units";
 import type { ListFormat } from "./list-field";
 
 type PartKind = PartDoc["kind"];
 
 const MAX_PINS = 3000;
-const DIMENSIONS: Partial<Record<PartKind, [Dimension, string]>> = {
-  resistor: ["resistance", "Ω"],
-  capacitor: ["capacitance", "F"],
-  inductor: ["inductance", "H"],
+const DIMENSIONS: Partial<Record<PartKind, PartDimension>> = {
+  resistor: "resistance",
+  capacitor: "capacitance",
+  inductor: "inductance",
 };
 
 /** One row a part. */
@@ -106,7 +106,7 @@ export function valueWarning(part: PartDoc): string | null {
   if (!wanted || part.value === "" || /^(dn[pim]|nc|nf|do not (fit|place|populate))$/i.test(part.value))
     return null;
   try {
-    parseQuantity(firstWord(part.value), ...wanted);
+    parsePrintedValue(part.value, wanted);
     return null;
   } catch (error) {
     if (!(error instanceof DomainError)) throw error;
@@ -114,9 +114,11 @@ export function valueWarning(part: PartDoc): string | null {
   }
 }
 
-/** "100n/16V X7R" says its value first. */
-function firstWord(value: string): string {
-  return /^[^\s/,]+(?:\s(?:[munpfkM]?[ΩFH]|[kM]?ohms?))?/iu.exec(value)?.[0] ?? value;
+/** A lone name that is no count: two ends need two. Null where nothing is strange. */
+export function pinsWarning(part: PartDoc): string | null {
+  const [only] = part.pins;
+  if (!DIMENSIONS[part.kind] || part.pins.length !== 1 || only === undefined || only === "1") return null;
+  return `'${only}' is neither a count nor the pins of ${part.reference}. Write 2, or the names of both pins, such as 1 2.`;
 }
 
 /** A lone count stands for pins 1…n where pins are counted through; a large package names its own. */

@@ -3,6 +3,7 @@ export { Decimal } from "./decimal";
 export { METRES_PER_OUNCE } from "./unit-table";
 export { findUnit, unitsOf } from "./find-unit";
 export { canonicalUnit, parseQuantity } from "./parse-quantity";
+export { parsePrintedValue, type PartDimension } from "./printed-value";
 export {
   addExact,
   addWeightedExact,
