@@ -13,7 +13,7 @@ export interface Fineness {
   outerGrowth: number;
   /** a vertex facing a segment at distance d refines it to facing·d */
   facing: number;
-  /** panels nearer than this many half-lengths are integrated in closed form */
+  /** panels nearer than this many half-lengths are integrated in closed form; no round number, which distances may equal */
   near: number;
   /** error of a line value over the unresolved share of the charge, from random cross-sections: 97 of 100 lie below */
   tail: number;
@@ -30,7 +30,7 @@ export const FINENESS: Record<Accuracy, Fineness> = {
     growth: 1.5,
     outerGrowth: 1.6,
     facing: 1.1,
-    near: 1.75,
+    near: 1.763,
     tail: 0.06,
     floor: 5e-5,
   },
@@ -42,7 +42,7 @@ export const FINENESS: Record<Accuracy, Fineness> = {
     growth: 1.1,
     outerGrowth: 1.4,
     facing: 0.7,
-    near: 2,
+    near: 2.037,
     tail: 0.02,
     floor: 2e-5,
   },
@@ -54,7 +54,7 @@ export const FINENESS: Record<Accuracy, Fineness> = {
     growth: 0.9,
     outerGrowth: 1.1,
     facing: 0.5,
-    near: 3.5,
+    near: 3.517,
     tail: 0.0014,
     floor: 5e-7,
   },

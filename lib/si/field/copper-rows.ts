@@ -72,7 +72,7 @@ function integrateNear(
     const ox = x - centreX[k]!;
     const oy = y - centreY[k]!;
     const limit = reach[k]!;
-    if (ox * ox + oy * oy > limit * limit) continue;
+    if (!mesh.isNear(ox * ox + oy * oy, limit * limit)) continue;
     const start = first[k]!;
     const n = first[k + 1]! - start;
     let table: Float64Array = logReal;

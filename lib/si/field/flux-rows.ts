@@ -126,7 +126,7 @@ function integrateNear(
     const limit = reach[k]! + extent;
     const ox = mx - centreX[k]!;
     const oy = my - centreY[k]!;
-    if (ox * ox + oy * oy > limit * limit) continue;
+    if (!mesh.isNear(ox * ox + oy * oy, limit * limit)) continue;
     if (mesh.segment[k] === segment || (level && mesh.vy[k] === 0 && mesh.ay[k] === endY[0])) continue;
     const start = first[k]!;
     const n = first[k + 1]! - start;
@@ -135,12 +135,12 @@ function integrateNear(
     for (let e = 0; e <= cells; e++) {
       const px = endX[e]! - centreX[k]!;
       const py = endY[e]! - centreY[k]!;
-      nearEnd[e] = px * px + py * py <= close ? 1 : 0;
+      nearEnd[e] = mesh.isNear(px * px + py * py, close) ? 1 : 0;
     }
     for (let e = 0; e <= cells; e++) {
       // a far end serves only to close a cell with a near one
       if (!nearEnd[e] && !(e > 0 && nearEnd[e - 1]) && !(e < cells && nearEnd[e + 1])) continue;
-      panelLogarithm(mesh, k, endX[e]!, endY[e]!);
+      panelLogarithm(mesh, k, endX[e]!, endY[e]!, nearEnd[e] === 0);
       for (let j = 0; j < n; j++) imag[e * 8 + j] = logImag[j]!;
     }
     for (let i = 0; i < cells; i++) {

@@ -45,7 +45,10 @@ export class Mesh {
   mirrorY = new Float64Array(0);
 
   /** |ζ − ½|² by p beyond which the rule's points serve instead of integrals, ζ = (z − a)/v */
-  readonly farness = new Float64Array(4);
+  private readonly farness = new Float64Array(4);
+  private decisions = new Uint8Array(4096);
+  private decided = 0;
+  private replay: Uint8Array | null = null;
   private roomForPanels = 0;
   private roomForNodes = 0;
 
@@ -93,6 +96,34 @@ export class Mesh {
     this.half[k] = half;
     this.reach[k] = Math.sqrt(square * this.farness[power]!);
     this.addNodes(k, power, n);
+  }
+
+  /**
+   * Whether a squared distance is below a limit; where decisions are held, what was decided at this place before, so that
+   * a result does not step where a panel changes from near to far.
+   */
+  isNear(square: number, limit: number): boolean {
+    const place = this.decided++;
+    if (this.replay) return this.replay[place] === 1;
+    if (place >= this.decisions.length) {
+      const wider = new Uint8Array(2 * place);
+      wider.set(this.decisions);
+      this.decisions = wider;
+    }
+    const near = square <= limit;
+    this.decisions[place] = near ? 1 : 0;
+    return near;
+  }
+
+  /** Repeats earlier decisions of isNear, in order; null decides anew. */
+  hold(decisions: Uint8Array | null): void {
+    this.replay = decisions;
+    this.decided = 0;
+  }
+
+  /** The decisions since `hold`. */
+  takeDecisions(): Uint8Array {
+    return this.replay ?? this.decisions.slice(0, this.decided);
   }
 
   /** After the last panel. */

@@ -19,9 +19,11 @@ const SIN120 = Math.sqrt(3) / 2;
  *     ∫ P_m(t) ln(τ − t) dt = 2 (Q_{m+1}(τ) − Q_{m−1}(τ))/(2m + 1),  m ≥ 1  (Legendre functions of the second kind)
  *
  * Real parts are logarithms of distance [ln m]; differences of imaginary parts between two points are angles [rad], up to
- * the same multiple of 2π in every node. Accuracy 1e-10.
+ * the same multiple of 2π in every node. Accuracy 1e-10 within the panel's reach.
+ *
+ * @param far  true beyond the reach: the rule's own points then serve
  */
-export function panelLogarithm(mesh: Mesh, k: number, x: number, y: number): void {
+export function panelLogarithm(mesh: Mesh, k: number, x: number, y: number, far = false): void {
   const p = mesh.power[k]!;
   const n = mesh.size[k]!;
   const dx = x - mesh.ax[k]!;
@@ -31,7 +33,7 @@ export function panelLogarithm(mesh: Mesh, k: number, x: number, y: number): voi
   const zr = dx * ir - dy * ii;
   const zi = dx * ii + dy * ir;
   const square = zr * zr + zi * zi;
-  if (square - zr + 0.25 > mesh.farness[p]!) {
+  if (far) {
     pointValues(p, n, zr, zi, mesh.logLength[k]!);
     return;
   }

@@ -7,6 +7,8 @@ import { Vertices, distanceTo, projection } from "./vertices";
 export interface Topology {
   /** per segment: the vertices that refine it inside, and the panels in each stretch between them */
   parts: { inner: number[]; counts: number[] }[];
+  /** which panels are integrated in closed form from where, see Mesh.isNear */
+  near: Uint8Array | null;
 }
 
 const vertices = new Vertices();
@@ -33,7 +35,8 @@ export function layPanels(
     return part;
   });
   mesh.close();
-  return held ?? { parts };
+  mesh.hold(held?.near ?? null);
+  return held ?? { parts, near: null };
 }
 
 function layOn(

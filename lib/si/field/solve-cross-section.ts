@@ -56,7 +56,7 @@ export function neighbourSolver(
   return (section) => {
     validateCrossSection(section);
     const solved = solveWith(section, FINENESS[options.accuracy ?? "standard"], topology);
-    topology = solved.topology;
+    topology = { ...solved.topology, near: workspace.takeDecisions() };
     return solved.parameters;
   };
 }

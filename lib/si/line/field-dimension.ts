@@ -10,8 +10,8 @@ export interface FieldDimensionRequest extends Omit<DimensionRequest, "impedance
   accuracy?: "live" | "standard" | "reference";
 }
 
-/** Relative impedance error at which the search ends. */
-const TOLERANCE = 1e-6;
+/** Relative impedance error at which the search ends: well below that of the solution. */
+const TOLERANCE = { live: 1e-4, standard: 1e-5, reference: 1e-7 };
 const LONGEST_SEARCH = 8;
 /** d ln Z / d ln x where no closed form tells it: of a width, and of a gap */
 const SLOPE = { width: -0.45, gap: 0.15 };
@@ -48,7 +48,7 @@ export function fieldDimension(request: FieldDimensionRequest): {
   const found = dimensionForTarget({
     ...request,
     ohms,
-    tolerance: TOLERANCE,
+    tolerance: TOLERANCE[accuracy ?? "standard"],
     impedanceAt: (x) => {
       solves += 1;
       return impedanceOf(neighbourSolver({ accuracy })(sectionAt(x)), kind);
@@ -76,7 +76,7 @@ function secant(
       throw error;
     }
     const miss = Math.log(z / ohms);
-    if (Math.abs(miss) <= TOLERANCE) return { value: x, impedance: z };
+    if (Math.abs(miss) <= TOLERANCE[request.accuracy ?? "standard"]) return { value: x, impedance: z };
     if (round > 0) {
       const measured = Math.log(z / lastZ) / Math.log(x / lastX);
       if (measured * slope > 0) slope = measured;
