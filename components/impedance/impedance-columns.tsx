@@ -26,7 +26,7 @@ export function impedanceColumns(unit: LengthUnit, { narrow, pairs }: Choice): C
     {
       id: "class",
       header: "Class",
-      width: 104,
+      width: 116,
       beside: true,
       cell: (row) => <span title={row.netClass.name}>{row.netClass.name}</span>,
       sortValue: (row) => row.netClass.name,
@@ -34,7 +34,7 @@ export function impedanceColumns(unit: LengthUnit, { narrow, pairs }: Choice): C
     {
       id: "layer",
       header: "Layer",
-      width: 78,
+      width: 86,
       beside: true,
       cell: (row) => (
         <span title={row.layer.name} className={row.allowed ? undefined : "text-ink-soft"}>
@@ -64,7 +64,7 @@ export function impedanceColumns(unit: LengthUnit, { narrow, pairs }: Choice): C
     {
       id: "width",
       header: "Width",
-      width: 80,
+      width: 76,
       kind: "number",
       number: (row) => length(row.width),
       sortValue: (row) => row.width,
@@ -74,7 +74,7 @@ export function impedanceColumns(unit: LengthUnit, { narrow, pairs }: Choice): C
       id: "gap",
       header: "Gap",
       ofPairs: true,
-      width: 80,
+      width: 76,
       kind: "number",
       number: (row) => (row.gapAssumed ? null : length(row.gap)),
       sortValue: (row) => row.gap,
@@ -93,7 +93,7 @@ export function impedanceColumns(unit: LengthUnit, { narrow, pairs }: Choice): C
     {
       id: "centring",
       header: "Off target",
-      width: 84,
+      width: 82,
       beside: true,
       cell: (row) => (
         <MarkedNumber
@@ -136,7 +136,7 @@ export function impedanceColumns(unit: LengthUnit, { narrow, pairs }: Choice): C
     {
       id: "yield",
       header: "Yield",
-      width: 84,
+      width: 82,
       beside: true,
       cell: (row) => (
         <MarkedNumber
@@ -151,7 +151,7 @@ export function impedanceColumns(unit: LengthUnit, { narrow, pairs }: Choice): C
     {
       id: "meets",
       header: "Meets at",
-      width: 80,
+      width: 76,
       beside: true,
       kind: "number",
       number: (row) => answered(row, length(row.meets?.ok ? row.meets.value.dimension : null)),
@@ -171,23 +171,32 @@ export function impedanceColumns(unit: LengthUnit, { narrow, pairs }: Choice): C
       id: "gapMeets",
       header: "Or gap",
       ofPairs: true,
-      width: 80,
+      width: 76,
       kind: "number",
       number: (row) => answered(row, length(row.gapMeets?.ok ? row.gapMeets.value.dimension : null)),
       explanation: "Of a pair: the gap that meets the target at the class’s width",
     },
-    { id: "remarks", header: "Remarks", cell: (row) => <Remarks row={row} unit={unit} /> },
+    { id: "remarks", header: "Remarks", cell: (row) => <Remarks row={row} unit={unit} short /> },
   ];
   return columns.filter(({ beside, ofPairs }) => (beside || !narrow) && (pairs || !ofPairs));
 }
 
 /** What cannot be etched comes first and in the colour of a warning. */
-export function Remarks({ row, unit }: { row: ImpedanceRow; unit: LengthUnit }) {
+export function Remarks({
+  row,
+  unit,
+  short = false,
+}: {
+  row: ImpedanceRow;
+  unit: LengthUnit;
+  /** for a column: the whole of it is in its title */
+  short?: boolean;
+}) {
   const warned = capabilityWords(row, unit).length > 0;
   const words = remarks(row, unit).join("; ");
   return (
     <span title={words} className={warned ? "text-near" : "text-ink-soft"}>
-      {words}
+      {short ? remarks(row, unit, true).join("; ") : words}
     </span>
   );
 }

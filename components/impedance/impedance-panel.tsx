@@ -56,7 +56,7 @@ export function ImpedancePanel(props: Props) {
     engines,
     seen: { plot: plotSeen, loss: lossSeen },
   });
-  const { tried, search, spread, curve, band, loss, sides, refused, widest } = answers;
+  const { tried, field, search, spread, curve, band, loss, sides, refused, widest } = answers;
   const { width, gap } = trial.shape;
   const meets = search.answer?.meets ?? null;
   const same = width === row.width && (gap === null || (gap === row.gap && !row.gapAssumed));
@@ -109,6 +109,7 @@ export function ImpedancePanel(props: Props) {
         />
         <SectionDrawing
           trial={tried.answer}
+          field={field.answer?.ok ? field.answer.value : null}
           unit={unit}
           title={`Cross-section of ${netClass.name} on ${layer.name}`}
           fileName={`${netClass.name} on ${layer.name} section`}

@@ -30,9 +30,9 @@ export function formulaDifference({ now }: Pick<ImpedanceRow, "now">): number | 
 }
 
 /** What is to be said of a row beyond its numbers; the gravest first. */
-export function remarks(row: ImpedanceRow, unit: LengthUnit): string[] {
+export function remarks(row: ImpedanceRow, unit: LengthUnit, short = false): string[] {
   const { meets, now, spread } = row;
-  const said = [...capabilityWords(row, unit)];
+  const said = capabilityWords(row, unit, short);
   if (meets && !meets.ok)
     said.push(
       meets.reachable
@@ -52,15 +52,19 @@ export function remarks(row: ImpedanceRow, unit: LengthUnit): string[] {
 export function capabilityWords(
   row: Pick<ImpedanceRow, "least" | "width" | "gap" | "gapAssumed" | "meets">,
   unit: LengthUnit,
+  short = false,
 ): string[] {
   const { least, width, gap, gapAssumed, meets } = row;
   if (!least) return [];
   const under = (value: number | null, limit: number) => value !== null && value < limit * (1 - 1e-9);
   const words: string[] = [];
-  const limit = (metres: number) => `${lengthDigits(metres, unit)} ${unit}`;
-  if (under(width, least.minWidth)) words.push(`width below least, ${limit(least.minWidth)}`);
-  if (!gapAssumed && under(gap, least.minGap)) words.push(`gap below least, ${limit(least.minGap)}`);
+  const say = (what: string, metres: number) => {
+    const limit = `${lengthDigits(metres, unit)} ${unit}`;
+    words.push(short ? `${what} < ${limit}` : `${what} is below the least etched here, ${limit}`);
+  };
+  if (under(width, least.minWidth)) say("width", least.minWidth);
+  if (!gapAssumed && under(gap, least.minGap)) say("gap", least.minGap);
   if (words.length === 0 && meets?.ok && under(meets.value.dimension, least.minWidth))
-    words.push(`meets below least, ${limit(least.minWidth)}`);
+    say(short ? "meets" : "the width that meets", least.minWidth);
   return words;
 }

@@ -11,7 +11,7 @@ export function TrialNumbers({ trial, unit }: { trial: Trial | null; unit: Lengt
   const facts = trial?.facts.ok ? trial.facts.value : null;
   return (
     <section aria-label="Numbers" className="mt-4">
-      <dl className="border-rule-line grid grid-cols-2 gap-x-6 border-t text-sm sm:grid-cols-3">
+      <dl className="border-rule-line grid gap-x-8 border-t text-sm min-[360px]:grid-cols-2">
         {(facts ? numbersOf(facts, unit) : WAITING).map(([name, value]) => (
           <div
             key={name}
@@ -84,13 +84,13 @@ function numbersOf(facts: LineFacts, unit: LengthUnit): Entry[] {
   return [
     ["Differential", z(facts.impedance)],
     ["Common", common === null ? "–" : z(common)],
-    ["Crosstalk, near end", crosstalk === null ? "–" : crosstalk.toFixed(4)],
     ["Odd", z(mode.impedance)],
-    ["Effective Dk, odd", mode.effectivePermittivity.toFixed(3)],
-    ["Delay, odd", delay(mode.delay)],
     ["Even", z(even.impedance)],
+    ["Effective Dk, odd", mode.effectivePermittivity.toFixed(3)],
     ["Effective Dk, even", even.effectivePermittivity.toFixed(3)],
+    ["Delay, odd", delay(mode.delay)],
     ["Delay, even", delay(even.delay)],
+    ["Crosstalk, near end", crosstalk === null ? "–" : crosstalk.toFixed(4)],
     error,
     ...formula,
   ];

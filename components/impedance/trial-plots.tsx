@@ -14,7 +14,7 @@ import { curveRows, impedanceWidth, type WidthPoint } from "@/lib/drawings/imped
 import { lossFrequency, lossRows } from "@/lib/drawings/loss-frequency.geometry";
 import type { Capability } from "@/lib/si/stackup";
 import type { ImpedanceRow } from "./impedance-rows";
-import { Saved } from "./trial-spread";
+import { Saved } from "./saved";
 
 interface Props {
   ref: Ref<HTMLElement>;

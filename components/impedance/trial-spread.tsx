@@ -4,12 +4,12 @@ import type { Outcome } from "@/lib/client/engine-line";
 import type { SpreadFacts } from "@/lib/client/engine-spread";
 import { SpreadHistogram } from "@/components/charts/spread-histogram";
 import { ToleranceBars } from "@/components/charts/tolerance-bars";
-import { ExportMenu } from "@/components/charts/export-menu";
 import { Skeleton } from "@/components/ui/skeleton";
 import { spreadHistogram, histogramRows } from "@/lib/drawings/spread-histogram.geometry";
 import { toleranceBars, toleranceRows } from "@/lib/drawings/tolerance-bars.geometry";
 import type { ImpedanceRow } from "./impedance-rows";
 import { ohms } from "./row-words";
+import { Saved } from "./saved";
 
 interface Props {
   row: ImpedanceRow;
@@ -60,15 +60,5 @@ export function TrialSpread({ row, spread, error }: Props) {
         </div>
       )}
     </section>
-  );
-}
-
-/** A drawing's caption with its menu. */
-export function Saved({ words, ...menu }: { words?: string } & React.ComponentProps<typeof ExportMenu>) {
-  return (
-    <div className="flex items-start justify-between gap-3">
-      <p className="text-ink-soft min-w-0 pt-1.5 text-xs">{words}</p>
-      <ExportMenu {...menu} />
-    </div>
   );
 }

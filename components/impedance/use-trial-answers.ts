@@ -3,15 +3,18 @@
 import { useMemo, useState } from "react";
 import type { Engine } from "@/lib/client/engine";
 import type { CurveJob, SearchJob, TrialJob } from "@/lib/client/engine-impedance";
+import type { FieldJob } from "@/lib/client/engine-field";
 import type { LossJob } from "@/lib/client/engine-loss";
 import { SOUGHT } from "@/lib/client/engine-sought";
 import type { BandJob, SpreadJob } from "@/lib/client/engine-spread";
 import { useEngine } from "@/lib/client/use-engine";
+import { sectionWindow } from "@/lib/drawings/trace-placement";
 import { trialSides, type TrialSides, trialStackup } from "@/lib/resolve/trial-stackup";
 import type { ProcessDoc } from "@/lib/schemas/process";
 import { EngineError } from "@/lib/si/errors";
 import type { Stackup } from "@/lib/si/stackup";
 import type { ImpedanceRow } from "./impedance-rows";
+import { SECTION_SIZES } from "./section-drawing";
 import type { TrialState } from "./use-trial";
 
 interface Inputs {
@@ -50,6 +53,13 @@ export function useTrialAnswers({ row, stackup, process, trial, grid, engines, s
     [changed, index, shape, dragging],
   );
   const tried = useEngine(engines.live, trialJob);
+
+  const section = dragging ? null : (tried.answer?.section ?? null);
+  const fieldJob = useMemo((): FieldJob | null => {
+    const window = section && sectionWindow(section, SECTION_SIZES);
+    return window && { kind: "line-field", section, window };
+  }, [section]);
+  const field = useEngine(engines.background, fieldJob);
 
   // The end of the slider and of the curve moves in steps, so that it does not run away from under one's hand.
   const meetsAt = row.meets?.ok ? row.meets.value.dimension : 0;
@@ -119,7 +129,7 @@ export function useTrialAnswers({ row, stackup, process, trial, grid, engines, s
     !dragging,
   );
   const loss = useEngine(engines.background, seen.loss ? lossJob : null);
-  return { sides, changed, refused, widest, tried, curve, search, spread, band, loss };
+  return { sides, refused, widest, tried, field, curve, search, spread, band, loss };
 }
 
 /** The value as it was when the hand last rested. */

@@ -12,6 +12,7 @@ import {
   traceShape,
   widthFor,
 } from "./engine-line";
+import { type FieldJob, type FieldLines, fieldLines } from "./engine-field";
 import { type LossFacts, type LossJob, lossOf } from "./engine-loss";
 import {
   type BandJob,
@@ -23,7 +24,8 @@ import {
 } from "./engine-spread";
 
 /** What the impedance page asks of the engine. */
-export type ImpedanceJob = CellJob | SearchJob | TrialJob | CurveJob | SpreadJob | BandJob | LossJob;
+export type ImpedanceJob =
+  CellJob | SearchJob | TrialJob | CurveJob | SpreadJob | BandJob | LossJob | FieldJob;
 
 export interface ImpedanceAnswers {
   "line-cell": CellAnswer;
@@ -33,6 +35,7 @@ export interface ImpedanceAnswers {
   "line-spread": Outcome<SpreadFacts>;
   "line-band": BandPoint[];
   "line-loss": Outcome<LossFacts>;
+  "line-field": Outcome<FieldLines>;
 }
 
 interface OnLayer {
@@ -130,6 +133,8 @@ export function answerImpedance(job: ImpedanceJob): ImpedanceAnswers[ImpedanceJo
       return spreadBand(job);
     case "line-loss":
       return lossOf(job);
+    case "line-field":
+      return fieldLines(job);
   }
 }
 

@@ -110,25 +110,25 @@ function lossUnit(unit: LengthUnit): { name: string; factor: number } {
   return unit === "mm" ? { name: "dB/m", factor: 1 } : { name: "dB/in", factor: INCH };
 }
 
-/** A line at 1, 2 and 5 of every decade, its label at each that has room. */
+/** Room that a frequency's label needs [px]. */
+const LABEL = 56;
+
+/** A line at 1, 2 and 5 of every decade; the decades have their labels first, the others where there is room. */
 function decades(x: (f: number) => number, box: PlotBox, from: number, to: number): Mark[] {
   const marks: Mark[] = [line(box.left, box.bottom, box.right, box.bottom, { stroke: "ink-soft" })];
-  let free = -Infinity;
-  for (let decade = Math.floor(Math.log10(from)); 10 ** decade <= to; decade++) {
+  const steps: { at: number; f: number; whole: boolean }[] = [];
+  for (let decade = Math.floor(Math.log10(from) + 1e-9); 10 ** decade <= to; decade++)
     for (const digit of [1, 2, 5]) {
       const f = digit * 10 ** decade;
-      if (f < from * (1 - 1e-9) || f > to * (1 + 1e-9)) continue;
-      const at = x(f);
-      marks.push(line(at, box.top, at, box.bottom, { stroke: "rule-line", opacity: digit === 1 ? 1 : 0.5 }));
-      if ((digit !== 1 && at < free + 12) || at < free) continue;
-      marks.push(
-        text(at, box.bottom + 18, quantityText(f, "Hz").replace(/\.0+(?=\u2009)/, ""), {
-          anchor: "middle",
-          ink: "ink-soft",
-        }),
-      );
-      free = at + 56;
+      if (f >= from * (1 - 1e-9) && f <= to * (1 + 1e-9)) steps.push({ at: x(f), f, whole: digit === 1 });
     }
+  const labelled: number[] = [];
+  for (const { at, f, whole } of [...steps.filter((s) => s.whole), ...steps.filter((s) => !s.whole)]) {
+    marks.push(line(at, box.top, at, box.bottom, { stroke: "rule-line", opacity: whole ? 1 : 0.5 }));
+    if (labelled.some((other) => Math.abs(other - at) < LABEL)) continue;
+    labelled.push(at);
+    const words = quantityText(f, "Hz").replace(/\.0+(?=\u2009)/, "");
+    marks.push(text(at, box.bottom + 18, words, { anchor: "middle", ink: "ink-soft" }));
   }
   return marks;
 }

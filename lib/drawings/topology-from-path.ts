@@ -1,10 +1,15 @@
 import type { PathPart, ResolvedPath } from "@/lib/si/path/types";
+import type { Corner } from "@/lib/si/rules/types";
 import { ohmsText, quantityText } from "./number-text";
 import type { StripEdge, StripPin, StripTermination, Topology } from "./topology-graph";
 import type { ShownVerdict } from "./verdict-mark";
 
+const NOMINAL: Corner = { driver: "typical", impedance: "nominal" };
+/** Which of a receiver's capacitances goes with a driver's speed, as in the check. */
+const LOAD = { slow: "max", typical: "typical", fast: "min" } as const;
+
 /**
- * The strip of a resolved path at its nominal values.
+ * The strip of a resolved path with the values that a corner has; nominal ones where none is named.
  *
  * @param path     what is simulated
  * @param driver   the driving pin; the first driver, if left out
@@ -14,13 +19,14 @@ export function topologyFromPath(
   path: ResolvedPath,
   driver?: string,
   verdicts: ReadonlyMap<string, ShownVerdict> = new Map(),
+  corner: Corner = NOMINAL,
 ): Topology {
   const sections = path.sections.map((s): StripEdge => ({
     kind: "line",
     id: s.id,
     a: s.a,
     b: s.b,
-    impedance: s.impedance?.nominal ?? null,
+    impedance: s.impedance?.[corner.impedance] ?? null,
     delay: s.delayPerMeter === null ? null : s.delayPerMeter * s.length,
     layer: s.layer,
   }));
@@ -43,11 +49,11 @@ export function topologyFromPath(
       pin,
       node,
       role: "driver",
-      detail: model ? ohmsText(model.resistance.typical) : "no model",
+      detail: model ? ohmsText(model.resistance[corner.driver]) : "no model",
     });
   for (const { pin, node, receiver: model } of path.receivers) {
     if (pin === driving) continue;
-    const detail = model ? quantityText(model.capacitance.typical, "F") : "no model";
+    const detail = model ? quantityText(model.capacitance[LOAD[corner.driver]], "F") : "no model";
     pins.set(pin, {
       pin,
       node,

@@ -15,6 +15,7 @@ import { lengthText, type LengthUnit } from "./number-text";
 import { scaleBar } from "./scale-bar";
 import { maskOutline } from "./trace-mask-outline";
 import { PLANE, traceDimensions } from "./trace-dimensions";
+import { AIR, placeTrace } from "./trace-placement";
 import type { Placement, TraceSectionShape } from "./trace-shape";
 import { describeTrace } from "./trace-words";
 
@@ -33,15 +34,6 @@ export interface TraceSectionOptions {
   equipotentials?: readonly Equipotential[];
 }
 
-/** Room for the dimensions around the body [px]; a narrow drawing writes those beside it on two lines. */
-const ROOM = { left: 92, right: 172 };
-const COMPACT_ROOM = { left: 86, right: 100 };
-const COMPACT_BELOW = 600;
-const ABOVE = 58;
-const BELOW = 66;
-/** of the air over an outer trace in which lines of equal potential are drawn [px] */
-const AIR = 52;
-
 /** One trace or pair over or between its planes, to scale, with its dimensions. */
 export function traceSection(
   shape: TraceSectionShape,
@@ -58,23 +50,12 @@ export function traceSection(
   if (!first || !(laminate > 0) || sizes.some((v) => !Number.isFinite(v)))
     return { ...emptyDrawing(title, "The cross-section is not complete.", width, height), scale: 0 };
 
-  const crest = Math.max(
-    laminate,
-    ...shape.traces.map((t) => t.y + t.thickness + (shape.mask?.overTrace ?? 0)),
-  );
-  const half = Math.max(...shape.traces.map((t) => Math.abs(t.x) + Math.max(t.widthBottom, t.widthTop) / 2));
-  const reach = half + Math.max(0.7 * first.widthBottom, 0.5 * laminate, (shape.coplanar?.gap ?? 0) * 1.6);
-  const compact = width < COMPACT_BELOW;
-  const { left: LEFT, right: RIGHT } = compact ? COMPACT_ROOM : ROOM;
-  const scale = Math.min((width - LEFT - RIGHT) / (2 * reach), (height - ABOVE - BELOW) / crest);
-  const centre = (LEFT + width - RIGHT) / 2;
-  const base = height - BELOW - (height - ABOVE - BELOW - crest * scale) / 2;
-  const at: Placement = { x: (m) => centre + m * scale, y: (m) => base - m * scale, scale };
-  // The body runs on to the sides, whatever the height left of the scale.
-  const [left, right] = [LEFT, width - RIGHT];
+  const { at, left, right, centre, base, crest, compact } = placeTrace(shape, first, laminate, width, height);
+  const { scale } = at;
 
+  const { bodies, labels } = dielectrics(shape, at, left, right, unit);
   const marks: Mark[] = [
-    ...dielectrics(shape, at, left, right, unit),
+    ...bodies,
     ...(shape.mask
       ? [
           polygon(
@@ -92,6 +73,7 @@ export function traceSection(
       width: right - left,
       height: base - at.y(crest) + (shape.upperPlane ? 0 : AIR),
     }),
+    ...labels,
     plane(left, right, at.y(0), at.y(0) + PLANE),
     ...(shape.upperPlane ? [plane(left, right, at.y(laminate) - PLANE, at.y(laminate))] : []),
     ...coplanarGround(shape, at, left, right),
@@ -109,7 +91,18 @@ export function traceSection(
     ...traceDimensions(shape, at, laminate, left, right, unit, base, compact),
     ...scaleBar(left, height - 8, scale, 100, unit),
   ];
-  return { width, height, title, description: describeTrace(shape, unit), marks, scale };
+  return {
+    width,
+    height,
+    title,
+    description: describeTrace(shape, unit) + linesWords(options.equipotentials),
+    marks,
+    scale,
+  };
+}
+
+function linesWords(lines: readonly Equipotential[] = []): string {
+  return lines.length > 0 ? " Lines of equal potential at every tenth of the trace’s voltage." : "";
 }
 
 function potentials(lines: readonly Equipotential[], at: Placement, clip: GroupMark["clip"]): Mark[] {
@@ -137,19 +130,20 @@ function dielectrics(
   left: number,
   right: number,
   unit: LengthUnit,
-): Mark[] {
-  const marks: Mark[] = [];
+): { bodies: Mark[]; labels: Mark[] } {
+  const bodies: Mark[] = [];
+  const labels: Mark[] = [];
   let y = 0;
   shape.layers.forEach((layer, i) => {
     const [bottom, top] = [at.y(y), at.y(y + layer.thickness)];
-    marks.push(
+    bodies.push(
       rect(left, top, right - left, bottom - top, {
         fill: "rule-line",
         fillOpacity: i % 2 === 0 ? 0.65 : 0.4,
       }),
     );
     if (i > 0)
-      marks.push(line(left, bottom, right, bottom, { stroke: "ink-soft", weight: 0.5, opacity: 0.5 }));
+      bodies.push(line(left, bottom, right, bottom, { stroke: "ink-soft", weight: 0.5, opacity: 0.5 }));
     const holdsTrace = shape.traces.some(
       (t) => t.y + 1e-9 < y + layer.thickness && t.y + t.thickness > y + 1e-9,
     );
@@ -160,10 +154,10 @@ function dielectrics(
       ...(layer.name ? [layer.name] : []),
     ];
     if (bottom - top >= 13)
-      marks.push(text(left + 8, (top + bottom) / 2 + 4, facts.join(", "), { ink: "ink-soft", halo: true }));
+      labels.push(text(left + 8, (top + bottom) / 2 + 4, facts.join(", "), { ink: "ink-soft", halo: true }));
     y += layer.thickness;
   });
-  return marks;
+  return { bodies, labels };
 }
 
 function coplanarGround(shape: TraceSectionShape, at: Placement, left: number, right: number): Mark[] {
