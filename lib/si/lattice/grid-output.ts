@@ -110,18 +110,18 @@ function sampleTimes(
   const regular = regularLength(origin, step, until);
   const extra: number[] = [];
   const seen: number[] = [];
+  let isSorted = true;
   for (const { response, shift, weight } of terms) {
     const steps = (shift - origin) / step;
     const part = steps - Math.floor(steps);
-    if (part < ALIGNED || part > 1 - ALIGNED) continue;
-    if (seen.some((other) => other === shift)) continue;
+    if (part < ALIGNED || part > 1 - ALIGNED || seen.includes(shift)) continue;
     seen.push(shift);
     const least = worthy / (Math.abs(weight) * part * (1 - part));
-    const length = Math.max(0, ...response.map((series) => series?.length ?? 0));
-    const last = Math.min(length - 1, Math.floor((until - shift) / step));
-    for (let k = 0; k <= last; k++) if (bends(response, k, least)) extra.push(shift + k * step);
+    const bent = bends(response, Math.floor((until - shift) / step), least);
+    for (let k = 0; k < bent.length; k++) if (bent[k] === 1) extra.push(shift + k * step);
+    isSorted = seen.length === 1;
   }
-  extra.sort((a, b) => a - b);
+  if (!isSorted) extra.sort((a, b) => a - b);
   const time = new Float64Array(regular + extra.length);
   const lead = origin > 0 ? 1 : 0;
   let count = lead;
@@ -134,11 +134,24 @@ function sampleTimes(
   return time.subarray(0, count);
 }
 
-function bends(response: GridTerm["response"], k: number, least: number): boolean {
+/** By sample up to `most`: does a channel bend there by more than `least`? */
+function bends(response: GridTerm["response"], most: number, least: number): Uint8Array {
+  let length = 0;
+  for (const series of response) if (series && series.length > length) length = series.length;
+  const bent = new Uint8Array(Math.max(0, Math.min(length, most + 1)));
   for (const series of response) {
-    if (!series || k + 1 >= series.length) continue;
-    const bend = series[k + 1]! - 2 * series[k]! + (k > 0 ? series[k - 1]! : 0);
-    if (bend > least || bend < -least) return true;
+    if (!series) continue;
+    const last = Math.min(bent.length, series.length - 1);
+    let here = series[0]!;
+    let before = here;
+    for (let k = 0; k < last; k++) {
+      const next = series[k + 1]!;
+      const bend = next - here - here + before;
+      // Before the first sample nothing has moved.
+      if (k === 0 ? Math.abs(next - 2 * here) > least : bend > least || bend < -least) bent[k] = 1;
+      before = here;
+      here = next;
+    }
   }
-  return false;
+  return bent;
 }

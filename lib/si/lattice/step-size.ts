@@ -92,31 +92,24 @@ export function chooseStep(
   const shortest = Math.min(Infinity, ...delays);
   // A lumped line shifts corners by less than a step, so that they fall between samples.
   const between = isLumped ? 0.6 * fineness.ramp * ramp : Infinity;
+  const chords =
+    circuit.elements.length > 0 || delays.length === 0
+      ? { curve: 0.7 * fineness.curve, chord: 0.7 * fineness.curve }
+      : fineness;
+  const drawn = Math.min(
+    between,
+    curveStep(clusters, ramp, until, chords),
+    // Curves are followed from one step ahead, which a line of one step does not allow.
+    clusters.some(({ isStatic, size }) => !isStatic && size === 1) ? shortest / 2 : Infinity,
+    sineStep(circuit, fineness.sine),
+    clusters.some((cluster) => cluster.isStatic && cluster.tables.length > 0)
+      ? ramp * fineness.table
+      : Infinity,
+  );
+  const isLossy = circuit.lines.some(({ skin }) => skin > 0);
   const wanted =
     asked ??
-    skinStep(circuit, until, accuracy, {
-      ramp,
-      jumps: wavesOf(circuit).some(
-        (wave) => wave.kind === "pwl" && corners(wave).some(({ jump }) => jump !== 0),
-      ),
-      wanted: Math.min(
-        between,
-        curveStep(
-          clusters,
-          ramp,
-          until,
-          circuit.elements.length > 0 || delays.length === 0
-            ? { curve: 0.7 * fineness.curve, chord: 0.7 * fineness.curve }
-            : fineness,
-        ),
-        // Curves are followed from one step ahead, which a line of one step does not allow.
-        clusters.some(({ isStatic, size }) => !isStatic && size === 1) ? shortest / 2 : Infinity,
-        sineStep(circuit, fineness.sine),
-        clusters.some((cluster) => cluster.isStatic && cluster.tables.length > 0)
-          ? ramp * fineness.table
-          : Infinity,
-      ),
-    });
+    (isLossy ? skinStep(circuit, until, accuracy, { ramp, jumps: jumps(circuit), wanted: drawn }) : drawn);
   // Where nothing rounds the corners off, they must be kept by the step alone.
   const sharp = clusters.every((cluster) => cluster.isStatic);
   const choice =
@@ -133,6 +126,10 @@ export function chooseStep(
       "until",
     );
   return choice;
+}
+
+function jumps(circuit: Circuit): boolean {
+  return wavesOf(circuit).some((wave) => wave.kind === "pwl" && corners(wave).some(({ jump }) => jump !== 0));
 }
 
 function sineStep(circuit: Circuit, share: number): number {
