@@ -7,6 +7,7 @@ import { type Engine, pageEngine } from "@/lib/client/engine";
 import { topologyFromPath } from "@/lib/drawings/topology-from-path";
 import type { ShownVerdict } from "@/lib/drawings/verdict-mark";
 import { applyWhatIf, isChanged, whatIfStart } from "@/lib/resolve/what-if";
+import { parseCorner } from "@/lib/si/rules/corners";
 import type { Finding } from "@/lib/si/rules/types";
 import { CornerPicker } from "./corner-picker";
 import type { NetFacts } from "./facts";
@@ -15,6 +16,7 @@ import { NetHead } from "./net-head";
 import { cornerVerdicts, inOrder, viewOf } from "./net-state";
 import { NoData } from "./no-data";
 import { ProblemList } from "./problem-list";
+import { TargetNotice } from "./target-notice";
 import { useCursor } from "./use-cursor";
 import { useCursorKeys } from "./use-cursor-keys";
 import { useNetAddress } from "./use-net-address";
@@ -85,9 +87,15 @@ export function NetPage({ facts, mayEdit, engine = pageEngine() }: Props) {
     [result, chooseFinding],
   );
   const topology = useMemo(
-    () => topologyFromPath(changed, view.driver, pinVerdicts(result.findings, receivers)),
+    () =>
+      topologyFromPath(
+        changed,
+        view.driver,
+        pinVerdicts(result.findings, receivers),
+        parseCorner(view.corner),
+      ),
     // eslint-disable-next-line react-hooks/exhaustive-deps -- the receivers follow from path and driver
-    [changed, view.driver, result],
+    [changed, view.driver, view.corner, result],
   );
   const rule = rules.find((entry) => entry.id === view.finding?.rule) ?? null;
   const corners = useMemo(() => cornerVerdicts(result, rule?.id ?? null), [result, rule]);
@@ -131,6 +139,7 @@ export function NetPage({ facts, mayEdit, engine = pageEngine() }: Props) {
           />
         )}
       </div>
+      {start ? <TargetNotice start={start} widths={facts.widths} target={path.target} /> : null}
       {blocked.length > 0 ? null : (
         <>
           <div className="bg-paper border-rule-line flex flex-wrap items-end gap-x-6 gap-y-2 border-y py-2">

@@ -1,10 +1,14 @@
 "use client";
 
 import { RotateCcw } from "lucide-react";
-import { useState } from "react";
+import { createContext, useContext, useState } from "react";
 import { Button } from "@/components/ui/button";
 import { QuantityField } from "@/components/ui/quantity-field";
-import { type Dimension, formatQuantity, fromSi, toSi } from "@/lib/si/units";
+import { ohmsText, quantityText } from "@/lib/drawings/number-text";
+import { type Dimension, formatQuantity, fromSi, type Quantity, toSi } from "@/lib/si/units";
+
+/** Tells the panel whether a field, by its label, holds a text that it does not take. */
+export const RefusedContext = createContext<(label: string, refused: boolean) => void>(() => undefined);
 
 interface Props {
   label: string;
@@ -26,15 +30,25 @@ interface Props {
 /** One value to try: a slider over sensible steps, and a field for any other. */
 export function WhatIfField(props: Props) {
   const { label, dimension, unit, value, start, changed, steps, least, most, hint, onChange } = props;
-  const [refusal, setRefusal] = useState<string | null>(null);
+  const tellRefused = useContext(RefusedContext);
+  const [refused, setRefused] = useState(false);
+  const [epoch, setEpoch] = useState(0);
   const text = (si: number | null) => (si === null ? "none" : formatQuantity(fromSi(si, unit, 4)));
 
+  function refuse(now: boolean): void {
+    setRefused(now);
+    tellRefused(label, now);
+  }
+  function range(typed: Quantity): string | null {
+    const si = toSi(typed, dimension);
+    if (si >= least && si <= most) return null;
+    const words = (end: number) => rangeText(end, dimension, unit);
+    return `${formatQuantity(typed)} is out of range. Write ${words(least)} to ${words(most)}.`;
+  }
+  /** By the slider or the button: a text that was refused goes. */
   function take(si: number | null): void {
-    if (si !== null && (si < least || si > most)) {
-      setRefusal(`${text(si)} is out of range. Choose between ${text(least)} and ${text(most)}.`);
-      return;
-    }
-    setRefusal(null);
+    refuse(false);
+    setEpoch((present) => present + 1);
     onChange(si);
   }
 
@@ -47,14 +61,16 @@ export function WhatIfField(props: Props) {
           unit={unit}
           className="grow"
           value={fromSi(value, unit, 4)}
-          error={refusal}
-          onChange={(typed) => take(typed ? toSi(typed, dimension) : null)}
+          key={epoch}
+          check={range}
+          onRefused={refuse}
+          onChange={(typed) => onChange(typed ? toSi(typed, dimension) : null)}
         />
         <Button
           variant="quiet"
           size="icon"
           aria-label={`Put back to ${text(start)}: ${label}`}
-          disabled={!changed}
+          disabled={!changed && !refused}
           onClick={() => take(null)}
         >
           <RotateCcw size={14} aria-hidden />
@@ -76,6 +92,15 @@ export function WhatIfField(props: Props) {
       </p>
     </div>
   );
+}
+
+/** An end of a range, in the prefix in which it is short: 10 kΩ, 1 µs. */
+function rangeText(si: number, dimension: Dimension, unit: string): string {
+  if (dimension === "resistance") return ohmsText(si);
+  if (dimension === "length") return formatQuantity(fromSi(si, unit, 4));
+  return si === 0
+    ? `0 ${unit}`
+    : quantityText(si, dimension === "time" ? "s" : "F").replace(/\.0+(?=\D)/, "");
 }
 
 function nearest(steps: readonly number[], value: number): number {

@@ -1,5 +1,6 @@
 "use client";
 
+import { useCallback, useState } from "react";
 import { Button } from "@/components/ui/button";
 import { Select } from "@/components/ui/select";
 import { useLengthUnit } from "@/components/shell/length-unit";
@@ -7,7 +8,7 @@ import { ohmsText } from "@/lib/drawings/number-text";
 import { impedanceOfWidth, type WidthPoint, widthOfImpedance } from "@/lib/resolve/width-points";
 import type { WhatIf, WhatIfStart } from "@/lib/resolve/what-if";
 import { eSeriesBetween } from "@/lib/si/units";
-import { WhatIfField } from "./what-if-field";
+import { RefusedContext, WhatIfField } from "./what-if-field";
 
 interface Props {
   start: WhatIfStart;
@@ -28,6 +29,23 @@ export function WhatIfPanel({ start, change, widths, onChange, onReset }: Props)
   const changed = Object.entries(change).some(([key, value]) => key !== "endTo" && value !== null);
   const length = start.length * (change.lengthScale ?? 1);
   const { unit } = useLengthUnit();
+  const [refused, setRefused] = useState<ReadonlySet<string>>(new Set());
+  const [epoch, setEpoch] = useState(0);
+  const onRefused = useCallback((label: string, now: boolean) => {
+    setRefused((present) => {
+      if (present.has(label) === now) return present;
+      const next = new Set(present);
+      if (now) next.add(label);
+      else next.delete(label);
+      return next;
+    });
+  }, []);
+  /** The fields begin anew: texts that were out of range go with the changes. */
+  function reset(): void {
+    setRefused(new Set());
+    setEpoch((present) => present + 1);
+    onReset();
+  }
   return (
     <section aria-labelledby="what-if" className="border-rule-line border-t pt-3 print:hidden">
       <div className="mb-2 flex flex-wrap items-baseline gap-x-4 gap-y-1">
@@ -37,93 +55,95 @@ export function WhatIfPanel({ start, change, widths, onChange, onReset }: Props)
         <p className="text-ink-soft text-xs">
           Simulated as it moves, at every corner, by the engine of the check. Nothing is written to the draft.
         </p>
-        <Button className="ml-auto" disabled={!changed} onClick={onReset}>
+        <Button className="ml-auto" disabled={!changed && refused.size === 0} onClick={reset}>
           Put all back
         </Button>
       </div>
-      <div className="grid gap-x-6 gap-y-3 sm:grid-cols-2 lg:grid-cols-4">
-        <WhatIfField
-          label={
-            start.seriesReference
-              ? `Series resistor ${start.seriesReference}`
-              : "Series resistor at the driver"
-          }
-          dimension="resistance"
-          unit="Ω"
-          value={change.seriesOhms ?? start.seriesOhms}
-          start={start.seriesOhms}
-          changed={change.seriesOhms !== null}
-          steps={SERIES_OHMS}
-          least={0}
-          most={10_000}
-          hint="steps of E24"
-          onChange={(seriesOhms) => onChange({ seriesOhms })}
-        />
-        <WhatIfField
-          label="Driver, typical"
-          dimension="resistance"
-          unit="Ω"
-          value={change.driverOhms ?? start.driverOhms}
-          start={start.driverOhms}
-          changed={change.driverOhms !== null}
-          steps={DRIVER_OHMS}
-          least={0.1}
-          most={10_000}
-          onChange={(driverOhms) => onChange({ driverOhms })}
-        />
-        <WhatIfField
-          label="Rise time 10–90 %, typical"
-          dimension="time"
-          unit={start.riseTime < 1e-9 ? "ps" : "ns"}
-          value={change.riseTime ?? start.riseTime}
-          start={start.riseTime}
-          changed={change.riseTime !== null}
-          steps={around(start.riseTime)}
-          least={1e-12}
-          most={1e-6}
-          onChange={(riseTime) => onChange({ riseTime })}
-        />
-        <WhatIfField
-          label="Length, all sections"
-          dimension="length"
-          unit={unit}
-          value={length}
-          start={start.length}
-          changed={change.lengthScale !== null}
-          steps={LENGTHS.map((factor) => factor * start.length)}
-          least={start.length * 0.01}
-          most={start.length * 10}
-          onChange={(to) => onChange({ lengthScale: to === null ? null : to / start.length })}
-        />
-        <LineField {...{ start, change, widths, onChange }} />
-        <WhatIfField
-          label="Receiver capacitance, typical"
-          dimension="capacitance"
-          unit="pF"
-          value={change.capacitance ?? start.capacitance}
-          start={start.capacitance}
-          changed={change.capacitance !== null}
-          steps={FARADS}
-          least={0}
-          most={1e-9}
-          onChange={(capacitance) => onChange({ capacitance })}
-        />
-        {start.farPin ? (
-          <>
-            <EndField {...{ start, change, onChange }} />
-            <Select
-              label="It goes to"
-              value={change.endTo}
-              disabled={change.endOhms === null}
-              options={[
-                { value: "half", label: "half the supply" },
-                { value: "ground", label: "ground" },
-              ]}
-              onChange={(event) => onChange({ endTo: event.target.value === "ground" ? "ground" : "half" })}
-            />
-          </>
-        ) : null}
-      </div>
+      <RefusedContext value={onRefused}>
+        <div key={epoch} className="grid gap-x-6 gap-y-3 sm:grid-cols-2 lg:grid-cols-4">
+          <WhatIfField
+            label={
+              start.seriesReference
+                ? `Series resistor ${start.seriesReference}`
+                : "Series resistor at the driver"
+            }
+            dimension="resistance"
+            unit="Ω"
+            value={change.seriesOhms ?? start.seriesOhms}
+            start={start.seriesOhms}
+            changed={change.seriesOhms !== null}
+            steps={SERIES_OHMS}
+            least={0}
+            most={10_000}
+            hint="steps of E24"
+            onChange={(seriesOhms) => onChange({ seriesOhms })}
+          />
+          <WhatIfField
+            label="Driver, typical"
+            dimension="resistance"
+            unit="Ω"
+            value={change.driverOhms ?? start.driverOhms}
+            start={start.driverOhms}
+            changed={change.driverOhms !== null}
+            steps={DRIVER_OHMS}
+            least={0.1}
+            most={10_000}
+            onChange={(driverOhms) => onChange({ driverOhms })}
+          />
+          <WhatIfField
+            label="Rise time 10–90 %, typical"
+            dimension="time"
+            unit={start.riseTime < 1e-9 ? "ps" : "ns"}
+            value={change.riseTime ?? start.riseTime}
+            start={start.riseTime}
+            changed={change.riseTime !== null}
+            steps={around(start.riseTime)}
+            least={1e-12}
+            most={1e-6}
+            onChange={(riseTime) => onChange({ riseTime })}
+          />
+          <WhatIfField
+            label="Length, all sections"
+            dimension="length"
+            unit={unit}
+            value={length}
+            start={start.length}
+            changed={change.lengthScale !== null}
+            steps={LENGTHS.map((factor) => factor * start.length)}
+            least={start.length * 0.01}
+            most={start.length * 10}
+            onChange={(to) => onChange({ lengthScale: to === null ? null : to / start.length })}
+          />
+          <LineField {...{ start, change, widths, onChange }} />
+          <WhatIfField
+            label="Receiver capacitance, typical"
+            dimension="capacitance"
+            unit="pF"
+            value={change.capacitance ?? start.capacitance}
+            start={start.capacitance}
+            changed={change.capacitance !== null}
+            steps={FARADS}
+            least={0}
+            most={1e-9}
+            onChange={(capacitance) => onChange({ capacitance })}
+          />
+          {start.farPin ? (
+            <>
+              <EndField {...{ start, change, onChange }} />
+              <Select
+                label="It goes to"
+                value={change.endTo}
+                disabled={change.endOhms === null}
+                options={[
+                  { value: "half", label: "half the supply" },
+                  { value: "ground", label: "ground" },
+                ]}
+                onChange={(event) => onChange({ endTo: event.target.value === "ground" ? "ground" : "half" })}
+              />
+            </>
+          ) : null}
+        </div>
+      </RefusedContext>
     </section>
   );
 }
@@ -163,7 +183,11 @@ function LineField({ start, change, widths, onChange }: Part & Pick<Props, "widt
       steps={widths.map((point) => point.width)}
       least={first.width}
       most={last.width}
-      hint={`gives ${ohmsText(ohms)}`}
+      hint={
+        start.atTarget
+          ? `gives ${ohmsText((ohms / start.impedance) * own)}; judged at ${change.impedance === null ? `the class target, ${ohmsText(ohms)}` : `${ohmsText(ohms)}, from the class target in proportion`}`
+          : `gives ${ohmsText(ohms)}`
+      }
       onChange={(to) => {
         const gives = to === null ? null : impedanceOfWidth(widths, to);
         onChange({ impedance: gives === null ? null : (gives / own) * start.impedance });

@@ -19,6 +19,10 @@ interface Props {
   unit: string;
   value: Quantity | null;
   onChange: (value: Quantity | null) => void;
+  /** Why a value is not taken although it could be read; null where it is. */
+  check?: (value: Quantity) => string | null;
+  /** A text was refused, or no longer is. */
+  onRefused?: (refused: boolean) => void;
   /** What is wrong beyond the reading itself: from the form's schema or from the server. */
   error?: string | null;
   hint?: ReactNode;
@@ -53,18 +57,28 @@ export function QuantityField(props: Props) {
     if (typed.trim() === "" && optional) return settle(null);
     if (value && typed === formatQuantity(value)) return settle(value, false);
     try {
-      settle(parseQuantity(typed, dimension, unit));
+      const next = parseQuantity(typed, dimension, unit);
+      const wrong = props.check?.(next) ?? null;
+      if (wrong) refuse(typed, wrong);
+      else settle(next);
     } catch (reason) {
-      setText(typed);
-      setRefusal(
+      refuse(
+        typed,
         reason instanceof Error ? reason.message : "This could not be read as a number with a unit.",
       );
     }
   }
 
+  function refuse(typed: string, reason: string): void {
+    setText(typed);
+    setRefusal(reason);
+    props.onRefused?.(true);
+  }
+
   function settle(next: Quantity | null, changed = true): void {
     setText(null);
     setRefusal(null);
+    if (refusal !== null) props.onRefused?.(false);
     if (changed) onChange(next);
   }
 

@@ -7,6 +7,8 @@ import { pathNode } from "./pin-names";
 
 /** Spread of a line that no class bounds, of its nominal impedance: common practice, no source. */
 const UNCONTROLLED_SPREAD = 0.1;
+/** How a section is named whose impedance is its class's target. */
+const AT_TARGET = "class target";
 /** Widths this close are one width: CAM tells lines apart from 2.5 µm. */
 const SAME_WIDTH_M = 1.25e-6;
 
@@ -42,7 +44,7 @@ export function resolveSections(
         impedance:
           line.missing || nominal === null ? null : spread(nominal, target?.tolerance ?? UNCONTROLLED_SPREAD),
         delayPerMeter: line.delayPerMeter,
-        method: controlled ? `class target; delay from ${line.method ?? "no formula"}` : line.method,
+        method: controlled ? `${AT_TARGET}; delay from ${line.method ?? "no formula"}` : line.method,
         missing: line.missing?.input ?? null,
       };
       sections.push(resolved);
@@ -50,6 +52,11 @@ export function resolveSections(
         missing.push(line.missing);
     });
   return { sections, missing };
+}
+
+/** Whether a section is judged at its class's target, which a coupon enforces, and not at what its width gives. */
+export function isAtTarget({ method }: Pick<PathSection, "method">): boolean {
+  return method?.startsWith(AT_TARGET) ?? false;
 }
 
 function isClassWidth(

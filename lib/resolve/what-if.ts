@@ -1,3 +1,4 @@
+import { isAtTarget } from "./path-sections";
 import { PathTrace, sourceResistors } from "@/lib/si/path/trace";
 import type { PathPart, PathPin, PathSection, ResolvedPath } from "@/lib/si/path/types";
 
@@ -41,6 +42,8 @@ export interface WhatIfStart {
   /** of all sections [m] */
   length: number;
   impedance: number;
+  /** its class's target stands for what its width gives */
+  atTarget: boolean;
   mainLayer: string;
   mainWidth: number;
   capacitance: number;
@@ -73,6 +76,7 @@ export function whatIfStart(path: ResolvedPath, driverPin: string): WhatIfStart 
     riseTime: pin.driver.riseTime.typical,
     length: path.sections.reduce((sum, section) => sum + section.length, 0),
     impedance: main.impedance.nominal,
+    atTarget: isAtTarget(main),
     mainLayer: main.layer,
     mainWidth: main.width,
     capacitance: loads[0] ?? 0,

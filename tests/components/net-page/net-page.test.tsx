@@ -34,6 +34,10 @@ function show(facts: NetFacts, search = "") {
   );
 }
 
+/** The text alternative of a drawing. */
+const descriptionOf = (name: string) =>
+  screen.getByRole("img", { name }).getAttribute("aria-describedby") ?? "";
+
 const cursors = () =>
   screen
     .getAllByRole("slider", { name: "Time of the cursor" })
@@ -106,5 +110,58 @@ describe("the page of a net", () => {
     );
     expect(screen.getByRole("img", { name: "Topology of NET" })).toBeTruthy();
     expect(screen.queryByRole("slider", { name: "Time of the cursor" })).toBeNull();
+  });
+
+  it("draws the topology with the values of the corner that is looked at", async () => {
+    show(factsOf(ringing));
+    await drawn();
+    const strip = () => document.getElementById(descriptionOf("Topology of NET"))?.textContent;
+    expect(strip()).toContain("U1.1 (14\u2009\u03a9): section 55\u2009\u03a9");
+    fireEvent.click(screen.getByRole("radio", { name: /^slow driver, low impedance/ }));
+    expect(strip()).toContain("U1.1 (30\u2009\u03a9): section 45\u2009\u03a9");
+  });
+
+  it("says what the width gives where the line is judged at its class's target", async () => {
+    const sections = ringing.sections.map((entry) => ({
+      ...entry,
+      width: 0.18e-3,
+      method: "class target; delay from a field solution",
+    }));
+    const widths = [
+      { width: 0.1e-3, impedance: 90 },
+      { width: 0.18e-3, impedance: 72.7 },
+      { width: 0.4e-3, impedance: 48 },
+    ];
+    const target = { ohms: 50, tolerance: 0.1, kind: "single" as const };
+    show(factsOf({ ...ringing, sections, target }, { widths }));
+    expect(
+      await screen.findByText(/^as it is · gives 72\.7 Ω; judged at the class target, 50 Ω$/),
+    ).toBeTruthy();
+    expect(screen.getByText(/^Judged at the class target, 50 Ω; 0\.180 mm on .* gives 72\.7 Ω/)).toBeTruthy();
+  });
+
+  it("keeps a value that is out of range with its reason until it is mended or put back", async () => {
+    show(factsOf(ringing));
+    const field = await screen.findByRole<HTMLInputElement>("textbox", {
+      name: "Series resistor at the driver",
+    });
+    const back = () => screen.getByRole<HTMLButtonElement>("button", { name: "Put all back" });
+    const write = (text: string) => {
+      const present = screen.getByRole("textbox", { name: "Series resistor at the driver" });
+      fireEvent.focus(present);
+      fireEvent.change(present, { target: { value: text } });
+      fireEvent.blur(present);
+    };
+    write("1e12");
+    expect(field.value).toBe("1e12");
+    const wrong = () => screen.queryByText(/is out of range\. Write 0 Ω to 10 kΩ\.$/);
+    expect(wrong()).toBeTruthy();
+    fireEvent.click(back());
+    expect(wrong()).toBeNull();
+    expect(back().disabled).toBe(true);
+    write("1e12");
+    expect(wrong()).toBeTruthy();
+    write("33");
+    expect(wrong()).toBeNull();
   });
 });
