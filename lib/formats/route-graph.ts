@@ -1,4 +1,6 @@
 import type { NetPinDoc, NetSectionDoc, RouteGap } from "@/lib/schemas/net";
+import { pinsInOnePlace } from "@/lib/si/path/pins-in-one-place";
+import { toSi } from "@/lib/si/units";
 
 export interface PinName {
   reference: string;
@@ -16,7 +18,8 @@ export interface RouteGraph {
   complete: boolean;
 }
 
-export type SectionEnds = Pick<NetSectionDoc, "from" | "to" | "layer">;
+export type SectionEnds = Pick<NetSectionDoc, "from" | "to" | "layer"> &
+  Partial<Pick<NetSectionDoc, "length">>;
 
 const NAMED_LOOPS = 8;
 const MAX_GAP_TEXT = 400;
@@ -82,6 +85,14 @@ function findGaps(
     gaps.push({ kind: "loop", text: loopText(sections, index, section) });
   if (loops.length > NAMED_LOOPS)
     gaps.push({ kind: "loop", text: `${loops.length - NAMED_LOOPS} more loops` });
+  const unrouted = pinsInOnePlace(sections.map(withLength), [...pins]);
+  if (unrouted)
+    gaps.push({
+      kind: "no sections",
+      text: short(
+        `The list gives a length of 0 between ${joinAnd(unrouted)}, as for what is not routed. Route it or give its length.`,
+      ),
+    });
   if (pins.size === 0)
     gaps.push({
       kind: "no pins",
@@ -95,6 +106,11 @@ function findGaps(
       ),
     });
   return gaps;
+}
+
+/** Where no length is told, none is doubted. */
+function withLength({ from, to, length }: SectionEnds) {
+  return { from, to, length: length ? toSi(length, "length") : Infinity };
 }
 
 function islandText(islands: readonly string[][], pins: ReadonlySet<string>): string {

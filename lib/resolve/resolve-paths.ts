@@ -1,3 +1,4 @@
+import { pinsInOnePlace } from "@/lib/si/path/pins-in-one-place";
 import type { ResolvedPath } from "@/lib/si/path/types";
 import type { StoredNet } from "@/lib/schemas/net";
 import type { StoredNetClass } from "@/lib/schemas/net-class";
@@ -94,7 +95,7 @@ function resolvePath(group: PathGroup, board: BoardIndex): ResolvedPath {
     termination: classTermination(netClass, board),
     flightTimeMax,
     spacing: board.si.orNull(netClass?.spacing ?? null, "length"),
-    missing: [...routeGaps(group), ...pairGaps(group, netClass)],
+    missing: [...routeGaps(group, board), ...pairGaps(group, netClass)],
     limits: board.limits.of(group.nets, netClass, flightTimeMax),
   };
   path.missing.push(...sections.missing, ...pins.missing, ...joined.missing);
@@ -147,7 +148,7 @@ function resolveNeighbours(group: PathGroup, board: BoardIndex): ResolvedPath["n
     }));
 }
 
-function routeGaps(group: PathGroup): MissingInput[] {
+function routeGaps(group: PathGroup, board: BoardIndex): MissingInput[] {
   const missing: MissingInput[] = [];
   for (const net of group.nets) {
     const input = `route of ${net.name}`;
@@ -163,6 +164,21 @@ function routeGaps(group: PathGroup): MissingInput[] {
         input: `branch lengths of ${net.name}`,
         detail: "Its length is known, but not how its receivers hang on the line. Import its sections.",
       });
+    else {
+      const unrouted = pinsInOnePlace(
+        net.topology.sections.map(({ from, to, length }) => ({
+          from,
+          to,
+          length: board.si.of(length, "length"),
+        })),
+        net.topology.pins.map(({ node }) => node),
+      );
+      if (unrouted)
+        missing.push({
+          input,
+          detail: `The route has no length between ${unrouted.join(" and ")}. Route it or give its length.`,
+        });
+    }
   }
   return missing;
 }

@@ -217,6 +217,20 @@ describe("nets from rows", () => {
     expect(c).toMatchObject({ scope: "incomplete", gaps: [{ kind: "one pin" }, { kind: "no sections" }] });
   });
 
+  it("takes a length of zero between two pins for a route that is not there; a via in a pad may have none", () => {
+    const lists = { layers: {}, classes: [] };
+    const header = "net,layer,width,length,driver,receivers\n";
+    const [unrouted] = netsFromNetList(read(`${header}A,TOP,0.1,0,U1.1,U2.1\n`, "net list").good, lists);
+    expect(unrouted).toMatchObject({ scope: "incomplete", gaps: [{ kind: "no sections" }] });
+    const sections = read(
+      `${SECTIONS}A,U1.1,U2.1,TOP,0.1,0\nB,U1.2,via1,TOP,0.1,0\nB,via1,U2.2,IN1,0.1,9\nC,U1.3,via2,TOP,0.1,0\nC,via2,U2.3,IN1,0.1,0\n`,
+      "section list",
+    );
+    const [a, b, c] = netsFromSections(sections.good, lists);
+    expect([a?.scope, b?.scope, c?.scope]).toEqual(["incomplete", "in", "incomplete"]);
+    expect(c?.gaps[0]?.text).toContain("a length of 0 between U1.3 and U2.3");
+  });
+
   it("refuses a driver that names no pin", () => {
     expect(read("net,driver\nA,U1\n", "net list").problems[0]?.reason).toContain(
       "Write reference and pin, such as U1.E10.",

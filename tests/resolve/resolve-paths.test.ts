@@ -154,6 +154,7 @@ describe("what is missing is named by the input that would fill it", () => {
       { bindings: [binding("U1", "driver", "OUT"), binding("U7", "passive", null)] },
       "receiver of D0",
     ],
+    ["no length between its pins", [routed("D0", ["U1.1 U2.1 0"])], {}, "route of D0"],
     ["unknown layer", [routed("D0", ["U1.1 U2.1 40 ?"])], {}, 'layer "?" in the stackup'],
     [
       "a gap",

@@ -1,4 +1,5 @@
 import type { NetDoc, NetPinDoc, NetSectionDoc, RouteGap } from "@/lib/schemas/net";
+import { toSi } from "@/lib/si/units";
 import { globMatcher } from "../glob";
 import { buildRoute, readPinName } from "../route-graph";
 import type { GoodRow } from "./list-field";
@@ -147,6 +148,10 @@ function netListGaps(row: NetRow, pins: readonly NetPinDoc[], known: boolean): R
       row.length === null && "length",
     ].filter(Boolean);
     gaps.push({ kind: "no sections", text: `The list gives no ${missing.join(" and no ")} for this net.` });
-  }
+  } else if (row.length && !(toSi(row.length, "length") > 0))
+    gaps.push({
+      kind: "no sections",
+      text: "The list gives this net a length of 0, as one that is not routed. Route it or give its length.",
+    });
   return gaps;
 }

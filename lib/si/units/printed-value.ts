@@ -5,7 +5,7 @@ import { parseQuantity } from "./parse-quantity";
 import type { Dimension, Quantity } from "./quantity";
 
 /** Dimensions that a two-terminal part's value can have, and the unit of a bare number. */
-export type PartDimension = "resistance" | "capacitance" | "inductance";
+export type PartDimension = Extract<Dimension, "resistance" | "capacitance" | "inductance">;
 const SI_UNITS: Record<PartDimension, string> = { resistance: "Ω", capacitance: "F", inductance: "H" };
 
 /** Where a rating may follow the value: "100n/16V X7R", "33R 1%", "10k±5%". */
