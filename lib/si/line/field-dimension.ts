@@ -37,7 +37,8 @@ export function fieldDimension(request: FieldDimensionRequest): {
   };
   const root = secant(request, impedanceAt);
   if (root !== null) {
-    if (grid === undefined) return { ...root, solves };
+    if (grid === undefined)
+      return { value: root.value, impedance: root.impedance ?? impedanceAt(root.value), solves };
     const steps = Math.round(root.value / grid);
     const value = Number((steps * grid).toPrecision(12));
     if (value >= min * (1 - 1e-9) && value <= max * (1 + 1e-9)) {
@@ -57,12 +58,15 @@ export function fieldDimension(request: FieldDimensionRequest): {
   return { ...found, solves };
 }
 
-/** null where the target is not met strictly inside the range. */
+/**
+ * null where the target is not met strictly inside the range; impedance null where the root is foretold to within a
+ * twentieth of the grid and not solved.
+ */
 function secant(
   request: FieldDimensionRequest,
   impedanceAt: (x: number) => number,
-): { value: number; impedance: number } | null {
-  const { ohms, min, max } = request;
+): { value: number; impedance: number | null } | null {
+  const { ohms, min, max, grid = 0 } = request;
   if (!(min > 0 && max > min && ohms > 0 && Number.isFinite(max) && Number.isFinite(ohms))) return null;
   let { x, slope } = startingPoint(request);
   let lastX = 0;
@@ -85,6 +89,10 @@ function secant(
     lastZ = z;
     // no step further than a factor of three: slopes flatten out there
     x *= Math.exp(Math.max(-1.1, Math.min(1.1, -miss / slope)));
+    // the last step's error is of the order of the square of its size
+    if (round > 0 && x > min && x < max && Math.abs(miss) * Math.abs(x - lastX) < 0.05 * grid) {
+      return { value: x, impedance: null };
+    }
     if (x < min || x > max) {
       if (lastX === min || lastX === max) return null;
       x = x < min ? min : max;
