@@ -1,11 +1,12 @@
 import type { BenchSection } from "./section";
 import { calibration } from "./sections/calibration";
 import { check } from "./sections/check";
+import { field } from "./sections/field";
 import { lattice } from "./sections/lattice";
 import { besideNgspice } from "./sections/ngspice";
 import { spreadAndLoss } from "./sections/spread";
 
-const sections: BenchSection[] = [calibration, lattice, besideNgspice, check, spreadAndLoss];
+const sections: BenchSection[] = [calibration, field, lattice, besideNgspice, check, spreadAndLoss];
 
 const print = (line: string) => process.stdout.write(`${line}\n`);
 for (const section of sections) {
