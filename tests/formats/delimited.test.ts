@@ -103,6 +103,13 @@ describe("readTable", () => {
     expect(readTable("net;width;length\nA;0,127;12,5\n").decimalComma).toBe(true);
     expect(readTable("net,width\nA,0.127\n").decimalComma).toBe(false);
     expect(readTable("net;width\nA;0.127\n").decimalComma).toBe(false);
+    expect(readTable("net;width;length\nA;0,127;1.270,5\n").decimalComma).toBe(true);
+    expect(readTable("net;width;length\nA;0.127;1,270.5\n").decimalComma).toBe(false);
+  });
+
+  it("knows none where every comma is followed by three digits: 1,500 may be fifteen hundred", () => {
+    expect(readTable("net\tlength_mil\nA\t1,500\nB\t1,250\n").decimalComma).toBe(false);
+    expect(readTable("net;length\nA;1,500 mil\nB;-2,250\n").decimalComma).toBe(false);
   });
 
   it("counts rows as a spreadsheet does, blank ones too", () => {

@@ -100,6 +100,41 @@ describe("previewImport", () => {
     ]);
   });
 
+  it("refuses a number that is one and a half or fifteen hundred, until somebody says which", () => {
+    const text =
+      "net\tfrom\tto\tlayer\twidth_mil\tlength_mil\nA\tU1.1\tU2.1\tTOP\t5\t1,500\nB\tU1.2\tU2.2\tTOP\t5\t1,250\n";
+    const preview = read(text, "section list");
+    expect([preview.good.length, preview.badRows]).toEqual([0, 2]);
+    expect(preview.problems[0]?.reason).toBe(
+      `'1,500' can be read two ways. Leave out the comma, or tick "Decimal comma" if it stands for the point.`,
+    );
+    const table = readTable(text);
+    const told = { ...guessMapping(table, "section list", "mm"), decimalComma: true };
+    const lengths = previewTable(table, { ...told, kind: "section list" }).good.map(
+      ({ value }) => value.length,
+    );
+    expect(lengths).toEqual([
+      { value: "1.5", unit: "mil" },
+      { value: "1.25", unit: "mil" },
+    ]);
+  });
+
+  it.each([
+    ["1.270", "0,127", "read two ways in a list with a decimal comma"],
+    ["1.270,5", "0.127", "can be read two ways. Leave out the comma"],
+    ["1,234,567", "0,127", "can be read two ways"],
+  ])("refuses a length of %s beside a width of %s", (length, width, reason) => {
+    const lines = `net;from;to;layer;width;length\nA;U1.1;U2.1;TOP;${width};${length}\nB;U1.2;U2.2;TOP;${width};5\n`;
+    const preview = read(lines, "section list");
+    expect(preview.good).toHaveLength(1);
+    expect(preview.problems[0]?.reason).toContain(reason);
+  });
+
+  it("refuses a count of 1,000, which is one or a thousand", () => {
+    const preview = read("net;vias\nA;1,000\nB;2,00\n", "net list");
+    expect(preview.good.map(({ value }) => value.vias)).toEqual([2]);
+  });
+
   it("refuses a cell of 10 MB by row and column and keeps the rest", () => {
     const preview = read(
       `${SECTIONS}${"x".repeat(10_000_000)},U1.1,U2.1,TOP,0.1,1\nB,U1.2,U2.2,TOP,0.1,1\n`,

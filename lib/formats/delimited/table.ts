@@ -81,15 +81,21 @@ export function readTable(text: string, options: TableOptions = {}): DelimitedTa
   return { delimiter, rows, blankRows, decimalComma: usesDecimalComma(rows, delimiter), columns };
 }
 
-/** Some number has a comma where a decimal point would be, and none has a point. */
+const UNIT = String.raw`(?:\s*[a-zµμ"]+)?`;
+const COMMA_NUMBER = new RegExp(String.raw`^[+-]?(?:\d*|[1-9]\d{0,2}(?:\.\d{3})+),\d+${UNIT}$`, "i");
+const POINT_NUMBER = new RegExp(String.raw`^[+-]?(?:\d*|[1-9]\d{0,2}(?:,\d{3})+)\.\d+${UNIT}$`, "i");
+/** "1,500" and "1.500" are one and a half or fifteen hundred: they show neither way of writing. */
+const EITHER_WAY = new RegExp(String.raw`^[+-]?[1-9]\d{0,2}(?:,\d{3}|\.\d{3})${UNIT}$`, "i");
+
+/** Some number has a comma that can only stand where a decimal point would, and none has such a point. */
 function usesDecimalComma(rows: readonly TableRow[], delimiter: Delimiter): boolean {
   let commas = 0;
   for (const { cells } of rows.slice(0, 2000))
     for (const cell of cells) {
-      if (cell.length > 24) continue;
-      if (/^[+-]?\d+\.\d+(\s*[a-zµμ"]+)?$/i.test(cell)) return false;
-      if (/^[+-]?\d+,\d+(\s*[a-zµμ"]+)?$/i.test(cell)) commas++;
+      if (cell.length > 24 || EITHER_WAY.test(cell)) continue;
+      if (POINT_NUMBER.test(cell)) return false;
+      if (COMMA_NUMBER.test(cell)) commas++;
     }
-  // "1,234" alone in a comma-separated list is more likely a grouped thousand, which the cell reader refuses.
+  // A comma-separated list has them in quotes only; one or two may be something else.
   return commas > 0 && (delimiter !== "," || commas > 2);
 }

@@ -44,6 +44,11 @@ export class MappedRow implements RowCells {
       return null;
     }
     const unit = this.mapping.fields[field]?.unit ?? null;
+    const doubt = this.doubtOf(raw);
+    if (doubt) {
+      this.refuse(field, doubt);
+      return null;
+    }
     try {
       const quantity = parseQuantity(this.withPoint(raw), "length", unit ?? "mm");
       if (unit === null && /^[\d.,+\-\s]*$/.test(raw)) {
@@ -71,7 +76,7 @@ export class MappedRow implements RowCells {
       return null;
     }
     // Spreadsheets write whole numbers as 2.0 or 2,00.
-    const match = /^\+?(\d{1,9})(?:[.,]0+)?$/.exec(raw);
+    const match = /^\+?(\d{1,9})(?:[.,](?:0{1,2}|0{4,}))?$/.exec(raw);
     const value = match ? Number(match[1]) : Number.NaN;
     if (!match || value > max) {
       this.refuse(field, `'${shown(raw)}' is not a whole number from 0 to ${max}.`);
@@ -129,7 +134,19 @@ export class MappedRow implements RowCells {
   /** "1,270" is a number of one reading once the whole list is known to use the decimal comma. */
   private withPoint(raw: string): string {
     if (!this.mapping.decimalComma) return raw;
-    return raw.replace(/^([+-]?\d*),(\d+)/, "$1.$2");
+    return raw.replace(/^([+-]?\d*),(\d+)(?![\d.,])/, "$1.$2");
+  }
+
+  /** Why a number cannot be read beside the list's way of writing decimals; null where it can. */
+  private doubtOf(raw: string): string | null {
+    const number = /^[+\-\u2212\u2013]?([\d.,]+)/u.exec(raw)?.[1] ?? "";
+    const { decimalComma } = this.mapping;
+    const grouped = decimalComma ? /^[1-9]\d{0,2}(?:\.\d{3})+$/ : /^[1-9]\d{0,2}(?:,\d{3})+$/;
+    const otherWay = decimalComma ? /,.*\./ : /\..*,/;
+    if (!grouped.test(number) && !otherWay.test(number)) return null;
+    return decimalComma
+      ? `'${shown(raw)}' can be read two ways in a list with a decimal comma. Leave out the point, or untick "Decimal comma".`
+      : `'${shown(raw)}' can be read two ways. Leave out the comma, or tick "Decimal comma" if it stands for the point.`;
   }
 }
 
