@@ -1,3 +1,3 @@
 import { lawsOfAnyNet } from "./laws-of-any-net";
 
-lawsOfAnyNet(1000, 90210);
+lawsOfAnyNet(300, 90210);
