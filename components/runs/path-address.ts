@@ -1,10 +1,11 @@
 import type { Route } from "next";
 
-/** Where a path of a run is drawn; a controlled line (class and layer) is drawn on the impedance page. */
+/** Where a path of a run is drawn; a controlled line (class and layer) has its row of the impedance page opened. */
 export function pathAddress(projectId: string, runId: string, pathId: string): Route {
+  const [, netClass, layer] = /^line (\S+) (\S+)$/.exec(pathId) ?? [];
   return (
-    pathId.startsWith("line ")
-      ? `/projects/${projectId}/impedance`
+    netClass && layer
+      ? `/projects/${projectId}/impedance?cell=${encodeURIComponent(`${netClass}.${layer}`)}`
       : `/projects/${projectId}/nets/${encodeURIComponent(pathId)}?run=${runId}`
   ) as Route;
 }
