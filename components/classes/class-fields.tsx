@@ -83,7 +83,7 @@ export function ClassFields({ doc, onChange }: Props) {
       <QuantityText
         address="rate"
         label={clock ? "Clock frequency" : "Bit rate"}
-        hint={clock ? undefined : "A bare number is Mb/s. Empty: there is no bit time."}
+        hint={clock ? undefined : "A bare first number is Mb/s. Empty: there is no bit time."}
         dimension="frequency"
         unit={clock ? "MHz" : "Mb/s"}
         value={doc.rate}

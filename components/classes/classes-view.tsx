@@ -3,6 +3,7 @@
 import { useQuery, useQueryClient } from "@tanstack/react-query";
 import { parseAsString, parseAsStringLiteral, useQueryStates } from "nuqs";
 import { useCallback, useMemo, useRef, useState } from "react";
+import { useLengthUnit } from "@/components/shell/length-unit";
 import { StackupUnits } from "@/components/stackup/stackup-units";
 import { PageHeader } from "@/components/ui/page-header";
 import { Tabs } from "@/components/ui/tabs";
@@ -32,7 +33,7 @@ export interface ClassesViewProps {
   /** Letter of the revision looked at. */
   revision: string;
   search: string;
-  /** The project's unit, in which bare lengths are read. */
+  /** the project's */
   unit: LengthUnit;
   layers: readonly SignalLayer[];
   ruleSet: StoredRuleSet;
@@ -51,6 +52,7 @@ const TABS = ["classes", "models", "bindings"] as const;
 export function ClassesView(props: ClassesViewProps) {
   const { projectId, revision, readOnly, limitsReadOnly, layers, ruleSet, search } = props;
   const client = useQueryClient();
+  const { unit: reader } = useLengthUnit();
   const [{ tab }, setState] = useQueryStates(
     { tab: parseAsStringLiteral(TABS).withDefault("classes"), at: parseAsString },
     { history: "replace" },
@@ -141,7 +143,7 @@ export function ClassesView(props: ClassesViewProps) {
           title="Classes"
           description={
             readOnly ??
-            `What a net must be: target, layers, driver, edge and end. Lengths without a unit are read as ${props.unit}.`
+            `What a net must be: target, layers, driver, edge and end. Lengths without a unit are read as ${reader}, the unit they are shown in.`
           }
           actions={editable ? <UndoButtons undo={undo} unsaved={unsaved} /> : null}
         />

@@ -6,7 +6,7 @@ import { FieldText, useStackupFields } from "@/components/stackup/stackup-fields
 import { useStackupUnits } from "@/components/stackup/stackup-units";
 import { Select, type SelectOption } from "@/components/ui/select";
 import type { Dimension, Quantity } from "@/lib/si/units";
-import { readPercent, readQuantity, shownQuantity, typedQuantity } from "./field-words";
+import { readPercent, readQuantity, shownQuantity } from "./field-words";
 
 interface Common {
   /** Unique within its editor. */
@@ -22,7 +22,7 @@ interface Common {
 
 interface QuantityProps extends Common {
   dimension: Dimension;
-  /** of a bare number; of lengths the project's unit */
+  /** of a bare number where the field is empty; lengths have the reader's */
   unit?: string;
   value: Quantity | null;
   schema?: ZodType<Quantity | null>;
@@ -31,13 +31,16 @@ interface QuantityProps extends Common {
 
 /** A quantity as text with its unit; read when the field is left, and refused with the reason. */
 export function QuantityText({ dimension, unit, value, schema, onChange, ...look }: QuantityProps) {
-  const { reader, project } = useStackupUnits();
+  const { reader } = useStackupUnits();
+  const shown = shownQuantity(value, dimension, reader);
+  // A bare number means what it seems to: it has the unit that the field shows.
+  const bare = dimension === "length" ? reader : (value?.unit ?? unit ?? reader);
   return (
     <FieldText
       {...look}
-      typed={typedQuantity(value, dimension)}
-      shown={shownQuantity(value, dimension, reader)}
-      commit={(text) => onChange(readQuantity(text, dimension, unit ?? project, schema))}
+      typed={shown}
+      shown={shown}
+      commit={(text) => onChange(readQuantity(text, dimension, bare, schema))}
     />
   );
 }

@@ -89,7 +89,7 @@ function CreateForm({ onClose }: { onClose: () => void }) {
       />
       <Select
         label="Unit of bare numbers"
-        hint="12 without a unit is read in this one."
+        hint="A list’s 12 without a unit is read in this one."
         options={UNITS}
         error={errors.unit?.message}
         {...register("unit")}

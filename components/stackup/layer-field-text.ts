@@ -48,12 +48,23 @@ export function readLayerField(field: LayerField, text: string, unit: string): P
   return { [field]: parsed.data };
 }
 
-/** What the field holds while one types in it: the value as it was typed. */
-export function typedText(layer: StackupLayerDoc, field: LayerField): string {
+/**
+ * What the field holds while one types in it: what it shows, and without the sign of per cent. A length stays in the
+ * unit that is shown, so that a number typed over it means what it seems to.
+ */
+export function typedText(layer: StackupLayerDoc, field: LayerField, unit: string): string {
   const value = layer[field];
-  if (value === null || value === undefined) return "";
-  return typeof value === "string" ? value : formatQuantity(value);
+  return typeof value === "string" ? value : shownText(layer, field, unit);
 }
+
+/** The unit of a bare number: the one that the field shows, the reader's where it is empty. */
+export function bareUnit(layer: StackupLayerDoc, field: LayerField, unit: string): string {
+  const value = layer[field];
+  return value && typeof value !== "string" && isWeight(value.unit) ? value.unit : unit;
+}
+
+/** Copper by its weight on an area is shown as it was typed. */
+const isWeight = (unit: string) => unit === "oz" || unit === "g/m²";
 
 /** What the field shows otherwise: lengths in the reader's unit, foils by their weight. */
 export function shownText(layer: StackupLayerDoc, field: LayerField, unit: string): string {
@@ -64,7 +75,7 @@ export function shownText(layer: StackupLayerDoc, field: LayerField, unit: strin
 }
 
 export function shownLength(value: Quantity, unit: string): string {
-  if (value.unit === unit || value.unit === "oz" || value.unit === "g/m²") return formatQuantity(value);
+  if (value.unit === unit || isWeight(value.unit)) return formatQuantity(value);
   const converted = convert(value, unit);
   const number = new Decimal(converted.value).toSignificantDigits(5).toString();
   return formatQuantity({ value: number, unit: converted.unit });

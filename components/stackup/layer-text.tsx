@@ -3,7 +3,7 @@
 import type { ReactNode } from "react";
 import type { StackupLayerDoc } from "@/lib/schemas/stackup";
 import type { EditLayer } from "./edit-layer";
-import { type LayerField, readLayerField, shownText, typedText } from "./layer-field-text";
+import { bareUnit, type LayerField, readLayerField, shownText, typedText } from "./layer-field-text";
 import { FieldText } from "./stackup-fields";
 import { useStackupUnits } from "./stackup-units";
 
@@ -24,7 +24,7 @@ interface Props {
 
 /** One field of a layer, as text with its unit. */
 export function LayerText({ layer, field, label, onChange, small = false, inTable, ...look }: Props) {
-  const { reader, project } = useStackupUnits();
+  const { reader } = useStackupUnits();
   const unit = small && reader === "mm" ? "µm" : reader;
   return (
     <FieldText
@@ -32,9 +32,9 @@ export function LayerText({ layer, field, label, onChange, small = false, inTabl
       inTable={inTable}
       label={inTable ? `${label} of ${layer.name}` : label}
       address={`${layer.key}.${field}`}
-      typed={typedText(layer, field)}
+      typed={typedText(layer, field, unit)}
       shown={shownText(layer, field, unit)}
-      commit={(text) => onChange(layer.key, readLayerField(field, text, project))}
+      commit={(text) => onChange(layer.key, readLayerField(field, text, bareUnit(layer, field, unit)))}
     />
   );
 }

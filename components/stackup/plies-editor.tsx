@@ -4,7 +4,7 @@ import { Plus, X } from "lucide-react";
 import { Button } from "@/components/ui/button";
 import { ply as plySchema, type StackupLayerDoc } from "@/lib/schemas/stackup";
 import { findGlassStyle, glassStyles } from "@/lib/si/materials";
-import { formatQuantity, parseQuantity } from "@/lib/si/units";
+import { parseQuantity } from "@/lib/si/units";
 import type { EditLayer } from "./edit-layer";
 import { shownLength } from "./layer-field-text";
 import { FieldText, useStackupFields } from "./stackup-fields";
@@ -24,7 +24,7 @@ interface Props {
 /** The plies of a prepreg opening. A known glass style fills in its resin and thickness. */
 export function PliesEditor({ layer, onChange, idle }: Props) {
   const { readOnly, accept } = useStackupFields();
-  const { reader, project } = useStackupUnits();
+  const { reader } = useStackupUnits();
   const put = (plies: Ply[]) => onChange(layer.key, { plies });
   const change = (index: number, part: Partial<Ply>) =>
     put(layer.plies.map((present, at) => (at === index ? { ...present, ...part } : present)));
@@ -71,10 +71,10 @@ export function PliesEditor({ layer, onChange, idle }: Props) {
               label={`Thickness of ply ${index + 1}`}
               labelHidden
               address={`${layer.key}.plies.${index}.thickness`}
-              typed={formatQuantity(present.thickness)}
+              typed={shownLength(present.thickness, reader)}
               shown={shownLength(present.thickness, reader)}
               commit={(text) =>
-                change(index, { thickness: check("thickness", parseQuantity(text, "length", project)) })
+                change(index, { thickness: check("thickness", parseQuantity(text, "length", reader)) })
               }
             />
             {readOnly ? null : (

@@ -34,7 +34,7 @@ interface Props {
 /** What the fabricator's process holds: the spread of every impedance, its yield and its warnings rest on it. */
 export function ProcessFields({ process, onChange }: Props) {
   const { readOnly } = useStackupFields();
-  const { reader, project } = useStackupUnits();
+  const { reader } = useStackupUnits();
   const present = process ?? usualProcess;
   const change = (part: Partial<ProcessDoc>) => onChange({ ...present, ...part });
   return (
@@ -65,11 +65,11 @@ export function ProcessFields({ process, onChange }: Props) {
             address={`process.${field}`}
             label={label}
             hint="empty: by the copper"
-            typed={present[field] ? `${present[field].value} ${present[field].unit}` : ""}
+            typed={present[field] ? shownLength(present[field], reader) : ""}
             shown={present[field] ? shownLength(present[field], reader) : ""}
             placeholder="by the copper"
             commit={(text) => {
-              const value = text.trim() === "" ? null : parseQuantity(text, "length", project);
+              const value = text.trim() === "" ? null : parseQuantity(text, "length", reader);
               const parsed = processDoc.shape[field].safeParse(value);
               if (!parsed.success)
                 throw new Error(parsed.error.issues[0]?.message ?? "This is not a length.");

@@ -36,7 +36,7 @@ interface Props {
   projectName: string;
   /** its letter */
   revision: string;
-  /** in which bare numbers are read */
+  /** the project's, in which bare numbers of a list are read */
   unit: LengthUnit;
   stackup: StoredStackup;
   /** Why it is only shown; null where it is edited. */
@@ -52,7 +52,7 @@ export function StackupEditor(props: Props) {
 }
 
 function Editor({ projectId, projectName, revision, stackup: stored, readOnly }: Props) {
-  const { reader, project } = useStackupUnits();
+  const { reader } = useStackupUnits();
   const editor = useStackupEditor(projectId, revision, stored, readOnly !== null);
   const { stackup, selected, select, changeLayers } = editor;
   const [pointed, setPointed] = useState<string | null>(null);
@@ -106,7 +106,7 @@ function Editor({ projectId, projectName, revision, stackup: stored, readOnly }:
         title="Stackup"
         description={
           readOnly ??
-          `Layers from top to bottom. Numbers without a unit are read as ${project}, the project’s unit.`
+          `Layers from top to bottom. Lengths without a unit are read as ${reader}, the unit they are shown in.`
         }
         actions={
           <>

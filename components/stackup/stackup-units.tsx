@@ -5,9 +5,9 @@ import { useLengthUnit } from "@/components/shell/length-unit";
 import type { LengthUnit } from "@/lib/client/preferences";
 
 interface Units {
-  /** in which lengths are shown: this person's choice */
+  /** in which lengths are shown, and bare numbers typed over them are read: this person's choice */
   reader: LengthUnit;
-  /** in which bare numbers are read: the project's */
+  /** in which the bare numbers of a list are read: the project's */
   project: LengthUnit;
 }
 

@@ -7,6 +7,7 @@ import { afterEach, beforeAll, beforeEach, describe, expect, it, vi } from "vite
 import { Toaster } from "@/components/ui/toast";
 import { LengthUnitProvider } from "@/components/shell/length-unit";
 import { StackupEditor } from "@/components/stackup/stackup-editor";
+import type { LengthUnit } from "@/lib/client/preferences";
 import type { StoredMaterial } from "@/lib/schemas/material";
 import { type StackupDoc, stackupDoc, type StoredStackup } from "@/lib/schemas/stackup";
 import { stackupTemplates } from "@/lib/si/stackup";
@@ -82,10 +83,10 @@ afterEach(() => {
   vi.unstubAllGlobals();
 });
 
-function show(stackup = stored(), readOnly: string | null = null) {
+function show(stackup = stored(), readOnly: string | null = null, reader: LengthUnit = "mm") {
   const { unmount } = render(
     <QueryClientProvider client={new QueryClient({ defaultOptions: { queries: { retry: false } } })}>
-      <LengthUnitProvider initial="mm">
+      <LengthUnitProvider initial={reader}>
         <Tooltip.Provider>
           <Rail />
           <Toaster />
@@ -210,6 +211,27 @@ describe("stackup editor", () => {
     await retype(user, field("Dk of Core 2-3"), "4.4");
     await waitFor(() => expect(puts).toHaveLength(1), { timeout: 3000 });
     expect(thickness(puts[0])).toEqual({ value: "1.4", unit: "mm" });
+  });
+
+  it("reads a bare number in the unit that the field shows, also while one types", async () => {
+    const user = show(stored(), null, "mil");
+    const thick = field("Thickness of Core 2-3");
+    expect(thick.value).toMatch(/ mil$/);
+    await user.click(thick);
+    expect(thick.value).toMatch(/ mil$/);
+    await retype(user, thick, "8");
+    expect(thick.value).toBe("8 mil");
+    await waitFor(() => expect(thickness(puts[0])).toEqual({ value: "8", unit: "mil" }), { timeout: 3000 });
+    expect(screen.getByText(/Lengths without a unit are read as mil/)).toBeTruthy();
+  });
+
+  it("leaves a length as it was typed where it was only looked at in another unit", async () => {
+    const user = show(stored(), null, "mil");
+    await user.click(field("Thickness of Core 2-3"));
+    await user.tab();
+    await retype(user, field("Dk of Core 2-3"), "4.5");
+    await waitFor(() => expect(puts).toHaveLength(1), { timeout: 3000 });
+    expect(thickness(puts[0])).toEqual(stored().layers.find(({ name }) => name === "Core 2-3")?.thickness);
   });
 
   it("does not save two layers of one name, and says which", async () => {
