@@ -9,6 +9,7 @@ const PLACES: Record<ReleaseBlocker["kind"], { place: string; label: string }> =
   "stale run": { place: "runs", label: "Go to the runs" },
   "unfinished run": { place: "runs", label: "Go to the runs" },
   "nothing judged": { place: "rules", label: "See the rules" },
+  lines: { place: "classes", label: "Go to the classes" },
   failures: { place: "review", label: "Work the problems" },
   "no data": { place: "review", label: "See what is missing" },
   flags: { place: "review", label: "See the flags" },

@@ -139,6 +139,7 @@ const WAYS: Record<ReleaseBlocker["kind"], string> = {
   "nothing judged": "To the rules",
   "stale run": "To the runs",
   "unfinished run": "To the runs",
+  lines: "To the classes",
   failures: "To the problems",
   "no data": "To what is missing",
   "editor signs": "To the review",
@@ -154,6 +155,8 @@ function wayOut(projectId: string, blocker: ReleaseBlocker, runId: string | null
     case "editor signs":
     case "flags":
       return at("review");
+    case "lines":
+      return at("classes");
     case "nothing judged":
       return at("rules");
     default:

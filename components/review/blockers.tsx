@@ -60,6 +60,7 @@ const CURES: Record<ReleaseBlocker["kind"], string> = {
   "unfinished run": "Go to runs",
   "nothing judged": "See the rules",
   "stale run": "Go to runs",
+  lines: "Go to classes",
   failures: "Work them",
   "no data": "See what is missing",
   flags: "See the flags",
@@ -75,6 +76,8 @@ function cureOf(projectId: string, { kind }: ReleaseBlocker, { run }: ReadinessV
         : (`/projects/${projectId}/runs` as Route);
     case "nothing judged":
       return `/projects/${projectId}/rules` as Route;
+    case "lines":
+      return `/projects/${projectId}/classes` as Route;
     case "no data":
       return `${review}?tab=missing` as Route;
     case "flags":

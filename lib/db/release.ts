@@ -1,6 +1,7 @@
 import "server-only";
 import { createHash, randomBytes } from "node:crypto";
 import { and, desc, eq, gt, isNull, or, sql } from "drizzle-orm";
+import { lineConflicts } from "@/lib/resolve/line-conflicts";
 import { releaseBlockers } from "@/lib/resolve/release-blockers";
 import { can, type Actor } from "@/lib/schemas/actor";
 import { NotFoundError, RefusedError } from "@/lib/schemas/errors";
@@ -10,10 +11,12 @@ import { getDb } from "./client";
 import { now } from "./clock";
 import { hasEdited } from "./edit";
 import { newId } from "./ids";
+import { listNetClasses } from "./net-class";
 import { countOpenFlags } from "./review";
 import { getDraft } from "./revision";
 import { getRun, latestRun, listFailing, type RunRow } from "./run";
 import { organization, project, release, releaseRecipient, revision, user } from "./schema";
+import { getStackup } from "./stackup";
 import { guard, GuardError } from "./unit";
 import { coveredProblems, listAcceptances, listSignatures, missingInputs } from "./waiver";
 
@@ -46,6 +49,7 @@ export async function releaseReadiness(
       judgedPaths: 0,
       failuresNotWaived: 0,
       missingNotAccepted: [],
+      lineConflicts: [],
       openFlags: flags,
       signedOff: false,
       signerEdited: false,
@@ -60,12 +64,17 @@ export async function releaseReadiness(
   const signature = (await listSignatures(actor, row.revisionId)).find(
     (entry) => entry.inputHash === row.inputHash && entry.runId === row.id,
   );
+  const [classes, stackup] = await Promise.all([
+    listNetClasses(actor, { id: draftId }),
+    getStackup(actor, { id: draftId }),
+  ]);
   const blockers = releaseBlockers({
     run: row,
     draftInputHash,
     judgedPaths: judgedCount(row.counts),
     failuresNotWaived: open.length,
     missingNotAccepted: missing,
+    lineConflicts: lineConflicts(classes, stackup.layers),
     openFlags: flags,
     signedOff: signature !== undefined,
     signerEdited: await hasEdited(actor, draftId),

@@ -10,6 +10,8 @@ export interface ReleaseReadiness {
   failuresNotWaived: number;
   /** missing inputs that nobody accepted, each with the paths it holds back */
   missingNotAccepted: { missing: string; paths: number }[];
+  /** lines that the fabricator cannot tell apart, each in words */
+  lineConflicts: readonly string[];
   openFlags: number;
   signedOff: boolean;
   /** whether the person who would sign made an edit of this draft */
@@ -56,6 +58,14 @@ export function releaseBlockers(facts: ReleaseReadiness): ReleaseBlocker[] {
       kind: "no data",
       text: `${paths} ${plural(paths, "path has", "paths have")} no data for ${facts.missingNotAccepted.length} ${plural(facts.missingNotAccepted.length, "reason", "reasons")} that nobody accepted. Fill the input or accept it with a reason.`,
       count: paths,
+    });
+  }
+  if (facts.lineConflicts.length > 0) {
+    const more = facts.lineConflicts.length - 1;
+    blockers.push({
+      kind: "lines",
+      text: `The fabricator cannot tell lines apart: ${facts.lineConflicts[0]}${more > 0 ? `, and ${more} more` : ""}. Give them one target and tolerance, or widths that differ by 2.5 µm or more.`,
+      count: facts.lineConflicts.length,
     });
   }
   if (facts.openFlags > 0)

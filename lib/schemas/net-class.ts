@@ -5,7 +5,7 @@ import {
   decimalText,
   frequency,
   length,
-  positiveLength,
+  lineWidth,
   quantity,
   resistance,
   time,
@@ -30,8 +30,8 @@ export type TerminationDoc = z.infer<typeof termination>;
 /** Width (and gap, for a pair) on one allowed layer. */
 export const classLayer = z.object({
   layerLineageId: id,
-  width: positiveLength.nullable().default(null),
-  gap: positiveLength.nullable().default(null),
+  width: lineWidth.nullable().default(null),
+  gap: lineWidth.nullable().default(null),
 });
 
 /** A rule's limit where it differs from the project's; value in the rule's own unit. */

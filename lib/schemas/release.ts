@@ -66,6 +66,7 @@ export interface ReleaseBlocker {
     | "stale run"
     | "unfinished run"
     | "nothing judged"
+    | "lines"
     | "failures"
     | "no data"
     | "editor signs"

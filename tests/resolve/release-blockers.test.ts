@@ -7,6 +7,7 @@ const ready: ReleaseReadiness = {
   judgedPaths: 31,
   failuresNotWaived: 0,
   missingNotAccepted: [],
+  lineConflicts: [],
   openFlags: 0,
   signedOff: true,
   signerEdited: false,
@@ -23,6 +24,7 @@ describe("releaseBlockers", () => {
     ["nothing judged", { judgedPaths: 0 }],
     ["failures", { failuresNotWaived: 1 }],
     ["no data", { missingNotAccepted: [{ missing: "driver model of U5", paths: 3 }] }],
+    ["lines", { lineConflicts: ["0.18 mm on L1 is to be 50 Ω for A and 60 Ω for B"] }],
     ["flags", { openFlags: 2 }],
     ["editor signs", { signedOff: false }],
   ] as const)("blocks and says so: %s", (kind, change) => {
