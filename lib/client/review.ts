@@ -107,7 +107,7 @@ export const noDataQuery = (projectId: string, runId: string) =>
   queryOptions({
     queryKey: [...reviewKey(projectId), "no-data", runId],
     queryFn: ({ signal }) =>
-      apiGet<{ missing: { missing: string; paths: number }[]; accepted: Acceptance[] }>(
+      apiGet<{ missing: { missing: string; paths: number; kind: string }[]; accepted: Acceptance[] }>(
         `/projects/${projectId}/runs/${runId}/no-data`,
         undefined,
         signal,
@@ -172,8 +172,8 @@ export const grantWaiver = (
 export const revokeWaiver = (projectId: string, waiverId: string) =>
   apiDelete<undefined>(`/projects/${projectId}/waivers/${waiverId}`);
 
-export const acceptNoData = (projectId: string, runId: string, missing: string, reason: string) =>
-  apiPost<{ id: string }>(`/projects/${projectId}/runs/${runId}/no-data`, { missing, reason });
+export const acceptNoData = (projectId: string, runId: string, missing: readonly string[], reason: string) =>
+  apiPost<{ ids: string[] }>(`/projects/${projectId}/runs/${runId}/no-data`, { missing, reason });
 
 export const withdrawAcceptance = (projectId: string, acceptanceId: string) =>
   apiDelete<undefined>(`/projects/${projectId}/no-data/${acceptanceId}`);

@@ -1,5 +1,6 @@
 import "server-only";
 import { and, desc, eq, inArray, isNull, notExists, sql } from "drizzle-orm";
+import { missingKind } from "@/lib/resolve/missing-kind";
 import { judgeWaiver, type JudgedWaiver } from "@/lib/resolve/waiver-state";
 import { can, type Actor } from "@/lib/schemas/actor";
 import { NotFoundError, RefusedError } from "@/lib/schemas/errors";
@@ -231,44 +232,62 @@ export async function coveredProblems(
   return covered;
 }
 
-/** Takes a missing input as it is, with a reason, for the revision of the run. */
+/** Takes missing inputs as they are, one or many with one reason, for the revision of the run. @returns their ids */
 export async function acceptNoData(
   actor: Actor,
   projectId: string,
-  input: { runId: string; missing: string; reason: string },
-): Promise<string> {
+  input: { runId: string; missing: string | readonly string[]; reason: string },
+): Promise<string[]> {
   if (!can(actor, "review:waive")) throw new NotFoundError("The run");
   const row = await getRun(actor, projectId, input.runId);
   await requireNotEditor(actor, row, "accept what is missing in it");
-  const groups = await missingInputs(actor, row);
-  if (!groups.some((group) => group.missing === input.missing)) throw new NotFoundError("The missing input");
+  const asked = [...new Set(typeof input.missing === "string" ? [input.missing] : input.missing)];
+  const known = new Set((await missingInputs(actor, row)).map((group) => group.missing));
+  if (asked.length === 0 || !asked.every((missing) => known.has(missing)))
+    throw new NotFoundError("The missing input");
   const db = await getDb();
-  if ((await listAcceptances(actor, row.revisionId)).some((entry) => entry.missing === input.missing))
-    throw new RefusedError("This missing input is accepted already.", "accepted");
-  const id = newId();
+  const accepted = new Set((await listAcceptances(actor, row.revisionId)).map((entry) => entry.missing));
+  const twice = asked.find((missing) => accepted.has(missing));
+  if (twice !== undefined)
+    throw new RefusedError(
+      asked.length === 1
+        ? "This missing input is accepted already."
+        : `"${twice}" is accepted already. Read the list anew.`,
+      "accepted",
+    );
+  const ids = asked.map(() => newId());
+  const at = now();
   await commitAudited(
     actor,
     [
-      db.insert(noDataAcceptance).values({
-        id,
-        teamId: actor.teamId,
-        projectId,
-        revisionId: row.revisionId,
-        missing: input.missing,
-        reason: input.reason,
-        createdBy: actor.userId,
-        createdAt: now(),
-      }),
+      db.insert(noDataAcceptance).values(
+        asked.map((missing, index) => ({
+          id: ids[index],
+          teamId: actor.teamId,
+          projectId,
+          revisionId: row.revisionId,
+          missing,
+          reason: input.reason,
+          createdBy: actor.userId,
+          createdAt: at,
+        })),
+      ),
     ],
     {
       action: "no-data.accept",
       subjectKind: "run",
       subjectId: row.id,
       projectId,
-      detail: { missing: input.missing, reason: input.reason },
+      detail: { missing: listed(asked), reason: input.reason },
     },
   );
-  return id;
+  return ids;
+}
+
+/** What the audit log names of many; each stands in the list of what was accepted. */
+function listed(missing: readonly string[]): string {
+  const named = missing.slice(0, 20).join(", ");
+  return missing.length > 20 ? `${named} and ${missing.length - 20} more` : named;
 }
 
 export async function withdrawAcceptance(
@@ -336,13 +355,14 @@ export async function listAcceptances(actor: Actor, revisionId: string) {
 export async function missingInputs(
   actor: Actor,
   row: RunRow,
-): Promise<{ missing: string; paths: number }[]> {
+): Promise<{ missing: string; paths: number; kind: string }[]> {
   if (!can(actor, "project:read")) throw new NotFoundError("The run");
   const db = await getDb();
   const named = db
     .select({
       missing: sql<string>`${problem.missing}`,
       paths: sql<number>`count(DISTINCT ${problem.pathId})`,
+      cause: sql<string | null>`min(${problem.cause})`,
     })
     .from(problem)
     .where(
@@ -378,8 +398,15 @@ export async function missingInputs(
         ),
       ),
     );
-  const [groups, [without]] = await db.batch([named, unnamed]);
-  return without && without.paths > 0 ? [{ missing: noRuleJudges, paths: without.paths }, ...groups] : groups;
+  const [rows, [without]] = await db.batch([named, unnamed]);
+  const groups = rows.map(({ missing, paths, cause }) => ({
+    missing,
+    paths,
+    kind: missingKind(missing, cause),
+  }));
+  return without && without.paths > 0
+    ? [{ missing: noRuleJudges, paths: without.paths, kind: missingKind(noRuleJudges, null) }, ...groups]
+    : groups;
 }
 
 /** A reviewer's signature on a finished run of the draft; not by somebody who edited it. */

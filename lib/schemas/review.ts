@@ -34,9 +34,10 @@ export const waiverInput = z.object({
 export const maxWaiverMs = 730 * dayMs;
 /** What a path lacks that no enabled rule speaks of: it has no data, and no problem says why. */
 export const noRuleJudges = "a rule that judges the path";
+const missingName = z.string().min(1).max(300);
 export const noDataAcceptanceInput = z.object({
-  /** the missing input that groups the findings, as the run names it */
-  missing: z.string().min(1).max(300),
+  /** the missing input that groups the findings, as the run names it, or several of them */
+  missing: z.union([missingName, z.array(missingName).min(1).max(2000)]),
   reason: proseText(2000).refine((t) => t.length >= 10, "Give the reason in a sentence."),
 });
 export type Subject = z.infer<typeof subject>;

@@ -21,9 +21,8 @@ export const POST = route({
   access: "review:waive",
   params: runParams,
   body: noDataAcceptanceInput,
-  handler: async ({ actor, params, body }) =>
-    Response.json(
-      { id: await acceptNoData(actor, params.projectId, { runId: params.runId, ...body }) },
-      { status: 201 },
-    ),
+  handler: async ({ actor, params, body }) => {
+    const ids = await acceptNoData(actor, params.projectId, { runId: params.runId, ...body });
+    return Response.json({ id: ids[0], ids }, { status: 201 });
+  },
 });
