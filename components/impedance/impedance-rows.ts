@@ -122,12 +122,31 @@ export interface RowAnswers {
   spread: Outcome<SpreadFacts> | null | undefined;
 }
 
+type ClassLimit = Readonly<Record<string, ResolvedLimit>>;
+
+/** Rows as they were last made: most stay as they are while others are answered. */
+const made = new WeakMap<RowInput, { from: readonly unknown[]; row: ImpedanceRow }>();
+
 /** @param limits of the class, by rule id */
 export function rowOf(
   input: RowInput,
+  answers: RowAnswers,
+  least: Capability | null,
+  limits: ClassLimit,
+): ImpedanceRow {
+  const from = [answers.cell, answers.spread, least, limits];
+  const before = made.get(input);
+  if (before && from.every((value, i) => value === before.from[i])) return before.row;
+  const row = newRow(input, answers, least, limits);
+  made.set(input, { from, row });
+  return row;
+}
+
+function newRow(
+  input: RowInput,
   { cell, spread }: RowAnswers,
   least: Capability | null,
-  limits: Readonly<Record<string, ResolvedLimit>>,
+  limits: ClassLimit,
 ): ImpedanceRow {
   const now = cell?.now ?? null;
   const impedance = now?.ok ? now.value.impedance : null;

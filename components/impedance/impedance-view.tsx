@@ -78,7 +78,16 @@ export function ImpedanceView({
     (row: RowInput) => row.id === cell || isAmong(row, { class: onlyClass, layers: whichLayers }),
     [cell, onlyClass, whichLayers],
   );
-  const rows = useRows({ engine: background, stackup, si, classes, limits, grid, isWanted });
+  const rows = useRows({
+    engines: { live, background },
+    panelOpen: cell !== null,
+    stackup,
+    si,
+    classes,
+    limits,
+    grid,
+    isWanted,
+  });
   const { show } = state;
   const shown = useMemo(
     () => rows.filter((row) => isAmong(row, { class: onlyClass, layers: whichLayers }) && isShown(row, show)),

@@ -20,7 +20,9 @@ import { cellJobOf, type ImpedanceRow, type RowInput, rowInputs, rowOf, spreadJo
 export type ClassLimits = Readonly<Record<string, Readonly<Record<string, ResolvedLimit>>>>;
 
 interface Inputs {
-  engine: Engine;
+  engines: { live: Engine; background: Engine };
+  /** A panel is open: what is dragged there has the live engine to itself. */
+  panelOpen: boolean;
   stackup: StoredStackup;
   si: Stackup;
   classes: readonly StoredNetClass[];
@@ -32,8 +34,17 @@ interface Inputs {
 }
 
 /** The rows of the table, each filled in as the engine answers. */
-export function useRows({ engine, stackup, si, classes, limits, grid, isWanted }: Inputs): ImpedanceRow[] {
-  const [queue] = useState(() => new EngineQueue(engine));
+export function useRows({
+  engines,
+  panelOpen,
+  stackup,
+  si,
+  classes,
+  limits,
+  grid,
+  isWanted,
+}: Inputs): ImpedanceRow[] {
+  const [queue] = useState(() => new EngineQueue([engines.background, engines.live]));
   const known = useSyncExternalStore(queue.subscribe, queue.known, queue.known);
   const process = stackup.process ?? usualProcess;
   const inputs = useMemo(() => rowInputs({ layers: stackup.layers, classes }), [stackup.layers, classes]);
@@ -45,8 +56,11 @@ export function useRows({ engine, stackup, si, classes, limits, grid, isWanted }
   useEffect(() => {
     const wanted = asked.filter(({ row }) => isWanted(row));
     // Every line first: a spread takes longer and says less.
-    queue.want([...wanted.map(({ cell }) => cell), ...wanted.flatMap(({ spread }) => spread ?? [])]);
-  }, [queue, asked, isWanted]);
+    queue.want(
+      [...wanted.map(({ cell }) => cell), ...wanted.flatMap(({ spread }) => spread ?? [])],
+      panelOpen ? 1 : 2,
+    );
+  }, [queue, asked, isWanted, panelOpen]);
   useEffect(() => () => queue.want([]), [queue]);
 
   const least = useMemo(
@@ -77,9 +91,11 @@ function jobsOf(
   const cell = cellJobOf(row, si, grid);
   const spread = spreadJobOf(row, si, process);
   const key = (job: object) => JSON.stringify({ ...job, stackup: null }) + board;
+  // One target finds the same widths on mirrored layers, whichever class asks.
+  const share = `${row.line} ${row.target}`;
   return {
-    cell: { key: key(cell), job: cell },
-    spread: spread && { key: key(spread), job: spread },
+    cell: { key: key(cell), job: cell, share },
+    spread: spread && { key: key(spread), job: spread, share },
   };
 }
 
