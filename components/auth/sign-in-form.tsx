@@ -9,6 +9,7 @@ import { Button } from "@/components/ui/button";
 import { Input } from "@/components/ui/input";
 import { authClient } from "@/lib/client/auth";
 import { authMessage } from "@/lib/client/auth-messages";
+import { bringPreferences } from "@/lib/client/own-preferences";
 import { startAnew } from "@/lib/client/start-anew";
 import { signInForm, type SignInForm as Values } from "@/lib/schemas/account";
 import { DemoAccounts, type DemoAccount } from "./demo-accounts";
@@ -37,6 +38,7 @@ export function SignInForm({ next, demoAccounts }: Props) {
       form.setError("root", { message: error.code });
       return;
     }
+    await bringPreferences();
     startAnew(next);
   });
 

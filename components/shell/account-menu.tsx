@@ -5,7 +5,8 @@ import { useRouter } from "next/navigation";
 import { useState } from "react";
 import { Button } from "@/components/ui/button";
 import { Menu, MenuChoice, MenuItem, MenuSeparator } from "@/components/ui/menu";
-import { parseTheme, type Theme, THEME_COOKIE, writePreference } from "@/lib/client/preferences";
+import { choosePreference } from "@/lib/client/own-preferences";
+import { parseTheme, type Theme } from "@/lib/client/preferences";
 import type { ShellUser } from "./types";
 
 const THEME_OPTIONS = [
@@ -21,7 +22,7 @@ export function AccountMenu({ user, role }: { user: ShellUser; role: string | nu
 
   function choose(value: string) {
     const next = parseTheme(value);
-    writePreference(THEME_COOKIE, next);
+    void choosePreference({ theme: next });
     setTheme(next);
     if (next === "system") delete document.documentElement.dataset.theme;
     else document.documentElement.dataset.theme = next;

@@ -1,7 +1,8 @@
 "use client";
 
 import { createContext, type ReactNode, useContext, useMemo, useState } from "react";
-import { LENGTH_UNIT_COOKIE, type LengthUnit, writePreference } from "@/lib/client/preferences";
+import { choosePreference } from "@/lib/client/own-preferences";
+import type { LengthUnit } from "@/lib/client/preferences";
 
 interface LengthUnitState {
   unit: LengthUnit;
@@ -17,7 +18,7 @@ export function LengthUnitProvider({ initial, children }: { initial: LengthUnit;
     () => ({
       unit,
       setUnit: (next: LengthUnit) => {
-        writePreference(LENGTH_UNIT_COOKIE, next);
+        void choosePreference({ lengthUnit: next });
         setState(next);
       },
     }),

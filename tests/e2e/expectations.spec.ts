@@ -83,6 +83,9 @@ test("the mm and mil switch changes every table, and stays", async ({ as }) => {
   await expect(page.getByRole("table", { name: "Nets" })).toContainText("mil");
   await visit(page, `/projects/${project}/stackup`);
   await expect(page.getByRole("table", { name: /^Layers/ })).toContainText("mil");
+  // The choice goes with the account: others look at the same boards.
+  await page.getByRole("radio", { name: "mm" }).click();
+  await expect(page.getByRole("table", { name: /^Layers/ })).toContainText("mm");
 });
 
 test("cells copied from a spreadsheet are pasted anywhere on the import page; marks and decimal comma are told", async ({
