@@ -7,10 +7,10 @@ export function placeOf(error: number): number {
   return Math.min(1, Math.max(0, (Math.log10(error) + DECADES) / DECADES));
 }
 
-/** "0.012 %" from a hundred-thousandth on, "2·10⁻⁹" below. */
+/** "0.012 %" from a millionth on, "2·10⁻⁹" below. */
 export function errorText(error: number): string {
   if (error === 0) return "0";
-  if (error < 1e-5) {
+  if (error < 1e-6) {
     const [digits, power] = error.toExponential(0).split("e-");
     return `${digits}·10⁻${[...(power ?? "")].map((digit) => "⁰¹²³⁴⁵⁶⁷⁸⁹"[Number(digit)]).join("")}`;
   }
