@@ -37,6 +37,8 @@ interface NetRow {
   id: string;
   version: number;
   fields: NetFields;
+  /** what keeps its route from being complete */
+  gaps: number;
 }
 
 /** Bound parameters of one statement; SQLite takes 32,766. */
@@ -44,7 +46,9 @@ const IDS_A_QUERY = 5_000;
 
 /**
  * Sets fields of many nets in one unit: all of them, or none where one was changed meanwhile.
- * Designers set everything but limits, reviewers limits.
+ * Designers set everything but limits, reviewers limits. A net whose route has gaps is never in scope: put there, it
+ * is incomplete, as at import.
+ * @param summary of the edit, or how to say it of the fields that differ and the number of nets
  * @returns how many nets differ now
  * @throws ConflictError
  */
@@ -52,7 +56,7 @@ export async function patchNets(
   actor: Actor,
   projectId: string,
   patches: readonly NetPatch[],
-  summary: string,
+  summary: string | ((fields: string[], nets: number) => string),
 ): Promise<number> {
   const draft = await getDraft(actor, projectId, "project:read");
   const before = new Map(
@@ -73,6 +77,7 @@ export async function patchNets(
     if (!row) continue;
     if (patch.version !== undefined && patch.version !== row.version) stale.push(row);
     const fields = netFields.parse({ ...row.fields, ...patch.fields });
+    if (fields.scope === "in" && row.gaps > 0) fields.scope = "incomplete";
     if (!same(fields, row.fields)) changed.push({ id: row.id, fields });
   }
   if (stale.length > 0) throw await staleNets(actor, draft, stale);
@@ -83,7 +88,16 @@ export async function patchNets(
     reading: readingOf(draft, members),
     readVersion: 0,
     after: inOrder(changed),
-    summary,
+    summary:
+      typeof summary === "string"
+        ? summary
+        : summary(
+            netsThing.describe(
+              members.map(({ id: netId, fields }) => ({ id: netId, fields })),
+              changed,
+            ),
+            changed.length,
+          ),
     answer: ({ state }) => state,
   });
   return changed.length;
@@ -146,7 +160,12 @@ async function readNets(draft: RevisionRef, wanted: readonly string[]): Promise<
   const found: NetRow[] = [];
   for (let start = 0; start < ids.length; start += IDS_A_QUERY) {
     const rows = await db
-      .select({ id: net.id, version: net.version, fields: fieldsOfDoc })
+      .select({
+        id: net.id,
+        version: net.version,
+        fields: fieldsOfDoc,
+        gaps: sql<number>`coalesce(json_array_length(${net.doc}, '$.gaps'), 0)`,
+      })
       .from(net)
       .where(
         and(

@@ -36,16 +36,15 @@ export const netsQuery = revisionQuery.extend({
 /** The same change to many nets, each at the version it was read at. */
 export const netsPatch = z.object({
   nets: z.array(z.object({ id, version })).min(1, "Tick at least one net.").max(25_000),
-  change: netDoc
-    .pick({
-      classLineageId: true,
-      scope: true,
-      scopeKind: true,
-      scopeReason: true,
-      matchGroup: true,
-      limits: true,
-    })
-    .partial(),
+  change: z.object({
+    // What is not told stays: a field made optional with its default would be put back to that default.
+    classLineageId: netDoc.shape.classLineageId.unwrap().optional(),
+    scope: netDoc.shape.scope.optional(),
+    scopeKind: netDoc.shape.scopeKind.unwrap().optional(),
+    scopeReason: netDoc.shape.scopeReason.unwrap().optional(),
+    matchGroup: netDoc.shape.matchGroup.unwrap().optional(),
+    limits: netDoc.shape.limits.unwrap().optional(),
+  }),
 });
 
 export const classRemoval = z.object({

@@ -26,12 +26,15 @@ export const PATCH = route({
   body: netsPatch,
   maxBodyBytes: 8_388_608,
   handler: async ({ actor, params, body }) => {
-    const count = body.nets.length === 1 ? "1 net" : `${body.nets.length} nets`;
-    const what = Object.keys(body.change).map((field) => WORDS[field] ?? field);
     const patches = body.nets.map((net) => ({ ...net, fields: body.change }));
-    return { changed: await patchNets(actor, params.projectId, patches, `${count}: ${what.join(", ")}`) };
+    return { changed: await patchNets(actor, params.projectId, patches, summaryOf) };
   },
 });
+
+function summaryOf(fields: string[], nets: number): string {
+  const what = fields.map((field) => WORDS[field] ?? field);
+  return `${nets === 1 ? "1 net" : `${nets} nets`}: ${what.join(", ")}`;
+}
 
 const WORDS: Record<string, string> = {
   classLineageId: "class",
