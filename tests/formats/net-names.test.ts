@@ -54,6 +54,13 @@ describe("supplies by name", () => {
   ])("%s is %s", (name, kind) => {
     expect(kindOf(name)).toBe(kind);
   });
+
+  it.each(["TEST_CLK", "TEST_EN", "TEM_SCAN_EN", "SCAN_OUT", "TP12"])(
+    "leaves %s unticked: it may be a clock or an enable",
+    (name) => {
+      expect(proposeFromNames([name]).outOfScope).toMatchObject([{ kind: "test", sure: false }]);
+    },
+  );
 });
 
 describe("pairs by name", () => {
