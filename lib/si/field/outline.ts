@@ -39,7 +39,9 @@ export function outlineOf(section: CrossSection): Outline {
   const above = section.mask ? section.mask.er : 1;
   const levels = levelsOf(section, above);
   const coppers = coppersOf(section, levels, height);
-  const reach = section.upperPlane ? 3.5 * height : 60 * (height + extraHeight(coppers, height));
+  // between planes fields fade as exp(−κx), κ down to 0.4π/b where a high permittivity lies between low ones; in the open
+  // the charge on an interface falls as x⁻², its effect as x⁻³
+  const reach = section.upperPlane ? 6 * height : 60 * (height + extraHeight(coppers, height));
   const outermost = Math.max(...coppers.filter((c) => c.owner >= 0).flatMap((c) => c.right));
   const innermost = Math.min(...coppers.filter((c) => c.owner >= 0).flatMap((c) => c.left));
   const slot = section.coplanar?.gap ?? 0;

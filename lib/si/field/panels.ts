@@ -15,7 +15,7 @@ const vertices = new Vertices();
 /** Refinement points of the segment at hand: place and panel length there [m]. */
 const at = new Float64Array(64);
 const size = new Float64Array(64);
-const ends = new Float64Array(256);
+const ends = new Float64Array(1024);
 
 /** Cuts an outline into panels, copper first; decides the topology, or follows the one given. */
 export function layPanels(
@@ -66,6 +66,8 @@ function layOn(
   at[last] = endAt;
   size[last] = endLength;
   const nodes = s.owner === INTERFACE ? f.interfaceNodes : f.copperNodes;
+  // of the images between two planes only the nearest are integrated in closed form; the others lie 2b away
+  const cap = mesh.upper > 0 ? mesh.upper * (s.owner === INTERFACE ? 2 : 1) : Infinity;
   const first = power(s.end1);
   const final = power(s.end2);
   for (let k = 0; k < last; k++) {
@@ -76,6 +78,7 @@ function layOn(
       size[k]!,
       size[k + 1]!,
       growth,
+      cap,
       least,
       decide ? 0 : (part.counts[k] ?? 1),
     );
@@ -145,26 +148,38 @@ function chooseInner(s: Segment, f: Fineness, length: number, growth: number, in
 
 /**
  * Fills `ends` with the ends of panels on (0, length) whose lengths follow
- * size(t) = min(a + growth·t, b + growth·(length − t)): equal steps of ∫dt/size.
+ * size(t) = min(a + growth·t, b + growth·(length − t), cap): equal steps of ∫dt/size.
  *
  * @param fixed  number of panels, or 0 to let the sizes decide
  * @returns number of panels
  */
-function grade(length: number, a: number, b: number, growth: number, least: number, fixed: number): number {
-  const start = Math.min(a, b + growth * length);
-  const end = Math.min(b, a + growth * length);
-  // where both branches meet
+function grade(
+  length: number,
+  a: number,
+  b: number,
+  growth: number,
+  cap: number,
+  least: number,
+  fixed: number,
+): number {
+  const start = Math.min(a, b + growth * length, cap);
+  const end = Math.min(b, a + growth * length, cap);
+  // where both branches meet, and the stretch on which the cap holds
   const middle = Math.min(length, Math.max(0, (end - start + growth * length) / (2 * growth)));
-  const rising = Math.log(1 + (growth * middle) / start) / growth;
-  const total = rising + Math.log(1 + (growth * (length - middle)) / end) / growth;
-  const count = fixed > 0 ? fixed : Math.min(ends.length - 1, Math.max(least, Math.ceil(total - 0.2)));
+  const top = Math.min(cap, start + growth * middle, end + growth * (length - middle));
+  const flatFrom = Math.min(middle, (cap - start) / growth);
+  const flat = Math.max(0, length - flatFrom - Math.min(length - middle, (cap - end) / growth));
+  const rising = Math.log(1 + (growth * flatFrom) / start) / growth;
+  const falling = Math.log(1 + (growth * (length - flatFrom - flat)) / end) / growth;
+  const total = rising + flat / top + falling;
+  const most = ends.length - 1;
+  const count = fixed > 0 ? fixed : Math.min(most, Math.max(least, Math.ceil(total - 0.2)));
   ends[0] = 0;
   for (let i = 1; i < count; i++) {
     const m = (i * total) / count;
-    ends[i] =
-      m <= rising
-        ? (start * (Math.exp(growth * m) - 1)) / growth
-        : length - (end * (Math.exp(growth * (total - m)) - 1)) / growth;
+    if (m <= rising) ends[i] = (start * (Math.exp(growth * m) - 1)) / growth;
+    else if (m <= total - falling) ends[i] = flatFrom + (m - rising) * top;
+    else ends[i] = length - (end * (Math.exp(growth * (total - m)) - 1)) / growth;
   }
   ends[count] = length;
   return count;

@@ -134,7 +134,7 @@ export const laws: Law[] = [
       forAll(runs, ["stripline pair", "three-dielectric stripline pair"], ({ section }) => {
         const [left] = section.traces;
         const height = section.layers.reduce((sum, l) => sum + l.thickness, 0);
-        const x = (left!.widthBottom + left!.widthTop) / 2 + 4 * height;
+        const x = (left!.widthBottom + left!.widthTop) / 2 + 10 * height; // slow where a high Dk lies between low ones
         const apart = {
           ...section,
           traces: [

@@ -5,7 +5,9 @@ import { FINENESS, type Fineness } from "@/lib/si/field/accuracy";
 import { outlineOf } from "@/lib/si/field/outline";
 import { INTERFACE } from "@/lib/si/field/segment";
 import { solveWith } from "@/lib/si/field/solve-cross-section";
+import { ellipticRatio } from "@/lib/si/formulas/elliptic";
 import { withWidth } from "@/lib/si/line";
+import { ETA0 } from "@/lib/si/physical-constants";
 import exact from "../../reference/impedance/exact.json";
 import fem from "../../reference/impedance/fem.json";
 import { outerSection } from "../../support/sections";
@@ -104,6 +106,23 @@ describe("convergence", () => {
       return Math.abs(solveWith(section, fineness).parameters.single!.impedance / 46.68911082 - 1);
     };
     expect(Math.log(error(1) / error(1 / 3)) / Math.log(3)).toBeGreaterThan(2);
+  });
+});
+
+describe("wide strips between planes", () => {
+  /** S. B. Cohn, 1954: Z = η0/4 K(k′)/K(k), k = tanh(πw/2b), exact without thickness. */
+  const exactImpedance = (ratio: number) =>
+    (ETA0 / 4) * ellipticRatio(1 / Math.cosh((Math.PI * ratio) / 2), Math.tanh((Math.PI * ratio) / 2));
+
+  it.each([0.3, 1, 3, 6, 11.5, 20, 40])("w/b = %d: exact impedance to 5e-5, reference to 1e-6", (ratio) => {
+    const half = { thickness: 0.5e-3, er: 1 };
+    const width = ratio * 1e-3;
+    const trace = { x: 0, y: 0.5e-3, thickness: 0, widthBottom: width, widthTop: width };
+    const section = { layers: [half, half], upperPlane: true, traces: [trace] };
+    const error = (accuracy: "standard" | "reference") =>
+      Math.abs(solveCrossSection(section, { accuracy }).single!.impedance / exactImpedance(ratio) - 1);
+    expect(error("standard")).toBeLessThan(5e-5);
+    expect(error("reference")).toBeLessThan(1e-6);
   });
 });
 
