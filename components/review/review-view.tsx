@@ -154,7 +154,7 @@ function Reviewed({ projectId, run, draft, rights }: ReviewedProps) {
       ) : null}
       <div className="flex flex-col gap-2">
         <Sized initial={640} least={300}>
-          {(width) => <RunCounts counts={run.counts} width={Math.min(width, 960)} />}
+          {(width) => <RunCounts counts={run.counts} width={width} />}
         </Sized>
         <Scopes projectId={projectId} scopes={summary.data?.scopes} />
       </div>

@@ -30,7 +30,7 @@ export function RunHead({ projectId, run, listed, draft, onVerdict }: Props) {
             {(width) => (
               <VerdictBar
                 counts={verdictCounts(run.counts)}
-                width={Math.min(width, 960)}
+                width={width}
                 noun="paths"
                 title="Paths by verdict"
                 onPick={(verdict) => {

@@ -1,4 +1,8 @@
-export type VerdictName = "pass" | "near" | "fail" | "no data" | "waived";
+import { useId } from "react";
+import { Hatches, Marks } from "@/components/charts/mark";
+import { type ShownVerdict, verdictMark } from "@/lib/drawings/verdict-mark";
+
+export type VerdictName = ShownVerdict;
 
 interface Props {
   verdict: VerdictName;
@@ -32,46 +36,17 @@ export function VerdictMark({ verdict, count, wordHidden = false }: Props) {
   );
 }
 
-/** The shape alone, in a 12 × 12 box, for drawings that place marks of their own. */
+/** The shape alone, in a 12 × 12 box: the same that the drawings have. */
 export function VerdictShape({ verdict }: { verdict: VerdictName }) {
-  switch (verdict) {
-    case "pass": // a filled disc
-      return <circle cx="6" cy="6" r="4.5" fill="currentColor" />;
-    case "near": // a half-filled diamond
-      return (
-        <>
-          <path d="M6 1 11 6 6 11 1 6Z" fill="none" stroke="currentColor" strokeWidth="1.5" />
-          <path d="M6 1 6 11 1 6Z" fill="currentColor" />
-        </>
-      );
-    case "fail": // a filled square with a bar left out
-      return <path d="M1 1H11V11H1ZM3 5.2V6.8H9V5.2Z" fill="currentColor" fillRule="evenodd" />;
-    case "no data": // an empty, broken ring
-      return (
-        <circle
-          cx="6"
-          cy="6"
-          r="4.5"
-          fill="none"
-          stroke="currentColor"
-          strokeWidth="1.5"
-          strokeDasharray="3 2.6"
-        />
-      );
-    case "waived": // a hatched square
-      return (
-        <>
-          <rect
-            x="1.25"
-            y="1.25"
-            width="9.5"
-            height="9.5"
-            fill="none"
-            stroke="currentColor"
-            strokeWidth="1.5"
-          />
-          <path d="M1.5 7 7 1.5M2 10.5 10.5 2M5.5 10.5 10.5 5.5" stroke="currentColor" strokeWidth="1" />
-        </>
-      );
-  }
+  const scope = `v${useId().replace(/[^a-zA-Z0-9]/g, "")}`;
+  return (
+    <>
+      {verdict === "waived" ? (
+        <defs>
+          <Hatches scope={scope} />
+        </defs>
+      ) : null}
+      <Marks marks={verdictMark(verdict, 6, 6, 5)} scope={scope} />
+    </>
+  );
 }
