@@ -40,7 +40,12 @@ export function NoteSheet({ note, noteHash, actions }: Props) {
 
       <section>
         <h2 className="mb-2 text-lg font-semibold">Controlled lines</h2>
-        <div className="overflow-x-auto" tabIndex={0} role="region" aria-label="Controlled lines">
+        <div
+          className="scroll-hint-paper overflow-x-auto"
+          tabIndex={0}
+          role="region"
+          aria-label="Controlled lines"
+        >
           <table className="w-full min-w-[58rem] border-collapse text-sm">
             <thead>
               <tr className="border-ink border-b text-left">

@@ -3,6 +3,7 @@
 import type { Route } from "next";
 import Link from "next/link";
 import { usePathname, useSearchParams } from "next/navigation";
+import { useEffect, useRef } from "react";
 import { cn } from "@/components/ui/class-names";
 import { REVISION_PARAM } from "@/lib/client/revision-param";
 import { type Place, projectOf, projectPlaces, PROJECTS, teamPlaces } from "./places";
@@ -12,8 +13,18 @@ export function Rail({ mayReadAudit }: { mayReadAudit: boolean }) {
   const pathname = usePathname();
   const projectId = projectOf(pathname);
   const revision = useSearchParams().get(REVISION_PARAM);
+  const strip = useRef<HTMLElement>(null);
+  // Where the strip is narrower than its places, the one that one is at stands in the middle.
+  useEffect(() => {
+    const nav = strip.current;
+    const current = nav?.querySelector("[aria-current=page]")?.getBoundingClientRect();
+    if (!nav || !current) return;
+    const middle = nav.getBoundingClientRect().left + nav.clientWidth / 2;
+    nav.scrollLeft += current.left + current.width / 2 - middle;
+  }, [pathname]);
   return (
     <nav
+      ref={strip}
       aria-label="Places"
       className="border-rule-line flex shrink-0 gap-1 overflow-x-auto border-b px-2 py-1 lg:sticky lg:top-12 lg:h-[calc(100dvh-3rem)] lg:w-48 lg:flex-col lg:overflow-y-auto lg:border-r lg:border-b-0 lg:px-3 lg:py-4 print:hidden"
     >

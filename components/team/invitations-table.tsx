@@ -29,7 +29,7 @@ export function InvitationsTable({
           key={invitation.id}
           className="border-rule-line/60 flex min-h-10 flex-wrap items-center gap-x-4 border-b px-2 last:border-b-0"
         >
-          <span className="min-w-0 break-all">{invitation.email}</span>
+          <span className="min-w-0 break-words">{invitation.email}</span>
           <span className="text-ink-soft">
             as {invitation.role}, until {DAY.format(new Date(invitation.expiresAt))}
           </span>

@@ -30,7 +30,12 @@ export function MembersTable({ members, userId, mayManage }: Props) {
   const [leaving, setLeaving] = useState<Member | null>(null);
 
   return (
-    <div className="border-rule-line bg-sheet overflow-x-auto border-y">
+    <div
+      className="scroll-hint border-rule-line overflow-x-auto border-y"
+      tabIndex={0}
+      role="region"
+      aria-label="Members, scrolls sideways"
+    >
       <table className="w-full text-sm" aria-label="Members">
         <thead>
           <tr className="border-field-line text-ink-soft h-8 border-b text-left">
@@ -57,7 +62,7 @@ export function MembersTable({ members, userId, mayManage }: Props) {
                   {member.userId === userId ? <Badge>you</Badge> : null}
                 </span>
               </td>
-              <td className="text-ink-soft px-2 break-all">{member.user.email}</td>
+              <td className="text-ink-soft px-2 whitespace-nowrap">{member.user.email}</td>
               <td className="px-2">
                 {mayManage ? (
                   <Select

@@ -147,7 +147,7 @@ export function DataTable<Row extends RowData>(props: Props<Row>) {
   return (
     <div
       ref={scroller}
-      className="border-rule-line bg-sheet relative overflow-auto border-y print:overflow-visible"
+      className="scroll-hint border-rule-line relative overflow-auto border-y print:overflow-visible"
       style={{ maxHeight: height }}
       onKeyDown={rowKeys.onKeyDown}
     >
