@@ -12,6 +12,7 @@ import { newId } from "./ids";
 import { patchNets } from "./net-fields";
 import { getDraft, type RevisionRef } from "./revision";
 import { net, netClass } from "./schema";
+import { getStackup } from "./stackup";
 import { isUniqueFailure } from "./unit";
 
 const classState = netClassDoc.extend({ id, lineageId: id });
@@ -69,6 +70,7 @@ export async function createNetClass(
 ): Promise<StoredNetClass> {
   const draft = await getDraft(actor, projectId);
   const doc = netClassDoc.parse(input);
+  await assertLayers(actor, draft, doc, []);
   const after = { ...doc, id: newId(), lineageId: newId() };
   await naming(doc.name, () =>
     changeThing(actor, draft, netClassThing, {
@@ -96,6 +98,7 @@ export async function putNetClass(
   const draft = await getDraft(actor, projectId, "project:read");
   const doc = netClassDoc.parse(input);
   const present = await getNetClass(actor, draft, classId);
+  await assertLayers(actor, draft, doc, present.layers);
   const reading = await netClassThing.read(actor, draft, present.lineageId, null);
   const after = { ...doc, id: present.id, lineageId: present.lineageId };
   const changed = netClassThing.describe(reading.state, after);
@@ -239,6 +242,23 @@ export const netClassThing: DraftThing<ClassState> = {
     );
   },
 };
+
+/** A layer that a class had may be gone from the stackup; none is taken up that is no copper of it. */
+async function assertLayers(
+  actor: Actor,
+  draft: RevisionRef,
+  { layers }: NetClassDoc,
+  had: NetClassDoc["layers"],
+): Promise<void> {
+  const known = new Set(had.map(({ layerLineageId }) => layerLineageId));
+  const added = layers.filter(({ layerLineageId }) => !known.has(layerLineageId));
+  if (added.length === 0) return;
+  const { layers: built } = await getStackup(actor, draft);
+  for (const { lineageId, kind } of built) if (kind === "signal" || kind === "plane") known.add(lineageId);
+  if (added.every(({ layerLineageId }) => known.has(layerLineageId))) return;
+  const message = "This draft's stackup has no such copper layer. Choose one of its copper layers.";
+  throw new RefusedError(message, "unknown-layer", { layers: message });
+}
 
 function stored(row: typeof netClass.$inferSelect): StoredNetClass {
   return { ...row.doc, id: row.id, lineageId: row.lineageId, version: row.version };

@@ -11,6 +11,7 @@ import {
   time,
   voltage,
 } from "./quantity";
+import { sensibleLimits } from "./sensible-limits";
 
 export const signalKinds = ["data", "clock", "strobe", "slow"] as const;
 
@@ -73,4 +74,8 @@ export const netClassDoc = z.object({
 });
 export type NetClassDoc = z.infer<typeof netClassDoc>;
 export type StoredNetClass = NetClassDoc & { id: string; lineageId: string; version: number };
-export const netClassUpdate = z.object({ version, netClass: netClassDoc });
+/** What a person sends of a class. */
+export const sentNetClass = netClassDoc.superRefine(({ limits }, ctx) =>
+  sensibleLimits(limits, ctx, "limits"),
+);
+export const netClassUpdate = z.object({ version, netClass: sentNetClass });

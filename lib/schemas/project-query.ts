@@ -1,9 +1,10 @@
 import { z } from "zod";
 import { id, version } from "./common";
 import { modelDoc } from "./model";
-import { netClassDoc } from "./net-class";
+import { sentNetClass } from "./net-class";
 import { netDoc, netScope, scopeKinds } from "./net";
 import { projectParams } from "./route-params";
+import { sensibleLimits } from "./sensible-limits";
 
 export const classParams = projectParams.extend({ classId: id });
 export const modelParams = projectParams.extend({ modelId: id });
@@ -43,7 +44,10 @@ export const netsPatch = z.object({
     scopeKind: netDoc.shape.scopeKind.unwrap().optional(),
     scopeReason: netDoc.shape.scopeReason.unwrap().optional(),
     matchGroup: netDoc.shape.matchGroup.unwrap().optional(),
-    limits: netDoc.shape.limits.unwrap().optional(),
+    limits: netDoc.shape.limits
+      .unwrap()
+      .superRefine((limits, ctx) => sensibleLimits(limits, ctx))
+      .optional(),
   }),
 });
 
@@ -53,7 +57,7 @@ export const classRemoval = z.object({
   reassignTo: id.nullable().optional(),
 });
 export const removal = z.object({ version });
-export const netClassInput = z.object({ netClass: netClassDoc });
+export const netClassInput = z.object({ netClass: sentNetClass });
 
 export const auditQuery = z.object({
   search: z.string().max(120).optional(),

@@ -1,6 +1,7 @@
 import { z } from "zod";
 import { version } from "./common";
 import { decimalText } from "./quantity";
+import { sensibleLimits } from "./sensible-limits";
 
 /** One rule's setting in a project; ids and units come from the catalogue in lib/si/rules. */
 export const ruleSetting = z.object({
@@ -17,4 +18,7 @@ export type RuleSetDoc = z.infer<typeof ruleSetDoc>;
 export interface StoredRuleSet extends RuleSetDoc {
   version: number;
 }
-export const ruleSetUpdate = z.object({ version, ruleSet: ruleSetDoc });
+export const ruleSetUpdate = z.object({
+  version,
+  ruleSet: ruleSetDoc.superRefine(({ rules }, ctx) => sensibleLimits(rules, ctx, "rules")),
+});

@@ -103,6 +103,21 @@ describe("two people and one thing", () => {
   });
 });
 
+describe("the layers of a class", () => {
+  it("are copper layers of the draft's stackup; any other is refused", async () => {
+    const { layers } = await getStackup(designer, draft);
+    const on = (layerLineageId = "") => [{ layerLineageId, width: null, gap: null }];
+    const copper = layers.find(({ kind }) => kind === "signal")?.lineageId;
+    const core = layers.find(({ kind }) => kind === "core")?.lineageId;
+    const made = await createNetClass(designer, projectId, aClass("Data", { layers: on(copper) }));
+    for (const wrong of [core, "0190a000-0000-7000-8000-000000000001"]) {
+      const doc = aClass("Other", { layers: on(wrong) });
+      await expect(createNetClass(designer, projectId, doc)).rejects.toThrow("no such copper layer");
+      await expect(putNetClass(designer, projectId, made.id, 0, doc)).rejects.toThrow("no such copper layer");
+    }
+  });
+});
+
 describe("undo and redo", () => {
   it("take a stackup back and bring it on again, the content to the letter", async () => {
     const before = (await getStackup(designer, draft)).layers;
