@@ -5,6 +5,7 @@ import { Button } from "@/components/ui/button";
 import { Dialog } from "@/components/ui/dialog";
 import { Select } from "@/components/ui/select";
 import { TextArea } from "@/components/ui/input";
+import { useDraftText } from "@/components/ui/use-draft-text";
 import type { NetFacts, ProblemFacts } from "./facts";
 import { Refusal } from "./refusal";
 import { useReview } from "./use-review";
@@ -18,7 +19,7 @@ interface Props {
 
 /** Marks a problem with a first comment and, if wanted, somebody to look after it. */
 export function FlagDialog({ facts, problem, onClose }: Props) {
-  const [comment, setComment] = useState("");
+  const [comment, setComment] = useDraftText(`new flag ${facts.path.id} ${problem?.mechanism ?? ""}`);
   const [assignee, setAssignee] = useState("");
   const review = useReview(facts.projectId);
   const send = () =>
@@ -32,7 +33,13 @@ export function FlagDialog({ facts, problem, onClose }: Props) {
         comment,
         assigneeUserId: assignee || null,
       },
-      { said: "Flagged.", then: onClose },
+      {
+        said: "Flagged.",
+        then: () => {
+          setComment("");
+          onClose();
+        },
+      },
     );
   return (
     <Dialog

@@ -1,10 +1,10 @@
 "use client";
 
-import { useState } from "react";
 import { Badge } from "@/components/ui/badge";
 import { Button } from "@/components/ui/button";
 import { TextArea } from "@/components/ui/input";
 import { Select } from "@/components/ui/select";
+import { useDraftText } from "@/components/ui/use-draft-text";
 import type { FlagFacts, NetFacts } from "./facts";
 import { Refusal } from "./refusal";
 import { useReview } from "./use-review";
@@ -17,7 +17,7 @@ interface Props {
 
 /** A flag with its discussion: comment, hand over, resolve. */
 export function FlagThread({ facts, flag }: Props) {
-  const [comment, setComment] = useState("");
+  const [comment, setComment] = useDraftText(`flag ${flag.id}`);
   const review = useReview(facts.projectId);
   const change = (body: Record<string, unknown>, said: string) =>
     void review.act("PATCH", `/flags/${flag.id}`, { version: flag.version, ...body }, { said });

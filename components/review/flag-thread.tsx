@@ -10,6 +10,7 @@ import { Notice } from "@/components/ui/notice";
 import { Select } from "@/components/ui/select";
 import { SidePanel } from "@/components/ui/side-panel";
 import { Skeleton } from "@/components/ui/skeleton";
+import { useDraftText } from "@/components/ui/use-draft-text";
 import { pathAddress } from "@/components/runs/path-address";
 import type { Rights } from "@/components/runs/rights";
 import { timeText } from "@/components/runs/run-words";
@@ -29,7 +30,7 @@ export function FlagThread({ projectId, runId, flagId, rights, onClose }: Props)
   const client = useQueryClient();
   const { data, error } = useQuery(flagQuery(projectId, flagId));
   const people = useQuery(assigneesQuery(projectId)).data ?? [];
-  const [comment, setComment] = useState("");
+  const [comment, setComment] = useDraftText(`flag ${flagId}`);
   const [refusal, setRefusal] = useState<string | null>(null);
   const [busy, setBusy] = useState(false);
   const flag = data?.flag;

@@ -5,6 +5,7 @@ import { useRouter } from "next/navigation";
 import { useState } from "react";
 import { Button } from "@/components/ui/button";
 import { Menu, MenuChoice, MenuItem, MenuSeparator } from "@/components/ui/menu";
+import { forgetDraftTexts } from "@/components/ui/use-draft-text";
 import { choosePreference } from "@/lib/client/own-preferences";
 import { parseTheme, type Theme } from "@/lib/client/preferences";
 import type { ShellUser } from "./types";
@@ -32,6 +33,7 @@ export function AccountMenu({ user, role }: { user: ShellUser; role: string | nu
     // Loaded when it is needed: few leave on the page that they opened.
     const { authClient } = await import("@/lib/client/auth");
     await authClient.signOut();
+    forgetDraftTexts();
     router.push("/");
     router.refresh();
   }

@@ -41,7 +41,8 @@ export function SidePanel({ title, onClose, children, footer, takeFocus = false,
   const ref = useRef<HTMLElement>(null);
   useEffect(() => {
     // Alone on a narrow screen it has hidden what had the focus.
-    if (takeFocus || window.matchMedia?.(BESIDE).matches === false) ref.current?.focus({ preventScroll: true });
+    if (takeFocus || window.matchMedia?.(BESIDE).matches === false)
+      ref.current?.focus({ preventScroll: true });
   }, [takeFocus]);
   return (
     <aside
