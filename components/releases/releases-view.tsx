@@ -9,7 +9,8 @@ import { Button } from "@/components/ui/button";
 import { EmptyState } from "@/components/ui/empty-state";
 import { PageHeader } from "@/components/ui/page-header";
 import { Skeleton } from "@/components/ui/skeleton";
-import { ApiError, apiGet, apiPost, errorMessage } from "@/lib/client/api";
+import { apiGet, apiPost, errorMessage } from "@/lib/client/api";
+import type { NoDraft, ReadinessView } from "@/lib/client/review";
 import type { ReleaseBlocker } from "@/lib/schemas/release";
 import { ReleaseForm } from "./release-form";
 
@@ -21,15 +22,6 @@ interface ReleaseEntry {
   releasedByName: string | null;
   recipients: number;
   acknowledged: number;
-}
-
-export interface ReadinessAnswer {
-  draft: { id: string; letter: string };
-  run: { id: string; number: number; state: string; counts: Record<string, number> | null } | null;
-  blockers: ReleaseBlocker[];
-  failing: number;
-  waived: number;
-  signature: { signerName: string | null; signedAt: number } | null;
 }
 
 interface Props {
@@ -47,8 +39,8 @@ export function ReleasesView({ projectId, mayRelease, mayDraft }: Props) {
   });
   const readiness = useQuery({
     queryKey: ["readiness", projectId],
-    queryFn: ({ signal }) => apiGet<ReadinessAnswer>(`/projects/${projectId}/readiness`, undefined, signal),
-    retry: (count, error) => !(error instanceof ApiError && error.status < 500) && count < 2,
+    queryFn: ({ signal }) =>
+      apiGet<ReadinessView | NoDraft>(`/projects/${projectId}/readiness`, undefined, signal),
   });
   return (
     <>
@@ -57,10 +49,12 @@ export function ReleasesView({ projectId, mayRelease, mayDraft }: Props) {
         description="A release freezes a revision with the run that allowed it, and sends its impedance-control note to the recipients it names."
       />
       <div className="flex flex-col gap-10">
-        {readiness.data ? (
+        {readiness.data?.draft === null ? (
+          <DraftMissing projectId={projectId} message={readiness.data.why} mayDraft={mayDraft} />
+        ) : readiness.data ? (
           <DraftSection projectId={projectId} readiness={readiness.data} mayRelease={mayRelease} />
         ) : readiness.error ? (
-          <NoDraft projectId={projectId} message={errorMessage(readiness.error)} mayDraft={mayDraft} />
+          <p role="alert">{errorMessage(readiness.error)}</p>
         ) : (
           <Skeleton className="h-40" />
         )}
@@ -85,7 +79,7 @@ function DraftSection({
   mayRelease,
 }: {
   projectId: string;
-  readiness: ReadinessAnswer;
+  readiness: ReadinessView;
   mayRelease: boolean;
 }) {
   const { draft, blockers, run } = readiness;
@@ -164,7 +158,7 @@ function wayOut(projectId: string, blocker: ReleaseBlocker, runId: string | null
   }
 }
 
-function NoDraft({
+function DraftMissing({
   projectId,
   message,
   mayDraft,

@@ -18,6 +18,7 @@ export function BlockerCount({ projectId }: { projectId: string }) {
     void client.refetchQueries({ queryKey: readinessQuery(projectId).queryKey, stale: true });
   }, [client, projectId, pathname]);
   // Its place is kept while it is on its way; where it cannot be read, the review page says why.
+  if (data?.draft === null) return null;
   if (!data) return <span className="block h-5 w-40" />;
   const count = data.blockers.length;
   const Icon = count === 0 ? CircleCheck : CircleAlert;

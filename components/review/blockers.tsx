@@ -27,6 +27,8 @@ export function Blockers({ projectId }: { projectId: string }) {
         </Notice>
       ) : !data ? (
         <Skeleton className="h-24" />
+      ) : data.draft === null ? (
+        <p className="text-sm">{data.why}</p>
       ) : data.blockers.length === 0 ? (
         <div className="flex flex-col items-start gap-3 text-sm">
           <p className="text-pass flex items-center gap-1.5">
@@ -46,7 +48,7 @@ export function Blockers({ projectId }: { projectId: string }) {
           ))}
         </ol>
       )}
-      {data && data.waived > 0 ? (
+      {data?.draft && data.waived > 0 ? (
         <p className="text-waived mt-2 text-xs">
           {data.waived} failing {data.waived === 1 ? "problem is" : "problems are"} waived.
         </p>

@@ -74,6 +74,12 @@ export interface ReadinessView {
   signature: { signerName: string | null; signedAt: number } | null;
 }
 
+/** There is no draft to be released, and why. */
+export interface NoDraft {
+  draft: null;
+  why: string;
+}
+
 export interface Assignee {
   userId: string;
   name: string;
@@ -138,7 +144,8 @@ export const editorsQuery = (projectId: string, letter: string) =>
 export const readinessQuery = (projectId: string) =>
   queryOptions({
     queryKey: [...reviewKey(projectId), "readiness"],
-    queryFn: ({ signal }) => apiGet<ReadinessView>(`/projects/${projectId}/readiness`, undefined, signal),
+    queryFn: ({ signal }) =>
+      apiGet<ReadinessView | NoDraft>(`/projects/${projectId}/readiness`, undefined, signal),
   });
 
 export const assigneesQuery = (projectId: string) =>

@@ -3,6 +3,7 @@ import * as classRoutes from "@/app/api/v1/projects/[projectId]/classes/[classId
 import * as classesRoutes from "@/app/api/v1/projects/[projectId]/classes/route";
 import * as netsRoutes from "@/app/api/v1/projects/[projectId]/nets/route";
 import * as overviewRoutes from "@/app/api/v1/projects/[projectId]/overview/route";
+import * as readinessRoutes from "@/app/api/v1/projects/[projectId]/readiness/route";
 import * as projectRoutes from "@/app/api/v1/projects/[projectId]/route";
 import * as stackupRoutes from "@/app/api/v1/projects/[projectId]/stackup/route";
 import * as undoRoutes from "@/app/api/v1/projects/[projectId]/undo/route";
@@ -176,6 +177,11 @@ describe("the API of a project", () => {
     expect((await call(projectRoutes.GET, designer, "GET", here())).status).toBe(200);
     const refused = await call(classesRoutes.POST, designer, "POST", here(), { netClass: aClass("Late") });
     expect(refused).toMatchObject({ status: 422, body: { error: { code: "archived" } } });
+    // That there is no draft is a state, not a fault: the bar above every page asks.
+    expect(await call(readinessRoutes.GET, designer, "GET", here())).toMatchObject({
+      status: 200,
+      body: { draft: null, why: expect.stringContaining("is archived") as string },
+    });
     const list = await call(projectsRoutes.GET, designer, "GET", {}, undefined, "?archived=true");
     expect(list.body).toMatchObject({ projects: [{ id: project.id }] });
   });
