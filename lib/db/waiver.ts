@@ -255,33 +255,25 @@ export async function acceptNoData(
         : `"${twice}" is accepted already. Read the list anew.`,
       "accepted",
     );
-  const ids = asked.map(() => newId());
   const at = now();
-  await commitAudited(
-    actor,
-    [
-      db.insert(noDataAcceptance).values(
-        asked.map((missing, index) => ({
-          id: ids[index],
-          teamId: actor.teamId,
-          projectId,
-          revisionId: row.revisionId,
-          missing,
-          reason: input.reason,
-          createdBy: actor.userId,
-          createdAt: at,
-        })),
-      ),
-    ],
-    {
-      action: "no-data.accept",
-      subjectKind: "run",
-      subjectId: row.id,
-      projectId,
-      detail: { missing: listed(asked), reason: input.reason },
-    },
-  );
-  return ids;
+  const rows = asked.map((missing) => ({
+    id: newId(),
+    teamId: actor.teamId,
+    projectId,
+    revisionId: row.revisionId,
+    missing,
+    reason: input.reason,
+    createdBy: actor.userId,
+    createdAt: at,
+  }));
+  await commitAudited(actor, [db.insert(noDataAcceptance).values(rows)], {
+    action: "no-data.accept",
+    subjectKind: "run",
+    subjectId: row.id,
+    projectId,
+    detail: { missing: listed(asked), reason: input.reason },
+  });
+  return rows.map(({ id }) => id);
 }
 
 /** What the audit log names of many; each stands in the list of what was accepted. */
