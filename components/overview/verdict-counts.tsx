@@ -15,7 +15,8 @@ interface Props {
 
 /** The paths of the newest finished run by verdict, and whether it still speaks of the revision as it is. */
 export function VerdictCounts({ run, waived, base }: Props) {
-  const judged = ORDER.reduce((sum, verdict) => sum + (run.counts?.[verdict] ?? 0), 0);
+  const paths = ORDER.reduce((sum, verdict) => sum + (run.counts?.[verdict] ?? 0), 0);
+  const judged = paths - (run.counts?.["no data"] ?? 0);
   return (
     <section aria-labelledby="verdicts">
       <h2 id="verdicts" className="mb-2 text-lg font-semibold">
@@ -25,7 +26,8 @@ export function VerdictCounts({ run, waived, base }: Props) {
         <Link href={`${base}/runs/${run.id}` as Route} className="text-violet underline underline-offset-2">
           Run {run.number}
         </Link>{" "}
-        judged {judged.toLocaleString("en")} signal {judged === 1 ? "path" : "paths"}
+        judged {judged === paths ? "" : `${judged.toLocaleString("en")} of `}
+        {paths.toLocaleString("en")} signal {paths === 1 ? "path" : "paths"}
         {run.finishedAt ? (
           <>
             , <TimeText at={run.finishedAt} />

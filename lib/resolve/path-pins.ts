@@ -100,10 +100,12 @@ function askWhoDrives(
   const references = [...new Set(unsaid.map(({ reference }) => reference))].sort(byName);
   const listed = references.length > 6 ? [...references.slice(0, 6), "others"] : references;
   if (listed.length === 0) {
-    const pins = result.receivers.map((pin) => pin.pin).join(", ");
+    const pins = result.receivers.map((pin) => pin.pin);
     ask(
       "a driving pin",
-      pins ? `${pins} only receives.` : "No pin that drives or receives is on this route.",
+      pins.length > 0
+        ? `${pins.join(", ")} only ${pins.length === 1 ? "receives" : "receive"}. Say which pin drives, or put the net out of scope.`
+        : "No pin that drives or receives is on this route. Import its pins, or put the net out of scope.",
     );
   } else ask(`which of ${listed.join(", ")} drives`, "No role or binding says which pin drives.");
 }

@@ -9,7 +9,9 @@ const resinText = decimalText.refine(
   (t) => Number(t) > 0 && Number(t) <= 100,
   "Resin is above 0 and at most 100 %.",
 );
-const dkText = decimalText.refine((t) => Number(t) >= 1 && Number(t) <= 100, "Dk is at least 1 (air).");
+const dkText = decimalText
+  .refine((t) => Number(t) >= 1, "Dk is at least 1 (air).")
+  .refine((t) => Number(t) <= 100, "Dk is at most 100. Check the number.");
 const dfText = decimalText.refine((t) => Number(t) >= 0 && Number(t) < 1, "Df is between 0 and 1.");
 
 /** Where a material's values come from, as a layer and a team's entry carry it. */

@@ -9,7 +9,9 @@ export const layerKind = z.enum(layerKinds);
 export type LayerKind = z.infer<typeof layerKind>;
 
 const percentText = decimalText.refine((t) => Number(t) >= 0 && Number(t) <= 100, "Write 0 to 100 %.");
-const dkText = decimalText.refine((t) => Number(t) >= 1 && Number(t) <= 100, "Dk is at least 1 (air).");
+const dkText = decimalText
+  .refine((t) => Number(t) >= 1, "Dk is at least 1 (air).")
+  .refine((t) => Number(t) <= 100, "Dk is at most 100. Check the number.");
 const dfText = decimalText.refine((t) => Number(t) >= 0 && Number(t) < 1, "Df is between 0 and 1.");
 
 /** One ply of a prepreg opening: glass style by IPC-4412 number, as delivered thickness, how many. */

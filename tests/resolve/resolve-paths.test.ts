@@ -133,6 +133,14 @@ describe("pins", () => {
 });
 
 describe("what is missing is named by the input that would fill it", () => {
+  it("and says the way out where pins only receive, in the right number", () => {
+    const bindings = { bindings: [binding("U1", "receiver", "IN"), binding("U2", "receiver", "IN")] };
+    const path = only([routed("D0", ["U1.1 U2.1 40"])], bindings);
+    expect(path.missing.find(({ input }) => input === "a driving pin")?.detail).toBe(
+      "U1.1, U2.1 only receive. Say which pin drives, or put the net out of scope.",
+    );
+  });
+
   const net = [routed("D0", ["U1.1 U7.1 40"])];
   const inputs: [string, RevisionInputs["nets"], Partial<RevisionInputs>, string][] = [
     ["no roles", net, { bindings: [] }, "which of U1, U7 drives"],

@@ -45,7 +45,7 @@ function floatingReceiver(path: ResolvedPath, pin: PathPin): Unsimulated | null 
   for (const receiver of path.receivers) {
     if (receiver.node === pin.node || !Number.isNaN(coupledBias(path, pin.node, receiver.node, slowest) ?? 0))
       continue;
-    const detail = `A capacitor blocks the DC level of ${receiver.pin}, and no resistor to a rail sets it.`;
+    const detail = `A capacitor blocks the DC level of ${receiver.pin}, and no resistor to a rail sets it. Import the resistor that does, or have a reviewer accept that it stays unknown.`;
     return { input: `bias of ${receiver.net}`, detail };
   }
   return null;

@@ -1,7 +1,7 @@
 import { mainSection, PathTrace, type Route } from "../path/trace";
 import type { PathPart, PathPin, ResolvedPath } from "../path/types";
 import { pathLimit, type Missing, type StaticReading, type StaticRule } from "./rule";
-import { ohms, picoseconds } from "./words";
+import { ohms, picoseconds, withArticle } from "./words";
 import { PULL } from "./pulls";
 import type { RuleDefinition } from "./types";
 
@@ -103,7 +103,7 @@ function judgeSeries(path: ResolvedPath, pin: PathPin, route: Route, index: numb
     restsOnAssumed: pin.driver.assumed,
     cause: () =>
       wanted > 0
-        ? `${name} with the ${ohms(pin.driver?.resistance.typical ?? 0)} driver stands before a ${ohms(line)} line; ${ohms(wanted)} would match it.`
+        ? `${name} with the ${ohms(pin.driver?.resistance.typical ?? 0)} driver stands before ${withArticle(ohms(line))} line; ${ohms(wanted)} would match it.`
         : `The driver's ${ohms(pin.driver?.resistance.typical ?? 0)} is already above the ${ohms(line)} line${part ? `, and ${name} adds to it` : ""}.`,
   };
 }
@@ -153,6 +153,6 @@ function judgeEnd(path: ResolvedPath, route: Route, end: EndResistance): StaticR
     mechanism: "end mismatch",
     restsOnAssumed: false,
     cause: () =>
-      `${names} ends a ${ohms(line)} line with ${ohms(end.value)}${route.delay === null ? "" : ` after ${picoseconds(route.delay)}`}.`,
+      `${names} ends ${withArticle(ohms(line))} line with ${ohms(end.value)}${route.delay === null ? "" : ` after ${picoseconds(route.delay)}`}.`,
   };
 }

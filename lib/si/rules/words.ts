@@ -20,6 +20,11 @@ export const picofarads = (value: number) => `${number(1e12 * value, 2)} pF`;
 export const millimetres = (value: number) => `${number(1e3 * value, 3)} mm`;
 export const percent = (value: number) => `${number(value, 3)} %`;
 
+/** "a 50 Ω", "an 80 Ω", "an 18 ns", "a 180 Ω": by how the number is spoken. */
+export function withArticle(quantity: string): string {
+  return `${/^(?:8|1[18](?!\d))/.test(quantity) ? "an" : "a"} ${quantity}`;
+}
+
 function signed(text: string): string {
   return Number(text) === 0 ? text.replace("-", "") : text.replace("-", "−");
 }

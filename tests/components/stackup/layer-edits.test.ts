@@ -83,6 +83,7 @@ describe("texts of a layer's fields", () => {
       "'12..7' is not a length. Write 12.7 mm or 500 mil.",
     );
     expect(() => readLayerField("dk", "0.5", "mm")).toThrow("Dk is at least 1 (air).");
+    expect(() => readLayerField("dk", "1e3", "mm")).toThrow("Dk is at most 100.");
     expect(() => readLayerField("dk", "four", "mm")).toThrow(
       "'four' is not a number. Write one such as 4.2.",
     );

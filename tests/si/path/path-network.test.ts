@@ -173,6 +173,7 @@ describe("a path as a network", () => {
       parts: [{ reference: "C1", kind: "C", a: "C1.1", b: "C1.2", value: 1e-6, role: "series" }],
     });
     expect(cannotSimulate(base)?.input).toBe("bias of NET");
+    expect(cannotSimulate(base)?.detail).toContain("Import the resistor that does");
     const biased: ResolvedPath = {
       ...base,
       parts: [

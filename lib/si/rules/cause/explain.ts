@@ -8,6 +8,7 @@ import {
   picoseconds,
   reflection,
   volts,
+  withArticle,
 } from "../words";
 import { anatomy, type Anatomy } from "./anatomy";
 import { bounceMechanism, isStaticLevel } from "./mechanism";
@@ -42,9 +43,10 @@ function reflector(mechanism: string, found: Anatomy, seen: Observation): string
     return `At ${node} the ${ohms(line)} line splits into ${arms}, together ${ohms(seenOhms)}, and reflects ${reflection(rho)}`;
   }
   if (mechanism === "capacitive load")
-    return `The receivers' ${picofarads(found.load.farads)} on a ${ohms(found.line)} line takes ${picoseconds((found.line * found.load.farads) / 2)} to charge against a ${picoseconds(seen.driver.riseTime[seen.corner.driver])} edge`;
+    return `The receivers' ${picofarads(found.load.farads)} on ${withArticle(ohms(found.line))} line takes ${picoseconds((found.line * found.load.farads) / 2)} to charge against ${withArticle(picoseconds(seen.driver.riseTime[seen.corner.driver]))} edge`;
+  const one = found.end?.references.length === 1;
   if (mechanism === "end mismatch" && found.end)
-    return `${found.end.references.join(" and ")} ends a ${ohms(found.line)} line with ${ohms(found.end.ohms)} and reflects ${reflection(found.rhoEnd)}`;
+    return `${found.end.references.join(" and ")} ${one ? "ends" : "end"} ${withArticle(ohms(found.line))} line with ${ohms(found.end.ohms)} and ${one ? "reflects" : "reflect"} ${reflection(found.rhoEnd)}`;
   const parts = found.seriesParts.map((part) => `${part.reference}'s ${ohms(part.ohms)}`).join(" and ");
   const source = parts
     ? `The driver's ${ohms(found.driverOhms)} and ${parts} make ${ohms(found.source)}`
@@ -52,7 +54,7 @@ function reflector(mechanism: string, found: Anatomy, seen: Observation): string
   const end = found.end
     ? `the ${ohms(found.end.ohms)} end at ${seen.receiverPin.pin} returns ${reflection(found.rhoEnd)} of it`
     : `the open end at ${seen.receiverPin.pin} returns all of it`;
-  return `${source} on a ${ohms(found.line)} line and ${parts ? "reflect" : "reflects"} ${reflection(found.rhoSource)}; ${end}`;
+  return `${source} on ${withArticle(ohms(found.line))} line and ${parts ? "reflect" : "reflects"} ${reflection(found.rhoSource)}; ${end}`;
 }
 
 function consequence(rule: string, seen: Observation): string {
@@ -82,7 +84,7 @@ function consequence(rule: string, seen: Observation): string {
   }
   if (seen.settled === null)
     return `${pin} is still ringing when ${seen.windowIsBit ? "the next edge comes" : "it is no longer watched"}, ${nanoseconds(seen.window)} after the edge`;
-  const bit = seen.path.bitTime === null ? "" : ` of a ${nanoseconds(seen.path.bitTime)} bit`;
+  const bit = seen.path.bitTime === null ? "" : ` of ${withArticle(nanoseconds(seen.path.bitTime))} bit`;
   return `${pin} stays within 10 % of its level only after ${nanoseconds(seen.settled)}${bit}`;
 }
 
