@@ -1,6 +1,6 @@
 import { bestClosedForm, type CrossSection } from "../cross-section";
 import { DomainError, EngineError } from "../errors";
-import { neighbourSolver } from "../field";
+import { solveCrossSection } from "../field";
 import { dimensionForTarget, type DimensionRequest } from "./dimension-for-target";
 import { impedanceOf, type ImpedanceTarget } from "./impedance-of";
 
@@ -10,15 +10,18 @@ export interface FieldDimensionRequest extends Omit<DimensionRequest, "impedance
   accuracy?: "live" | "standard" | "reference";
 }
 
-/** Relative impedance error at which the search ends: well below that of the solution. */
-const TOLERANCE = { live: 1e-4, standard: 1e-5, reference: 1e-7 };
+/** Relative impedance error at which the search ends, and with which it makes do after many rounds. */
+const TOLERANCE = 1e-6;
+const LOOSE = 1e-5;
+/** meshes differ from width to width: a slope is measured only over more than this [ln x] */
+const LEAST_STRETCH = 0.01;
 const LONGEST_SEARCH = 8;
 /** d ln Z / d ln x where no closed form tells it: of a width, and of a gap */
 const SLOPE = { width: -0.45, gap: 0.15 };
 
 /**
  * The dimension at which a field solution meets its target: from the closed form's answer by secants in
- * (ln x, ln Z), all on one mesh topology, so that the impedance is a smooth function of x. Three or four solves.
+ * (ln x, ln Z), three or four solves. The impedance told is what a field solution gives at that dimension.
  *
  * @returns dimension [m], impedance there [Ω], number of field solves
  * @throws as dimensionForTarget
@@ -30,10 +33,9 @@ export function fieldDimension(request: FieldDimensionRequest): {
 } {
   const { sectionAt, kind, accuracy, ohms, min, max, grid } = request;
   let solves = 0;
-  const solve = neighbourSolver({ accuracy });
   const impedanceAt = (x: number) => {
     solves += 1;
-    return impedanceOf(solve(sectionAt(x)), kind);
+    return impedanceOf(solveCrossSection(sectionAt(x), { accuracy }), kind);
   };
   const root = secant(request, impedanceAt);
   if (root !== null) {
@@ -49,11 +51,8 @@ export function fieldDimension(request: FieldDimensionRequest): {
   const found = dimensionForTarget({
     ...request,
     ohms,
-    tolerance: TOLERANCE[accuracy ?? "standard"],
-    impedanceAt: (x) => {
-      solves += 1;
-      return impedanceOf(neighbourSolver({ accuracy })(sectionAt(x)), kind);
-    },
+    tolerance: TOLERANCE,
+    impedanceAt,
   });
   return { ...found, solves };
 }
@@ -80,8 +79,8 @@ function secant(
       throw error;
     }
     const miss = Math.log(z / ohms);
-    if (Math.abs(miss) <= TOLERANCE[request.accuracy ?? "standard"]) return { value: x, impedance: z };
-    if (round > 0) {
+    if (Math.abs(miss) <= (round < 5 ? TOLERANCE : LOOSE)) return { value: x, impedance: z };
+    if (round > 0 && Math.abs(Math.log(x / lastX)) > LEAST_STRETCH) {
       const measured = Math.log(z / lastZ) / Math.log(x / lastX);
       if (measured * slope > 0) slope = measured;
     }

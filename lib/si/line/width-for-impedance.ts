@@ -32,7 +32,7 @@ export interface WidthResult {
  * Width (of the bottom face) or spacing at which a line meets its target, by the closed form that fits or by the field.
  * The side slope, the spacing between edges (when the width varies) and the coplanar slot stay; a pair stays centred.
  *
- * @returns value [m] with impedance [Ω]; without a grid the impedance is the target, to 1e-10 (closed form) or a tenth of the accuracy (field)
+ * @returns value [m] with impedance [Ω]; without a grid the impedance is the target, to 1e-10 (closed form) or 1e-6 (field)
  * @throws DomainError for illegal input, UnreachableTargetError with the reachable range, UnsupportedError where a closed
  *   form is asked for and none fits
  */
