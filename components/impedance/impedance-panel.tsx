@@ -1,6 +1,6 @@
 "use client";
 
-import { type KeyboardEvent, useId } from "react";
+import { type KeyboardEvent, useEffect, useId } from "react";
 import { Button } from "@/components/ui/button";
 import { SidePanel } from "@/components/ui/side-panel";
 import type { Engine } from "@/lib/client/engine";
@@ -64,6 +64,11 @@ export function ImpedancePanel(props: Props) {
     ([key, value]) => value !== null && key !== "width" && key !== "gap",
   );
   const note = useId();
+  // On a narrow screen it takes the table's place, which may have been scrolled far down.
+  useEffect(() => {
+    if (typeof matchMedia === "function" && !matchMedia("(min-width: 64rem)").matches)
+      window.scrollTo({ top: 0 });
+  }, []);
 
   return (
     <div className="contents" onKeyDown={(event) => trialKeys(event, trial.undo, trial.redo)}>
