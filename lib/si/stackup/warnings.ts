@@ -1,4 +1,5 @@
 import { DomainError } from "../errors";
+import { formatSi } from "../units";
 import { isCopper, isDielectric, isSignal, type Stackup, type StackLayer } from "./model";
 import { builtThickness, finishedCopper } from "./thickness";
 
@@ -14,6 +15,7 @@ export interface StackupWarning {
     | "cores unbonded"
     | "missing input"
     | "illegal input"
+    | "implausible thickness"
     | "mask inside"
     | "mask covers copper";
   /** error: impedance cannot be computed; warning: unusual or harmful; info: worth knowing */
@@ -26,6 +28,13 @@ export interface StackupWarning {
 /** Mirrored layers may differ by this share of thickness, and mirrored coverages by these points, without notice. */
 const THICKNESS_SHARE = 0.02;
 const COVERAGE_POINTS = 0.25;
+
+/** Beyond these a typed unit is the likelier error [m]; common practice, no source. */
+const PLAUSIBLE = {
+  copper: { least: 3e-6, most: 0.5e-3 },
+  dielectric: { least: 10e-6, most: 4e-3 },
+  mask: { least: 3e-6, most: 0.2e-3 },
+} as const;
 
 /** What is wrong, missing or unusual in a stackup; empty for a sound one. Never throws. */
 export function stackupWarnings(stackup: Stackup): StackupWarning[] {
@@ -46,6 +55,7 @@ function inputWarnings(stackup: Stackup): StackupWarning[] {
       const code = thickness.message.includes("has no") ? "missing input" : "illegal input";
       found.push({ code, severity: "error", layer: index, message: thickness.message });
     }
+    if (typeof thickness === "number") found.push(...plausibility(layer, index, thickness));
     if (isCopper(layer)) return;
     if (layer.dk === null) {
       found.push({
@@ -60,6 +70,29 @@ function inputWarnings(stackup: Stackup): StackupWarning[] {
     }
   });
   return found;
+}
+
+function plausibility(layer: StackLayer, index: number, thickness: number): StackupWarning[] {
+  const kind = isCopper(layer) ? "copper" : layer.kind === "mask" ? "mask" : "dielectric";
+  const { least, most } = PLAUSIBLE[kind];
+  if (thickness >= least && thickness <= most) return [];
+  // what the number would be in the other units, where that is plausible
+  const read = [
+    { unit: "µm", factor: 1e-6 },
+    { unit: "mil", factor: 25.4e-6 },
+    { unit: "mm", factor: 1e-3 },
+  ];
+  const number = (factor: number) => Number((thickness / factor).toPrecision(6));
+  const likely = read.flatMap(({ unit, factor: typed }) =>
+    read.flatMap(({ unit: meant, factor }) => {
+      const value = number(typed) * factor;
+      const round = number(typed) <= 1000 && number(typed) >= 0.001;
+      return meant !== unit && round && value >= least && value <= most ? [`${number(typed)} ${meant}`] : [];
+    }),
+  );
+  const hint = likely.length > 0 ? ` Was ${[...new Set(likely)].slice(0, 2).join(" or ")} meant?` : "";
+  const message = `${layer.name} is ${formatSi(thickness, "length", { unit: "mm", digits: 3 })} thick, which hardly any ${kind === "mask" ? "solder mask" : kind} is.${hint}`;
+  return [{ code: "implausible thickness", severity: "warning", layer: index, message }];
 }
 
 function planeWarnings(stackup: Stackup): StackupWarning[] {

@@ -22,6 +22,19 @@ describe("stackupWarnings", () => {
     ]);
   });
 
+  it("doubts a prepreg of 200 mm and a mask of 25 mm, and names the unit that was likely meant", () => {
+    const thick = (pick: (layer: StackLayer) => boolean, thickness: number) =>
+      stackupWarnings(
+        spoilt((layers) => {
+          const layer = layers.find(pick);
+          if (layer) Object.assign(layer, { thickness, thicknessMode: "typed" });
+        }),
+      ).find(({ code }) => code === "implausible thickness")?.message;
+    expect(thick((layer) => layer.kind === "prepreg", 0.2)).toMatch(/is 200 mm thick.* Was 200 µm meant\?/);
+    expect(thick((layer) => layer.kind === "mask", 25e-3)).toMatch(/25\.0 mm thick.* Was 25 µm meant\?/);
+    expect(thick((layer) => layer.kind === "core", 0.4e-3)).toBeUndefined();
+  });
+
   it.each<[string, Stackup]>([
     ["no plane", { layers: [signal("L1"), core("C", 1500), signal("L2")] }],
     [
