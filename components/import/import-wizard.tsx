@@ -14,8 +14,10 @@ import {
   remapImport,
   uploadList,
 } from "@/lib/client/imports";
+import { useBoardFile } from "@/lib/client/board-file";
 import { netsKey } from "@/lib/client/nets";
 import type { ImportMode, ListMapping } from "@/lib/schemas/import-list";
+import { BoardFilePanel } from "./board-file";
 import { ChooseList } from "./choose-list";
 import { ConfirmList } from "./confirm-list";
 import { ImportOutcome } from "./import-outcome";
@@ -30,6 +32,8 @@ import { problemsAddress } from "@/lib/client/imports";
 export function ImportWizard({ projectId }: { projectId: string }) {
   const client = useQueryClient();
   const [importId, setImportId] = useQueryState("list", parseAsString.withOptions({ history: "push" }));
+  // Kept while its lists are looked at one after the other.
+  const board = useBoardFile();
   const keep = (answer: ImportAnswer) =>
     client.setQueryData(importQuery(projectId, answer.import.id).queryKey, answer);
 
@@ -51,6 +55,7 @@ export function ImportWizard({ projectId }: { projectId: string }) {
           error={upload.error ? errorMessage(upload.error) : null}
           onList={(list) => upload.mutate(list)}
         />
+        <BoardFilePanel board={board} busy={upload.isPending} onList={(list) => upload.mutate(list)} />
         <LatestImports projectId={projectId} onOpen={(id) => void setImportId(id)} />
       </div>
     );

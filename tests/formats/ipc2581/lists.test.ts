@@ -1,6 +1,7 @@
 import { describe, expect, it } from "vitest";
 import { decodeText } from "@/lib/formats/delimited/decode";
 import { readTable } from "@/lib/formats/delimited/table";
+import { contentsOf, neighbourRowsOf } from "@/lib/formats/ipc2581/contents";
 import { findNeighbours } from "@/lib/formats/ipc2581/neighbours";
 import { readBoard } from "@/lib/formats/ipc2581/read";
 import { neighbourListOf, partsListOf, sectionListOf } from "@/lib/formats/ipc2581/to-lists";
@@ -121,4 +122,38 @@ describe("neighbours", () => {
   function readListOf(rows: ReturnType<typeof findNeighbours>["rows"]) {
     return readList(neighbourListOf(rows, "mm"), "neighbour list");
   }
+});
+
+describe("contents", () => {
+  it("count what the file holds and carry its lists", async () => {
+    const board = await readBoard(
+      stream(
+        boardXml({
+          step:
+            feature(
+              "TOP",
+              pad("A", 0, 0, "U1.1") + line("A", ["0,0", "9,0"]) + line("B", ["0,0.4", "9,0.4"]),
+            ) + feature("DRILL", via("A", 9, 0) + via("C", 3, 3)),
+        }),
+      ),
+    );
+    const contents = contentsOf(board);
+    expect(contents.counts).toEqual({
+      nets: 3,
+      routed: 2,
+      sections: 2,
+      parts: 0,
+      pins: 1,
+      holes: 2,
+      vias: 2,
+    });
+    expect(contents.layers.map(({ name, plane, sections }) => [name, plane, sections])).toEqual([
+      ["TOP", false, 2],
+      ["GND", true, 0],
+      ["IN2", false, 0],
+      ["BOTTOM", false, 0],
+    ]);
+    expect(contents.sectionList.rows).toBe(2);
+    expect(neighbourRowsOf(board, 0.5e-3)).toMatchObject({ rows: 1, touching: [] });
+  });
 });
