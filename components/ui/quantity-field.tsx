@@ -98,9 +98,13 @@ export function QuantityField(props: Props) {
         // Ctrl+Z is the text's own while it is being typed.
         data-typing={text !== null && text !== (value ? formatQuantity(value) : "") ? "" : undefined}
         onFocus={(event) => {
-          if (text === null && !props.readOnly) setText(value ? formatQuantity(value) : "");
+          const entered = value ? formatQuantity(value) : "";
+          if (text === null && !props.readOnly) setText(entered);
           const input = event.currentTarget;
-          requestAnimationFrame(() => input.select());
+          // Whoever types before the frame is drawn must not lose what they typed.
+          requestAnimationFrame(() => {
+            if (input.value === entered) input.select();
+          });
         }}
         onChange={(event) => setText(event.target.value)}
         onBlur={() => {
