@@ -31,7 +31,7 @@ export function MembersTable({ members, userId, mayManage }: Props) {
 
   return (
     <div
-      className="scroll-hint border-rule-line overflow-x-auto border-y"
+      className="scroll-hint border-rule-line relative overflow-x-auto border-y"
       tabIndex={0}
       role="region"
       aria-label="Members, scrolls sideways"
