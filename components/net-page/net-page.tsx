@@ -69,7 +69,7 @@ export function NetPage({ facts, mayEdit, engine = pageEngine() }: Props) {
   });
   const result = (trying ? pictures.after : null) ?? facts.result;
   const view = viewOf(asked, result, drivers, listening);
-  const receivers = listening.filter((pin) => pin !== view.driver);
+  const receivers = useMemo(() => listening.filter((pin) => pin !== view.driver), [listening, view.driver]);
   const { control, harmTime } = useCursor(pictures.picture, view, asked.t, look);
 
   useCursorKeys(control);
@@ -94,8 +94,7 @@ export function NetPage({ facts, mayEdit, engine = pageEngine() }: Props) {
         pinVerdicts(result.findings, receivers),
         parseCorner(view.corner),
       ),
-    // eslint-disable-next-line react-hooks/exhaustive-deps -- the receivers follow from path and driver
-    [changed, view.driver, view.corner, result],
+    [changed, view.driver, view.corner, result, receivers],
   );
   const rule = rules.find((entry) => entry.id === view.finding?.rule) ?? null;
   const corners = useMemo(() => cornerVerdicts(result, rule?.id ?? null), [result, rule]);

@@ -49,11 +49,9 @@ export function ProblemsWork({ projectId, runId, rights }: Props) {
   const searchRef = useRef<HTMLInputElement>(null);
   const work = useWork(projectId, runId);
 
-  const filterKey = JSON.stringify(filter);
   const left = useMemo(
     () => filterProblems(rows ?? [], filter, rights.userId),
-    // eslint-disable-next-line react-hooks/exhaustive-deps -- the filter is made anew each time; its text says whether it changed
-    [rows, filterKey, rights.userId],
+    [rows, filter, rights.userId],
   );
   const groups = useMemo(() => groupProblems(left, params.group), [left, params.group]);
   const shown = useMemo(

@@ -1,6 +1,7 @@
 "use client";
 
 import { parseAsBoolean, parseAsString, parseAsStringLiteral, useQueryStates } from "nuqs";
+import { useMemo } from "react";
 import { GROUPINGS } from "./problem-groups";
 
 const YES_NO = ["yes", "no"] as const;
@@ -28,18 +29,22 @@ export const problemParams = {
 
 export function useProblemParams() {
   const [params, setParams] = useQueryStates(problemParams, { history: "replace" });
-  const filter = {
-    verdict: params.verdict,
-    className: params.class,
-    rule: params.rule,
-    severity: params.severity,
-    waived: params.waived,
-    flagged: params.flagged,
-    mine: params.mine,
-    nominal: params.nominal,
-    missing: params.missing,
-    text: params.q,
-  };
+  const {
+    verdict,
+    class: className,
+    rule,
+    severity,
+    waived,
+    flagged,
+    mine,
+    nominal,
+    missing,
+    q: text,
+  } = params;
+  const filter = useMemo(
+    () => ({ verdict, className, rule, severity, waived, flagged, mine, nominal, missing, text }),
+    [verdict, className, rule, severity, waived, flagged, mine, nominal, missing, text],
+  );
   return { params, setParams, filter };
 }
 

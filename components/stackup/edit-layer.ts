@@ -28,7 +28,7 @@ export function toEdit(
 }
 
 /** The document that is sent. */
-export function toDoc({ name, process, layers }: EditStackup): StackupDoc {
+export function documentOf({ name, process, layers }: EditStackup): StackupDoc {
   return { name, ...(process ? { process } : {}), layers: layers.map(({ key: _own, ...layer }) => layer) };
 }
 

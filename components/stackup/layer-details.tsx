@@ -5,7 +5,7 @@ import { type Origin, origins } from "@/lib/schemas/common";
 import type { StackupLayerDoc } from "@/lib/schemas/stackup";
 import { builtThicknessExact, isCopper } from "@/lib/si/stackup";
 import { copperFoils, dielectricFamilies } from "@/lib/si/materials";
-import { type EditLayer, toDoc } from "./edit-layer";
+import { type EditLayer, documentOf } from "./edit-layer";
 import { columnLength } from "./layer-field-text";
 import { LayerText } from "./layer-text";
 import { MaterialMenu } from "./material-menu";
@@ -164,7 +164,7 @@ function DielectricFields({ editor, layer, onChange }: PartProps) {
 /** The thickness as built, exact. */
 function Finished({ editor, layer }: { editor: StackupEditor; layer: EditLayer }) {
   const { reader } = useStackupUnits();
-  const { layers } = toDoc(editor.stackup);
+  const { layers } = documentOf(editor.stackup);
   const built = builtThicknessExact(layers, editor.stackup.layers.indexOf(layer), reader);
   if (!built)
     return (

@@ -6,7 +6,7 @@ import { fractionDigits, NumberText } from "@/components/ui/number-text";
 import { VerdictShape } from "@/components/ui/verdict-mark";
 import type { LayerKind } from "@/lib/schemas/stackup";
 import { builtThicknessExact, isCopper } from "@/lib/si/stackup";
-import { type EditLayer, toDoc } from "./edit-layer";
+import { type EditLayer, documentOf } from "./edit-layer";
 import { moveLayer, withKind } from "./layer-edits";
 import { LayerText } from "./layer-text";
 import { KindSelect } from "./kind-select";
@@ -33,7 +33,7 @@ export function LayerTable({ editor, warnings, pointed, onPoint, onMoved, onRemo
   const { readOnly } = useStackupFields();
   const { reader } = useStackupUnits();
   const built = useMemo(() => {
-    const { layers: docs } = toDoc(editor.stackup);
+    const { layers: docs } = documentOf(editor.stackup);
     return docs.map((_, index) => {
       const exact = builtThicknessExact(docs, index, reader);
       return exact && columnLength(exact, reader);

@@ -1,11 +1,11 @@
 import type { SectionLayer } from "@/lib/drawings/stackup-layer";
 import { builtThicknessExact, stackupFromTyped } from "@/lib/si/stackup";
 import { toSi } from "@/lib/si/units";
-import { type EditStackup, toDoc } from "./edit-layer";
+import { type EditStackup, documentOf } from "./edit-layer";
 
 /** The layers for the cross-section drawing; a thickness whose inputs are missing, or not above zero, is null. */
 export function sectionLayers(stackup: EditStackup): SectionLayer[] {
-  const { layers } = toDoc(stackup);
+  const { layers } = documentOf(stackup);
   const inSi = stackupFromTyped(layers).layers;
   return stackup.layers.map((layer, index) => {
     const built = builtThicknessExact(layers, index, "m");

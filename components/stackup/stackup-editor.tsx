@@ -14,7 +14,7 @@ import type { LengthUnit } from "@/lib/client/preferences";
 import { writeStackupList } from "@/lib/formats/stackup-list/write";
 import type { StackupLayerDoc, StoredStackup } from "@/lib/schemas/stackup";
 import { stackupFromTyped, stackupWarnings } from "@/lib/si/stackup";
-import { toDoc } from "./edit-layer";
+import { documentOf } from "./edit-layer";
 import { ImportDialog } from "./import-dialog";
 import { LayerDetails } from "./layer-details";
 import { removeLayer } from "./layer-edits";
@@ -66,7 +66,7 @@ function Editor({ projectId, projectName, revision, stackup: stored, readOnly }:
   });
 
   const drawn = useMemo(() => sectionLayers(stackup), [stackup]);
-  const warnings = useMemo(() => stackupWarnings(stackupFromTyped(toDoc(stackup).layers)), [stackup]);
+  const warnings = useMemo(() => stackupWarnings(stackupFromTyped(documentOf(stackup).layers)), [stackup]);
   const layer = stackup.layers.find(({ key }) => key === selected);
   const empty = stackup.layers.length === 0;
 
@@ -128,7 +128,7 @@ function Editor({ projectId, projectName, revision, stackup: stored, readOnly }:
               onClick={() =>
                 save(
                   `${projectName} stackup.csv`,
-                  new Blob([writeStackupList(toDoc(stackup))], { type: "text/csv;charset=utf-8" }),
+                  new Blob([writeStackupList(documentOf(stackup))], { type: "text/csv;charset=utf-8" }),
                 )
               }
             >

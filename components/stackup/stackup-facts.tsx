@@ -4,13 +4,13 @@ import type { ReactNode } from "react";
 import { NumberText } from "@/components/ui/number-text";
 import { isCopper, isSignal, totalThickness } from "@/lib/si/stackup";
 import { Decimal, type Quantity } from "@/lib/si/units";
-import { type EditStackup, toDoc } from "./edit-layer";
+import { type EditStackup, documentOf } from "./edit-layer";
 import { useStackupUnits } from "./stackup-units";
 
 /** Exact total thickness with and without mask, and how many layers of which kind. */
 export function StackupFacts({ stackup }: { stackup: EditStackup }) {
   const { reader } = useStackupUnits();
-  const { total, withoutMask, missing } = totalThickness(toDoc(stackup).layers, reader);
+  const { total, withoutMask, missing } = totalThickness(documentOf(stackup).layers, reader);
   const copper = stackup.layers.filter(isCopper);
   return (
     <dl className="border-rule-line mb-2 flex flex-wrap gap-x-8 gap-y-2 border-y py-2 text-sm">

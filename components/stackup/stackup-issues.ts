@@ -1,5 +1,5 @@
 import { stackupDoc } from "@/lib/schemas/stackup";
-import { type EditStackup, toDoc } from "./edit-layer";
+import { type EditStackup, documentOf } from "./edit-layer";
 import { fieldNames, type LayerField } from "./layer-field-text";
 
 /** A text that a field could not take: it stays in the field until it is mended or given up. */
@@ -28,7 +28,7 @@ export function stackupIssues(stackup: EditStackup, refusals: Refusals): Stackup
       message: `${layer.name}, ${fieldNames[field as LayerField] ?? "plies"}: ${reason}`,
     };
   });
-  const parsed = stackupDoc.safeParse(toDoc(stackup));
+  const parsed = stackupDoc.safeParse(documentOf(stackup));
   if (parsed.success) return refused;
   const broken = parsed.error.issues.map(({ path, message }): StackupIssue => {
     const [, index, field] = path;

@@ -7,7 +7,7 @@ import { putStackup, stackupQuery } from "@/lib/client/stackup";
 import { undoKey } from "@/lib/client/undo";
 import type { ProcessDoc } from "@/lib/schemas/process";
 import type { StackupLayerDoc, StoredStackup } from "@/lib/schemas/stackup";
-import { adoptIds, contentOf, type EditStackup, toDoc, toEdit } from "./edit-layer";
+import { adoptIds, contentOf, type EditStackup, documentOf, toEdit } from "./edit-layer";
 import { keepUnless, takeKept } from "./kept-draft";
 import { type Refusals, refusalsOf, stackupIssues } from "./stackup-issues";
 import { restored, type UnsavedStackup, unsavedOf } from "./unsaved-stackup";
@@ -57,7 +57,7 @@ export function useStackupEditor(
     }),
     save: async () => {
       const sent = now.current.stackup;
-      const saved = await putStackup(projectId, version.current, toDoc(sent));
+      const saved = await putStackup(projectId, version.current, documentOf(sent));
       version.current = saved.version;
       dispatch((present) => ({ ...present, stackup: adoptIds(present.stackup, sent, saved) }));
       void client.invalidateQueries({ queryKey: undoKey(projectId) });
